@@ -1,0 +1,224 @@
+/**
+ * What the engine answers about one specification: predicted values, never specified ones.
+ * SI units unless a suffix says otherwise; no rounding. `null` means not checkable, and a finding says why.
+ */
+
+import type { Finding } from './findings'
+import type { InsulationType, Side, TestRow } from './specification'
+
+export interface Evaluation {
+  /** Version of the engine that made it. */
+  engine: string
+  corners: CornerResult[]
+  magnetics: MagneticsResult
+  windings: WindingResult[]
+  leakages: LeakageResult[]
+  layout: Layout
+  losses: LossResult
+  thermal: ThermalResult
+  boundaries: BoundaryResult[]
+  mass: MassResult
+  findings: Finding[]
+  checks: CheckResult[]
+  /** Filled only when asked for: how each figure came about, by the dotted path of the figure here. */
+  working: Record<string, Working>
+}
+
+/** One working point: an input voltage with a load. */
+export interface CornerResult {
+  name: 'minimum-input' | 'nominal-input' | 'maximum-input' | 'current-limit' | 'light-load'
+  inputV: number
+  mode: 'discontinuous' | 'boundary' | 'continuous'
+  dutyRatio: number
+  windings: CornerWinding[]
+  /** Peak-to-peak of the flux density on the effective area. */
+  fluxSwingT: number
+  fluxPeakT: number
+  inputPowerW: number
+  switchPeakV: number | null
+}
+
+export interface CornerWinding {
+  windingId: string
+  dcA: number
+  rmsA: number
+  acRmsA: number
+  peakA: number
+  /** Peak voltage across the winding over a period, both signs. */
+  positivePeakV: number
+  negativePeakV: number
+  rmsV: number
+  /** One period, piecewise linear: [time s, current A]. */
+  currentWaveform: readonly (readonly [number, number])[]
+}
+
+export interface MagneticsResult {
+  inductanceH: number | null
+  inductanceMinimumH: number | null
+  inductanceMaximumH: number | null
+  alH: number | null
+  /** Gap length that gives the inductance, with the named fringing model. */
+  gapMm: number | null
+  fringingFactor: number | null
+  gapModel: string
+  /** At full load and minimum input, nominal inductance. */
+  fluxPeakT: number | null
+  /** Largest inductance, current limit at its upper tolerance with delay, on the minimum area. */
+  fluxWorstT: number | null
+  worstCurrentA: number | null
+  saturationT: number | null
+  saturationTemperatureC: number | null
+  /** fluxWorstT / saturationT. */
+  fluxUtilisation: number | null
+  boundaryInductanceH: number | null
+}
+
+export interface WindingResult {
+  windingId: string
+  /** Copper area of all parallel wires, mm². */
+  copperAreaMm2: number
+  wireLengthM: number | null
+  meanTurnLengthMm: number | null
+  dcResistance20Ohm: number | null
+  dcResistanceHotOhm: number | null
+  /** ac over dc resistance, weighted with the harmonics; the model is named in the working. */
+  acFactor: number | null
+  rmsA: number | null
+  peakA: number | null
+  dcA: number | null
+  currentDensityAPerMm2: number | null
+  layers: number
+  turnsPerLayer: number[]
+  copperLossW: number | null
+  copperMassG: number | null
+  skinDepthMm: number | null
+}
+
+export interface LeakageResult {
+  windingId: string
+  shortedWindingIds: string[]
+  inductanceH: number | null
+  model: string
+}
+
+// ---------------------------------------------------------------------------------------------
+// The coil to scale
+
+/**
+ * Cross-section of one side of the winding window, in mm. x runs along the former from the inside of
+ * the left flange (pin-1 end), y outward from the winding tube.
+ */
+export interface Layout {
+  windowWidthMm: number
+  windowHeightMm: number
+  items: LayoutItem[]
+  /** Build in use, bulge of the outer layers included. */
+  buildMm: number
+  buildRatio: number
+  /** Bare copper over window area. */
+  copperFill: number
+  /** Sum of squares of overall diameters over window area. */
+  windowFill: number
+}
+
+export type LayoutItem =
+  | { kind: 'turn'; stepId: string; windingId: string; turn: number; strand: number; layer: number; xMm: number; yMm: number; overallMm: number; conductorMm: number }
+  | { kind: 'foil'; stepId: string; windingId: string; turn: number; xMm: number; yMm: number; widthMm: number; thicknessMm: number }
+  | { kind: 'tape'; stepId: string; layer: number; xMm: number; yMm: number; widthMm: number; thicknessMm: number }
+  | { kind: 'margin'; stepId: string; xMm: number; yMm: number; widthMm: number; heightMm: number }
+
+// ---------------------------------------------------------------------------------------------
+
+export interface LossResult {
+  corner: CornerResult['name']
+  copperW: number | null
+  coreW: number | null
+  totalW: number | null
+  coreDensityWPerM3: number | null
+  model: string
+}
+
+export interface ThermalResult {
+  riseK: number | null
+  ambientC: number | null
+  windingC: number | null
+  /** The limit of the insulation system for the method stated. */
+  limitC: number | null
+  marginK: number | null
+  surfaceMm2: number | null
+  model: string
+}
+
+export interface BoundaryResult {
+  boundaryId: string
+  name: string
+  insulation: InsulationType
+  workingVoltageVRms: number | null
+  recurringPeakV: number | null
+  required: {
+    clearanceMm: SourcedValue
+    creepageMm: SourcedValue
+    distanceThroughInsulationMm: SourcedValue
+    layers: SourcedValue
+    testVoltageVRms: SourcedValue
+  }
+  /** What the build gives along its shortest path; null when it cannot be told. */
+  provided: {
+    clearanceMm: number | null
+    creepageMm: number | null
+    distanceThroughInsulationMm: number | null
+    layers: number | null
+    testVoltageVRms: number | null
+    how: string
+  }
+  state: CheckState
+}
+
+export interface SourcedValue {
+  value: number | null
+  source: string
+  /** From memory or a secondary copy: the standard in force decides. */
+  fromMemory: boolean
+  reason: string | null
+}
+
+export interface MassResult {
+  copperG: number | null
+  coreG: number | null
+  totalG: number | null
+}
+
+export type CheckState = 'met' | 'not-met' | 'not-checkable'
+
+/** One release check. Codes are permanent (`E01` … `Q18`). */
+export interface CheckResult {
+  code: string
+  /** `S` stops release, `M` must be answered, `N` is a note. */
+  severity: 'S' | 'M' | 'N'
+  state: CheckState
+  value: number | null
+  limit: number | null
+  unit: string
+  /** Relative to the limit, positive when met. */
+  margin: number | null
+  source: string
+  /** Dotted path of the field that the check leads to. */
+  path: string
+  /** Numbers and names for the sentence, unit in the key. */
+  values: Readonly<Record<string, number | string>>
+}
+
+/** How one figure came about. */
+export interface Working {
+  symbol: string
+  value: number | null
+  unit: string
+  formula: string
+  inputs: { name: string; value: number | string; unit: string; origin: string }[]
+  source: string
+}
+
+/** Proposed rows carry no number of their own; the caller keeps those a person changed. */
+export type ProposedTest = TestRow
+
+export type { Finding, Side }
