@@ -1,0 +1,86 @@
+import { z } from 'zod'
+import { idSchema, momentSchema, roleSchema } from './common'
+import { BUYING_ROLES, defineEndpoint } from './endpoint'
+
+const roles = z.array(roleSchema)
+
+/** Stored for years: add variants, never change or drop one. Identifiers, not content. */
+export const auditEventSchema = z.discriminatedUnion('type', [
+  z.object({ type: z.literal('signed-in'), personId: idSchema }),
+  z.object({ type: z.literal('sign-in-refused'), personId: idSchema }),
+  z.object({ type: z.literal('signed-out'), personId: idSchema }),
+  z.object({ type: z.literal('password-set'), personId: idSchema }),
+  z.object({ type: z.literal('password-reset-requested'), personId: idSchema }),
+  z.object({ type: z.literal('person-invited'), personId: idSchema, roles }),
+  z.object({ type: z.literal('invitation-repeated'), personId: idSchema }),
+  z.object({ type: z.literal('invitation-accepted'), personId: idSchema }),
+  z.object({ type: z.literal('person-change-requested'), personId: idSchema, changeId: idSchema, change: z.enum(['roles', 'email', 'removal']), roles: roles.optional() }),
+  z.object({ type: z.literal('person-change-confirmed'), personId: idSchema, changeId: idSchema, change: z.enum(['roles', 'email', 'removal']), roles: roles.optional() }),
+  z.object({ type: z.literal('person-change-refused'), personId: idSchema, changeId: idSchema }),
+  z.object({ type: z.literal('address-changed'), personId: idSchema, changeId: idSchema }),
+  z.object({ type: z.literal('company-created'), companyId: idSchema }),
+  z.object({ type: z.literal('company-updated'), companyId: idSchema }),
+  z.object({ type: z.literal('vendor-invited'), vendorCompanyId: idSchema }),
+  z.object({ type: z.literal('vendor-updated'), vendorCompanyId: idSchema, approval: z.string() }),
+  z.object({ type: z.literal('vendor-agreement-stored'), vendorCompanyId: idSchema, fileId: idSchema, sha256: z.string() }),
+  z.object({ type: z.literal('customer-accepted'), buyingCompanyId: idSchema }),
+  z.object({ type: z.literal('mail-retried'), mailId: idSchema }),
+])
+
+export type AuditEvent = z.infer<typeof auditEventSchema>
+export type AuditType = AuditEvent['type']
+
+/**
+ * What an entry is about, which decides who reads it: accounts (administrator, operator), engineering
+ * (engineer, checker, quality) or purchasing. Buyers and approvers read all three, a vendor its own actions.
+ */
+export const AUDIT_AREAS = ['account', 'engineering', 'purchasing'] as const
+export type AuditArea = (typeof AUDIT_AREAS)[number]
+
+export const AUDIT_AREA: Record<AuditType, AuditArea> = {
+  'signed-in': 'account',
+  'sign-in-refused': 'account',
+  'signed-out': 'account',
+  'password-set': 'account',
+  'password-reset-requested': 'account',
+  'person-invited': 'account',
+  'invitation-repeated': 'account',
+  'invitation-accepted': 'account',
+  'person-change-requested': 'account',
+  'person-change-confirmed': 'account',
+  'person-change-refused': 'account',
+  'address-changed': 'account',
+  'company-created': 'account',
+  'company-updated': 'account',
+  'vendor-invited': 'account',
+  'vendor-updated': 'purchasing',
+  'vendor-agreement-stored': 'purchasing',
+  'customer-accepted': 'account',
+  'mail-retried': 'account',
+}
+
+export const auditEntrySchema = z.object({
+  id: idSchema,
+  at: momentSchema,
+  actorId: idSchema.nullable(),
+  actorName: z.string().nullable(),
+  area: z.enum(AUDIT_AREAS),
+  event: auditEventSchema,
+  /** Place in the hash chain, SHA-256 in hex; null until the entry is chained. */
+  chainHash: z.string().nullable(),
+})
+export type AuditEntry = z.infer<typeof auditEntrySchema>
+
+export const listAudit = defineEndpoint({
+  method: 'GET',
+  path: '/api/audit',
+  summary: 'The audit trail, newest first, as far as the role reads it',
+  access: [...BUYING_ROLES, 'vendor', 'operator'],
+  query: z.strictObject({
+    /** Entries before this entry, for the next page. */
+    before: idSchema.optional(),
+    type: z.string().max(60).optional(),
+    limit: z.coerce.number().int().min(1).max(200).default(50),
+  }),
+  response: z.array(auditEntrySchema),
+})

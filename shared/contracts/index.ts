@@ -1,0 +1,22 @@
+import * as audit from './audit'
+import { isEndpoint, type Endpoint } from './endpoint'
+import * as health from './health'
+import * as mail from './mail'
+import * as people from './people'
+
+/** One line per feature; every endpoint such a file exports is documented and tested for access. */
+const FEATURES = { health, people, mail, audit }
+
+export interface NamedEndpoint {
+  /** Feature and export, such as `people.signIn`: the operation's identifier in the documentation. */
+  name: string
+  feature: string
+  endpoint: Endpoint
+}
+
+/** Every endpoint there is. The server mounts all of them, the access matrix expects something of each. */
+export const allEndpoints: readonly NamedEndpoint[] = Object.entries(FEATURES).flatMap(([feature, contract]) =>
+  Object.entries(contract).flatMap(([key, value]: [string, unknown]) =>
+    isEndpoint(value) ? [{ name: `${feature}.${key}`, feature, endpoint: value }] : [],
+  ),
+)
