@@ -1,0 +1,218 @@
+import { z } from 'zod'
+import { idSchema, momentSchema, optionalText, requiredText, TEXT_LIMITS } from './common'
+import { defineEndpoint } from './endpoint'
+import { specificationDocumentSchema } from './specification-document'
+
+export const REVISION_STATES = ['draft', 'in-check', 'released', 'superseded', 'withdrawn'] as const
+export const revisionStateSchema = z.enum(REVISION_STATES)
+
+const personNameSchema = z.object({ id: idSchema, name: z.string() })
+
+/** A released revision: what every later document points at. */
+export const releaseSummarySchema = z.object({
+  /** The release's own id, which RFQ lines refer to. */
+  id: idSchema,
+  revision: z.string(),
+  issuedOn: z.iso.date(),
+  specificationSha256: z.string(),
+  pdfSha256: z.string(),
+  partNumber: z.string(),
+  title: z.string(),
+  engine: z.string(),
+})
+
+export const revisionSummarySchema = z.object({
+  id: idSchema,
+  /** `P1`, `P2` … until released, then the letter. */
+  label: z.string(),
+  state: revisionStateSchema,
+  createdBy: personNameSchema,
+  checkedBy: personNameSchema.nullable(),
+  updatedAt: momentSchema,
+  release: releaseSummarySchema.nullable(),
+})
+
+export const specificationSummarySchema = z.object({
+  id: idSchema,
+  partNumber: z.string(),
+  title: z.string(),
+  topology: z.string().nullable(),
+  owner: personNameSchema,
+  updatedAt: momentSchema,
+  current: revisionSummarySchema,
+})
+
+export const specificationSchema = z.object({
+  id: idSchema,
+  partNumber: z.string(),
+  title: z.string(),
+  owner: personNameSchema,
+  revisions: z.array(revisionSummarySchema),
+})
+
+/** A stopped check that a second person let pass, with the reason. */
+export const overrideSchema = z.object({
+  code: z.string(),
+  reason: z.string(),
+  by: personNameSchema,
+  at: momentSchema,
+})
+
+export const revisionSchema = z.object({
+  ...revisionSummarySchema.shape,
+  specificationId: idSchema,
+  /** Rises with every stored change; a change names the version it was made from. */
+  version: z.int(),
+  document: specificationDocumentSchema,
+  overrides: z.array(overrideSchema),
+  /** Why the checker sent it back; null when never. */
+  returnedReason: z.string().nullable(),
+  /** Persons who changed this draft: none of them may release it. */
+  editors: z.array(personNameSchema),
+})
+
+export type RevisionSummary = z.infer<typeof revisionSummarySchema>
+export type ReleaseSummary = z.infer<typeof releaseSummarySchema>
+export type Specification = z.infer<typeof specificationSchema>
+export type SpecificationSummary = z.infer<typeof specificationSummarySchema>
+export type Revision = z.infer<typeof revisionSchema>
+
+const readers = ['engineer', 'checker', 'quality', 'buyer', 'approver'] as const
+const specificationParams = z.strictObject({ specificationId: idSchema })
+const revisionParams = z.strictObject({ specificationId: idSchema, revisionId: idSchema })
+const atVersion = { version: z.int().nonnegative() }
+
+export const listSpecifications = defineEndpoint({
+  method: 'GET',
+  path: '/api/specifications',
+  summary: 'The winding specifications of the company, newest change first',
+  access: readers,
+  query: z.strictObject({ search: z.string().max(TEXT_LIMITS.line).default(''), state: revisionStateSchema.optional() }),
+  response: z.array(specificationSummarySchema),
+})
+
+export const createSpecification = defineEndpoint({
+  method: 'POST',
+  path: '/api/specifications',
+  summary: 'Start a winding specification with its first draft',
+  access: ['engineer'],
+  body: z.strictObject({
+    partNumber: requiredText('The part number', 40),
+    title: requiredText('The title', TEXT_LIMITS.line),
+    document: specificationDocumentSchema,
+  }),
+  response: revisionSchema,
+})
+
+export const getSpecification = defineEndpoint({
+  method: 'GET',
+  path: '/api/specifications/:specificationId',
+  summary: 'One winding specification with its revisions',
+  access: readers,
+  params: specificationParams,
+  response: specificationSchema,
+})
+
+export const getRevision = defineEndpoint({
+  method: 'GET',
+  path: '/api/specifications/:specificationId/revisions/:revisionId',
+  summary: 'One revision with its document',
+  access: readers,
+  params: revisionParams,
+  response: revisionSchema,
+})
+
+export const createDraft = defineEndpoint({
+  method: 'POST',
+  path: '/api/specifications/:specificationId/revisions',
+  summary: 'Start the next draft from the newest released revision',
+  access: ['engineer'],
+  params: specificationParams,
+  response: revisionSchema,
+})
+
+export const saveDraft = defineEndpoint({
+  method: 'PUT',
+  path: '/api/specifications/:specificationId/revisions/:revisionId/document',
+  summary: 'Store a change of a draft',
+  access: ['engineer'],
+  params: revisionParams,
+  body: z.strictObject({ ...atVersion, document: specificationDocumentSchema }),
+  response: revisionSchema,
+})
+
+export const submitDraft = defineEndpoint({
+  method: 'POST',
+  path: '/api/specifications/:specificationId/revisions/:revisionId/submission',
+  summary: 'Hand a draft to the checker',
+  access: ['engineer'],
+  params: revisionParams,
+  body: z.strictObject(atVersion),
+  response: revisionSchema,
+})
+
+export const returnDraft = defineEndpoint({
+  method: 'POST',
+  path: '/api/specifications/:specificationId/revisions/:revisionId/return',
+  summary: 'Send a revision in check back to its author',
+  access: ['checker'],
+  params: revisionParams,
+  body: z.strictObject({ reason: requiredText('The reason', TEXT_LIMITS.note) }),
+  response: revisionSchema,
+})
+
+export const overrideCheck = defineEndpoint({
+  method: 'POST',
+  path: '/api/specifications/:specificationId/revisions/:revisionId/overrides',
+  summary: 'Let a check that stops release pass, with a reason, as a person who did not work on the draft',
+  access: ['checker', 'quality'],
+  params: revisionParams,
+  body: z.strictObject({ code: z.string().regex(/^[A-Z]\d{2}$/, 'A check has a letter and two digits.'), reason: requiredText('The reason', TEXT_LIMITS.note) }),
+  response: revisionSchema,
+})
+
+export const releaseRevision = defineEndpoint({
+  method: 'POST',
+  path: '/api/specifications/:specificationId/revisions/:revisionId/release',
+  summary: 'Release a checked revision: the server evaluates it again, draws it and seals it',
+  access: ['checker'],
+  params: revisionParams,
+  body: z.strictObject(atVersion),
+  response: revisionSchema,
+})
+
+export const withdrawRevision = defineEndpoint({
+  method: 'POST',
+  path: '/api/specifications/:specificationId/revisions/:revisionId/withdrawal',
+  summary: 'Withdraw a draft or a released revision, with a reason',
+  access: ['engineer', 'checker'],
+  params: revisionParams,
+  body: z.strictObject({ reason: optionalText('The reason', TEXT_LIMITS.note).min(3, 'Say why in at least three letters.') }),
+  response: revisionSchema,
+})
+
+export const draftPdf = defineEndpoint({
+  method: 'GET',
+  path: '/api/specifications/:specificationId/revisions/:revisionId/sheets.pdf',
+  summary: 'The sheets: archived bytes of a released revision, a marked print of a draft',
+  access: readers,
+  params: revisionParams,
+  download: ['application/pdf'],
+})
+
+export const releasedDocument = defineEndpoint({
+  method: 'GET',
+  path: '/api/specifications/:specificationId/revisions/:revisionId/specification.json',
+  summary: 'The canonical bytes of a released specification, whose SHA-256 stands in the title block',
+  access: readers,
+  params: revisionParams,
+  download: ['application/json'],
+})
+
+export const listReleases = defineEndpoint({
+  method: 'GET',
+  path: '/api/releases',
+  summary: 'Released revisions that an RFQ can be made from',
+  access: readers,
+  response: z.array(z.object({ ...releaseSummarySchema.shape, specificationId: idSchema, current: z.boolean() })),
+})
