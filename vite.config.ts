@@ -18,7 +18,7 @@ export default defineConfig({
       {
         extends: true,
         root: folder('.'),
-        test: { name: 'unit', include: ['shared/**/*.test.ts', 'server/**/*.test.ts', 'tests/reference/**/*.test.ts'], environment: 'node' },
+        test: { name: 'unit', include: ['shared/**/*.test.ts', 'server/**/*.test.ts', 'fake-services/**/*.test.ts', 'tests/support/**/*.test.ts', 'tests/reference/**/*.test.ts'], environment: 'node' },
       },
       {
         extends: true,
