@@ -1,0 +1,5 @@
+export * from './audit'
+export * from './clock'
+export * from './files'
+export * from './mail'
+export * from './people'
