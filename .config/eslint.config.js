@@ -11,7 +11,7 @@ const noHttp = { group: ['express', '**/routes/*', '**/middleware/*'], message: 
 const pureShared = { regex: '^(#server/|@/|node:|vue$|express$)', message: 'shared/ runs anywhere.' }
 const engineOnly = { regex: '^(?!\\.{1,2}/|#shared/(engine|units)|vitest$|fast-check$)', message: 'The engine imports itself and units.' }
 const drawingOnly = { regex: '^(?!\\.{1,2}/|#shared/(engine|units|drawing)|vitest$|fast-check$)', message: 'The drawing imports the engine, units and itself.' }
-const plainOnly = { regex: '^(?!\\.{1,2}/|#shared/(units|money|workflow|measurement|costing)|decimal\\.js$|vitest$|fast-check$)', message: 'workflow, measurement and costing import units and decimals only.' }
+const plainOnly = { regex: '^(?!\\.{1,2}/|#shared/(units|shown-units|number-text|number-format|money|workflow|measurement|costing)|decimal\\.js$|vitest$|fast-check$)', message: 'workflow, measurement and costing import units and decimals only.' }
 
 // `regex`, not `group`, where a pattern starts with #: group patterns are gitignore lines.
 // A later block replaces the same rule of an earlier one, so each block repeats what it keeps.
