@@ -10,6 +10,56 @@ export type FindingCode =
   | 'thermal-model-out-of-range'
   | 'window-overfilled'
   | 'wire-not-in-library'
+  | CompositionFindingCode
+
+/** What the composition of the stages finds: the sequence, the document against itself and against the library. */
+export type CompositionFindingCode =
+  // the coil
+  | 'margin-lower-than-winding'
+  | 'tape-not-in-library'
+  | 'tape-wider-than-former'
+  | 'foil-wider-than-former'
+  | 'sequence-names-unknown-winding'
+  | 'section-not-on-former'
+  | 'turn-wider-than-layer'
+  | 'layers-too-few'
+  | 'too-many-turns-to-draw'
+  // the library
+  | 'core-not-in-library'
+  | 'former-not-in-library'
+  | 'material-not-in-library'
+  | 'former-belongs-to-another-core'
+  | 'wire-overall-diameter-unknown'
+  | 'generic-row-used'
+  | 'no-saturation-data'
+  // the duty
+  | 'no-primary-winding'
+  | 'several-primary-windings'
+  | 'output-without-winding'
+  | 'output-has-several-windings'
+  | 'no-output-takes-current'
+  | 'duty-not-solvable'
+  | 'inductance-not-stated'
+  | 'current-limit-not-stated'
+  | 'coupling-not-known'
+  | 'currents-from-stated-values'
+  | 'output-voltage-off'
+  // the document against itself
+  | 'winding-not-in-sequence'
+  | 'sequence-turns-differ'
+  | 'terminal-does-not-exist'
+  | 'gap-and-al-both-control'
+  // insulation
+  | 'working-voltage-not-known'
+  | 'insulation-value-from-memory'
+  | 'boundary-missing'
+  // the proposal
+  | 'no-core-fits'
+  | 'ratio-compromise'
+  | 'too-few-pins'
+  | 'current-limit-assumed'
+  | 'no-suitable-wire'
+  | 'material-fit-out-of-range'
 
 export type Severity = 'note' | 'warning' | 'error'
 
@@ -18,6 +68,6 @@ export interface Finding {
   severity: Severity
   /** Dotted path of the input that caused it, e.g. `windings.2.turnsCount`. */
   path: string
-  /** Numbers for the message, unit in the key: `{ fillRatio: 1.08 }`. */
-  values: Readonly<Record<string, number>>
+  /** Numbers and names for the message, unit in the key: `{ fillRatio: 1.08 }`. */
+  values: Readonly<Record<string, number | string>>
 }
