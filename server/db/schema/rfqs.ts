@@ -125,6 +125,8 @@ export const rfqInvitations = pgTable(
     state: text('state').$type<(typeof INVITATION_STATES)[number]>().notNull().default('invited'),
     noBidReason: text('no_bid_reason').$type<(typeof NO_BID_REASONS)[number]>(),
     noBidText: text('no_bid_text').notNull().default(''),
+    /** Copied from the enquiry when it is issued: until then the vendor does not see its invitation. */
+    issuedAt: timestamptz('issued_at'),
     seenAt: timestamptz('seen_at'),
     termsAcceptedAt: timestamptz('terms_accepted_at'),
     decidedAt: timestamptz('decided_at'),

@@ -75,6 +75,7 @@ export const specificationRevisions = pgTable(
     index('specification_revisions_created_by_idx').on(t.createdBy),
     index('specification_revisions_checked_by_idx').on(t.checkedBy),
     check('specification_revisions_state_known', sql`${t.state} in ('draft', 'in-check', 'released', 'superseded', 'withdrawn')`),
+    check('specification_revisions_released_by_checker', sql`${t.state} not in ('released', 'superseded') or ${t.checkedBy} is not null`),
     check('specification_revisions_second_person', sql`${t.checkedBy} is null or not (${t.checkedBy} = any (${t.editorIds}))`),
   ],
 )
