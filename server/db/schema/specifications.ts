@@ -103,6 +103,8 @@ export const specificationReleases = pgTable(
     /** Canonical JSON (RFC 8785) of the released specification with the library rows it used. */
     specification: bytea('specification').notNull(),
     specificationSha256: text('specification_sha256').notNull(),
+    /** The drawn sheets as data (JSON), from which a vendor's copy and the screen are made. */
+    sheets: bytea('sheets').notNull(),
     pdfSha256: text('pdf_sha256').notNull(),
     createdAt: createdAt(),
   },

@@ -1,0 +1,1 @@
+ALTER TABLE "specification_releases" ADD COLUMN "sheets" "bytea" NOT NULL;
