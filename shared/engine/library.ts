@@ -30,7 +30,7 @@ export interface CoreRow extends LibraryRow {
   shape: CoreShape
   /** Standard that fixes the dimensions, e.g. `IEC 63093-5`. */
   standard: string
-  /** A…F of the shape's dimension drawing (full width, half height, depth, half window height, window outer width, centre leg). Null where not published. */
+  /** A…F of the shape's dimension drawing (full width, half height, depth, half window height, window outer width, centre leg). Ring core: A outside, B inside diameter, C height, uncoated. Null where not published. */
   dimensionsMm: { a: number | null; b: number | null; c: number | null; d: number | null; e: number | null; f: number | null }
   /** Set of two halves. IEC 60205. */
   effectiveAreaMm2: number
