@@ -12,6 +12,7 @@ const STAMP = 'source-hash.txt'
 function buildClient(): void {
   const hash = sourceHash()
   if (builtFrom(BUILT) === hash) return
+  removeLeftovers()
   const start = Date.now()
   const fresh = `${BUILT}.${process.pid}`
   try {
@@ -22,6 +23,15 @@ function buildClient(): void {
     rmSync(fresh, { recursive: true, force: true })
   }
   console.log(`Client built (${((Date.now() - start) / 1000).toFixed(1)} s).`)
+}
+
+/** Folders that a build which was killed left behind; one that still runs keeps its own. */
+function removeLeftovers(): void {
+  const dist = path.dirname(BUILT)
+  for (const name of existsSync(dist) ? readdirSync(dist) : []) {
+    const pid = /^client\.(?:old-)?(\d+)$/.exec(name)?.[1]
+    if (pid && !existsSync(`/proc/${pid}`)) rmSync(path.join(dist, name), { recursive: true, force: true })
+  }
 }
 
 function builtFrom(folder: string): string | undefined {

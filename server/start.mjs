@@ -166,7 +166,7 @@ function processIdentity(pid) {
 // --- The data folder and who uses it ----------------------------------------------------------------------------
 
 /** @typedef {{ pid: number, identity: string | undefined }} Process */
-/** @typedef {{ starter: Process, children: Process[], address?: string }} RunRecord */
+/** @typedef {{ starter: Process, children: Process[], address?: string, stopping?: boolean }} RunRecord */
 
 /** @type {{ file: string, record: RunRecord } | undefined} */
 let claim
@@ -209,14 +209,16 @@ function prepareDataFolder({ dataDir }) {
 async function claimDataFolder(settings) {
   prepareDataFolder(settings)
   const file = runFile(settings)
-  const deadline = Date.now() + 12_000
-  for (let told = false; ; told = true) {
+  const begin = Date.now()
+  for (let told = false; ; ) {
     const earlier = readRunRecord(file)
     const alive = earlier ? [earlier.starter, ...earlier.children].filter(isAlive) : []
     if (alive.length === 0 && (await takeRunFile(file))) return
-    if (!told) say('An earlier start still uses this data folder; waiting for it to end.')
-    if (Date.now() > deadline) endLeftovers(settings, earlier, alive)
-    await sleep(200)
+    // One whose npm was just killed needs a moment to notice.
+    const patienceMs = earlier?.stopping ? 60_000 : earlier && isAlive(earlier.starter) ? 2_000 : 10_000
+    if (Date.now() - begin > patienceMs) endLeftovers(settings, earlier, alive)
+    if (!told && (told = Date.now() - begin > 500)) say('An earlier start still uses this data folder; waiting for it to end.')
+    await sleep(100)
   }
 }
 
@@ -510,12 +512,24 @@ function runningPostmaster(data) {
   }
 }
 
+/**
+ * Processes of a killed server, or of one that lost its pid file. They end by themselves or are ended:
+ * beside them a new server would damage the data.
+ *
+ * @param {Cluster} cluster
+ */
+async function endOrphans({ data }) {
+  const orphans = () => fs.readdirSync('/proc').filter((name) => /^\d+$/.test(name) && worksIn(name, data))
+  for (const [signal, patienceMs] of /** @type {const} */ ([[0, 5_000], ['SIGINT', 20_000], ['SIGKILL', 5_000]])) {
+    for (const pid of signal ? orphans() : []) process.kill(Number(pid), signal)
+    for (const deadline = Date.now() + patienceMs; Date.now() < deadline; await sleep(100)) if (orphans().length === 0) return
+  }
+  throw new Refusal(`Processes ${orphans().join(', ')} of an earlier database server still use ${data}. End them first.`)
+}
+
 /** @param {Cluster} cluster @param {number} wanted */
 async function launchPostmaster(cluster, wanted) {
-  const others = () => fs.readdirSync('/proc').filter((name) => /^\d+$/.test(name) && worksIn(name, cluster.data))
-  // A killed server's other processes end by themselves; beside them a new one would damage the data.
-  for (const deadline = Date.now() + 20_000; others().length > 0 && Date.now() < deadline; ) await sleep(100)
-  if (others().length > 0) throw new Refusal(`Processes ${others().join(', ')} of a killed database server still use ${cluster.data}. End them first.`)
+  await endOrphans(cluster)
   fs.rmSync(path.join(cluster.data, 'postmaster.pid'), { force: true })
 
   cluster.port = await freePort('DATABASE_PORT', wanted)
@@ -642,6 +656,7 @@ async function endChild(name) {
 function stopAll() {
   stopping ??= (async () => {
     if (children.size > 0) say('\nStopping ...')
+    noteRun({ stopping: true })
     for (const child of running) child.kill('SIGTERM')
     await Promise.all(['vite', 'server', 'worker'].map(endChild))
     await endChild('mail')
@@ -727,8 +742,7 @@ function withoutOwner({ DATABASE_OWNER_URL: _owner, DATABASE_BACKUP_URL: _backup
 function launchPrograms(environment, logs, ownMail) {
   const program = (/** @type {string} */ file) => ['--import', 'tsx', file]
   if (ownMail) launch('mail', program('fake-services/index.ts'), withoutOwner(environment), logs)
-  const { DATABASE_WORKER_URL: _worker, ...serverEnvironment } = withoutOwner(environment)
-  launch('server', program('server/server.ts'), serverEnvironment, logs)
+  launch('server', program('server/server.ts'), withoutOwner(environment), logs)
   launch('worker', program('server/worker.ts'), withoutOwner(environment), logs)
 }
 
