@@ -1,0 +1,17 @@
+import type { Access } from '#shared/contracts/endpoint'
+
+export interface Section {
+  /** Name of the route it opens. */
+  route: string
+  title: string
+  access: Access
+}
+
+/** What stands on the rail, in the order of the work. Each feature adds its line where it belongs. */
+export const SECTIONS: readonly Section[] = [
+  { route: 'worklist', title: 'Worklist', access: 'signed-in' },
+  { route: 'vendors', title: 'Vendors', access: ['buyer', 'quality', 'approver', 'admin', 'engineer', 'checker'] },
+  { route: 'customers', title: 'Customers', access: ['vendor'] },
+  { route: 'companies', title: 'Companies', access: ['operator'] },
+  { route: 'people', title: 'People', access: ['admin', 'vendor', 'operator'] },
+]
