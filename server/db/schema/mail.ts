@@ -1,6 +1,6 @@
 import type { Role } from '#shared/contracts/endpoint'
 import { sql } from 'drizzle-orm'
-import { check, index, integer, jsonb, pgTable, text, unique, uuid } from 'drizzle-orm/pg-core'
+import { boolean, check, index, integer, jsonb, pgTable, text, unique, uuid } from 'drizzle-orm/pg-core'
 import { createdAt, id, timestamptz } from './columns'
 import { companies, people } from './people'
 
@@ -65,4 +65,19 @@ export const outboxMails = pgTable(
     index('outbox_mails_waiting_idx').on(t.nextAttemptAt).where(sql`state = 'waiting'`),
     check('outbox_mails_state_known', sql`${t.state} in ('waiting', 'sent', 'undeliverable')`),
   ],
+)
+
+/** One row: what the worker last saw of the outbox, so that health can be asked without reading mails. */
+export const outboxHealth = pgTable(
+  'outbox_health',
+  {
+    only: boolean('only').primaryKey().default(true),
+    waiting: integer('waiting').notNull().default(0),
+    sent: integer('sent').notNull().default(0),
+    undeliverable: integer('undeliverable').notNull().default(0),
+    oldestWaitingSince: timestamptz('oldest_waiting_since'),
+    /** When the worker last looked. */
+    seenAt: timestamptz('seen_at'),
+  },
+  (t) => [check('outbox_health_one_row', sql`${t.only}`)],
 )
