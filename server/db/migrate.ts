@@ -2,6 +2,7 @@ import { drizzle } from 'drizzle-orm/node-postgres'
 import { migrate as runMigrations } from 'drizzle-orm/node-postgres/migrator'
 import { fileURLToPath } from 'node:url'
 import pg, { Client } from 'pg'
+import { shipParts } from './seed/parts/ship-parts'
 
 const MIGRATIONS_FOLDER = fileURLToPath(new URL('../../migrations', import.meta.url))
 
@@ -15,13 +16,14 @@ export interface MigrationUrls {
   DATABASE_WORKER_URL: string
 }
 
-/** Makes or updates the three login roles and brings the tables up to date. May be run again at any time. */
+/** Makes or updates the three login roles, brings the tables up to date and ships the parts library. May be run again at any time. */
 export async function migrate(urls: MigrationUrls): Promise<void> {
   await withLock(urls.DATABASE_OWNER_URL, async (client) => {
     await ensureRoles(client, urls)
     // PostgreSQL notices such as "relation already exists, skipping" say nothing here.
     await runMigrations(drizzle(client), { migrationsFolder: MIGRATIONS_FOLDER })
     await grantConnect(client)
+    await shipParts(client)
   })
 }
 

@@ -25,6 +25,23 @@ export const auditEventSchema = z.discriminatedUnion('type', [
   z.object({ type: z.literal('vendor-agreement-stored'), vendorCompanyId: idSchema, fileId: idSchema, sha256: z.string() }),
   z.object({ type: z.literal('customer-accepted'), buyingCompanyId: idSchema }),
   z.object({ type: z.literal('mail-retried'), mailId: idSchema }),
+  z.object({ type: z.literal('part-created'), kind: z.string(), partId: z.string(), version: z.int() }),
+  z.object({ type: z.literal('part-changed'), kind: z.string(), partId: z.string(), version: z.int() }),
+  z.object({ type: z.literal('specification-created'), specificationId: idSchema, revisionId: idSchema }),
+  z.object({ type: z.literal('draft-created'), specificationId: idSchema, revisionId: idSchema }),
+  z.object({ type: z.literal('draft-submitted'), specificationId: idSchema, revisionId: idSchema }),
+  z.object({ type: z.literal('draft-returned'), specificationId: idSchema, revisionId: idSchema }),
+  z.object({ type: z.literal('check-overridden'), specificationId: idSchema, revisionId: idSchema, code: z.string() }),
+  z.object({ type: z.literal('revision-withdrawn'), specificationId: idSchema, revisionId: idSchema }),
+  z.object({
+    type: z.literal('revision-released'),
+    specificationId: idSchema,
+    revisionId: idSchema,
+    releaseId: idSchema,
+    revision: z.string(),
+    specificationSha256: z.string(),
+    pdfSha256: z.string(),
+  }),
 ])
 
 export type AuditEvent = z.infer<typeof auditEventSchema>
@@ -57,6 +74,15 @@ export const AUDIT_AREA: Record<AuditType, AuditArea> = {
   'vendor-agreement-stored': 'purchasing',
   'customer-accepted': 'account',
   'mail-retried': 'account',
+  'part-created': 'engineering',
+  'part-changed': 'engineering',
+  'specification-created': 'engineering',
+  'draft-created': 'engineering',
+  'draft-submitted': 'engineering',
+  'draft-returned': 'engineering',
+  'check-overridden': 'engineering',
+  'revision-withdrawn': 'engineering',
+  'revision-released': 'engineering',
 }
 
 export const auditEntrySchema = z.object({

@@ -28,6 +28,14 @@ export const ERROR_STATUS = {
   'file-unreadable': 400,
   'file-too-large': 413,
   'file-type-not-accepted': 415,
+  'part-number-in-use': 409,
+  'part-id-in-use': 409,
+  'draft-open': 409,
+  'not-a-draft': 409,
+  'not-in-check': 409,
+  'stale-version': 409,
+  'release-stopped': 409,
+  'unprintable-text': 409,
   internal: 500,
 } as const satisfies Record<string, number>
 

@@ -2,10 +2,11 @@ import * as audit from './audit'
 import { isEndpoint, type Endpoint } from './endpoint'
 import * as health from './health'
 import * as mail from './mail'
+import * as parts from './parts'
 import * as people from './people'
 
 /** One line per feature; every endpoint such a file exports is documented and tested for access. */
-const FEATURES = { health, people, mail, audit }
+const FEATURES = { health, people, parts, mail, audit }
 
 export interface NamedEndpoint {
   /** Feature and export, such as `people.signIn`: the operation's identifier in the documentation. */

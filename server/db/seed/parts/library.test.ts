@@ -1,4 +1,6 @@
 import { describe, expect, it } from 'vitest'
+import { partRowSchema } from '#shared/contracts/part-rows'
+import { partProblems } from '#shared/contracts/part-rules'
 import type { AnyLibraryRow, CoreRow, FormerRow } from '#shared/engine/library'
 import { deriveFormer } from './former-geometry'
 import { shippedLibrary } from './library'
@@ -201,5 +203,17 @@ describe('tapes and sleeves', () => {
 
   it('declares PTFE as PFAS', () => {
     expect(library.sleeves.filter((sleeve) => sleeve.material === 'PTFE' && !sleeve.note.includes('PFAS'))).toEqual([])
+  })
+})
+
+describe('the contract of the library', () => {
+  it('accepts every shipped row', () => {
+    const refused = all.flatMap((row) => partRowSchema.safeParse(row).error?.issues.map((issue) => `${row.id} ${issue.path.join('.')}: ${issue.message}`) ?? [])
+    expect(refused).toEqual([])
+  })
+
+  it('finds no contradiction in any shipped row', () => {
+    const contradictions = all.flatMap((row) => partProblems(partRowSchema.parse(row)).map((problem) => `${row.id} ${problem.path}: ${problem.message}`))
+    expect(contradictions).toEqual([])
   })
 })
