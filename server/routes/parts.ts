@@ -16,6 +16,11 @@ export function partsRoutes(ctx: Context): Router {
 
   handle(router, contract.listParts, ({ actor, query }) => asActor(ctx, actor, (tx) => listParts(tx, actor, query)))
 
+  // Large and seldom changed: the browser asks each time whether its copy still holds, for this session only.
+  router.get(contract.getLibrary.path, (_req, res, next) => {
+    res.set('cache-control', 'private, no-cache').vary('cookie')
+    next()
+  })
   handle(router, contract.getLibrary, ({ actor, query }) =>
     asActor(ctx, actor, async (tx) => {
       const library = query.versions === 'all' ? await libraryFor(tx, actor) : await currentLibrary(tx, actor)
