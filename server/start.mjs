@@ -693,11 +693,19 @@ async function waitForHealth(url, name) {
 /** Packages, database and its owner: what every command that touches data needs. @param {Settings} settings */
 async function setUpDatabase(settings) {
   await ensurePackages()
-  if (settings.ownerUrl) return databaseEnvironment(settings, undefined)
+  if (settings.ownerUrl) return useExistingServer(settings)
   await ensureDebian('postgresql')
   const cluster = await startCluster(settings)
   await ensureOwner(cluster)
   return databaseEnvironment(settings, cluster)
+}
+
+/** @param {Settings} settings */
+async function useExistingServer(settings) {
+  const environment = databaseEnvironment(settings, undefined)
+  const obstacle = await runProgram('server/db/check-owner.ts', { ...settings.env, ...environment })
+  if (obstacle) throw new Refusal(obstacle.trimEnd())
+  return environment
 }
 
 /** @param {Settings} settings @param {boolean} dev */

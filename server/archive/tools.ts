@@ -18,7 +18,7 @@ export const postgresTool = (name: string) => path.join(process.env.POSTGRES_BIN
 
 /** The environment that points PostgreSQL's programs to a database; a password on the command line could be read by others. */
 export function toolEnvironment(url: string): NodeJS.ProcessEnv {
-  const { hostname, port, username, password, pathname, searchParams } = new URL(url)
+  const { hostname, port, username, password, searchParams } = new URL(url)
   const sslMode = searchParams.get('sslmode')
   return {
     ...process.env,
