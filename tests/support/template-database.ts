@@ -13,6 +13,7 @@ declare module 'vitest' {
 }
 
 const MIGRATIONS = new URL('../../migrations/', import.meta.url)
+const SHIPPED_PARTS = new URL('../../server/db/seed/parts/', import.meta.url)
 const TEMPLATE_LOCK = 7_426_902
 
 /** Any password will do: the roles of a test server guard nothing but tests. */
@@ -35,21 +36,20 @@ export function databaseUrls(maintenanceUrl: string, database: string): Migratio
   }
 }
 
-/** Builds one migrated database that every test worker clones; kept as long as the migrations stay the same. */
+/** Builds one migrated database that every test worker clones; kept as long as the migrations and the shipped parts stay the same. */
 export default async function setup(project: TestProject): Promise<void> {
   const maintenanceUrl = process.env.TEST_DATABASE_URL
   if (!maintenanceUrl) throw new Error('TEST_DATABASE_URL is not set. Run the tests with `npm test`, or name a throw-away PostgreSQL server.')
-  const templateDatabase = `dotside_template_${migrationsHash()}_test`
+  const templateDatabase = `dotside_template_${templateHash()}_test`
   await withMaintenance(maintenanceUrl, (client) => ensureTemplate(client, maintenanceUrl, templateDatabase))
   project.provide('maintenanceUrl', maintenanceUrl)
   project.provide('templateDatabase', templateDatabase)
 }
 
-function migrationsHash(): string {
+function templateHash(): string {
   const hash = createHash('sha256')
-  for (const name of readdirSync(MIGRATIONS).filter((file) => file.endsWith('.sql')).sort()) {
-    hash.update(name).update(readFileSync(new URL(name, MIGRATIONS)))
-  }
+  const files = [MIGRATIONS, SHIPPED_PARTS].flatMap((folder) => readdirSync(folder).sort().map((name) => new URL(name, folder)))
+  for (const file of files.filter((url) => /\.(sql|ts)$/.test(url.pathname))) hash.update(readFileSync(file))
   return hash.digest('hex').slice(0, 12)
 }
 
