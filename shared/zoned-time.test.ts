@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest'
-import { formatDate, formatMoment, readZonedTime, zonedEntry, zoneOffset } from './zoned-time'
+import { formatDate, formatMoment, formatMomentInZone, readZonedTime, zonedEntry, zoneOffset } from './zoned-time'
 
 describe('readZonedTime', () => {
   it.each([
@@ -35,7 +35,8 @@ describe('readZonedTime', () => {
 
 describe('showing a moment', () => {
   it('names time, offset and zone', () => {
-    expect(formatMoment('2026-03-27T13:30:00Z', 'Europe/Berlin')).toBe('2026-03-27 14:30 +01:00 (Europe/Berlin)')
+    expect(formatMoment('2026-03-27T13:30:00Z', 'Europe/Berlin')).toBe('2026-03-27 14:30 +01:00')
+    expect(formatMomentInZone('2026-03-27T13:30:00Z', 'Europe/Berlin')).toBe('2026-03-27 14:30 +01:00 (Europe/Berlin)')
     expect(formatDate('2026-03-27T23:30:00Z', 'Europe/Berlin')).toBe('2026-03-28')
     expect(zoneOffset('2026-07-01T00:00:00Z', 'America/St_Johns')).toBe('-02:30')
   })

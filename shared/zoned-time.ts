@@ -86,10 +86,15 @@ export function zonedEntry(instant: string, zone: string): ZonedEntry {
   return { date: text.slice(0, 10), time: text.slice(11, 16), zone }
 }
 
-/** A moment for reading, with its offset and zone: `2026-03-27 14:30 +01:00 (Europe/Berlin)`. */
+/** A moment for reading, with its offset: `2026-03-27 14:30 +01:00`. */
 export function formatMoment(instant: string, zone: string): string {
   const { date, time } = zonedEntry(instant, zone)
-  return `${date} ${time} ${zoneOffset(instant, zone)} (${zone})`
+  return `${date} ${time} ${zoneOffset(instant, zone)}`
+}
+
+/** The same with the zone's name, for a date that binds: `2026-03-27 14:30 +01:00 (Europe/Berlin)`. */
+export function formatMomentInZone(instant: string, zone: string): string {
+  return `${formatMoment(instant, zone)} (${zone})`
 }
 
 /** The calendar date of a moment in a zone, `2026-03-27` (ISO 8601). */

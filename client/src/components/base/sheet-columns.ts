@@ -10,6 +10,8 @@ export interface SheetColumn<R> {
   /** Set in the figure type, aligned at its end. */
   figure?: boolean
   sortable?: boolean
+  /** Takes the whole width of a card at phone width: addresses, sentences. */
+  wide?: boolean
   /** Offers its distinct texts as a filter. */
   choices?: boolean
 }

@@ -1,0 +1,46 @@
+import type { LibraryKind } from '#shared/engine/library'
+
+/** One figure of the list, by its key in a summary. */
+export interface FigureColumn {
+  key: string
+  header: string
+  unit: string
+}
+
+/** The figures that tell one row from the next. */
+export const FIGURE_COLUMNS: Readonly<Record<LibraryKind, readonly FigureColumn[]>> = {
+  core: [
+    { key: 'effectiveAreaMm2', header: 'Ae', unit: 'mm²' },
+    { key: 'effectiveLengthMm', header: 'le', unit: 'mm' },
+    { key: 'effectiveVolumeMm3', header: 'Ve', unit: 'mm³' },
+    { key: 'massG', header: 'Mass', unit: 'g' },
+  ],
+  former: [
+    { key: 'windingWidthMm', header: 'Winding width', unit: 'mm' },
+    { key: 'windingHeightMm', header: 'Winding height', unit: 'mm' },
+    { key: 'pins', header: 'Pins', unit: '' },
+  ],
+  material: [
+    { key: 'initialPermeability', header: 'µi', unit: '' },
+    { key: 'fluxDensityT', header: 'Bs, hottest point', unit: 'mT' },
+    { key: 'temperatureC', header: 'at', unit: '°C' },
+    { key: 'curieC', header: 'Curie temperature', unit: '°C' },
+  ],
+  wire: [
+    { key: 'conductorMm', header: 'Conductor', unit: 'mm' },
+    { key: 'copperAreaMm2', header: 'Copper area', unit: 'mm²' },
+    { key: 'overallMm.enamel-grade-2', header: 'Overall, grade 2', unit: 'mm' },
+    { key: 'overallMm.triple-insulated', header: 'Overall, triple-insulated', unit: 'mm' },
+  ],
+  tape: [
+    { key: 'thicknessMm', header: 'Thickness', unit: 'mm' },
+    { key: 'thermalClassC', header: 'Thermal class', unit: '°C' },
+    { key: 'layerWithstandVRms', header: 'Withstand of a layer, rms', unit: 'V' },
+  ],
+  sleeve: [
+    { key: 'boreMm', header: 'Bore', unit: 'mm' },
+    { key: 'wallMm', header: 'Wall', unit: 'mm' },
+    { key: 'thermalClassC', header: 'Thermal class', unit: '°C' },
+    { key: 'withstandVRms', header: 'Withstand, rms', unit: 'V' },
+  ],
+}

@@ -1,0 +1,61 @@
+import { defineQueryOptions, useMutation, useQueryCache } from '@pinia/colada'
+import type { BodyOf } from '#shared/contracts/endpoint'
+import * as parts from '#shared/contracts/parts'
+import type { LibraryKind } from '#shared/engine/library'
+import { call } from '@/api/call'
+
+export interface PartKey {
+  kind: LibraryKind
+  id: string
+}
+
+const PART_KEYS = {
+  root: ['parts'] as const,
+  list: (kind: LibraryKind) => [...PART_KEYS.root, 'list', kind] as const,
+  one: ({ kind, id }: PartKey) => [...PART_KEYS.root, 'one', kind, id] as const,
+  library: (versions: 'current' | 'all') => [...PART_KEYS.root, 'library', versions] as const,
+}
+
+const LARGEST_PAGE = 500
+
+/** Every row of a kind, page after page. */
+async function allRows(kind: LibraryKind) {
+  const first = await call(parts.listParts, { query: { kind, limit: LARGEST_PAGE } })
+  const rows = [...first.rows]
+  while (rows.length < first.total) {
+    const next = await call(parts.listParts, { query: { kind, limit: LARGEST_PAGE, offset: rows.length } })
+    if (next.rows.length === 0) break
+    rows.push(...next.rows)
+  }
+  return { ...first, rows }
+}
+
+export const partListQuery = defineQueryOptions((kind: LibraryKind) => ({ key: PART_KEYS.list(kind), query: () => allRows(kind) }))
+
+export const partQuery = defineQueryOptions((key: PartKey) => ({
+  key: PART_KEYS.one(key),
+  query: () => call(parts.getPart, { params: { kind: key.kind, id: key.id } }),
+}))
+
+/** The whole library for the engine: `all` when a document names versions that are no longer the newest. */
+export const libraryQuery = defineQueryOptions((versions: 'current' | 'all') => ({
+  key: PART_KEYS.library(versions),
+  query: () => call(parts.getLibrary, { query: { versions } }),
+  staleTime: 5 * 60_000,
+}))
+
+export function useCreatePart() {
+  const cache = useQueryCache()
+  return useMutation({
+    mutation: (body: BodyOf<typeof parts.createPart>) => call(parts.createPart, { body }),
+    onSettled: () => cache.invalidateQueries({ key: PART_KEYS.root }),
+  })
+}
+
+export function useChangePart(key: PartKey) {
+  const cache = useQueryCache()
+  return useMutation({
+    mutation: (body: BodyOf<typeof parts.changePart>) => call(parts.changePart, { params: { kind: key.kind, id: key.id }, body }),
+    onSettled: () => cache.invalidateQueries({ key: PART_KEYS.root }),
+  })
+}
