@@ -5,8 +5,9 @@ import { healthRoutes } from './health'
 import { mailRoutes } from './mail'
 import { partsRoutes } from './parts'
 import { peopleRoutes } from './people'
+import { worklistRoutes } from './worklist'
 
 /** One line per feature. A test compares what is mounted with the contracts. */
-const FEATURES = [healthRoutes, peopleRoutes, mailRoutes, auditRoutes, partsRoutes]
+const FEATURES = [healthRoutes, peopleRoutes, mailRoutes, auditRoutes, partsRoutes, worklistRoutes]
 
 export const featureRouters = (ctx: Context): Router[] => FEATURES.map((routes) => routes(ctx))

@@ -1,0 +1,19 @@
+import { appNow, type Actor, type Transaction } from '#server/db/as-actor'
+import type { ResponseOf } from '#shared/contracts/endpoint'
+import type { listWorklist as contract } from '#shared/contracts/worklist'
+import { peopleItems } from './people-items'
+import type { WorklistProvider } from './provider'
+
+/** One line per feature. */
+const PROVIDERS: readonly WorklistProvider[] = [peopleItems]
+
+const DONE_SHOWN_MS = 7 * 24 * 3_600_000
+
+/** One provider after the other: they share the transaction's one connection. */
+export async function listWorklist(tx: Transaction, actor: Actor): Promise<ResponseOf<typeof contract>> {
+  const now = await appNow(tx)
+  const moment = { now, doneSince: new Date(now.getTime() - DONE_SHOWN_MS) }
+  const items = []
+  for (const provide of PROVIDERS) items.push(...(await provide(tx, actor, moment)))
+  return { items, now: now.toISOString() }
+}
