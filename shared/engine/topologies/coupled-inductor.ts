@@ -2,7 +2,7 @@ import { requireNotNegative, requirePositive } from '../require'
 import { offsetWaveform, scaleWaveform, sumWaveforms } from '../waveforms/combine'
 import { mean } from '../waveforms/statistics'
 import type { Waveform } from '../waveforms/waveform'
-import { threeIntervals } from './flyback'
+import { conductionMode, threeIntervals } from './flyback'
 import type { ConductionMode, WindingWaveforms } from './flyback'
 
 /** Two windings on one core; winding 2 has L_1·(N_2/N_1)² and the mutual inductance k·√(L_1·L_2). */
@@ -86,7 +86,7 @@ export interface CoupledInductorState {
  * @throws RangeError on a value out of its range, or when a winding's volt-seconds do not balance within 10⁻⁶
  */
 export function twoWindingChokeState(duty: TwoWindingChokeDuty): CoupledInductorState {
-  const { pair, frequencyHz, dutyCycle, onVoltageV, offVoltageV } = duty
+  const { frequencyHz, dutyCycle, onVoltageV, offVoltageV } = duty
   requirePositive('frequencyHz', frequencyHz)
   if (!(dutyCycle > 0 && dutyCycle < 1)) throw new RangeError(`dutyCycle must lie between 0 and 1: ${dutyCycle}`)
   for (const winding of [0, 1] as const) {
@@ -122,7 +122,8 @@ export function seriesCapacitorInductorState(duty: SeriesCapacitorDuty): Coupled
   const inputCurrentA = (outputCurrentA * offV) / inputVoltageV
   const continuousDuty = offV / (inputVoltageV + offV)
   const rippleOfSumA = ((slope1 + slope2) * continuousDuty) / frequencyHz
-  const continuous = rippleOfSumA <= 2 * (inputCurrentA + outputCurrentA)
+  const rippleRatio = rippleOfSumA / (2 * (inputCurrentA + outputCurrentA))
+  const continuous = conductionMode(rippleRatio) !== 'discontinuous'
   const sumInductanceH = inputVoltageV / (slope1 + slope2)
   const dutyCycle = continuous ? continuousDuty : Math.sqrt(2 * sumInductanceH * outputCurrentA * offV * frequencyHz) / inputVoltageV
   return chokeState({
@@ -130,7 +131,7 @@ export function seriesCapacitorInductorState(duty: SeriesCapacitorDuty): Coupled
     frequencyHz,
     dutyCycle,
     secondaryFraction: continuous ? 1 - dutyCycle : (dutyCycle * inputVoltageV) / offV,
-    mode: continuous ? (rippleOfSumA === 2 * (inputCurrentA + outputCurrentA) ? 'boundary' : 'continuous') : 'discontinuous',
+    mode: conductionMode(rippleRatio),
     onVoltageV: [inputVoltageV, inputVoltageV],
     offVoltageV: [-offV, -offV],
     directCurrentA: [inputCurrentA, outputCurrentA],

@@ -92,6 +92,12 @@ export interface FlybackState {
 /** Relative distance from the boundary within which the mode is called boundary. */
 const BOUNDARY_TOLERANCE = 1e-9
 
+/** Mode by the ripple ratio that continuous conduction would have: below 1 continuous, above it discontinuous. */
+export function conductionMode(rippleRatio: number): ConductionMode {
+  if (Math.abs(rippleRatio - 1) <= BOUNDARY_TOLERANCE) return 'boundary'
+  return rippleRatio < 1 ? 'continuous' : 'discontinuous'
+}
+
 /**
  * Steady state of a flyback at one corner: the mode is found, not assumed.
  *
@@ -172,10 +178,11 @@ function flybackTiming(input: TimingInput): FlybackTiming {
   const meanOnCurrentA = transferredPowerW / (primaryVoltageV * continuousDuty)
   const rippleA = (primaryVoltageV * continuousDuty) / (primaryInductanceH * frequencyHz)
   const rippleRatio = rippleA / (2 * meanOnCurrentA)
-  if (rippleRatio < 1 + BOUNDARY_TOLERANCE) {
-    const onBoundary = rippleRatio > 1 - BOUNDARY_TOLERANCE
+  const mode = conductionMode(rippleRatio)
+  if (mode !== 'discontinuous') {
+    const onBoundary = mode === 'boundary'
     return {
-      mode: onBoundary ? 'boundary' : 'continuous',
+      mode,
       dutyCycle: continuousDuty,
       secondaryFraction: 1 - continuousDuty,
       peakCurrentA: meanOnCurrentA + rippleA / 2,
@@ -186,7 +193,7 @@ function flybackTiming(input: TimingInput): FlybackTiming {
   const peakCurrentA = Math.sqrt((2 * transferredPowerW) / (primaryInductanceH * frequencyHz))
   const dutyCycle = (primaryInductanceH * peakCurrentA * frequencyHz) / primaryVoltageV
   const secondaryFraction = (dutyCycle * primaryVoltageV) / reflectedVoltageV
-  return { mode: 'discontinuous', dutyCycle, secondaryFraction, peakCurrentA, minimumCurrentA: 0, rippleRatio: 1 }
+  return { mode, dutyCycle, secondaryFraction, peakCurrentA, minimumCurrentA: 0, rippleRatio: 1 }
 }
 
 function flybackWaveforms(duty: FlybackDuty, timing: FlybackTiming, primaryVoltageV: number, voltsPerTurn: number) {

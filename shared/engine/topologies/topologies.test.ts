@@ -165,6 +165,14 @@ describe('coupled inductor', () => {
     expect(mean(state.windings[0].voltageV)).toBeCloseTo(0, 9)
   })
 
+  it('stands at the boundary where the sum of both currents just touches zero', () => {
+    // (slope1 + slope2)·D/(2f) = I_1 + I_2, solved for the output current.
+    const [slope1, slope2] = currentSlopesAPerS(pair, [12, 12])
+    const dutyCycle = 12.5 / 24.5
+    const outputCurrentA = ((slope1 + slope2) * dutyCycle) / (2 * 300e3 * (1 + 12.5 / 12))
+    expect(seriesCapacitorInductorState({ ...duty, outputCurrentA }).mode).toBe('boundary')
+  })
+
   it('describes any two-winding choke with its direct currents', () => {
     const state = twoWindingChokeState({
       pair, frequencyHz: 200e3, dutyCycle: 0.25, onVoltageV: [9, 9], offVoltageV: [-3, -3], directCurrentA: [4, 4],
