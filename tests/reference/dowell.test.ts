@@ -74,7 +74,7 @@ describe('round wire as foil', () => {
   })
 })
 
-// Source: own calculation of the table printed in design rules: h = d·√(π/4), η = 0.8, 100 kHz, 100 °C.
+// Source: own calculation after P. Dowell (1966): h = d·√(π/4), η = 0.8, 100 kHz, 100 °C.
 describe('design table, porosity 0.8', () => {
   const depthMm = skinDepthMm({ frequencyHz: 100e3, temperatureC: 100 })
   it.each([
