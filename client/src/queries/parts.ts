@@ -1,7 +1,8 @@
 import { defineQueryOptions, useMutation, useQueryCache } from '@pinia/colada'
 import type { BodyOf } from '#shared/contracts/endpoint'
+import type { PartDraft } from '#shared/contracts/part-rows'
 import * as parts from '#shared/contracts/parts'
-import type { LibraryKind } from '#shared/engine/library'
+import type { Confidence, LibraryKind } from '#shared/engine/library'
 import { call } from '@/api/call'
 
 export interface PartKey {
@@ -9,28 +10,42 @@ export interface PartKey {
   id: string
 }
 
+export interface PartListFilter {
+  kind: LibraryKind
+  search: string
+  family?: string
+  confidence?: Confidence
+  origin?: parts.PartOrigin
+}
+
 const PART_KEYS = {
   root: ['parts'] as const,
-  list: (kind: LibraryKind) => [...PART_KEYS.root, 'list', kind] as const,
+  list: ({ kind, search, family, confidence, origin }: PartListFilter) =>
+    [...PART_KEYS.root, 'list', kind, search, family ?? '', confidence ?? '', origin ?? ''] as const,
   one: ({ kind, id }: PartKey) => [...PART_KEYS.root, 'one', kind, id] as const,
   library: (versions: 'current' | 'all') => [...PART_KEYS.root, 'library', versions] as const,
 }
 
 const LARGEST_PAGE = 500
 
-/** Every row of a kind, page after page. */
-async function allRows(kind: LibraryKind) {
-  const first = await call(parts.listParts, { query: { kind, limit: LARGEST_PAGE } })
+/** Every row that passes the filter, page after page. */
+async function allRows(filter: PartListFilter) {
+  const first = await call(parts.listParts, { query: { ...filter, limit: LARGEST_PAGE } })
   const rows = [...first.rows]
   while (rows.length < first.total) {
-    const next = await call(parts.listParts, { query: { kind, limit: LARGEST_PAGE, offset: rows.length } })
+    const next = await call(parts.listParts, { query: { ...filter, limit: LARGEST_PAGE, offset: rows.length } })
     if (next.rows.length === 0) break
     rows.push(...next.rows)
   }
   return { ...first, rows }
 }
 
-export const partListQuery = defineQueryOptions((kind: LibraryKind) => ({ key: PART_KEYS.list(kind), query: () => allRows(kind) }))
+export const partListQuery = defineQueryOptions((filter: PartListFilter) => ({
+  key: PART_KEYS.list(filter),
+  query: () => allRows(filter),
+  // The rows found before stay on the sheet while the next search runs.
+  placeholderData: (previous: Awaited<ReturnType<typeof allRows>> | undefined) => previous,
+}))
 
 export const partQuery = defineQueryOptions((key: PartKey) => ({
   key: PART_KEYS.one(key),
@@ -59,3 +74,6 @@ export function useChangePart(key: PartKey) {
     onSettled: () => cache.invalidateQueries({ key: PART_KEYS.root }),
   })
 }
+
+/** A form's entries as the contract takes them; what is missing or wrong the server says, field by field. */
+export const asDraft = (entry: object) => entry as PartDraft

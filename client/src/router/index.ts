@@ -1,6 +1,7 @@
 import { createRouter, type Router, type RouterHistory, type RouteLocationNormalized } from 'vue-router'
 import { useSessionStore } from '@/stores/session'
 import { mayOpen } from './access'
+import { partRoutes } from './parts'
 import { peopleRoutes } from './people'
 import { worklistRoutes } from './worklist'
 
@@ -20,6 +21,7 @@ export function createAppRouter(history: RouterHistory): Router {
     routes: [
       ...worklistRoutes,
       ...peopleRoutes,
+      ...partRoutes,
       { path: '/:path(.*)*', name: 'not-found', component: notFound, meta: { access: 'public', title: 'Not found' } },
     ],
     scrollBehavior: (to, from, saved) => saved ?? (to.hash && to.name !== 'sign-in-link' ? { el: to.hash } : to.path === from.path ? undefined : { top: 0 }),

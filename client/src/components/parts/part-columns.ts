@@ -1,4 +1,8 @@
+import type { PartSummary } from '#shared/contracts/parts'
 import type { LibraryKind } from '#shared/engine/library'
+import { enteredText } from '#shared/number-format'
+import { shownUnit } from '#shared/shown-units'
+import type { SheetColumn } from '@/components/base/sheet-columns'
 
 /** One figure of the list, by its key in a summary. */
 export interface FigureColumn {
@@ -43,4 +47,24 @@ export const FIGURE_COLUMNS: Readonly<Record<LibraryKind, readonly FigureColumn[
     { key: 'thermalClassC', header: 'Thermal class', unit: '°C' },
     { key: 'withstandVRms', header: 'Withstand, rms', unit: 'V' },
   ],
+}
+
+/** The list as a file: figures in the unit of the header. */
+export function csvColumns(kind: LibraryKind): SheetColumn<PartSummary>[] {
+  const figures = FIGURE_COLUMNS[kind].map(({ key, header, unit }): SheetColumn<PartSummary> => ({
+    key,
+    header: unit === '' ? header : `${header} [${unit}]`,
+    value: ({ figures }) => (figures[key] == null ? null : Number(enteredText(figures[key], shownUnit(unit)))),
+  }))
+  return [
+    { key: 'name', header: 'Name', value: ({ name }) => name },
+    { key: 'id', header: 'Identifier', value: ({ id }) => id },
+    { key: 'family', header: 'Family', value: ({ family }) => family },
+    ...figures,
+    { key: 'confidence', header: 'Confidence', value: ({ confidence }) => confidence },
+    { key: 'unverified', header: 'Unverified fields', value: ({ unverified }) => unverified },
+    { key: 'origin', header: 'Origin', value: ({ origin }) => origin },
+    { key: 'version', header: 'Version', value: ({ version }) => version },
+    { key: 'source', header: 'Source', value: ({ source }) => source },
+  ]
 }
