@@ -31,9 +31,9 @@ export interface CornerResult {
   mode: 'discontinuous' | 'boundary' | 'continuous'
   dutyRatio: number
   windings: CornerWinding[]
-  /** Peak-to-peak of the flux density on the effective area. */
-  fluxSwingT: number
-  fluxPeakT: number
+  /** Peak-to-peak of the flux density on the effective area; null without a core. */
+  fluxSwingT: number | null
+  fluxPeakT: number | null
   inputPowerW: number
   switchPeakV: number | null
 }

@@ -39,6 +39,7 @@ export type CompositionFindingCode =
   | 'output-has-several-windings'
   | 'no-output-takes-current'
   | 'duty-not-solvable'
+  | 'value-out-of-range'
   | 'inductance-not-stated'
   | 'current-limit-not-stated'
   | 'coupling-not-known'

@@ -1,0 +1,175 @@
+import { gappedCore, alFromGap } from '../evaluate/inductance'
+import { inductanceSpread } from '../magnetics/gap'
+import { atLeast, atMost, notCheckable, storesEnergy, yesNo } from './outcome'
+import type { Check, CheckInput, Outcome } from './outcome'
+
+/** Share of saturation that the worst case may use. Source: common practice. */
+export const FLUX_LIMIT_SHARE = 0.8
+
+/** What winding adds to the spread of A_L. Source: common practice. */
+const WINDING_SPREAD = 0.01
+
+function worstFlux(input: CheckInput): Outcome[] {
+  if (!storesEnergy(input)) return []
+  const { fluxWorstT, saturationT, worstCurrentA, saturationTemperatureC } = input.evaluation.magnetics
+  const share = Math.min(FLUX_LIMIT_SHARE, input.document.requirement?.fluxUtilisation ?? FLUX_LIMIT_SHARE)
+  const values = { share, ...(worstCurrentA !== null ? { currentA: worstCurrentA } : {}), ...(saturationTemperatureC !== null ? { temperatureC: saturationTemperatureC } : {}) }
+  return [atMost({ value: fluxWorstT, limit: saturationT === null ? null : saturationT * share, unit: 'T', path: 'core.material', values })]
+}
+
+function hotSaturation({ context, evaluation }: CheckInput): Outcome[] {
+  const points = context.material?.saturation ?? []
+  const hottestC = points.length > 0 ? Math.max(...points.map(({ temperatureC }) => temperatureC)) : null
+  return [atLeast({ value: hottestC, limit: Math.max(100, evaluation.thermal.windingC ?? 100), unit: '°C', path: 'core.material' })]
+}
+
+function factorAgrees({ document, context }: CheckInput): Outcome[] {
+  const { electrical, core } = document.specification
+  const nominalH = electrical.inductance.value?.nominalH
+  const alH = core.gap.alH.value
+  const turns = context.primary?.turns
+  if (nominalH == null || alH === null || turns == null) return [notCheckable('core.gap.alH')]
+  return [atMost({ value: Math.abs(alH * turns ** 2 - nominalH) / nominalH, limit: 0.01, unit: '1', path: 'core.gap.alH', values: { turns, inductanceH: nominalH, alH } })]
+}
+
+function gapAgrees({ document, context }: CheckInput): Outcome[] {
+  const { gap } = document.specification.core
+  if (gap.control.value === 'none') return []
+  const oneControls = gap.control.value === 'al' ? gap.lengthMm.status !== 'mandatory' : gap.control.value === 'length' ? gap.alH.status !== 'mandatory' : false
+  const alH = gap.alH.value
+  const fromGapH = alFromGap({ ...context, findings: [] })
+  const control: Outcome = yesNo(oneControls, 'core.gap.control', { control: gap.control.value ?? '' })
+  if (alH === null || fromGapH === null) return [control]
+  return [control, atMost({ value: Math.abs(fromGapH - alH) / alH, limit: 0.1, unit: '1', path: 'core.gap.lengthMm', values: { alH, fromGapH } })]
+}
+
+/** Spread of A_L that the core brings: as stated, or from the tolerance of the gap where that controls. */
+function coreSpread({ document, context }: CheckInput): number | null {
+  const { gap } = document.specification.core
+  if (gap.control.value === 'none') return gap.alTolerance.value ?? context.material?.permeabilityTolerance ?? null
+  if (gap.control.value === 'al') return gap.alTolerance.value
+  const core = gappedCore(context)
+  const { value: lengthMm } = gap.lengthMm
+  const { value: toleranceMm } = gap.lengthToleranceMm
+  if (!core || lengthMm === null || toleranceMm === null || lengthMm <= 0) return null
+  const spread = inductanceSpread(core, 1, { gapMm: lengthMm, gapToleranceMm: toleranceMm })
+  return Math.max(-spread.lowestFraction, spread.highestFraction)
+}
+
+function toleranceBelievable(input: CheckInput): Outcome[] {
+  const limit = input.document.specification.electrical.inductance.value
+  const spread = coreSpread(input)
+  const sides = limit ? [limit.lowerTolerance === null ? null : -limit.lowerTolerance, limit.upperTolerance].filter((side) => side !== null) : []
+  if (sides.length === 0) return [notCheckable('electrical.inductance')]
+  return [atLeast({ value: Math.min(...sides), limit: spread === null ? null : spread + WINDING_SPREAD, unit: '1', path: 'electrical.inductance', values: spread === null ? {} : { coreSpread: spread } })]
+}
+
+function ungappedLimit({ document }: CheckInput): Outcome[] {
+  const { core, electrical } = document.specification
+  const limit = electrical.inductance.value
+  if (core.gap.control.value !== 'none' || !limit) return []
+  const loose = limit.upperTolerance === null || (limit.upperTolerance >= 0.25 && (limit.lowerTolerance ?? -1) <= -0.25)
+  return [yesNo(loose, 'electrical.inductance')]
+}
+
+function smallGap({ document, evaluation }: CheckInput): Outcome[] {
+  const { alTolerance } = document.specification.core.gap
+  const gapMm = evaluation.magnetics.gapMm
+  if (gapMm === null || gapMm >= 0.1 || alTolerance.value === null) return []
+  return [yesNo(alTolerance.value > 0.05, 'core.gap.alTolerance', { gapMm, tolerance: alTolerance.value })]
+}
+
+function largeGap({ evaluation, context }: CheckInput): Outcome[] {
+  const { gapMm, fringingFactor } = evaluation.magnetics
+  if (gapMm === null || !context.core) return []
+  const root = Math.sqrt(context.core.effectiveAreaMm2 * context.sets)
+  return [atMost({ value: gapMm / root, limit: 0.15, unit: '1', path: 'core.gap', values: { gapMm, fringingFactor: fringingFactor ?? 1 } })]
+}
+
+function wholeTurns({ document }: CheckInput): Outcome[] {
+  const { windings, sequence } = document.specification
+  const broken = [
+    ...windings.flatMap(({ turns, name }, index) => (Number.isInteger(turns) ? [] : [yesNo(false, `windings.${index}.turns`, { winding: name, turns })])),
+    ...sequence.flatMap((step, index) => (step.kind !== 'winding' || Number.isInteger(step.turns) ? [] : [yesNo(false, `sequence.${index}.turns`, { step: index + 1, turns: step.turns })])),
+  ]
+  return broken.length > 0 ? broken : [yesNo(true, 'windings')]
+}
+
+function outputsByTurns({ document }: CheckInput): Outcome[] {
+  const duty = document.requirement?.duty
+  if (duty?.topology !== 'flyback') return []
+  const windingOf = (id: string) => document.specification.windings.find(({ outputId }) => outputId === id)
+  const mains = duty.outputs.filter(({ role }) => role === 'main')
+  const regulated = mains[0]
+  const reference = regulated && windingOf(regulated.id)
+  if (!regulated || !reference) return []
+  const perTurnV = (Math.abs(regulated.voltageV) + regulated.rectifierDropV) / reference.turns
+  return mains.slice(1).flatMap((output) => {
+    const winding = windingOf(output.id)
+    if (!winding) return []
+    const asked = Math.abs(output.voltageV) + output.rectifierDropV
+    return [atMost({ value: Math.abs(perTurnV * winding.turns - asked) / asked, limit: 0.01, unit: '1', path: `windings.${document.specification.windings.indexOf(winding)}.turns`, values: { winding: winding.name, output: output.name } })]
+  })
+}
+
+function switchStress({ document, evaluation }: CheckInput): Outcome[] {
+  const duty = document.requirement?.duty
+  if (duty?.topology !== 'flyback' || duty.switchRatingV === null) return []
+  const peaks = evaluation.corners.flatMap(({ switchPeakV }) => (switchPeakV === null ? [] : [switchPeakV]))
+  return [atMost({ value: peaks.length > 0 ? Math.max(...peaks) : null, limit: 0.8 * duty.switchRatingV, unit: 'V', path: 'requirement.duty.switchRatingV' })]
+}
+
+function currentsGiven({ document }: CheckInput): Outcome[] {
+  return document.specification.windings
+    .map((winding, index) => ({ winding, index }))
+    .filter(({ winding }) => winding.role !== 'shield')
+    .map(({ winding, index }) => yesNo(winding.rmsCurrentA !== null && winding.peakCurrentA !== null && winding.dcCurrentA !== null, `windings.${index}.rmsCurrentA`, { winding: winding.name }))
+}
+
+function biasSpecified(input: CheckInput): Outcome[] {
+  if (!storesEnergy(input)) return []
+  const { saturation } = input.document.specification.electrical
+  return [yesNo(saturation.length > 0, 'electrical.saturation', { points: saturation.length })]
+}
+
+function leakageFeasible({ document, evaluation }: CheckInput): Outcome[] {
+  return document.specification.electrical.leakage.map((limit, index) => {
+    const same = evaluation.leakages.find(({ windingId, shortedWindingIds }) => windingId === limit.windingId && sameSet(shortedWindingIds, limit.shortedWindingIds))
+    const estimate = same?.inductanceH ?? null
+    return atMost({ value: estimate === null ? null : estimate * 1.3, limit: limit.maximumH, unit: 'H', path: `electrical.leakage.${index}.maximumH`, values: estimate === null ? {} : { estimateH: estimate } })
+  })
+}
+
+const sameSet = (one: readonly string[], other: readonly string[]) => one.length === other.length && one.every((id) => other.includes(id))
+
+function materialFrequency({ document, context }: CheckInput): Outcome[] {
+  const range = context.material?.frequencyRangeHz
+  const frequencyHz = document.specification.electrical.switchingFrequencyHz.value?.maximum
+  if (!range || frequencyHz === undefined) return [notCheckable('core.material')]
+  return [atMost({ value: frequencyHz, limit: range.maximum, unit: 'Hz', path: 'core.material' })]
+}
+
+function leastArea({ context }: CheckInput): Outcome[] {
+  const { core } = context
+  if (!core) return [notCheckable('core.core')]
+  return [{ state: 'met', value: core.minimumAreaMm2 / core.effectiveAreaMm2, limit: null, unit: '1', path: 'core.core', values: { minimumAreaMm2: core.minimumAreaMm2, effectiveAreaMm2: core.effectiveAreaMm2 } }]
+}
+
+export const ELECTRICAL_CHECKS: Readonly<Record<string, Check>> = {
+  E01: { severity: 'S', source: 'Faraday’s law; 80 % of saturation when hot: common practice', run: worstFlux },
+  E02: { severity: 'M', source: 'saturation is taken hot: common practice', run: hotSaturation },
+  E07: { severity: 'S', source: 'definition of A_L, IEC 62044-2', run: factorAgrees },
+  E08: { severity: 'M', source: 'McLyman, fringing of the gap; one of A_L and gap controls: core makers’ practice', run: gapAgrees },
+  E09: { severity: 'S', source: 'IEC 62358; core makers’ tolerances of A_L and 1 % of winding', run: toleranceBelievable },
+  E10: { severity: 'M', source: 'spread of permeability: common practice', run: ungappedLimit },
+  E11: { severity: 'M', source: 'grinding tolerance against the gap: common practice', run: smallGap },
+  E12: { severity: 'M', source: 'fringing field at the winding: handbooks', run: largeGap },
+  E14: { severity: 'S', source: 'half turns unbalance an E core’s legs: handbooks', run: wholeTurns },
+  E15: { severity: 'M', source: 'volts per turn; 1 %: common practice', run: outputsByTurns },
+  E16: { severity: 'M', source: '80 % of the rated voltage: common practice', run: switchStress },
+  E17: { severity: 'M', source: 'common practice', run: currentsGiven },
+  E18: { severity: 'S', source: 'IEC 62024-2; common practice', run: biasSpecified },
+  E20: { severity: 'M', source: 'Snelling, Soft Ferrites, ch. 11; 30 % over the estimate', run: leakageFeasible },
+  E31: { severity: 'M', source: 'range of the material', run: materialFrequency },
+  E33: { severity: 'M', source: 'IEC 60205: the least area is used', run: leastArea },
+}

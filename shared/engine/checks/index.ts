@@ -1,0 +1,1 @@
+export { runChecks } from './run'

@@ -1,0 +1,197 @@
+import type { Answer } from '../answer'
+import type { Coil } from '../build'
+import type { BoundaryResult, CheckState, SourcedValue } from '../evaluation'
+import { ratedImpulseV } from '../insulation/coordination'
+import { boundaryRequirements } from '../insulation/product-standards'
+import type { BoundaryRequirements } from '../insulation/product-standards'
+import type { Citation } from '../insulation/citation'
+import type { RequiredDistance } from '../insulation/distances'
+import type { BoundaryEnd, InsulationBoundary, Side } from '../specification'
+import { attempt, explain, report } from './context'
+import type { Context } from './context'
+import { providedInsulation, windingsAt } from './insulation-paths'
+import type { ProvidedInsulation } from './insulation-paths'
+import { boundaryVoltage } from './working-voltage'
+import type { VoltageCorners } from './working-voltage'
+
+interface Stress {
+  rmsV: number | null
+  peakV: number | null
+}
+
+/** Every boundary of the document: what stresses it, what the standard asks, what the build gives. */
+export function boundaryResults(context: Context, coil: Coil | null, corners: VoltageCorners): BoundaryResult[] {
+  return context.specification.insulation.boundaries.map((boundary, index) => boundaryResult(context, { boundary, index, coil, corners }))
+}
+
+function boundaryResult(context: Context, input: { boundary: InsulationBoundary; index: number; coil: Coil | null; corners: VoltageCorners }): BoundaryResult {
+  const { boundary, index, coil, corners } = input
+  const path = `insulation.boundaries.${index}`
+  const calculated = attempt(context, path, () => boundaryVoltage(context, boundary, corners))
+  // What a person states beyond the calculated stress is the harder requirement.
+  const stress: Stress = { rmsV: larger(calculated?.rmsV, boundary.workingVoltageVRms), peakV: larger(calculated?.recurringPeakV, boundary.recurringPeakV) }
+  if (stress.rmsV === null || stress.peakV === null) report(context, 'working-voltage-not-known', 'warning', path, { boundary: boundary.name })
+  const needs = requirements(context, boundary, stress, path)
+  const provided = coil && context.former ? providedInsulation({ specification: context.specification, former: context.former, coil, boundary }) : null
+  const required = requiredValues(needs, boundary)
+  const testVoltageVRms = boundary.test ? (boundary.test.kind === 'dc' ? boundary.test.voltageV / Math.SQRT2 : boundary.test.voltageV) : null
+  explainBoundary(context, { index, boundary, stress, required, corners })
+  return {
+    boundaryId: boundary.id,
+    name: boundary.name,
+    insulation: boundary.insulation,
+    workingVoltageVRms: stress.rmsV,
+    recurringPeakV: stress.peakV,
+    required,
+    provided: {
+      clearanceMm: provided?.clearanceMm ?? null,
+      creepageMm: provided?.creepageMm ?? null,
+      distanceThroughInsulationMm: provided?.distanceThroughInsulationMm ?? null,
+      layers: provided?.layers ?? null,
+      testVoltageVRms,
+      how: provided?.how ?? 'no coil layout',
+    },
+    state: judge(required, provided, testVoltageVRms),
+  }
+}
+
+const larger = (calculated: number | null | undefined, stated: number | null): number | null => {
+  const values = [calculated, stated].filter((value): value is number => value != null)
+  return values.length > 0 ? Math.max(...values) : null
+}
+
+// ---------------------------------------------------------------------------------------------
+
+const sideOf = (context: Context, end: BoundaryEnd): Side => {
+  if (end.kind === 'side') return end.side
+  if (end.kind === 'core') return context.specification.core.potential.value?.side ?? 'floating'
+  return windingsAt(context.specification, end)[0]?.side ?? 'floating'
+}
+
+/** Mains transients lie between the mains side and every other. */
+function crossesMains(context: Context, { between }: InsulationBoundary): boolean {
+  const [one, other] = between.map((end) => sideOf(context, end))
+  return (one === 'primary') !== (other === 'primary')
+}
+
+function requirements(context: Context, boundary: InsulationBoundary, { rmsV, peakV }: Stress, path: string): BoundaryRequirements | null {
+  const { insulation, electrical } = context.specification
+  if (rmsV === null || peakV === null) return null
+  const mainsV = insulation.mainsVoltageV.value
+  const crossing = crossesMains(context, boundary)
+  const impulse = mainsV !== null && crossing ? attempt(context, 'insulation.mainsVoltageV', () => ratedImpulseV({ lineToNeutralV: mainsV, overvoltageCategory: insulation.overvoltageCategory.value ?? 'II' })) : null
+  return attempt(context, path, () =>
+    boundaryRequirements({
+      standard: insulation.productStandard.value ?? 'IEC 60664-1',
+      insulation: boundary.insulation,
+      workingVoltageRmsV: rmsV,
+      recurringPeakV: peakV,
+      frequencyHz: boundary.frequencyHz ?? electrical.switchingFrequencyHz.value?.maximum ?? context.requirement?.duty.switchingFrequencyHz ?? 0,
+      ratedImpulseV: impulse?.state === 'known' ? impulse.value : null,
+      pollutionDegree: insulation.pollutionDegree.value ?? 2,
+      materialGroup: insulation.materialGroup.value ?? context.former?.materialGroup ?? 'IIIb',
+      altitudeM: insulation.altitudeM.value ?? 2000,
+      nominalMainsV: crossing ? mainsV : null,
+    }),
+  )
+}
+
+// ---------------------------------------------------------------------------------------------
+
+const cite = ({ standard, edition, place }: Citation) => `${standard}:${edition}, ${place}`
+const absent = (reason: string, source = ''): SourcedValue => ({ value: null, source, fromMemory: false, reason })
+
+function requiredDistance(answer: Answer<RequiredDistance> | undefined): SourcedValue {
+  if (!answer) return absent('working-voltage-not-known')
+  if (answer.state !== 'known') return absent(answer.reason)
+  const { distanceMm, governedBy, contributions, unchecked } = answer.value
+  const citation = contributions.find(({ rule }) => rule === governedBy)!.citation
+  return { value: distanceMm, source: cite(citation), fromMemory: citation.basis === 'memory', reason: unchecked[0]?.reason ?? null }
+}
+
+function requiredValues(needs: BoundaryRequirements | null, { insulation }: InsulationBoundary): BoundaryResult['required'] {
+  const solid = needs?.throughInsulation
+  const test = needs?.testVoltage
+  const notSolid = absent(!needs ? 'working-voltage-not-known' : solid?.state === 'not-checkable' ? solid.reason : 'not-required')
+  const layers = solid?.state === 'known' ? Math.max(...solid.value.sheetAlternatives.map((sheet) => sheet.layers)) : null
+  return {
+    clearanceMm: requiredDistance(needs?.clearance),
+    creepageMm: requiredDistance(needs?.creepage),
+    distanceThroughInsulationMm: solid?.state === 'known' ? sourced(solid.value.minimumThicknessMm, solid.value.citation) : notSolid,
+    // Nothing is known about one layer alone, so the alternative in which any two of three withstand is taken.
+    layers: solid?.state === 'known' ? sourced(layers, solid.value.citation) : notSolid,
+    testVoltageVRms: test?.state === 'known' ? testValue(test.value.acRmsV, test.value) : functionalTest(insulation, test?.state === 'not-checkable' ? test.reason : needs ? 'not-required' : 'working-voltage-not-known'),
+  }
+}
+
+const sourced = (value: number | null, citation: Citation): SourcedValue => ({ value, source: cite(citation), fromMemory: citation.basis === 'memory', reason: null })
+
+function testValue(acRmsV: number, { contributions, governedBy }: { contributions: readonly { rule: string; citation: Citation }[]; governedBy: string }): SourcedValue {
+  return sourced(acRmsV, contributions.find(({ rule }) => rule === governedBy)!.citation)
+}
+
+/** Test voltage that finds damaged enamel between windings of one side, V rms. Source: common practice. */
+export const FUNCTIONAL_TEST_V_RMS = 500
+
+const functionalTest = (insulation: InsulationBoundary['insulation'], reason: string): SourcedValue =>
+  insulation === 'functional' ? { value: FUNCTIONAL_TEST_V_RMS, source: 'common practice for functional insulation', fromMemory: false, reason: null } : absent(reason)
+
+// ---------------------------------------------------------------------------------------------
+
+const compare = ({ value, reason }: SourcedValue, provided: number | null, covered: boolean): CheckState => {
+  if (value === null) return reason === 'not-required' ? 'met' : 'not-checkable'
+  if (provided === null) return covered ? 'met' : 'not-checkable'
+  return provided >= value * (1 - 1e-9) ? 'met' : 'not-met'
+}
+
+/** State of each requirement of a boundary, for the boundary itself and for the checks. */
+export interface BoundaryStates {
+  clearance: CheckState
+  creepage: CheckState
+  solid: CheckState
+  test: CheckState
+}
+
+export function boundaryStates(required: BoundaryResult['required'], provided: Omit<ProvidedInsulation, 'how'>, testVoltageVRms: number | null): BoundaryStates {
+  const covered = provided.byInsulatedWire
+  const thickness = compare(required.distanceThroughInsulationMm, provided.distanceThroughInsulationMm, covered)
+  const layers = compare(required.layers, provided.layers, covered)
+  return {
+    clearance: provided.known ? compare(required.clearanceMm, provided.clearanceMm, covered) : 'not-checkable',
+    creepage: provided.known ? compare(required.creepageMm, provided.creepageMm, covered) : 'not-checkable',
+    // Thick solid insulation or thin sheets: either is enough.
+    solid: !provided.known ? 'not-checkable' : thickness === 'met' || layers === 'met' ? 'met' : thickness === 'not-checkable' ? layers : thickness,
+    test: testVoltageVRms === null ? 'not-met' : compare(required.testVoltageVRms, testVoltageVRms, false),
+  }
+}
+
+function judge(required: BoundaryResult['required'], provided: ProvidedInsulation | null, testVoltageVRms: number | null): CheckState {
+  if (!provided) return 'not-checkable'
+  const states = Object.values(boundaryStates(required, provided, testVoltageVRms))
+  if (states.includes('not-met')) return 'not-met'
+  return states.includes('not-checkable') ? 'not-checkable' : 'met'
+}
+
+function explainBoundary(context: Context, input: { index: number; boundary: InsulationBoundary; stress: Stress; required: BoundaryResult['required']; corners: VoltageCorners }): void {
+  const { index, boundary, stress, required, corners } = input
+  const { insulation } = context.specification
+  const path = (field: string) => `boundaries.${index}.${field}`
+  const stressInputs = [
+    { name: 'nodes', value: corners.onMains ? 'switched ends and supplies, mains on either rail in turn' : 'switched ends and supplies', unit: '', origin: 'waveforms of the corners' },
+    { name: 'stated', value: boundary.workingVoltageVRms ?? 'nothing', unit: 'V', origin: `insulation.${path('workingVoltageVRms')}` },
+  ]
+  explain(context, path('workingVoltageVRms'), () => ({ symbol: 'U_rms', value: stress.rmsV, unit: 'V', formula: 'greatest rms of all pairs of nodes', inputs: stressInputs, source: 'IEC 60664-1:2020, 3.1' }))
+  explain(context, path('recurringPeakV'), () => ({ symbol: 'Û', value: stress.peakV, unit: 'V', formula: 'greatest peak of all pairs of nodes, with the turn-off spike', inputs: stressInputs, source: 'IEC 60664-1:2020, 3.1' }))
+  const inputs = [
+    { name: 'U_rms', value: stress.rmsV ?? 'not known', unit: 'V', origin: path('workingVoltageVRms') },
+    { name: 'Û', value: stress.peakV ?? 'not known', unit: 'V', origin: path('recurringPeakV') },
+    { name: 'insulation', value: boundary.insulation, unit: '', origin: `insulation.${path('insulation')}` },
+    { name: 'pollution degree', value: insulation.pollutionDegree.value ?? 2, unit: '', origin: 'insulation.pollutionDegree' },
+    { name: 'material group', value: insulation.materialGroup.value ?? 'IIIb', unit: '', origin: 'insulation.materialGroup' },
+    { name: 'altitude', value: insulation.altitudeM.value ?? 2000, unit: 'm', origin: 'insulation.altitudeM' },
+  ]
+  for (const [field, symbol, unit] of [['clearanceMm', 'd_cl', 'mm'], ['creepageMm', 'd_cr', 'mm'], ['distanceThroughInsulationMm', 'd_ti', 'mm'], ['testVoltageVRms', 'U_test', 'V']] as const) {
+    const { value, source } = required[field]
+    explain(context, path(`required.${field}`), () => ({ symbol, value, unit, formula: 'row of the table', inputs, source }))
+  }
+}

@@ -1,0 +1,129 @@
+import { layOutCoil } from '../build'
+import type { Coil } from '../build'
+import { runChecks } from '../checks'
+import type { Evaluation, Layout, MassResult } from '../evaluation'
+import type { Finding } from '../findings'
+import type { Library } from '../library'
+import type { SpecificationDocument } from '../specification'
+import { ENGINE_VERSION } from '../version'
+import { boundaryResults } from './boundaries'
+import { coreHeat, reportCoreLoss } from './core-loss'
+import { createContext, report } from './context'
+import type { Context } from './context'
+import type { CornerState } from './corner-result'
+import { coupledCorners, secondWinding } from './coupled-corners'
+import { reportContradictions } from './document-findings'
+import { finiteOnly } from './finite'
+import { flybackCornerAt, flybackCorners } from './flyback-corners'
+import { inductanceBasis } from './inductance'
+import type { InductanceBasis } from './inductance'
+import { leakageBetweenH, leakages } from './leakage'
+import { reportLibrary } from './library-findings'
+import { buildWire } from './lookup'
+import { magneticsResult } from './magnetics'
+import { heatBalance } from './thermal'
+import { windingCoppers, windingResults } from './windings'
+import type { WindingCopper } from './windings'
+
+export interface EvaluateOptions {
+  /** Collect how each figure came about; costs time. */
+  working?: boolean
+}
+
+/**
+ * Everything that the engine knows about one specification: waveforms at its corners, flux, build, losses, temperature,
+ * leakage, insulation, findings and release checks. Lengths in mm, temperatures in °C, everything else SI; no rounding.
+ *
+ * A doubtful, contradictory or unfinished document is answered with findings; what cannot be told is null.
+ */
+export function evaluate(document: SpecificationDocument, library: Library, options: EvaluateOptions = {}): Evaluation {
+  const context = createContext(document, library, options.working ?? false)
+  reportLibrary(context)
+  reportContradictions(context)
+  reportPrimary(context)
+
+  const coil = layOut(context)
+  const basis = inductanceBasis(context)
+  const corners = basis ? cornersOf(context, basis, coil) : []
+  const coppers = windingCoppers(context, coil)
+  const heat = heatBalance(context, { coppers, corners })
+  const hotC = heat.temperatureC
+  reportCoreLoss(context, heat.hottest ? coreHeat({ ...context, findings: [] }, heat.hottest, hotC ?? 100) : null)
+  const body: Omit<Evaluation, 'checks'> = {
+    engine: ENGINE_VERSION,
+    corners: corners.map(({ result }) => result),
+    magnetics: magneticsResult(context, { basis, corners, temperatureC: hotC }),
+    windings: windingResults(context, { coppers, coil, corners, hottest: heat.hottest, hotC }),
+    leakages: leakages(context, coil),
+    layout: coil?.layout ?? EMPTY_LAYOUT,
+    losses: heat.losses,
+    thermal: heat.thermal,
+    boundaries: boundaryResults(context, coil, voltageCorners(context, basis, corners)),
+    mass: massOf(context, coppers),
+    findings: [],
+    working: {},
+  }
+  const checks = runChecks({ document, evaluation: body, coil, context, loopGain: heat.loopGain })
+  return finiteOnly({ ...body, findings: distinct(context.findings), working: context.working ?? {}, checks })
+}
+
+const EMPTY_LAYOUT: Layout = { windowWidthMm: 0, windowHeightMm: 0, items: [], buildMm: 0, buildRatio: 0, copperFill: 0, windowFill: 0 }
+
+function reportPrimary(context: Context): void {
+  const primaries = context.specification.windings.filter(({ role }) => role === 'primary')
+  if (!context.primary) report(context, 'no-primary-winding', 'error', 'windings')
+  if (primaries.length > 1) report(context, 'several-primary-windings', 'warning', 'windings', { windings: primaries.map(({ name }) => name).join(', ') })
+}
+
+function layOut(context: Context): Coil | null {
+  const { former, specification, index } = context
+  if (!former) return null
+  const coil = layOutCoil({
+    former,
+    windings: specification.windings,
+    sequence: specification.sequence,
+    wireOf: (winding) => buildWire(index, winding),
+    tapeOf: (reference) => index.find('tape', reference),
+  })
+  context.findings.push(...coil.findings)
+  return coil
+}
+
+function cornersOf(context: Context, basis: InductanceBasis, coil: Coil | null): CornerState[] {
+  const duty = context.requirement?.duty
+  if (!duty) {
+    report(context, 'currents-from-stated-values', 'note', 'windings')
+    return []
+  }
+  if (duty.topology === 'flyback') return flybackCorners(context, duty, basis)
+  const second = secondWinding(context)
+  const leakageH = coil && context.primary && second ? leakageBetweenH(coil, context.primary, [second]) : null
+  return coupledCorners(context, duty, basis, leakageH)
+}
+
+/** The rms working voltage belongs to the rated mains voltage; the recurring peak to the greatest input. */
+function voltageCorners(context: Context, basis: InductanceBasis | null, corners: readonly CornerState[]) {
+  const duty = context.requirement?.duty
+  if (duty?.topology !== 'flyback' || duty.supply.kind !== 'mains' || !basis) return { peak: corners, rms: corners, onMains: false }
+  const ratedV = context.specification.insulation.mainsVoltageV.value ?? duty.supply.nominalV
+  const rated = flybackCornerAt(context, duty, basis, ratedV * Math.SQRT2)
+  return { peak: corners, rms: rated ? [rated] : corners, onMains: true }
+}
+
+function massOf({ core, sets, specification }: Context, coppers: readonly WindingCopper[]): MassResult {
+  const complete = coppers.length > 0 && coppers.length === specification.windings.length
+  const copperG = complete ? coppers.reduce((sum, { massG }) => sum + massG, 0) : null
+  const coreG = core?.massG != null ? core.massG * sets : null
+  return { copperG, coreG, totalG: copperG !== null && coreG !== null ? copperG + coreG : null }
+}
+
+/** The same doubt about the same place is said once. */
+function distinct(findings: readonly Finding[]): Finding[] {
+  const seen = new Set<string>()
+  return findings.filter((finding) => {
+    const key = `${finding.code} ${finding.path} ${JSON.stringify(finding.values)}`
+    if (seen.has(key)) return false
+    seen.add(key)
+    return true
+  })
+}

@@ -1,0 +1,110 @@
+import { gapForInductance, gappedInductanceFactorH } from '../magnetics/gap'
+import type { GappedCore } from '../magnetics/gap'
+import { attempt, explain, positive, report } from './context'
+import type { Context } from './context'
+
+/** The inductance that every later stage works with, and the figures of the document it rests on. */
+export interface InductanceBasis {
+  nominalH: number
+  minimumH: number
+  maximumH: number
+  alH: number
+  turns: number
+  from: 'stated' | 'al' | 'gap'
+}
+
+/** Relative spread of an ungapped ferrite core where nothing better is stated. Source: IEC 62358 practice, ±25 %. */
+const UNGAPPED_SPREAD = 0.25
+
+/** Inductance at the primary: as stated, else from A_L, else from the gap. */
+export function inductanceBasis(context: Context): InductanceBasis | null {
+  const { specification, primary } = context
+  const stated = specification.electrical.inductance.value
+  const turns = primary?.turns
+  if (!positive(turns)) return null
+  const alH = specification.core.gap.alH.value
+  const fromGap = alFromGap(context)
+  const { nominalH, from } = positive(stated?.nominalH)
+    ? { nominalH: stated.nominalH, from: 'stated' as const }
+    : positive(alH)
+      ? { nominalH: alH * turns ** 2, from: 'al' as const }
+      : { nominalH: (fromGap ?? 0) * turns ** 2, from: 'gap' as const }
+  if (!positive(nominalH)) {
+    report(context, 'inductance-not-stated', 'warning', 'electrical.inductance')
+    return null
+  }
+  const spread = specification.core.gap.alTolerance.value ?? UNGAPPED_SPREAD
+  const basis: InductanceBasis = {
+    nominalH,
+    minimumH: nominalH * Math.max(0.01, 1 + (stated?.lowerTolerance ?? -spread)),
+    maximumH: nominalH * (1 + (stated?.upperTolerance ?? spread)),
+    alH: positive(alH) ? alH : nominalH / turns ** 2,
+    turns,
+    from,
+  }
+  explain(context, 'magnetics.inductanceH', () => ({
+    symbol: 'L', value: nominalH, unit: 'H', formula: from === 'stated' ? 'as specified' : 'A_L·N²', source: 'IEC 62044-2, definition of A_L',
+    inputs: [{ name: 'A_L', value: basis.alH, unit: 'H', origin: 'core.gap.alH' }, { name: 'N', value: turns, unit: '', origin: 'windings.turns' }],
+  }))
+  return basis
+}
+
+/** The core with its gap as the magnetics stage takes it; null without core or material. */
+export function gappedCore(context: Context): GappedCore | null {
+  const { core, material, former, sets } = context
+  if (!core || !material) return null
+  const leg = core.centreLeg
+  const legAreaMm2 = leg ? (leg.shape === 'round' ? (Math.PI / 4) * leg.diameterMm ** 2 : leg.widthMm * leg.depthMm) : core.effectiveAreaMm2
+  const windowMm = core.dimensionsMm.d !== null ? 2 * core.dimensionsMm.d : (former?.windingWidthMm ?? null)
+  return {
+    effectiveAreaMm2: core.effectiveAreaMm2 * sets,
+    effectiveLengthMm: core.effectiveLengthMm,
+    permeability: material.initialPermeability,
+    gapAreaMm2: legAreaMm2 * sets,
+    ...(windowMm !== null ? { windingLengthMm: windowMm } : {}),
+    fringing: windowMm !== null ? 'mclyman-gap' : 'none',
+  }
+}
+
+const gapsInPath = ({ specification }: Context) => (specification.core.gap.position.value === 'all-legs-spacer' ? 2 : 1)
+
+/** A_L that the stated gap length gives, H. */
+export function alFromGap(context: Context, lengthMm = context.specification.core.gap.lengthMm.value): number | null {
+  const core = gappedCore(context)
+  if (!core || lengthMm === null || !(lengthMm >= 0)) return null
+  return attempt(context, 'core.gap.lengthMm', () => gappedInductanceFactorH(core, lengthMm * gapsInPath(context)))
+}
+
+export interface GapResult {
+  gapMm: number | null
+  fringingFactor: number | null
+  model: string
+}
+
+/** The gap that gives the inductance: of the centre leg, or the sheet's thickness where a spacer lies in all legs. */
+export function gapOf(context: Context, basis: InductanceBasis | null): GapResult {
+  const core = gappedCore(context)
+  const model = core?.fringing === 'mclyman-gap' ? 'McLyman, fringing on the gap term, area of the centre leg' : 'without fringing'
+  const none = { gapMm: null, fringingFactor: null, model }
+  if (!core || !basis) return none
+  const solution = attempt(context, 'core.gap', () => gapForInductance(core, basis.nominalH, basis.turns))
+  if (solution?.state !== 'found') return none
+  const gapMm = solution.gapMm / gapsInPath(context)
+  explain(context, 'magnetics.gapMm', () => ({
+    symbol: 'l_g', value: gapMm, unit: 'mm', formula: 'L = µ0·N²/(l_e/(µ_r·A_e) + l_g/(F·A_g)), F = 1 + l_g/√A_g·ln(2G/l_g)',
+    source: 'C. McLyman, Transformer and Inductor Design Handbook, 3rd ed. 2004',
+    inputs: [
+      { name: 'L', value: basis.nominalH, unit: 'H', origin: 'magnetics.inductanceH' }, { name: 'N', value: basis.turns, unit: '', origin: 'windings.turns' },
+      { name: 'A_e', value: core.effectiveAreaMm2, unit: 'mm²', origin: originOf(context, 'core') }, { name: 'l_e', value: core.effectiveLengthMm, unit: 'mm', origin: originOf(context, 'core') },
+      { name: 'A_g', value: core.gapAreaMm2 ?? core.effectiveAreaMm2, unit: 'mm²', origin: originOf(context, 'core') }, { name: 'µ_r', value: core.permeability, unit: '', origin: originOf(context, 'material') },
+      { name: 'F', value: solution.fringingFactor, unit: '', origin: 'calculated' },
+    ],
+  }))
+  return { gapMm, fringingFactor: solution.fringingFactor, model }
+}
+
+/** Where a library figure comes from, for the working. */
+export function originOf(context: Context, kind: 'core' | 'material' | 'former'): string {
+  const row = context[kind]
+  return row ? `${row.name}, version ${row.version}: ${row.source}${row.edition ? `, ${row.edition}` : ''} (${row.confidence})` : 'not in the library'
+}

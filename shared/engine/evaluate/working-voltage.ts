@@ -1,0 +1,116 @@
+import type { BoundaryEnd, InsulationBoundary, Side, Winding } from '../specification'
+import { differenceOfWaveforms } from '../waveforms/combine'
+import { mean, meanSquare, maximum, minimum } from '../waveforms/statistics'
+import { constantWaveform } from '../waveforms/waveform'
+import type { Waveform } from '../waveforms/waveform'
+import type { Context } from './context'
+import type { CornerState } from './corner-result'
+import { windingsAt } from './insulation-paths'
+
+/** The potential of one end of a winding over a period, against the return of its own side. */
+export interface Node {
+  windingId: string
+  potentialV: Waveform
+  /** Added to the highest value: the turn-off spike of the switched node. */
+  spikeV: number
+}
+
+export interface BoundaryVoltage {
+  rmsV: number
+  recurringPeakV: number
+}
+
+/**
+ * Potentials of both ends of each winding. The primary hangs on the input voltage and its other end on the switch;
+ * every other winding has one end on its return and the other on its rectifier.
+ */
+export function nodesOf(context: Context, corner: CornerState): Node[] {
+  const duty = context.requirement?.duty
+  const negative = new Set(duty?.topology === 'flyback' ? duty.outputs.filter(({ voltageV }) => voltageV < 0).map(({ id }) => id) : [])
+  const spikeV = duty?.topology === 'flyback' ? (duty.clampSpikeV ?? 0) : 0
+  return context.specification.windings.flatMap((winding) => {
+    const wave = corner.waves.get(winding.id)
+    if (!wave) return []
+    const { voltageV } = wave
+    if (winding.id === context.primary?.id) {
+      const supply = constantWaveform(voltageV.periodS, corner.result.inputV)
+      return [node(winding, supply), { ...node(winding, differenceOfWaveforms(supply, voltageV)), spikeV }]
+    }
+    const rest = constantWaveform(voltageV.periodS, 0)
+    return [node(winding, rest), node(winding, winding.outputId !== null && negative.has(winding.outputId) ? voltageV : differenceOfWaveforms(rest, voltageV))]
+  })
+}
+
+const node = ({ id }: Winding, potentialV: Waveform): Node => ({ windingId: id, potentialV, spikeV: 0 })
+
+export interface VoltageCorners {
+  /** Corners in which the recurring peak is looked for. */
+  peak: readonly CornerState[]
+  /** Corners in which the rms value is taken: at the rated mains voltage where there is one. */
+  rms: readonly CornerState[]
+  /** The primary's return follows the mains: half the time it lies at earth, half the time the input rail does. */
+  onMains: boolean
+}
+
+/**
+ * Working voltage between the two ends of a boundary: the greatest of all pairs of nodes. Behind a bridge rectifier
+ * the mains lies in turn on either rail, so that the primary's potentials stand for half the time as they are and for
+ * half the time lower by the input voltage, against the earthed secondary.
+ *
+ * Source: IEC 60664-1:2020, 3.1; bridge rectifier on an earthed supply system.
+ */
+export function boundaryVoltage(context: Context, boundary: InsulationBoundary, corners: VoltageCorners): BoundaryVoltage | null {
+  const at = (corner: CornerState) => pairsOf(context, boundary, corner, corners.onMains)
+  const rmsV = corners.rms.flatMap((corner) => at(corner).map(pairRms))
+  const recurringPeakV = corners.peak.flatMap((corner) => at(corner).map(pairPeak))
+  if (rmsV.length === 0 || recurringPeakV.length === 0) return null
+  return { rmsV: Math.max(...rmsV), recurringPeakV: Math.max(...recurringPeakV) }
+}
+
+interface Pair {
+  differenceV: Waveform
+  /** Spike of the one node upward, and of the other, which drives the difference down. */
+  upSpikeV: number
+  downSpikeV: number
+  /** Offset that the primary side has for half of the mains period. */
+  offsetV: number
+}
+
+function pairsOf(context: Context, boundary: InsulationBoundary, corner: CornerState, onMains: boolean): Pair[] {
+  const nodes = nodesOf(context, corner)
+  const one = nodesAt(context, boundary.between[0], nodes)
+  const other = nodesAt(context, boundary.between[1], nodes)
+  return one.flatMap((a) =>
+    other
+      .filter((b) => b.node.windingId !== a.node.windingId)
+      .map((b): Pair => {
+        const offsetV = onMains && (a.side === 'primary') !== (b.side === 'primary') ? (a.side === 'primary' ? -1 : 1) * corner.result.inputV : 0
+        return { differenceV: differenceOfWaveforms(a.node.potentialV, b.node.potentialV), upSpikeV: a.node.spikeV, downSpikeV: b.node.spikeV, offsetV }
+      }),
+  )
+}
+
+function nodesAt(context: Context, end: BoundaryEnd, nodes: readonly Node[]): { node: Node; side: Side }[] {
+  if (end.kind === 'core') {
+    const side = context.specification.core.potential.value?.side ?? 'floating'
+    const first = nodes[0]
+    return first ? [{ node: { windingId: 'core', potentialV: constantWaveform(first.potentialV.periodS, 0), spikeV: 0 }, side }] : []
+  }
+  const windings = windingsAt(context.specification, end)
+  return nodes.flatMap((one) => {
+    const winding = windings.find(({ id }) => id === one.windingId)
+    return winding ? [{ node: one, side: winding.side }] : []
+  })
+}
+
+function pairRms({ differenceV, offsetV }: Pair): number {
+  const square = meanSquare(differenceV)
+  const shifted = square + 2 * offsetV * mean(differenceV) + offsetV ** 2
+  return Math.sqrt(Math.max(0, offsetV === 0 ? square : (square + shifted) / 2))
+}
+
+function pairPeak({ differenceV, upSpikeV, downSpikeV, offsetV }: Pair): number {
+  const high = maximum(differenceV) + upSpikeV
+  const low = minimum(differenceV) - downSpikeV
+  return Math.max(...[high, high + offsetV, -low, -(low + offsetV)].map(Math.abs))
+}

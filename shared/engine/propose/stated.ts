@@ -1,0 +1,37 @@
+import type { FieldStatus, LibraryReference, Origin, Stated } from '../specification'
+import { ENGINE_VERSION } from '../version'
+
+export const PROPOSED: Origin = { kind: 'proposed', engine: ENGINE_VERSION }
+
+/** A field that the engine proposes. */
+export const proposed = <T>(value: T | null, status: FieldStatus = 'mandatory'): Stated<T> => ({ value, status, origin: PROPOSED })
+
+/** A default of the document type; the source names the standard or says common practice. */
+export const byDefault = <T>(value: T | null, source = 'common practice', status: FieldStatus = 'mandatory'): Stated<T> => ({ value, status, origin: { kind: 'default', source } })
+
+/** A field that nobody has filled. */
+export const open = <T>(status: FieldStatus = 'reference'): Stated<T> => ({ value: null, status, origin: { kind: 'default', source: 'not stated' } })
+
+/** A field that the vendor chooses and declares. */
+export const vendorChoice = <T>(): Stated<T> => ({ value: null, status: 'vendor-choice', origin: { kind: 'default', source: 'vendor declares it, frozen at approval' } })
+
+/** A value taken from a library row. */
+export const fromLibrary = <T>(value: T | null, row: LibraryReference, status: FieldStatus = 'mandatory'): Stated<T> => ({ value, status, origin: { kind: 'library', row } })
+
+export const isProposed = ({ origin }: { origin: Origin }): boolean => origin.kind === 'proposed'
+
+/**
+ * Rounds a figure that a specification states to a number of significant digits; `up` never makes a limit tighter.
+ * This chooses a value to specify, it rounds no result.
+ */
+export function toDigits(value: number, digits: number, up = false): number {
+  if (!(Math.abs(value) > 0) || !Number.isFinite(value)) return value
+  const scale = 10 ** (digits - 1 - Math.floor(Math.log10(Math.abs(value))))
+  const scaled = value * scale
+  // The hair keeps a figure that has these digits already from being raised by its last bit.
+  const rounded = up ? Math.ceil(scaled * (1 - 1e-12)) : Math.round(scaled)
+  return Number((rounded / scale).toPrecision(digits))
+}
+
+/** The next step of a size up, e.g. distances to 0.1 mm and voltages to 100 V. */
+export const toStepUp = (value: number, step: number): number => Number((Math.ceil(value / step - 1e-9) * step).toPrecision(12))
