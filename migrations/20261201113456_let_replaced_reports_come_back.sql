@@ -1,0 +1,2 @@
+ALTER TABLE "sample_sets" DROP CONSTRAINT "sample_sets_file_key";--> statement-breakpoint
+CREATE UNIQUE INDEX "sample_sets_file_key" ON "sample_sets" USING btree ("request_id","file_sha256") WHERE phase <> 'superseded' or confirmed_at is not null;
