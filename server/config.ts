@@ -9,7 +9,8 @@ const configSchema = z.object({
   DATA_DIR: z.string().min(1).default('data'),
   DATABASE_AUTH_URL: postgresUrl,
   DATABASE_APP_URL: postgresUrl,
-  DATABASE_WORKER_URL: postgresUrl,
+  /** Only for the worker and the seed. */
+  DATABASE_WORKER_URL: postgresUrl.optional(),
   SMTP_URL: z.string().regex(/^smtps?:\/\//, 'is not an address like smtp://host:port').default('smtp://127.0.0.1:1025'),
   MAIL_FROM: z.string().min(3).default('Dotside <dotside@localhost>'),
   MAIL_PAGE_PORT: port.optional(),

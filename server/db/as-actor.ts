@@ -2,7 +2,7 @@ import type { CompanyKind, Role } from '#shared/contracts/endpoint'
 import { sql } from 'drizzle-orm'
 import { drizzle, type NodePgDatabase } from 'drizzle-orm/node-postgres'
 import pg, { type PoolClient } from 'pg'
-import { poolsOf, type Database, type DatabaseRole } from './client'
+import { poolOf, type Database, type DatabaseRole } from './client'
 import * as schema from './schema/index'
 
 /** Who acts: one person of one company with the roles held there. */
@@ -40,7 +40,7 @@ export function asWorker<T>(ctx: HasDatabase, work: (tx: Transaction) => Promise
 }
 
 async function inTransaction<T>(database: Database, role: DatabaseRole, settings: Record<string, string>, work: (tx: Transaction) => Promise<T>): Promise<T> {
-  const client = await poolsOf(database)[role].connect()
+  const client = await poolOf(database, role).connect()
   let broken: Error | undefined
   try {
     // One message, so that saying who acts costs one round trip.

@@ -9,7 +9,10 @@ export interface Database {
   readonly [opaque]: true
 }
 
-const pools = new WeakMap<Database, Record<DatabaseRole, Pool>>()
+const pools = new WeakMap<Database, Pools>()
+
+/** The server process has no address of the worker's role. */
+type Pools = Record<'auth' | 'app', Pool> & { worker: Pool | null }
 
 const LIMITS = { statement_timeout: 30_000, lock_timeout: 10_000, idle_in_transaction_session_timeout: 60_000 }
 
@@ -25,18 +28,18 @@ export function openDatabase(config: Pick<Config, 'DATABASE_AUTH_URL' | 'DATABAS
   pools.set(database, {
     auth: openPool(config.DATABASE_AUTH_URL, 5),
     app: openPool(config.DATABASE_APP_URL, 10),
-    worker: openPool(config.DATABASE_WORKER_URL, 3),
+    worker: config.DATABASE_WORKER_URL === undefined ? null : openPool(config.DATABASE_WORKER_URL, 5),
   })
   return database
 }
 
 export async function closeDatabase(database: Database): Promise<void> {
-  await Promise.all(Object.values(poolsOf(database)).map((pool) => pool.end()))
+  await Promise.all(Object.values(pools.get(database) ?? {}).map((pool) => pool?.end()))
 }
 
 /** @NOTE For `as-actor.ts` only; everybody else gets a transaction from there. */
-export function poolsOf(database: Database): Record<DatabaseRole, Pool> {
-  const found = pools.get(database)
-  if (!found) throw new Error('The database is not open.')
-  return found
+export function poolOf(database: Database, role: DatabaseRole): Pool {
+  const pool = pools.get(database)?.[role]
+  if (!pool) throw new Error(`There is no connection for the role ${role} in this process.`)
+  return pool
 }
