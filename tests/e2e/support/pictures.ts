@@ -1,9 +1,10 @@
 import axe from 'axe-core'
+import type { Express } from 'express'
 import { mkdirSync } from 'node:fs'
+import type { AddressInfo } from 'node:net'
 import path from 'node:path'
-import { chromium, type Browser, type Page } from 'playwright-core'
+import type { Browser, Page } from 'playwright-core'
 
-const FLAGS = ['--no-sandbox', '--disable-gpu', '--no-first-run', '--disable-background-networking', '--disable-component-update', '--disable-sync']
 const FOLDER = path.resolve(import.meta.dirname, '../../../.pictures')
 
 export const DESK_WIDTH = 1440
@@ -15,8 +16,15 @@ export interface Visitor {
   password: string
 }
 
-export function openBrowser(): Promise<Browser> {
-  return chromium.launch({ executablePath: process.env.CHROMIUM ?? '/usr/bin/chromium', args: FLAGS })
+/** Serves the application, with its built client, on a free port of this machine. */
+export async function serve(app: Express): Promise<{ origin: string; close: () => void }> {
+  const server = app.listen(0, '127.0.0.1')
+  await new Promise((resolve) => server.once('listening', resolve))
+  const close = () => {
+    server.close()
+    server.closeAllConnections()
+  }
+  return { origin: `http://127.0.0.1:${(server.address() as AddressInfo).port}`, close }
 }
 
 /** A page of a browser profile of its own, at desk width. */
@@ -45,7 +53,7 @@ export async function openAs(browser: Browser, origin: string, { email, password
 
 /** Waits until fonts are there and nothing on the sheet is still being fetched. */
 export async function settle(page: Page): Promise<void> {
-  await page.locator('.winding-wait').waitFor({ state: 'detached', timeout: 15_000 })
+  await page.waitForFunction(() => !document.querySelector('.winding-wait'), undefined, { timeout: 15_000 })
   await page.evaluate(() => document.fonts.ready.then(() => undefined))
 }
 

@@ -1,10 +1,11 @@
 /** npx tsx tests/e2e/support/take-pictures.ts ORIGIN MAIL PASSWORD PATH… – pictures and axe of some sheets. `-` for nobody. */
-import { expectNoSeriousAxe, openAs, openBrowser, openPage, picture, scrollsSideways } from './pictures'
+import { launchChromium } from '../../support/chromium'
+import { expectNoSeriousAxe, openAs, openPage, picture, scrollsSideways } from './pictures'
 
 const [origin, email, password, ...paths] = process.argv.slice(2)
 if (!origin || !email || !password || paths.length === 0) throw new Error('usage: take-pictures ORIGIN MAIL PASSWORD PATH…')
 
-const browser = await openBrowser()
+const browser = await launchChromium()
 const page = email === '-' ? await openPage(browser, origin) : await openAs(browser, origin, { email, password })
 page.on('pageerror', (error) => console.error(`script error: ${error.message}`))
 page.on('console', (message) => {
