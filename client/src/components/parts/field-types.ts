@@ -21,6 +21,8 @@ export interface FigureField extends FieldBase {
 export interface TextField extends FieldBase {
   type: 'text'
   optional?: boolean
+  /** Takes two columns among the entries of a line. */
+  wide?: boolean
 }
 
 export interface ChoiceField extends FieldBase {

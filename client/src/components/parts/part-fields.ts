@@ -6,7 +6,7 @@ import { familyWord } from './part-words'
 type FigureOptions = Pick<FigureField, 'optional' | 'whole' | 'help'>
 
 const figure = (path: string, label: string, unit: string, options: FigureOptions = {}): FigureField => ({ type: 'figure', path, label, unit, ...options })
-const text = (path: string, label: string, options: Pick<TextField, 'optional' | 'help'> = {}): TextField => ({ type: 'text', path, label, ...options })
+const text = (path: string, label: string, options: Pick<TextField, 'optional' | 'help' | 'wide'> = {}): TextField => ({ type: 'text', path, label, ...options })
 const choice = (path: string, label: string, choices: readonly Choice[]): ChoiceField => ({ type: 'choice', path, label, choices })
 const same = (...values: string[]): Choice[] => values.map((value) => ({ value, label: value }))
 const families = (...values: readonly string[]): Choice[] => values.map((value) => ({ value, label: familyWord(value) }))
@@ -188,7 +188,7 @@ const MATERIAL: readonly PartSection[] = [
           figure('ct0', 'ct0', ''),
           figure('ct1', 'ct1', ''),
           figure('ct2', 'ct2', ''),
-          text('source', 'Source'),
+          text('source', 'Source', { wide: true }),
           choice('confidence', 'Confidence', same('high', 'medium', 'low', 'generic')),
         ],
       },
@@ -225,20 +225,20 @@ const WIRE: readonly PartSection[] = [
   {
     title: 'Resistance at 20 °C',
     fields: [
-      figure('resistance20.nominalOhmPerM', 'Nominal', 'mΩ/m'),
-      figure('resistance20.minimumOhmPerM', 'Least', 'mΩ/m', optional),
-      figure('resistance20.maximumOhmPerM', 'Greatest', 'mΩ/m', optional),
+      figure('resistance20.nominalOhmPerM', 'Nominal resistance', 'mΩ/m'),
+      figure('resistance20.minimumOhmPerM', 'Least resistance', 'mΩ/m', optional),
+      figure('resistance20.maximumOhmPerM', 'Greatest resistance', 'mΩ/m', optional),
     ],
   },
   {
     title: 'Greatest overall diameter',
     fields: [
-      figure('overallMm.bare', 'Bare', 'mm', optional),
-      figure('overallMm.enamel-grade-1', 'Enamel grade 1', 'mm', optional),
-      figure('overallMm.enamel-grade-2', 'Enamel grade 2', 'mm', optional),
-      figure('overallMm.enamel-grade-3', 'Enamel grade 3', 'mm', optional),
-      figure('overallMm.triple-insulated', 'Triple-insulated', 'mm', optional),
-      figure('overallMm.fully-insulated', 'Fully insulated', 'mm', optional),
+      figure('overallMm.bare', 'Overall, bare', 'mm', optional),
+      figure('overallMm.enamel-grade-1', 'Overall, enamel grade 1', 'mm', optional),
+      figure('overallMm.enamel-grade-2', 'Overall, enamel grade 2', 'mm', optional),
+      figure('overallMm.enamel-grade-3', 'Overall, enamel grade 3', 'mm', optional),
+      figure('overallMm.triple-insulated', 'Overall, triple-insulated', 'mm', optional),
+      figure('overallMm.fully-insulated', 'Overall, fully insulated', 'mm', optional),
     ],
   },
 ]
@@ -283,8 +283,28 @@ export const PART_SECTIONS: Readonly<Record<LibraryKind, readonly PartSection[]>
 
 export const partFields = (kind: LibraryKind): readonly PartField[] => PART_SECTIONS[kind].flatMap((section) => section.fields)
 
-/** What can be marked as unverified: each field, and each figure of a part that takes several forms. */
+/** Wholes that a mark may name at once. */
+const WHOLES: Readonly<Record<LibraryKind, readonly { path: string; label: string }[]>> = {
+  core: [{ path: 'dimensionsMm', label: 'All dimensions' }],
+  former: [
+    { path: 'pinSection', label: 'Section and size of a pin' },
+    { path: 'envelopeMm', label: 'Size with core' },
+  ],
+  material: [],
+  wire: [
+    { path: 'resistance20', label: 'All resistances' },
+    { path: 'overallMm', label: 'All overall diameters' },
+  ],
+  tape: [],
+  sleeve: [],
+}
+
+/** What can be marked as unverified: each field, each figure of a part that takes several forms, and wholes. */
 export function markableFields(kind: LibraryKind): { path: string; label: string }[] {
+  return [...fieldMarks(kind), ...WHOLES[kind]]
+}
+
+function fieldMarks(kind: LibraryKind): { path: string; label: string }[] {
   return partFields(kind).flatMap((field) => {
     const whole = { path: field.path, label: field.label }
     if (field.type !== 'variant') return [whole]

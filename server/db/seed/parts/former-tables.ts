@@ -13,13 +13,13 @@ export interface KnownFormers {
   rows: string
 }
 
-const RECALLED = 'Typical one-section coil former, recalled; pins: TDK, Ferrite Cores catalogue, bobbin tables, or recalled'
+const RECALLED = 'Typical one-section coil former, recalled'
 
 export const KNOWN_FORMERS: readonly KnownFormers[] = [
   {
     confidence: 'high',
-    source: 'Dixon, Magnetics design for switching power supplies, Unitrode seminar SLUP127, page 5-14; pins: TDK, Ferrite Cores catalogue, bobbin tables',
-    edition: '1998',
+    source: 'Dixon, Magnetics design for switching power supplies, Unitrode seminar SLUP127, page 5-14',
+    edition: 'Not dated',
     rows: `
   ETD34/17/11 123 21.0 6.0 61.0 14
 `,
@@ -27,7 +27,7 @@ export const KNOWN_FORMERS: readonly KnownFormers[] = [
   {
     confidence: 'medium',
     source: RECALLED,
-    edition: '1998',
+    edition: 'None',
     rows: `
   E25/13/7     61 15.6 - 50   10
   E30/15/7     90 17.1 - 56   -
@@ -58,7 +58,7 @@ export const KNOWN_FORMERS: readonly KnownFormers[] = [
   {
     confidence: 'low',
     source: RECALLED,
-    edition: '1998',
+    edition: 'None',
     rows: `
   P14/8       9.4 -    - 29   6
   P18/11       17 -    - 35.6 6

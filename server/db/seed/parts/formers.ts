@@ -70,6 +70,9 @@ function windingSpace(derived: DerivedFormer, known: Known | null): Pick<FormerR
   return { windingWidthMm, windingHeightMm: derived.windingHeightMm }
 }
 
+/** For some formers recalled rather than read; the places of the pins are generic in any case. */
+const PIN_SOURCE = 'TDK, Ferrite Cores catalogue, bobbin tables, or recalled'
+
 /** Nothing of this is known of any former shipped. */
 const NEVER_KNOWN = [
   'tube',
@@ -96,13 +99,19 @@ function origin(known: Known | null): Pick<FormerRow, 'source' | 'edition' | 'co
     'pins',
     ...NEVER_KNOWN,
   ]
+  const withPins = known?.pins == null ? { source: '', edition: '' } : { source: `; number of pins: ${PIN_SOURCE}`, edition: '; 1998' }
   if (areaKnown) {
-    const { source, edition, confidence } = known
-    return { source, edition, confidence, unverified: missing, note: 'Walls, pins and plastic are generic, unverified: replace before release.' }
+    return {
+      source: known.source + withPins.source,
+      edition: known.edition + withPins.edition,
+      confidence: known.confidence,
+      unverified: missing,
+      note: 'Walls, pins and plastic are generic, unverified: replace before release.',
+    }
   }
   return {
-    source: 'Geometry: window of the core less flanges, tube wall and clearances' + (known?.pins ? '; number of pins: TDK, Ferrite Cores catalogue, bobbin tables' : ''),
-    edition: known?.pins ? '1998' : 'None',
+    source: `Geometry: window of the core less flanges, tube wall and clearances${withPins.source}`,
+    edition: `None${withPins.edition}`,
     confidence: 'generic',
     unverified: missing,
     note: 'Generic, unverified, replace before release.',
