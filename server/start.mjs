@@ -607,6 +607,8 @@ function databaseEnvironment({ env, dataDir, ownerUrl }, cluster) {
 const children = new Map()
 /** @type {Promise<void> | undefined} */
 let stopping
+/** While someone edits the programs, one that fails waits for the next change. */
+let editing = false
 /** Children that are being ended on purpose. @type {WeakSet<import('node:child_process').ChildProcess>} */
 const expectedToEnd = new WeakSet()
 
@@ -629,8 +631,8 @@ function launch(name, args, env, logs) {
   child.on('exit', (code, signal) => {
     if (children.get(name) === child) children.delete(name)
     if (stopping || expectedToEnd.has(child)) return
-    say(`The ${name} ended unexpectedly (${signal ?? `exit code ${code}`}). The end of ${log}:\n${lastLines(fs.readFileSync(log, 'utf8'))}`)
-    finish(1)
+    say(`The ${name} ended unexpectedly (${signal ?? `exit code ${code}`}). The end of ${log}:\n${lastLines(fs.readFileSync(log, 'utf8'), 25)}`)
+    if (!editing) finish(1)
   })
   noteChildren()
   return child
@@ -779,9 +781,10 @@ async function dev(settings) {
   const endWithUs = 'data:text/javascript,process.on("disconnect",()=>process.exit())'
   const vite = ['--import', endWithUs, 'node_modules/vite/bin/vite.js', '--port', String(devPort), '--strictPort', '--host', 'localhost', '--clearScreen', 'false']
   launch('vite', vite, withoutOwner(environment), logs)
-  restartOnChange(() => launchPrograms(environment, logs, false))
   await waitForHealth(`http://127.0.0.1:${values.PORT}/api/health`, 'server')
   if (stopping) return
+  editing = true
+  restartOnChange(() => launchPrograms(environment, logs, false))
   noteRun({ address: values.PUBLIC_URL })
   say(startBlock(settings, values, ownMail, Date.now() - begin))
 }
