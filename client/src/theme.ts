@@ -100,7 +100,7 @@ export const preset = definePreset(Aura, {
   },
   components: {
     button: {
-      root: { label: { fontWeight: '500' }, paddingX: '0.875rem' },
+      root: { label: { fontWeight: '500' }, paddingX: '0.875rem', roundedBorderRadius: square },
       colorScheme: {
         light: {
           root: {
@@ -120,6 +120,16 @@ export const preset = definePreset(Aura, {
           },
         },
       },
+    },
+    // The chosen one is filled, the others are ringed: the polarity dot.
+    radiobutton: {
+      root: {
+        checkedBackground: '#ffffff',
+        checkedHoverBackground: '#ffffff',
+        checkedBorderColor: '{primary.700}',
+        checkedHoverBorderColor: '{primary.800}',
+      },
+      icon: { size: '0.75rem', checkedColor: '{primary.700}', checkedHoverColor: '{primary.800}' },
     },
     datatable: {
       headerCell: { background: ink[0], hoverBackground: ink[100], borderColor: ink[900], padding: '0.5rem 0.75rem' },
