@@ -1,0 +1,33 @@
+import { LETTERING } from '../shapes'
+import { addColumns, addParagraphs, addTable, type Flow, newPage } from './flow'
+import type { DrawingInput } from './input'
+import { insulationSection } from './insulation-table'
+import { cautionLines, noteLines, notStated } from './notices'
+import { certificateTable, fieldTable, flyingLeadTable, polymerTable, relatedTable, revisionTable } from './record-tables'
+import { fieldGroups, INSULATION_SYSTEM } from './stated-fields'
+import { testTable } from './test-table'
+
+/** Single-valued fields of core, former, impregnation, marking, packing and compliance. */
+export function dataSheets(flow: Flow, input: DrawingInput): void {
+  const { specification } = input
+  newPage(flow, 'Core, former, marking and packing')
+  const groups = fieldGroups(input).filter(({ title }) => title !== INSULATION_SYSTEM)
+  addColumns(flow, [...groups.map(fieldTable), certificateTable(specification), polymerTable(specification), relatedTable(specification)], 3)
+  addTable(flow, flyingLeadTable(specification))
+}
+
+/** Insulation boundaries, tests, cautions, notes, revisions and what is not stated. */
+export function insulationSheets(flow: Flow, input: DrawingInput): void {
+  const { specification } = input
+  newPage(flow, 'Insulation, tests and notes')
+  const { boundaries, withstand, sources } = insulationSection(input)
+  addTable(flow, boundaries)
+  addTable(flow, withstand)
+  addParagraphs(flow, 'Sources of required values', sources, LETTERING.small)
+  addColumns(flow, fieldGroups(input).filter(({ title }) => title === INSULATION_SYSTEM).map(fieldTable), 3)
+  addTable(flow, testTable(specification))
+  addParagraphs(flow, 'CAUTION', cautionLines(input))
+  addParagraphs(flow, 'Notes', noteLines(specification))
+  addTable(flow, revisionTable(specification))
+  addParagraphs(flow, 'Not stated', notStated(input), LETTERING.small)
+}
