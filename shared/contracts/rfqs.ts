@@ -319,3 +319,7 @@ export const vendorDrawing = defineEndpoint({
   params: z.strictObject({ rfqId: idSchema, lineId: idSchema }),
   download: ['application/pdf'],
 })
+
+/** What a vendor accepts before a drawing opens. */
+export const CONFIDENTIALITY_TEXT =
+  'The drawings and documents of this enquiry are the property of the customer and confidential. We use them only to prepare a quotation and, if ordered, to make the parts; we show them only to those of our people who need them, pass them to nobody else without written consent, and delete them when the customer asks. An agreement signed separately goes before this text.'

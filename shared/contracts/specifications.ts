@@ -216,3 +216,11 @@ export const listReleases = defineEndpoint({
   access: readers,
   response: z.array(z.object({ ...releaseSummarySchema.shape, specificationId: idSchema, current: z.boolean() })),
 })
+
+export const specificationJsonSchema = defineEndpoint({
+  method: 'GET',
+  path: '/api/schemas/winding-specification.json',
+  summary: 'JSON Schema of the winding specification that is attached to each released PDF',
+  access: 'public',
+  response: z.looseObject({}),
+})

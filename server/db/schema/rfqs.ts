@@ -34,6 +34,9 @@ export const rfqs = pgTable(
     /** Incoterms® 2020 rule and named place. */
     deliveryRule: text('delivery_rule').notNull(),
     deliveryPlace: text('delivery_place').notNull(),
+    /** The buyer as vendors are told, kept as it was: they do not see the company's people. */
+    contactName: text('contact_name').notNull(),
+    contactEmail: text('contact_email').notNull(),
     terms: jsonb('terms').$type<RfqTerms>().notNull(),
     issuedAt: timestamptz('issued_at'),
     openingAskedAt: timestamptz('opening_asked_at'),

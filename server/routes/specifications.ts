@@ -1,0 +1,37 @@
+import type { Context } from '#server/context'
+import { asActor } from '#server/db/as-actor'
+import { overrideCheck, returnDraft, submitDraft, withdrawRevision } from '#server/services/specifications/check-draft'
+import { listReleases, listSpecifications, readSpecification } from '#server/services/specifications/list-specifications'
+import { readRevision } from '#server/services/specifications/read-revision'
+import { downloadReleasedDocument, downloadSheets } from '#server/services/specifications/read-sheets'
+import { releaseRevision } from '#server/services/specifications/release-revision'
+import { createNextDraft, createSpecification, saveDraft } from '#server/services/specifications/write-draft'
+import * as contract from '#shared/contracts/specifications'
+import { windingSpecificationSchema } from '#shared/contracts/specification-document'
+import { Router } from 'express'
+import { z } from 'zod'
+import { handle } from './handle'
+
+export function specificationRoutes(ctx: Context): Router {
+  const router = Router()
+
+  handle(router, contract.listSpecifications, ({ actor, query }) => asActor(ctx, actor, (tx) => listSpecifications(tx, actor, query)))
+  handle(router, contract.createSpecification, ({ actor, body }) => asActor(ctx, actor, (tx) => createSpecification(tx, actor, body)))
+  handle(router, contract.getSpecification, ({ actor, params }) => asActor(ctx, actor, (tx) => readSpecification(tx, actor, params.specificationId)))
+  handle(router, contract.getRevision, ({ actor, params }) => asActor(ctx, actor, (tx) => readRevision(tx, actor, params.specificationId, params.revisionId)))
+  handle(router, contract.createDraft, ({ actor, params }) => asActor(ctx, actor, (tx) => createNextDraft(tx, actor, params.specificationId)))
+  handle(router, contract.saveDraft, ({ actor, params, body }) => asActor(ctx, actor, (tx) => saveDraft(tx, actor, params, body.version, body.document)))
+  handle(router, contract.submitDraft, ({ actor, params, body }) => asActor(ctx, actor, (tx) => submitDraft(tx, actor, params, body.version)))
+  handle(router, contract.returnDraft, ({ actor, params, body }) => asActor(ctx, actor, (tx) => returnDraft(tx, actor, params, body.reason)))
+  handle(router, contract.overrideCheck, ({ actor, params, body }) =>
+    asActor(ctx, actor, (tx) => overrideCheck(tx, actor, params, body.code, body.reason)),
+  )
+  handle(router, contract.releaseRevision, ({ actor, params, body }) => releaseRevision(ctx, actor, params, body.version))
+  handle(router, contract.withdrawRevision, ({ actor, params, body }) => asActor(ctx, actor, (tx) => withdrawRevision(tx, actor, params, body.reason)))
+  handle(router, contract.draftPdf, ({ actor, params }) => downloadSheets(ctx, actor, params))
+  handle(router, contract.releasedDocument, ({ actor, params }) => downloadReleasedDocument(ctx, actor, params))
+  handle(router, contract.listReleases, ({ actor }) => asActor(ctx, actor, (tx) => listReleases(tx, actor)))
+  handle(router, contract.specificationJsonSchema, async () => ({ ...z.toJSONSchema(windingSpecificationSchema, { io: 'input' }) }))
+
+  return router
+}
