@@ -4,4 +4,8 @@
 
 export { evaluate } from './evaluate'
 export type { EvaluateOptions } from './evaluate'
+export { blankSpecification, DEFAULT_PREFERENCES, propose, refresh, reproposeTests } from './propose'
+export type { Proposal, ProposalPreferences, ProposalReason, ReasonCode } from './propose'
+export { proposeTests } from './limits'
+export { releaseRecordChecks } from './checks/documentation'
 export { ENGINE_VERSION } from './version'

@@ -1,7 +1,6 @@
 import { coreLoss } from '../losses/core-loss'
 import type { CoreLoss, CoreLossFit } from '../losses/core-loss'
 import type { LossFit } from '../library'
-import { scaleWaveform } from '../waveforms/combine'
 import { attempt, report } from './context'
 import type { Context } from './context'
 import type { CornerState } from './corner-result'
@@ -23,11 +22,12 @@ export interface CoreHeat extends CoreLoss {
 /** Core loss of one corner at a temperature; null without core, loss fit or waveform. */
 export function coreHeat(context: Context, corner: CornerState | null, temperatureC: number): CoreHeat | null {
   const { core, material, sets } = context
-  if (!core || !material || !corner) return null
+  const fluxDensityT = corner?.fluxDensityT
+  if (!core || !material || !fluxDensityT) return null
   const answer = attempt(context, 'core.material', () =>
     coreLoss({
       fits: material.lossFits.map(coreLossFit),
-      fluxDensityT: scaleWaveform(corner.fluxWb, 1 / (core.effectiveAreaMm2 * sets * 1e-6)),
+      fluxDensityT,
       temperatureC,
       path: 'core.material',
     }),

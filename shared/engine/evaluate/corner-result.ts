@@ -11,8 +11,8 @@ export interface WindingWaves {
 export interface CornerState {
   result: CornerResult
   waves: ReadonlyMap<string, WindingWaves>
-  /** Flux linked by one turn, weber. */
-  fluxWb: Waveform
+  /** Flux density on the effective area; null without a core. */
+  fluxDensityT: Waveform | null
 }
 
 export const cornerWinding = (windingId: string, { currentA, voltageV }: WindingWaves): CornerWinding => ({

@@ -1,7 +1,7 @@
 import { seriesCapacitorInductorState } from '../topologies/coupled-inductor'
 import type { CoupledInductorState } from '../topologies/coupled-inductor'
 import { maximum, mean, peakToPeak } from '../waveforms/statistics'
-import { sumWaveforms } from '../waveforms/combine'
+import { scaleWaveform, sumWaveforms } from '../waveforms/combine'
 import type { CoupledInductorDuty, Winding } from '../specification'
 import type { CornerResult } from '../evaluation'
 import { attempt, positive, report } from './context'
@@ -73,9 +73,8 @@ function corner(context: Context, input: ChokeInput, of: ChokeCorner): CornerSta
   const state = attempt(context, 'requirement.duty', () => solve(input, of))
   if (!state) return null
   const { core, sets, primary } = context
-  const areaM2 = core ? core.effectiveAreaMm2 * sets * 1e-6 : null
   const waves = new Map([[primary!.id, state.windings[0]], [input.second.id, state.windings[1]]])
-  const fluxWb = state.fluxWb[0]
+  const fluxDensityT = core ? scaleWaveform(state.fluxWb[0], 1e6 / (core.effectiveAreaMm2 * sets)) : null
   return {
     result: {
       name: of.name,
@@ -83,13 +82,13 @@ function corner(context: Context, input: ChokeInput, of: ChokeCorner): CornerSta
       mode: state.mode,
       dutyRatio: state.dutyCycle,
       windings: [...waves].map(([id, wave]) => cornerWinding(id, wave)),
-      fluxSwingT: areaM2 ? peakToPeak(fluxWb) / areaM2 : null,
-      fluxPeakT: areaM2 ? maximum(fluxWb) / areaM2 : null,
+      fluxSwingT: fluxDensityT && peakToPeak(fluxDensityT),
+      fluxPeakT: fluxDensityT && maximum(fluxDensityT),
       inputPowerW: of.inputV * mean(state.windings[0].currentA),
       switchPeakV: of.inputV + input.duty.outputVoltageV + input.duty.outputDropV,
     },
     waves,
-    fluxWb,
+    fluxDensityT,
   }
 }
 

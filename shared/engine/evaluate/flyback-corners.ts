@@ -2,6 +2,7 @@ import { flybackState } from '../topologies/flyback'
 import type { FlybackState } from '../topologies/flyback'
 import type { CornerResult } from '../evaluation'
 import { worstCaseCurrentLimitA } from '../topologies/flyback-design'
+import { scaleWaveform } from '../waveforms/combine'
 import { maximum, mean, peakToPeak } from '../waveforms/statistics'
 import type { FlybackDuty, Winding } from '../specification'
 import { attempt, positive, report } from './context'
@@ -111,7 +112,7 @@ function stateOf(input: FlybackInput, { name, inputV }: CornerInput, state: Flyb
   const { primary, outputs, duty, areaMm2 } = input
   const waves = new Map<string, WindingWaves>([[primary.id, state.primary]])
   outputs.forEach(({ winding }, index) => waves.set(winding.id, state.outputs[index]!))
-  const areaM2 = areaMm2 === null ? null : areaMm2 * 1e-6
+  const fluxDensityT = areaMm2 === null ? null : scaleWaveform(state.fluxWb, 1e6 / areaMm2)
   return {
     result: {
       name,
@@ -119,13 +120,13 @@ function stateOf(input: FlybackInput, { name, inputV }: CornerInput, state: Flyb
       mode: state.mode,
       dutyRatio: state.dutyCycle,
       windings: [...waves].map(([id, wave]) => cornerWinding(id, wave)),
-      fluxSwingT: areaM2 ? peakToPeak(state.fluxWb) / areaM2 : null,
-      fluxPeakT: areaM2 ? maximum(state.fluxWb) / areaM2 : null,
+      fluxSwingT: fluxDensityT && peakToPeak(fluxDensityT),
+      fluxPeakT: fluxDensityT && maximum(fluxDensityT),
       inputPowerW: inputV * mean(state.primary.currentA),
       switchPeakV: state.switchStressV + (duty.clampSpikeV ?? 0),
     },
     waves,
-    fluxWb: state.fluxWb,
+    fluxDensityT,
   }
 }
 

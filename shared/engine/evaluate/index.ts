@@ -22,6 +22,8 @@ import { reportLibrary } from './library-findings'
 import { buildWire } from './lookup'
 import { magneticsResult } from './magnetics'
 import { heatBalance } from './thermal'
+import { voltageCorner } from './working-voltage'
+import type { VoltageCorners } from './working-voltage'
 import { windingCoppers, windingResults } from './windings'
 import type { WindingCopper } from './windings'
 
@@ -102,12 +104,13 @@ function cornersOf(context: Context, basis: InductanceBasis, coil: Coil | null):
 }
 
 /** The rms working voltage belongs to the rated mains voltage; the recurring peak to the greatest input. */
-function voltageCorners(context: Context, basis: InductanceBasis | null, corners: readonly CornerState[]) {
+function voltageCorners(context: Context, basis: InductanceBasis | null, corners: readonly CornerState[]): VoltageCorners {
   const duty = context.requirement?.duty
-  if (duty?.topology !== 'flyback' || duty.supply.kind !== 'mains' || !basis) return { peak: corners, rms: corners, onMains: false }
+  const peak = corners.map(voltageCorner(context))
+  if (duty?.topology !== 'flyback' || duty.supply.kind !== 'mains' || !basis) return { peak, rms: peak, onMains: false }
   const ratedV = context.specification.insulation.mainsVoltageV.value ?? duty.supply.nominalV
   const rated = flybackCornerAt(context, duty, basis, ratedV * Math.SQRT2)
-  return { peak: corners, rms: rated ? [rated] : corners, onMains: true }
+  return { peak, rms: rated ? [voltageCorner(context)(rated)] : peak, onMains: true }
 }
 
 function massOf({ core, sets, specification }: Context, coppers: readonly WindingCopper[]): MassResult {

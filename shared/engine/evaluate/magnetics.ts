@@ -92,10 +92,12 @@ function worstCurrent(context: Context, basis: InductanceBasis): WorstCurrent | 
   const limit = duty.currentLimit
   if (!limit) return null
   const maximumV = duty.supply.kind === 'dc' ? duty.supply.maximumV : Math.SQRT2 * duty.supply.maximumV
-  const currentA = limit.nominalA * (1 + limit.tolerance) + (maximumV * limit.delayS) / basis.maximumH
+  // The switch of a coupled inductor carries both windings' currents; with more turns on the second they weigh more.
+  const weight = duty.topology === 'coupled-inductor' ? Math.max(1, duty.ratio) : 1
+  const currentA = limit.nominalA * (1 + limit.tolerance) * weight + (maximumV * limit.delayS) / basis.maximumH
   return {
     currentA,
-    formula: 'I_lim·(1 + tol) + V_max·t_d/L_max',
+    formula: weight === 1 ? 'I_lim·(1 + tol) + V_max·t_d/L_max' : 'I_lim·(1 + tol)·N_2/N_1 + V_max·t_d/L_max',
     inputs: [
       { name: 'I_lim', value: limit.nominalA, unit: 'A', origin: 'requirement.duty.currentLimit' }, { name: 'tol', value: limit.tolerance, unit: '', origin: 'requirement.duty.currentLimit' },
       { name: 't_d', value: limit.delayS, unit: 's', origin: 'requirement.duty.currentLimit' }, { name: 'V_max', value: maximumV, unit: 'V', origin: 'requirement.duty.supply' },

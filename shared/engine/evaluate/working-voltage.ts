@@ -1,7 +1,6 @@
 import type { BoundaryEnd, InsulationBoundary, Side, Winding } from '../specification'
-import { differenceOfWaveforms } from '../waveforms/combine'
+import { differenceOfWaveforms, offsetWaveform, scaleWaveform } from '../waveforms/combine'
 import { mean, meanSquare, maximum, minimum } from '../waveforms/statistics'
-import { constantWaveform } from '../waveforms/waveform'
 import type { Waveform } from '../waveforms/waveform'
 import type { Context } from './context'
 import type { CornerState } from './corner-result'
@@ -33,21 +32,38 @@ export function nodesOf(context: Context, corner: CornerState): Node[] {
     if (!wave) return []
     const { voltageV } = wave
     if (winding.id === context.primary?.id) {
-      const supply = constantWaveform(voltageV.periodS, corner.result.inputV)
-      return [node(winding, supply), { ...node(winding, differenceOfWaveforms(supply, voltageV)), spikeV }]
+      const { inputV } = corner.result
+      return [node(winding, steady(voltageV, inputV)), { ...node(winding, offsetWaveform(scaleWaveform(voltageV, -1), inputV)), spikeV }]
     }
-    const rest = constantWaveform(voltageV.periodS, 0)
-    return [node(winding, rest), node(winding, winding.outputId !== null && negative.has(winding.outputId) ? voltageV : differenceOfWaveforms(rest, voltageV))]
+    return [node(winding, steady(voltageV, 0)), node(winding, winding.outputId !== null && negative.has(winding.outputId) ? voltageV : scaleWaveform(voltageV, -1))]
   })
 }
 
 const node = ({ id }: Winding, potentialV: Waveform): Node => ({ windingId: id, potentialV, spikeV: 0 })
 
+/** A potential that stays, with the corners in time of another waveform. */
+const steady = ({ periodS, points }: Waveform, valueV: number): Waveform => ({ periodS, points: points.map(([tS]) => [tS, valueV] as const) })
+
+/** Difference of two potentials; point by point where both change at the same times, as all windings of one core do. */
+function difference(one: Waveform, other: Waveform): Waveform {
+  const same = one.points.length === other.points.length && one.points.every(([tS], index) => tS === other.points[index]![0])
+  if (!same) return differenceOfWaveforms(one, other)
+  return { periodS: one.periodS, points: one.points.map(([tS, value], index) => [tS, value - other.points[index]![1]] as const) }
+}
+
+/** A corner with its nodes, made once for all boundaries. */
+export interface VoltageCorner {
+  corner: CornerState
+  nodes: readonly Node[]
+}
+
+export const voltageCorner = (context: Context) => (corner: CornerState): VoltageCorner => ({ corner, nodes: nodesOf(context, corner) })
+
 export interface VoltageCorners {
   /** Corners in which the recurring peak is looked for. */
-  peak: readonly CornerState[]
+  peak: readonly VoltageCorner[]
   /** Corners in which the rms value is taken: at the rated mains voltage where there is one. */
-  rms: readonly CornerState[]
+  rms: readonly VoltageCorner[]
   /** The primary's return follows the mains: half the time it lies at earth, half the time the input rail does. */
   onMains: boolean
 }
@@ -60,7 +76,7 @@ export interface VoltageCorners {
  * Source: IEC 60664-1:2020, 3.1; bridge rectifier on an earthed supply system.
  */
 export function boundaryVoltage(context: Context, boundary: InsulationBoundary, corners: VoltageCorners): BoundaryVoltage | null {
-  const at = (corner: CornerState) => pairsOf(context, boundary, corner, corners.onMains)
+  const at = (corner: VoltageCorner) => pairsOf(context, boundary, corner, corners.onMains)
   const rmsV = corners.rms.flatMap((corner) => at(corner).map(pairRms))
   const recurringPeakV = corners.peak.flatMap((corner) => at(corner).map(pairPeak))
   if (rmsV.length === 0 || recurringPeakV.length === 0) return null
@@ -76,8 +92,7 @@ interface Pair {
   offsetV: number
 }
 
-function pairsOf(context: Context, boundary: InsulationBoundary, corner: CornerState, onMains: boolean): Pair[] {
-  const nodes = nodesOf(context, corner)
+function pairsOf(context: Context, boundary: InsulationBoundary, { corner, nodes }: VoltageCorner, onMains: boolean): Pair[] {
   const one = nodesAt(context, boundary.between[0], nodes)
   const other = nodesAt(context, boundary.between[1], nodes)
   return one.flatMap((a) =>
@@ -85,7 +100,7 @@ function pairsOf(context: Context, boundary: InsulationBoundary, corner: CornerS
       .filter((b) => b.node.windingId !== a.node.windingId)
       .map((b): Pair => {
         const offsetV = onMains && (a.side === 'primary') !== (b.side === 'primary') ? (a.side === 'primary' ? -1 : 1) * corner.result.inputV : 0
-        return { differenceV: differenceOfWaveforms(a.node.potentialV, b.node.potentialV), upSpikeV: a.node.spikeV, downSpikeV: b.node.spikeV, offsetV }
+        return { differenceV: difference(a.node.potentialV, b.node.potentialV), upSpikeV: a.node.spikeV, downSpikeV: b.node.spikeV, offsetV }
       }),
   )
 }
@@ -94,7 +109,7 @@ function nodesAt(context: Context, end: BoundaryEnd, nodes: readonly Node[]): { 
   if (end.kind === 'core') {
     const side = context.specification.core.potential.value?.side ?? 'floating'
     const first = nodes[0]
-    return first ? [{ node: { windingId: 'core', potentialV: constantWaveform(first.potentialV.periodS, 0), spikeV: 0 }, side }] : []
+    return first ? [{ node: { windingId: 'core', potentialV: steady(first.potentialV, 0), spikeV: 0 }, side }] : []
   }
   const windings = windingsAt(context.specification, end)
   return nodes.flatMap((one) => {

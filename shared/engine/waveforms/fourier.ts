@@ -21,9 +21,16 @@ export interface Harmonic {
  */
 export function harmonics(waveform: Waveform, count: number): Harmonic[] {
   requireCount('count', count)
+  const held = computed.get(waveform)
+  if (held && held.length === count) return held
   const segments = waveformSegments(waveform)
-  return Array.from({ length: count }, (_, index) => harmonicOf(waveform.periodS, segments, index + 1))
+  const list = Array.from({ length: count }, (_, index) => harmonicOf(waveform.periodS, segments, index + 1))
+  computed.set(waveform, list)
+  return list
 }
+
+// A temperature iteration asks for the harmonics of one waveform dozens of times.
+const computed = new WeakMap<Waveform, Harmonic[]>()
 
 function harmonicOf(periodS: number, segments: readonly WaveformSegment[], order: number): Harmonic {
   const omega = (2 * Math.PI * order) / periodS
