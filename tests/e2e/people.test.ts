@@ -1,3 +1,5 @@
+import { asAuth } from '#server/db/as-actor'
+import { createToken } from '#server/services/people/sign-in-tokens'
 import type { Browser, Page } from 'playwright-core'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { launchChromium } from '../support/chromium'
@@ -71,6 +73,48 @@ describe('signing in', () => {
     await page.getByRole('heading', { name: 'Sign in' }).waitFor()
     await page.goto('/people')
     await page.getByRole('heading', { name: 'Sign in' }).waitFor()
+  })
+})
+
+describe('a mail link', () => {
+  async function linkFor(person: TestPerson, purpose: 'invitation' | 'password-reset') {
+    const { token } = await asAuth(test.ctx, (tx) => createToken(tx, { purpose, personId: person.personId, validHours: 1 }))
+    return token
+  }
+
+  it('takes a newcomer from the invitation to the sheet it is about, once', async () => {
+    const newcomer = await buildPerson(test, world.vendors[1]!.company, ['vendor'], { invited: true, name: 'Zoë Marks' })
+    const token = await linkFor(newcomer, 'invitation')
+    const page = await openPage(browser, site.origin)
+    await page.goto(`/link?next=%2Fcustomers#${token}`)
+    await page.getByRole('heading', { name: 'Accept the invitation' }).waitFor()
+    await picture(page, 'accept-invitation')
+    await expectNoSeriousAxe(page)
+    await page.getByLabel('Password', { exact: true }).fill(PASSWORD)
+    await page.getByRole('button', { name: 'Accept and sign in' }).click()
+    await page.getByRole('heading', { name: 'Customers' }).waitFor()
+    await page.getByRole('button', { name: 'Zoë Marks' }).waitFor()
+
+    const again = await openPage(browser, site.origin)
+    await again.goto(`/link#${token}`)
+    await again.getByRole('alert').waitFor()
+    await picture(again, 'link-used')
+    await expectNoSeriousAxe(again)
+  })
+
+  it('sets a new password after a forgotten one', async () => {
+    const page = await openPage(browser, site.origin)
+    await page.goto('/forgotten-password')
+    await page.getByLabel('Mail address').fill(world.quality.email)
+    await picture(page, 'forgotten-password')
+    await page.getByRole('button', { name: 'Send the link' }).click()
+    await page.getByText('a mail with a link is on its way').waitFor()
+
+    await page.goto(`/link#${await linkFor(world.quality, 'password-reset')}`)
+    await page.getByRole('heading', { name: 'Set a new password' }).waitFor()
+    await page.getByLabel('Password', { exact: true }).fill('another quite long password')
+    await page.getByRole('button', { name: 'Set password and sign in' }).click()
+    await page.getByRole('heading', { name: 'Worklist' }).waitFor()
   })
 })
 
