@@ -1,3 +1,4 @@
+import compression from 'compression'
 import express, { type Express } from 'express'
 import { existsSync } from 'node:fs'
 import { fileURLToPath } from 'node:url'
@@ -20,7 +21,7 @@ export function createApp(ctx: Context): Express {
   app.disable('x-powered-by')
   app.set('trust proxy', 'loopback')
   app.set('query parser', 'simple')
-  app.use(requestId, securityHeaders(ctx.config.PUBLIC_URL.startsWith('https:')))
+  app.use(requestId, securityHeaders(ctx.config.PUBLIC_URL.startsWith('https:')), compression())
   app.use('/api', noStore, originCheck(ctx.config), express.json({ limit: '2mb', type: 'application/json' }), session(ctx), rateLimit(ctx))
   for (const router of featureRouters(ctx)) app.use(router)
   app.use('/api', () => {

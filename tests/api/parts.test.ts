@@ -25,7 +25,7 @@ const shipped = shippedLibrary()
 const asDraft = <R extends { version: number }>({ version: _version, ...row }: R) => row
 const sleeve = (id: string) => ({ ...asDraft(shipped.sleeves[0]!), id, name: `Sleeve ${id}` })
 const read = (person: TestPerson, kind: string, id: string) => request(test.app, getPart, { params: { kind, id }, as: person.cookie })
-const change = (person: TestPerson, row: { kind: string; id: string }, basedOn: number, reason = 'Measured on the bench.') =>
+const change = <R extends { kind: string; id: string }>(person: TestPerson, row: R, basedOn: number, reason = 'Measured on the bench.') =>
   request(test.app, changePart, { params: { kind: row.kind, id: row.id }, body: { row, basedOn, reason }, as: person.cookie })
 
 describe('the list', () => {
@@ -103,6 +103,7 @@ describe('the library for the engine', () => {
     const first = await request(test.app, getLibrary, { as: stranger.cookie }).expect(200)
     await request(test.app, getLibrary, { as: stranger.cookie }).set('if-none-match', first.headers.etag!).expect(304)
     expect(first.headers['cache-control']).toBe('private, no-cache')
+    expect(first.headers['content-encoding']).toBe('gzip')
   })
 })
 
