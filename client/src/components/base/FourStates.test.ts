@@ -23,6 +23,11 @@ describe('FourStates', () => {
     expect(wrapper.emitted('retry')).toHaveLength(1)
   })
 
+  it('offers no second try for what stays refused', () => {
+    const refused = Object.assign(new Error('This link has expired.'), { code: 'link-expired' })
+    expect(show({ status: 'error', error: refused }).find('button').exists()).toBe(false)
+  })
+
   it('shows a sentence instead of an empty table', () => {
     expect(show({ status: 'success', error: null, data: [] }).text()).toBe('No core fits.')
   })
