@@ -69,7 +69,7 @@ const statuses = ({ document }: CheckInput): Outcome[] => {
 
 function packing({ document }: CheckInput): Outcome[] {
   const { packing: pack, marking } = document.specification
-  const complete = pack.form.value !== null && pack.piecesPerPack.value !== null && (marking.content.value?.length ?? 0) > 0
+  const complete = pack.form.value !== null && (pack.piecesPerPack.value !== null || pack.piecesPerPack.status === 'vendor-choice') && (marking.content.value?.length ?? 0) > 0
   return [yesNo(complete, 'packing.form')]
 }
 

@@ -27,6 +27,31 @@ function currentDensity(input: CheckInput): Outcome[] {
   return byWinding(input, ({ currentDensityAPerMm2 }) => currentDensityAPerMm2, { steps, unit: 'A/mm²', field: 'wire' })
 }
 
+/** Where the alternating current makes less of the loss than this, skin and proximity decide nothing. */
+const SMALL_AC_LOSS_SHARE = 0.25
+
+/** Share of a winding's copper loss that its alternating current makes, in the corner of the losses; null where not known. */
+function acLossShare({ evaluation }: CheckInput, index: number): number | null {
+  const result = evaluation.windings[index]
+  const current = evaluation.corners.find(({ name }) => name === evaluation.losses.corner)?.windings.find(({ windingId }) => windingId === result?.windingId)
+  if (!current || result?.acFactor == null) return null
+  const acLoss = result.acFactor * current.acRmsA ** 2
+  return acLoss > 0 ? acLoss / (acLoss + current.dcA ** 2) : 0
+}
+
+const nearlyDirect = (input: CheckInput, index: number) => {
+  const share = acLossShare(input, index)
+  return share !== null && share < SMALL_AC_LOSS_SHARE
+}
+
+const windingIndex = ({ path }: Outcome) => Number(path.split('.')[1])
+
+/** A winding whose current is nearly direct meets the rules of alternating current. */
+const unlessDirect = (input: CheckInput) => (outcome: Outcome): Outcome => {
+  if (outcome.state !== 'not-met' || !nearlyDirect(input, windingIndex(outcome))) return outcome
+  return { ...outcome, state: 'met', values: { ...outcome.values, acLossShare: acLossShare(input, windingIndex(outcome))! } }
+}
+
 function skinDepth(input: CheckInput): Outcome[] {
   const { windings } = input.document.specification
   return input.evaluation.windings.flatMap((result, index) => {
@@ -35,13 +60,14 @@ function skinDepth(input: CheckInput): Outcome[] {
     if (winding.role === 'shield' || !wire || wire.form === 'foil') return []
     const limit = result.skinDepthMm === null ? null : result.skinDepthMm * (wire.form === 'litz' ? 1 / 3 : 2)
     return [atMost({ value: wire.conductorMm, limit, unit: 'mm', path: `windings.${index}.wire`, values: { winding: winding.name } })]
-  })
+  }).map(unlessDirect(input))
 }
 
 const resistanceFactor = (input: CheckInput) =>
   byWinding(input, ({ acFactor }) => acFactor, { steps: [{ above: 4, severity: 'S' }, { above: 2.5, severity: 'M' }, { above: 1.5, severity: 'N' }], unit: '1', field: 'wire' })
     // A winding without alternating current has no factor, and nothing to check.
-    .filter((outcome, index) => outcome.state !== 'not-checkable' || input.evaluation.windings[index]?.copperLossW !== 0)
+    .filter((outcome) => outcome.state !== 'not-checkable' || input.evaluation.windings[windingIndex(outcome)]?.copperLossW !== 0)
+    .map(unlessDirect(input))
 
 const lossDensity = ({ evaluation }: CheckInput): Outcome[] => [atMost({ value: evaluation.losses.coreDensityWPerM3, limit: 300e3, unit: 'W/m³', path: 'core.material' })]
 

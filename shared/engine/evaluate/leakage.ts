@@ -50,17 +50,29 @@ export interface StackLeakageInput {
 }
 
 /**
- * Leakage inductance in henry at the driven winding with one or several others shorted. Several share the current so
- * that the field energy is least, as windings without resistance do: L = L₀/(1ᵀ·M⁻¹·1) with M of `mmfProductMm`.
+ * How several shorted windings share the ampere-turns: so that the field energy is least, as windings without resistance
+ * do. `heightMm` is the integral that is left, 1/(1ᵀ·M⁻¹·1) with M of `mmfProductMm`.
  *
  * Source: as `mmfProductMm`; energy minimum of shorted windings (Thomson's theorem).
  */
-export function stackLeakageH({ turns, meanTurnLengthMm, breadthMm, driven, shorted }: StackLeakageInput): number | null {
+export function shortedShares(driven: readonly Slab[], shorted: readonly (readonly Slab[])[]): { shares: number[]; heightMm: number } | null {
   const matrix = shorted.map((one) => shorted.map((other) => mmfProductMm(driven, one, other)))
   const weights = solveLinear(matrix, shorted.map(() => 1))
   const inverse = weights?.reduce((sum, weight) => sum + weight, 0)
-  if (!inverse || !(inverse > 0) || !(breadthMm > 0)) return null
-  return (MU_0_H_PER_M * turns ** 2 * meanTurnLengthMm * 1e-3) / (breadthMm * inverse)
+  if (!weights || !inverse || !(inverse > 0)) return null
+  return { shares: weights.map((weight) => weight / inverse), heightMm: 1 / inverse }
+}
+
+/**
+ * Leakage inductance in henry at the driven winding with one or several others shorted, µ₀·N²·MLT/b times the height of
+ * `shortedShares`; null where the windings lie in one place.
+ *
+ * Source: E. Snelling, Soft Ferrites, 2nd ed., ch. 11.
+ */
+export function stackLeakageH({ turns, meanTurnLengthMm, breadthMm, driven, shorted }: StackLeakageInput): number | null {
+  const solution = shortedShares(driven, shorted)
+  if (!solution || !(breadthMm > 0)) return null
+  return (MU_0_H_PER_M * turns ** 2 * meanTurnLengthMm * 1e-3 * solution.heightMm) / breadthMm
 }
 
 /** Gauss elimination with pivots; null for a singular matrix. */
@@ -101,14 +113,24 @@ export function leakageBetweenH(coil: Coil, driven: Winding, shorted: readonly W
   const all = [own, ...each].flat()
   // Windings beside each other in sections have their field across the coil.
   if (new Set(all.map(({ section }) => section)).size > 1) return null
-  const mean = (values: readonly number[]) => values.reduce((sum, value) => sum + value, 0) / values.length
+  const slabs = { driven: slabsOf(own), shorted: each.map(slabsOf) }
+  const shares = shortedShares(slabs.driven, slabs.shorted)?.shares.map((share) => Math.max(0, share))
+  if (!shares) return null
+  // Half by the driven winding, half by the shorted ones as they share the current.
+  const mean = (ofDriven: number, ofShorted: readonly number[]) => (ofDriven + weighted(ofShorted, shares)) / 2
+  const breadthOf = (placements: readonly StepPlacement[]) => weighted(placements.map(({ leftMm, rightMm }) => rightMm - leftMm), placements.map(() => 1))
+  const turnOf = ({ id }: Winding) => coil.windings.get(id)!.meanTurnLengthMm
   return stackLeakageH({
+    ...slabs,
     turns: driven.turns,
-    meanTurnLengthMm: mean([driven, ...shorted].map(({ id }) => coil.windings.get(id)!.meanTurnLengthMm)),
-    breadthMm: mean([own, ...each].map((placements) => mean(placements.map(({ leftMm, rightMm }) => rightMm - leftMm)))),
-    driven: slabsOf(own),
-    shorted: each.map(slabsOf),
+    meanTurnLengthMm: mean(turnOf(driven), shorted.map(turnOf)),
+    breadthMm: mean(breadthOf(own), each.map(breadthOf)),
   })
+}
+
+function weighted(values: readonly number[], weights: readonly number[]): number {
+  const sum = weights.reduce((total, weight) => total + weight, 0)
+  return values.reduce((total, value, index) => total + value * weights[index]!, 0) / sum
 }
 
 const placementsOf = (coil: Coil, windingId: string) => coil.placements.filter((placement) => placement.windingId === windingId)

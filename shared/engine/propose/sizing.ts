@@ -1,6 +1,7 @@
 import { flybackState } from '../topologies/flyback'
 import type { FlybackState } from '../topologies/flyback'
-import { rms } from '../waveforms/statistics'
+import { acRms, rms } from '../waveforms/statistics'
+import type { Waveform } from '../waveforms/waveform'
 import { outputPowerW, supplyRange } from '../evaluate/supply'
 import type { SupplyRange } from '../evaluate/supply'
 import type { FlybackDuty } from '../specification'
@@ -151,8 +152,21 @@ export function flybackAt(duty: FlybackDuty, turns: TurnsChoice, { inputV, induc
   })
 }
 
-/** Largest rms currents over the input range, primary first, then the outputs in their order. */
-export function largestRms(duty: FlybackDuty, turns: TurnsChoice, sizing: FlybackSizing): number[] {
+export interface CurrentLoad {
+  rmsA: number
+  /** Alternating over total rms. */
+  acShare: number
+}
+
+/** The greatest rms current of a winding over several states, with its alternating share. */
+export function greatestLoad(currents: readonly Waveform[]): CurrentLoad {
+  const greatest = currents.reduce((most, current) => (rms(current) > rms(most) ? current : most))
+  const rmsA = rms(greatest)
+  return { rmsA, acShare: rmsA > 0 ? acRms(greatest) / rmsA : 0 }
+}
+
+/** Largest currents over the input range, primary first, then the outputs in their order. */
+export function largestLoads(duty: FlybackDuty, turns: TurnsChoice, sizing: FlybackSizing): CurrentLoad[] {
   const states = [sizing.range.minimumV, sizing.range.nominalV, sizing.range.maximumV].map((inputV) => flybackAt(duty, turns, { inputV, inductanceH: sizing.inductanceH }))
-  return [0, ...duty.outputs.map((_, index) => index + 1)].map((position) => Math.max(...states.map(({ primary, outputs }) => rms(position === 0 ? primary.currentA : outputs[position - 1]!.currentA))))
+  return [greatestLoad(states.map(({ primary }) => primary.currentA)), ...duty.outputs.map((_, index) => greatestLoad(states.map(({ outputs }) => outputs[index]!.currentA)))]
 }

@@ -1,0 +1,30 @@
+import type { CoreRow, FormerRow, MaterialRow } from '../library'
+import type { InsulationMethod, Side, Winding, WireUse } from '../specification'
+
+/** One winding before it has pins. */
+export interface PlannedWinding {
+  id: string
+  name: string
+  role: Winding['role']
+  side: Side
+  outputId: string | null
+  turns: number
+  wire: WireUse
+  /** Decides the order in the coil: the strongest secondary lies nearest to the primary. */
+  powerW: number
+}
+
+/** Everything a proposal has decided before it is written out as a document. */
+export interface Design {
+  core: CoreRow
+  former: FormerRow
+  material: MaterialRow
+  windings: PlannedWinding[]
+  inductanceH: number
+  method: InsulationMethod
+  /** Primary and secondaries are kept apart to protect people. */
+  protective: boolean
+  onMains: boolean
+  interleaved: boolean
+  marginMm: number
+}

@@ -1,0 +1,108 @@
+import { evaluate } from '../evaluate'
+import { indexLibrary } from '../evaluate/lookup'
+import type { Finding } from '../findings'
+import type { Library } from '../library'
+import { proposeTests } from '../limits'
+import type { RequirementSheet, SpecificationDocument } from '../specification'
+import { blankSpecification } from './blank'
+import { derive } from './derive'
+import { chooseMaterial } from './material'
+import { planOf } from './plan'
+import type { Plan } from './plan'
+import { ratioFindings } from './plan-flyback'
+import { DEFAULT_PREFERENCES } from './preferences'
+import type { ProposalPreferences } from './preferences'
+import type { ProposalReason } from './reasons'
+import { searchCore } from './search'
+import type { Candidate, SearchResult } from './search'
+import { isProposed } from './stated'
+
+export { blankSpecification } from './blank'
+export { DEFAULT_PREFERENCES } from './preferences'
+export type { ProposalPreferences } from './preferences'
+export type { ProposalReason, ReasonCode } from './reasons'
+
+export interface Proposal {
+  document: SpecificationDocument
+  /** What the engineer should look at before believing it. */
+  findings: Finding[]
+  reasons: ProposalReason[]
+}
+
+/**
+ * A whole winding specification from a requirement sheet: ratio, inductance, material, core, turns, gap, wires, pins, sequence,
+ * insulation boundaries, notes, defaults and test table. Every field says that it was proposed.
+ *
+ * A sheet that cannot be solved gives a blank specification with findings that say why.
+ */
+export function propose(requirement: RequirementSheet, library: Library, preferences: Partial<ProposalPreferences> = {}): Proposal {
+  const wishes = { ...DEFAULT_PREFERENCES, ...preferences }
+  const plan = solved(requirement)
+  if ('finding' in plan) return blankProposal(requirement, [plan.finding])
+  const choice = chooseMaterial(library, plan.frequencyHz, wishes.materialId)
+  const findings = [...plan.findings, ...choice.findings]
+  if (!choice.material || library.tapes.length === 0) return blankProposal(requirement, findings)
+
+  const result = searchCore({ requirement, plan, material: choice.material, library, index: indexLibrary(library), preferences: wishes })
+  if (!result.chosen) return blankProposal(requirement, [...findings, { code: 'no-core-fits', severity: 'error', path: 'core.core', values: { tried: result.rejected.length } }])
+  const document = completed(result.chosen.document, library)
+  return {
+    document,
+    findings: [...findings, ...choiceFindings(requirement, result), ...evaluate(document, library).findings],
+    reasons: [...plan.reasons, ...choice.reasons, ...choiceReasons(result.chosen, result)],
+  }
+}
+
+function solved(requirement: RequirementSheet): Plan | { finding: Finding } {
+  try {
+    return planOf(requirement)
+  } catch (error) {
+    if (!(error instanceof RangeError)) throw error
+    return { finding: { code: 'duty-not-solvable', severity: 'error', path: 'requirement.duty', values: { reason: error.message } } }
+  }
+}
+
+const blankProposal = (requirement: RequirementSheet, findings: Finding[]): Proposal => ({ document: { specification: blankSpecification(), requirement }, findings, reasons: [] })
+
+/** Twice: the second time distances and certificates follow from the voltages as they now stand, rounded up, in the document. */
+const completed = (document: SpecificationDocument, library: Library): SpecificationDocument => {
+  const once = derive(document, evaluate(document, library))
+  return derive(once, evaluate(once, library))
+}
+
+function choiceFindings({ duty }: RequirementSheet, { chosen, rejected }: SearchResult): Finding[] {
+  const notFitting: Finding[] = chosen?.rejection ? [{ code: 'no-core-fits', severity: 'error', path: 'core.core', values: { tried: rejected.length, reason: chosen.rejection } }] : []
+  if (duty.topology !== 'flyback' || !chosen) return notFitting
+  const turnsOf = (outputId: string) => chosen.design.windings.find((winding) => winding.outputId === outputId)?.turns ?? 1
+  return [...notFitting, ...ratioFindings(duty, turnsOf)]
+}
+
+function choiceReasons({ design, evaluation }: Candidate, { rejected }: SearchResult): ProposalReason[] {
+  return [
+    { code: 'smallest-core-that-fits', path: 'core.core', values: { core: design.core.name, former: design.former.name, tried: rejected.length + 1 } },
+    ...rejected.slice(-8).map(({ core, rejection }): ProposalReason => ({ code: 'core-rejected', path: 'core.core', values: { core, reason: rejection } })),
+    { code: 'turns-from-flux', path: 'windings.0.turns', values: { turns: design.windings[0]!.turns, fluxWorstT: evaluation.magnetics.fluxWorstT ?? 0, saturationT: evaluation.magnetics.saturationT ?? 0 } },
+    ...design.windings.map(({ name, wire }, index): ProposalReason => ({ code: 'wire-from-density-and-skin-depth', path: `windings.${index}.wire`, values: { winding: name, parallel: wire.parallel, wire: wire.wire.id, currentDensityAPerMm2: evaluation.windings[index]?.currentDensityAPerMm2 ?? 0 } })),
+    ...(design.interleaved ? [{ code: 'primary-in-two-halves' as const, path: 'sequence', values: {} }] : []),
+    ...(design.method === 'margin-tape' ? [{ code: 'margins-from-creepage' as const, path: 'sequence', values: { marginMm: design.marginMm } }] : []),
+    ...(design.method === 'triple-insulated-wire' ? [{ code: 'insulated-wire' as const, path: 'windings', values: {} }] : []),
+  ]
+}
+
+/**
+ * The document with every proposed figure brought up to date after an edit: A_L and gap, currents, limits, boundaries' values and
+ * proposed test rows. What a person entered stays.
+ */
+export function refresh(document: SpecificationDocument, library: Library): SpecificationDocument {
+  const { specification } = document
+  // The boundaries' own voltages would only ever rise if the old ones were taken as stated.
+  const boundaries = specification.insulation.boundaries.map((boundary) => (isProposed(boundary) ? { ...boundary, workingVoltageVRms: null, recurringPeakV: null } : boundary))
+  const plain: SpecificationDocument = { ...document, specification: { ...specification, insulation: { ...specification.insulation, boundaries } } }
+  return completed(plain, library)
+}
+
+/** The test table brought up to date with the document's limits; rows that a person entered stay as they are. */
+export function reproposeTests(document: SpecificationDocument): SpecificationDocument {
+  const { specification } = document
+  return { ...document, specification: { ...specification, tests: proposeTests(document, specification.tests) } }
+}

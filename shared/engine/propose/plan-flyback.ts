@@ -1,0 +1,75 @@
+import { outputPowerW } from '../evaluate/supply'
+import type { FlybackDuty } from '../specification'
+import type { Finding } from '../findings'
+import type { Plan, WindingNeed } from './plan'
+import type { ProposalReason } from './reasons'
+import { chooseTurns, largestLoads, sizeFlyback } from './sizing'
+
+/** Error of an output's voltage by whole turns that is worth saying. */
+const WORTH_SAYING = { main: 0.01, auxiliary: 0.08 }
+
+/** A flyback solved for ratio and inductance; turns and currents follow for each core. @throws RangeError when the duty cannot be solved */
+export function planFlyback(duty: FlybackDuty): Plan {
+  const sizing = sizeFlyback(duty)
+  return {
+    frequencyHz: duty.switchingFrequencyHz,
+    inductanceH: sizing.inductanceH,
+    powerW: outputPowerW(duty),
+    onMains: duty.supply.kind === 'mains',
+    worstCurrentA: sizing.worstCurrent,
+    windings: (least) => windingNeeds(duty, sizing, least),
+    findings: sizing.findings,
+    reasons: sizingReasons(duty, sizing),
+  }
+}
+
+function windingNeeds(duty: FlybackDuty, sizing: ReturnType<typeof sizeFlyback>, least: number): WindingNeed[] {
+  const turns = chooseTurns(duty, sizing.ratio, least)
+  const loads = largestLoads(duty, turns, sizing)
+  const names = outputNames(duty)
+  return [
+    { id: 'w1', name: 'P', role: 'primary', side: 'primary', outputId: null, turns: turns.primary, ...loads[0]!, powerW: outputPowerW(duty) },
+    ...duty.outputs.map((output, index): WindingNeed => ({
+      id: `w${index + 2}`,
+      name: names[index]!,
+      role: output.role === 'auxiliary' ? 'auxiliary' : 'secondary',
+      side: output.side,
+      outputId: output.id,
+      turns: turns.outputs.get(output.id)!,
+      ...loads[index + 1]!,
+      powerW: Math.abs(output.voltageV) * output.fullLoadCurrentA,
+    })),
+  ]
+}
+
+/** `S1`, `S2` … for the outputs and `AUX` for a single auxiliary one. */
+function outputNames({ outputs }: FlybackDuty): string[] {
+  const auxiliaries = outputs.filter(({ role }) => role === 'auxiliary').length
+  let secondary = 0
+  let auxiliary = 0
+  return outputs.map(({ role }) => {
+    if (role !== 'auxiliary') return `S${++secondary}`
+    return auxiliaries > 1 ? `AUX${++auxiliary}` : 'AUX'
+  })
+}
+
+function sizingReasons(duty: FlybackDuty, sizing: ReturnType<typeof sizeFlyback>): ProposalReason[] {
+  const { ratio, dutyRatio, reflectedV, inductanceH } = sizing
+  const values = { ratio, dutyRatio, reflectedV, minimumV: sizing.range.minimumV }
+  const inductance = { discontinuous: 'inductance-for-idle-share', boundary: 'inductance-for-boundary', continuous: 'inductance-from-ripple' } as const
+  return [
+    { code: duty.reflectedVoltageV === null ? 'ratio-from-duty' : 'ratio-from-reflected-voltage', path: 'windings', values },
+    { code: inductance[duty.conduction.kind], path: 'electrical.inductance', values: { inductanceH, peakA: sizing.peakA, frequencyHz: duty.switchingFrequencyHz } },
+  ]
+}
+
+/** Outputs whose voltage whole turns miss, once the turns are chosen. */
+export function ratioFindings(duty: FlybackDuty, turnsOf: (outputId: string) => number): Finding[] {
+  const main = duty.outputs.find(({ role }) => role === 'main') ?? duty.outputs[0]!
+  const perTurnV = (Math.abs(main.voltageV) + main.rectifierDropV) / turnsOf(main.id)
+  return duty.outputs.flatMap((output, index): Finding[] => {
+    const error = (perTurnV * turnsOf(output.id)) / (Math.abs(output.voltageV) + output.rectifierDropV) - 1
+    if (Math.abs(error) <= WORTH_SAYING[output.role]) return []
+    return [{ code: 'ratio-compromise', severity: output.role === 'main' ? 'warning' : 'note', path: `requirement.duty.outputs.${index}`, values: { output: output.name, error } }]
+  })
+}
