@@ -7,7 +7,7 @@ export type PartEntry = Record<string, unknown> & { kind: LibraryKind; id: strin
 
 /** An empty row of a kind: every field is there, choices at their first answer. */
 export function blankPart(kind: LibraryKind): PartEntry {
-  const entry: PartEntry = { kind, id: '', name: '', source: '', edition: '', confidence: 'high', unverified: [], note: '' }
+  const entry: PartEntry = { kind, id: '', name: '', source: '', edition: '', confidence: 'medium', unverified: [], note: '' }
   for (const field of partFields(kind)) place(entry, field.path.split('.'), blankValue(field))
   return entry
 }
