@@ -7,7 +7,14 @@ export interface Logger {
   error(message: string, fields?: LogFields): void
 }
 
-const plain = (value: unknown) => (value instanceof Error ? { name: value.name, message: value.message, stack: value.stack, cause: value.cause } : value)
+/** The query builder puts the parameters of a failed query into its message: prices and addresses among them. */
+const withoutParameters = (text: string | undefined) => text?.replace(/\nparams: [^]*?(?=\n {4}at |$)/, '')
+
+function plain(value: unknown): unknown {
+  if (!(value instanceof Error)) return value
+  const code = 'code' in value && typeof value.code === 'string' ? value.code : undefined
+  return { name: value.name, code, message: withoutParameters(value.message), stack: withoutParameters(value.stack), cause: value.cause && plain(value.cause) }
+}
 
 /** One JSON object a line. Never hand it a body, a token, a price or an address. */
 export function createLogger(write: (line: string) => void = (line) => process.stderr.write(line)): Logger {
