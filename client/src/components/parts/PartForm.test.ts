@@ -48,7 +48,7 @@ describe('PartForm', () => {
     await entryOf(form, 'Widths sold').setValue('3; 3,2; 4')
     await entryOf(form, 'Why').setValue('Measured.')
     await form.trigger('submit')
-    const [[row, reason, basedOn]] = form.emitted<[PartEntry, string, number]>('submit')!
+    const [row, reason, basedOn] = form.emitted<[PartEntry, string, number]>('submit')![0]!
     expect(row).toEqual({ ...tape(), thicknessMm: 0.2, widthsMm: [3, 3.2, 4] })
     expect([reason, basedOn]).toEqual(['Measured.', 1])
     expect(tapeDraftSchema.safeParse(row).error).toBeUndefined()
