@@ -6,6 +6,7 @@ export const POINTS_PER_MM = 72 / 25.4
 
 /** Draws shapes into a document that is scaled to millimetres; `heightMm` turns their y upwards. */
 export function renderShapes(doc: PDFKit.PDFDocument, shapes: readonly Shape[], heightMm: number): void {
+  doc.lineJoin('round').lineCap('butt')
   for (const shape of shapes) renderShape(doc, shape, heightMm)
 }
 

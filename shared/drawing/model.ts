@@ -35,7 +35,7 @@ export type Align = 'start' | 'middle' | 'end'
 export type Ink = 'ink' | 'faint'
 
 /** `faint` is for marks that lie below the drawing. Solid, since it must print without transparency. */
-export const INK_COLOURS: Record<Ink, string> = { ink: '#000000', faint: '#dedede' }
+export const INK_COLOURS: Record<Ink, string> = { ink: '#000000', faint: '#e2e2e2' }
 
 /** A straight step, or an arc of at most half a turn; `turn` is seen from above, y upwards. */
 export type PathStep = { to: PointMm } | { to: PointMm; radiusMm: number; turn: 'left' | 'right' }

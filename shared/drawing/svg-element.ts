@@ -21,7 +21,7 @@ const tagOf = (shape: Shape): Record<string, string> => (shape.tag === undefined
 function stroke(shape: PathShape | CircleShape): Record<string, string> {
   const { widthMm, dashMm } = LINES[shape.layer]
   if (shape.kind === 'path' && !shape.stroked) return { stroke: 'none' }
-  return { stroke: '#000000', 'stroke-width': String(widthMm), ...(dashMm.length > 0 && { 'stroke-dasharray': dashMm.join(' ') }) }
+  return { stroke: '#000000', 'stroke-width': String(widthMm), 'stroke-linejoin': 'round', ...(dashMm.length > 0 && { 'stroke-dasharray': dashMm.join(' ') }) }
 }
 
 const fillColour = (shape: PathShape | CircleShape) => (shape.fill === 'none' ? 'none' : FILL_COLOURS[shape.fill])

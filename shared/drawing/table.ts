@@ -34,7 +34,7 @@ interface RowLayout {
 }
 
 const CAPTION_MM = 5.2
-const ROW_PADDING_MM = 0.75
+const ROW_PADDING_MM = 0.7
 /** Rows with more lines than this are cut, so that any row fits a sheet. */
 const MOST_LINES = 36
 

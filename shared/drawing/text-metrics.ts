@@ -136,6 +136,14 @@ function cutHard(part: string, fits: (line: string) => boolean): string[] {
   return pieces
 }
 
+/** The text, or as much of its beginning as fits with `…` behind it; for marks whose full text stands elsewhere. */
+export function shortenedText(text: string, font: FontRole, heightMm: number, widthMm: number): string {
+  if (textWidthMm(text, font, heightMm) <= widthMm) return text
+  const characters = [...text]
+  while (characters.length > 1 && textWidthMm(`${characters.join('')}…`, font, heightMm) > widthMm) characters.pop()
+  return `${characters.join('')}…`
+}
+
 /** Width of the widest piece of text that is not broken unless it must be, mm. */
 export const longestWordMm = (text: string, font: FontRole, heightMm: number): number =>
   Math.max(0, ...text.split(/[ \n]/).map((word) => textWidthMm(word, font, heightMm)))

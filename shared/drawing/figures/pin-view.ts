@@ -2,7 +2,7 @@ import type { WindingSpecification } from '../../engine/specification'
 import type { BoxMm, Picture, PointMm, Shape } from '../model'
 import { box, circle, label, LETTERING, line, moved, polyline, rectangle } from '../shapes'
 import { terminals, type Terminal } from '../sheets/terminals'
-import { textWidthMm } from '../text-metrics'
+import { shortenedText, textWidthMm } from '../text-metrics'
 
 export type View = 'top' | 'bottom'
 
@@ -16,6 +16,9 @@ interface Placed {
 const NUMBER_MM = LETTERING.body
 const USE_MM = LETTERING.small
 const TITLE_MM = 5.5
+const STRETCH = 1.5
+/** Longer uses are shortened; the table of terminals has them whole. */
+const USE_LIMIT_MM = 12
 
 /** Pin-out seen from above the board or from below it, from the one pin model: the bottom view is its mirror image. */
 export function pinView(specification: WindingSpecification, view: View, widthMm: number, heightMm: number): Picture {
@@ -24,9 +27,9 @@ export function pinView(specification: WindingSpecification, view: View, widthMm
   const rows = rowDirection(all)
   const margin = labelMarginMm(all)
   const room = rows === 'horizontal' ? { x: widthMm - 4, y: heightMm - TITLE_MM - 2 * margin } : { x: widthMm - 2 * margin, y: heightMm - TITLE_MM - 4 }
-  const scale = Math.min(room.x / body.xMm, room.y / body.yMm)
+  const scale = viewScale(room, body)
   const placed = all.map((terminal) => place(terminal, view, scale, rows))
-  const half = { x: (body.xMm * scale) / 2, y: (body.yMm * scale) / 2 }
+  const half = { x: (body.xMm * scale.x) / 2, y: (body.yMm * scale.y) / 2 }
   const outline = box(-half.x, -half.y, 2 * half.x, 2 * half.y)
   const shapes: Shape[] = [
     rectangle(outline, { layer: 'outline' }),
@@ -37,6 +40,17 @@ export function pinView(specification: WindingSpecification, view: View, widthMm
   return { widthMm, heightMm, shapes: moved(shapes, widthMm / 2, (heightMm - TITLE_MM) / 2 + TITLE_MM) }
 }
 
+interface Scale {
+  x: number
+  y: number
+}
+
+/** The view is not to scale: either way it may be stretched by half, so that the numbers have room. */
+function viewScale(room: Scale, body: { xMm: number; yMm: number }): Scale {
+  const [x, y] = [room.x / body.xMm, room.y / body.yMm]
+  return { x: Math.min(x, y * STRETCH), y: Math.min(y, x * STRETCH) }
+}
+
 function viewText({ former }: WindingSpecification, view: View): string {
   const text = view === 'top' ? 'TOP VIEW' : 'BOTTOM VIEW'
   return former.pinView.value === view ? `${text}, governs` : text
@@ -45,8 +59,8 @@ function viewText({ former }: WindingSpecification, view: View): string {
 function bodySize(specification: WindingSpecification, all: readonly Terminal[]): { xMm: number; yMm: number } {
   const envelope = specification.former.envelope.value
   const span = (values: number[]) => 2 * Math.max(1, ...values.map(Math.abs))
-  const x = span(all.map(({ pin }) => pin!.xMm)) + 3
-  const y = span(all.map(({ pin }) => pin!.yMm)) + 3
+  const x = span(all.map(({ pin }) => pin!.xMm)) + 5
+  const y = span(all.map(({ pin }) => pin!.yMm)) + 5
   return { xMm: Math.max(x, envelope?.lengthMm ?? 0), yMm: Math.max(y, envelope?.widthMm ?? 0) }
 }
 
@@ -55,9 +69,9 @@ function rowDirection(all: readonly Terminal[]): 'horizontal' | 'vertical' {
   return distinct(all.map(({ pin }) => pin!.yMm)) <= distinct(all.map(({ pin }) => pin!.xMm)) ? 'horizontal' : 'vertical'
 }
 
-function place(terminal: Terminal, view: View, scale: number, rows: 'horizontal' | 'vertical'): Placed {
+function place(terminal: Terminal, view: View, scale: Scale, rows: 'horizontal' | 'vertical'): Placed {
   const mirror = view === 'bottom' ? -1 : 1
-  const at: PointMm = [mirror * terminal.pin!.xMm * scale, terminal.pin!.yMm * scale]
+  const at: PointMm = [mirror * terminal.pin!.xMm * scale.x, terminal.pin!.yMm * scale.y]
   const outward: PointMm = rows === 'horizontal' ? [0, at[1] < 0 ? -1 : 1] : [at[0] < 0 ? -1 : 1, 0]
   return { terminal, at, outward }
 }
@@ -71,7 +85,7 @@ export function useText({ pin, uses, core }: Terminal): string {
   return pin?.state === 'no-connection' ? 'NC' : 'free'
 }
 
-const labelMarginMm = (all: readonly Terminal[]) => 4 + Math.max(4, ...all.map((each) => textWidthMm(useText(each), 'sans', USE_MM)))
+const labelMarginMm = (all: readonly Terminal[]) => 4 + Math.min(USE_LIMIT_MM, Math.max(4, ...all.map((each) => textWidthMm(useText(each), 'sans', USE_MM))))
 
 function pinShapes({ terminal, at, outward }: Placed, outline: BoxMm, specification: WindingSpecification): Shape[] {
   const tag = `pin:${terminal.name}`
@@ -82,7 +96,7 @@ function pinShapes({ terminal, at, outward }: Placed, outline: BoxMm, specificat
     ...pinSymbol(terminal, at, specification, tag),
     numberLabel(terminal.name, at, outward, tag),
     ...(dotted ? [circle([start[0] + outward[0] * 0.5, start[1] + outward[1] * 0.5], 0.7, { layer: 'symbol', fill: 'ink', tag })] : []),
-    useLabel(useText(terminal), start, outward, tag),
+    useLabel(shortenedText(useText(terminal), 'sans', USE_MM, USE_LIMIT_MM), start, outward, tag),
   ]
 }
 

@@ -5,7 +5,7 @@ import { circle, label, LETTERING, line, moved, path } from '../shapes'
 import { rowName } from '../sheets/input'
 import { tapsOf } from '../sheets/terminals'
 import { SIDE_WORDS } from '../sheets/words'
-import { textWidthMm } from '../text-metrics'
+import { shortenedText, textWidthMm } from '../text-metrics'
 
 export interface SchematicInput {
   specification: WindingSpecification
@@ -160,12 +160,21 @@ function lead({ reach }: Pen, x: number, y: number, name: string, hand: Hand, ta
 function coilText(pen: Pen, winding: Winding, hand: Hand, y: number, tag: string, tapped: boolean): Shape[] {
   const middle = hand * ((COIL_MM + pen.reach) / 2 + 1.5)
   const room = pen.reach - COIL_MM - 8
-  const name = `${winding.name}   ${winding.turns} ${winding.turns === 1 ? 'turn' : 'turns'}`
+  const turns = `   ${turnsText(pen.specification, winding)}`
+  const nameRoom = room - textWidthMm(turns, 'sans-bold', LETTERING.body)
+  const name = `${shortenedText(winding.name, 'sans-bold', LETTERING.body, nameRoom)}${turns}`
   const wire = wireText(pen, winding)
   const small = { align: 'middle', heightMm: LETTERING.small, tag } as const
   const roomy = pen.shrink > 0.45 && !tapped && textWidthMm(wire, 'sans', LETTERING.small) < room
   const nameLabel = label([middle, y + (roomy ? 0.7 : tapped ? 1 : -1.2)], name, { align: 'middle', font: 'sans-bold', tag })
   return roomy ? [nameLabel, label([middle, y - 3], wire, small)] : [nameLabel]
+}
+
+/** `46 turns`; `23 + 23 turns` where the winding is tapped. */
+function turnsText(specification: WindingSpecification, winding: Winding): string {
+  const marks = [0, ...tapsOf(specification, winding).map((tap) => tap.turns), winding.turns]
+  const parts = marks.slice(1).map((mark, index) => mark - marks[index]!)
+  return `${parts.join(' + ')} ${winding.turns === 1 ? 'turn' : 'turns'}`
 }
 
 function wireText({ library }: Pen, { wire }: Winding): string {

@@ -14,7 +14,7 @@ import { windingTable } from './winding-tables'
 const CIRCUIT_MM = 116
 const PIN_LEFT_MM = SPACE.leftMm + CIRCUIT_MM + 5
 const PIN_WIDTH_MM = 128
-const PIN_VIEW_MM = 51
+const PIN_VIEW_MM = 50
 const OUTLINE_LEFT_MM = PIN_LEFT_MM + PIN_WIDTH_MM + 5
 const OUTLINE_WIDTH_MM = SPACE.rightMm - OUTLINE_LEFT_MM
 const OUTLINE_MM = 118

@@ -20,7 +20,7 @@ export interface Flow {
 
 export const BODY_BOTTOM_MM = TITLE_BLOCK.topMm + 3.5
 export const BODY_WIDTH_MM = SPACE.rightMm - SPACE.leftMm
-const GAP_MM = 4.5
+export const GAP_MM = 4.5
 const HEADING_MM = 7
 
 export const newFlow = (): Flow => ({ pages: [], topMm: BODY_BOTTOM_MM })

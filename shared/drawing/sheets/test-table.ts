@@ -11,7 +11,7 @@ const COLUMNS: readonly Column[] = [
   { key: 'shorted', header: 'shorted', group: 'Pins', align: 'middle' },
   { key: 'open', header: 'open', group: 'Pins', align: 'middle' },
   { key: 'method', header: 'Method' },
-  { key: 'instrument', header: 'Instru-ment' },
+  { key: 'instrument', header: 'Instrument' },
   { key: 'frequency', header: 'Frequency', align: 'end' },
   { key: 'level', header: 'Level', align: 'end' },
   { key: 'bias', header: 'Bias d.c.', align: 'end' },

@@ -7,8 +7,8 @@ import { DIRECTION_WORDS, LAY_WORDS, SIDE_WORDS, stepWords, WIRE_INSULATION_WORD
 const WINDING_COLUMNS: readonly Column[] = [
   { key: 'name', header: 'Winding', font: 'sans-bold', always: true },
   { key: 'side', header: 'Side' },
-  { key: 'start', header: 'Start pin (dot)', align: 'middle', always: true },
-  { key: 'finish', header: 'Finish pin', align: 'middle', always: true },
+  { key: 'start', header: 'Start (dot)', group: 'Pin', align: 'middle', always: true },
+  { key: 'finish', header: 'Finish', group: 'Pin', align: 'middle', always: true },
   { key: 'turns', header: 'Turns', align: 'decimal', always: true },
   { key: 'wire', header: 'Wire' },
   { key: 'rms', header: 'r.m.s.', group: 'Current in A', align: 'decimal' },
