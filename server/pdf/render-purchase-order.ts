@@ -33,7 +33,7 @@ class Letter {
     this.#doc.addPage({ size: [PAGE.widthMm * POINTS_PER_MM, PAGE.heightMm * POINTS_PER_MM], margin: 0 })
     this.#doc.scale(POINTS_PER_MM)
     this.#y = PAGE.heightMm - PAGE.topMm
-    const foot = label([PAGE.leftMm, PAGE.bottomMm - 8], `${this.#running} · page ${this.#page}`, { align: 'start', heightMm: 1.8, ink: 'soft', font: 'sans' })
+    const foot = label([PAGE.leftMm, PAGE.bottomMm - 8], `${this.#running} · page ${this.#page}`, { align: 'start', heightMm: 1.8, font: 'sans' })
     this.#doc.markContent('Artifact', { type: 'Pagination' })
     renderShapes(this.#doc, [foot], PAGE.heightMm)
     this.#doc.endMarkedContent()

@@ -1,16 +1,19 @@
 import * as audit from './audit'
+import * as awards from './awards'
 import { isEndpoint, type Endpoint } from './endpoint'
 import * as health from './health'
 import * as mail from './mail'
+import * as orders from './orders'
 import * as parts from './parts'
 import * as people from './people'
 import * as quotes from './quotes'
 import * as rfqs from './rfqs'
+import * as samples from './samples'
 import * as specifications from './specifications'
 import * as worklist from './worklist'
 
 /** One line per feature; every endpoint such a file exports is documented and tested for access. */
-const FEATURES = { health, people, parts, specifications, rfqs, quotes, mail, audit, worklist }
+const FEATURES = { health, people, parts, specifications, rfqs, quotes, samples, awards, orders, mail, audit, worklist }
 
 export interface NamedEndpoint {
   /** Feature and export, such as `people.signIn`: the operation's identifier in the documentation. */

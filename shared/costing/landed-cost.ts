@@ -50,9 +50,9 @@ export interface CostLine {
   amount: string | null
   /** The formula with the names of `inputs`. */
   formula: string
-  inputs: Readonly<Record<string, string | null>>
+  inputs: Record<string, string | null>
   /** Names of the inputs that nobody has stated. */
-  missing: readonly string[]
+  missing: string[]
   /** Set when the term already covers the line. */
   coveredByTerm: boolean
 }

@@ -1,11 +1,13 @@
 import { appNow, type Actor, type Transaction } from '#server/db/as-actor'
 import type { ResponseOf } from '#shared/contracts/endpoint'
 import type { listWorklist as contract } from '#shared/contracts/worklist'
+import { awardItems } from './award-items'
 import { peopleItems } from './people-items'
 import type { WorklistProvider } from './provider'
+import { sampleItems } from './sample-items'
 
 /** One line per feature. */
-const PROVIDERS: readonly WorklistProvider[] = [peopleItems]
+const PROVIDERS: readonly WorklistProvider[] = [peopleItems, sampleItems, awardItems]
 
 const DONE_SHOWN_MS = 7 * 24 * 3_600_000
 
