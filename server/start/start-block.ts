@@ -16,6 +16,7 @@ export interface Running {
 interface SignIns {
   demo?: { role: string; name: string; email: string; password: string }[]
   firstAdminLink?: string
+  firstOperatorLink?: string
 }
 
 const LINE = '-'.repeat(78)
@@ -42,10 +43,18 @@ function readSignIns(dataDir: string): SignIns {
   return existsSync(file) ? (JSON.parse(readFileSync(file, 'utf8')) as SignIns) : {}
 }
 
-function signInLines({ demo = [], firstAdminLink }: SignIns, isDemo: boolean): string[] {
-  const link = firstAdminLink ? ['', '  First administrator: set the password with this one-time link', `            ${firstAdminLink}`] : []
-  if (!isDemo || demo.length === 0) return link
-  const width = (key: 'role' | 'email' | 'password') => Math.max(...demo.map((person) => person[key].length))
-  const people = demo.map(({ role, email, password, name }) => `            ${role.padEnd(width('role'))}  ${email.padEnd(width('email'))}  ${password.padEnd(width('password'))}  ${name}`)
-  return [...link, '', '  Sign in as (demo: role, address, password, name)', ...people]
+function signInLines({ demo = [], firstAdminLink, firstOperatorLink }: SignIns, isDemo: boolean): string[] {
+  if (isDemo) return demo.length > 0 ? ['', ...demoLines(demo)] : []
+  return [...linkLines('First administrator', firstAdminLink), ...linkLines('First operator', firstOperatorLink)]
+}
+
+const linkLines = (who: string, link: string | undefined) => (link ? ['', `  ${who}: set a password with this one-time link`, `            ${link}`] : [])
+
+function demoLines(demo: Required<SignIns>['demo']): string[] {
+  const passwords = new Set(demo.map(({ password }) => password))
+  const isShared = passwords.size === 1
+  const rows = demo.map(({ role, email, name, password }) => [role, email, ...(isShared ? [] : [password]), name])
+  const widths = [0, 1, 2].map((column) => Math.max(...rows.map((row) => row[column]?.length ?? 0)))
+  const heading = isShared ? `  Sign in (demo; the password of all is: ${[...passwords].join('')})` : '  Sign in (demo)'
+  return [heading, ...rows.map((row) => `            ${row.map((cell, column) => cell.padEnd(widths[column] ?? 0)).join('  ')}`.trimEnd())]
 }
