@@ -8,6 +8,7 @@ import path from 'node:path'
 import { fileURLToPath } from 'node:url'
 import { makeFirstLinks } from './first-links'
 import { DEMO_PASSWORD, DEMO_PEOPLE, seedPeople } from './people'
+import { seedSpecifications } from './specifications/index'
 
 export interface SeedStep {
   name: string
@@ -16,7 +17,10 @@ export interface SeedStep {
 }
 
 /** In this order, each once. A step may build on those before it. */
-export const DEMO_STEPS: readonly SeedStep[] = [{ name: 'people', run: seedPeople }]
+export const DEMO_STEPS: readonly SeedStep[] = [
+  { name: 'people', run: seedPeople },
+  { name: 'specifications', run: seedSpecifications },
+]
 
 export async function seedDemo(ctx: Context): Promise<void> {
   for (const { name, run } of DEMO_STEPS) {

@@ -59,6 +59,7 @@ const SALTERN: DemoCompany = {
   address: 'Saltern Instruments\nZoutkade 11\n9999 XS Saltern',
   people: [
     { email: 'wim.haas@saltern.example', name: 'Wim Haas', roles: ['engineer', 'checker'], shownAs: 'engineer elsewhere' },
+    { email: 'bas.kuiper@saltern.example', name: 'Bas Kuiper', roles: ['engineer'], shownAs: 'second engineer elsewhere' },
     { email: 'lotte.brink@saltern.example', name: 'Lotte Brink', roles: ['buyer', 'quality'], shownAs: 'buyer elsewhere' },
     { email: 'sanne.roos@saltern.example', name: 'Sanne Roos', roles: ['admin'], shownAs: 'admin elsewhere' },
   ],
