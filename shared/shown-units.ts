@@ -47,6 +47,7 @@ const ALL: readonly ShownUnit[] = [
   ...family(electric, 'W', ['', 'm', 'k']),
   ...family(electric, 'T', ['', 'm']),
   ...family(electric, 'Vs', ['', 'm', 'µ']),
+  ...family(electric, 'C', ['', 'n', 'p']),
   ...family(spelled, 's', ['', 'm', 'µ', 'n']),
   ...family(spelled, 'g', ['', 'k']),
   ...['', 'm', 'µ'].map(length),
@@ -67,6 +68,8 @@ const ALL: readonly ShownUnit[] = [
   plain('pcs'),
   plain('turns'),
   plain('layers'),
+  plain('N'),
+  plain('V/ns', 9),
 ]
 
 const BY_SYMBOL = new Map(ALL.map((unit) => [unit.symbol, unit]))

@@ -3,6 +3,7 @@ import { useSessionStore } from '@/stores/session'
 import { mayOpen } from './access'
 import { partRoutes } from './parts'
 import { peopleRoutes } from './people'
+import { specificationRoutes } from './specifications'
 import { worklistRoutes } from './worklist'
 
 const notFound = () => import('@/views/NotFoundView.vue')
@@ -22,6 +23,7 @@ export function createAppRouter(history: RouterHistory): Router {
       ...worklistRoutes,
       ...peopleRoutes,
       ...partRoutes,
+      ...specificationRoutes,
       { path: '/:path(.*)*', name: 'not-found', component: notFound, meta: { access: 'public', title: 'Not found' } },
     ],
     scrollBehavior: (to, from, saved) => saved ?? (to.hash && to.name !== 'sign-in-link' ? { el: to.hash } : to.path === from.path ? undefined : { top: 0 }),

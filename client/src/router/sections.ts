@@ -1,5 +1,6 @@
 import type { Access } from '#shared/contracts/endpoint'
 import { PART_READERS } from '#shared/contracts/parts'
+import { SPECIFICATION_READERS } from './specifications'
 
 export interface Section {
   /** Name of the route it opens. */
@@ -11,6 +12,7 @@ export interface Section {
 /** What stands on the rail, in the order of the work. Each feature adds its line where it belongs. */
 export const SECTIONS: readonly Section[] = [
   { route: 'worklist', title: 'Worklist', access: 'signed-in' },
+  { route: 'specifications', title: 'Specifications', access: SPECIFICATION_READERS },
   { route: 'parts', title: 'Parts library', access: PART_READERS },
   { route: 'vendors', title: 'Vendors', access: ['buyer', 'quality', 'approver', 'admin', 'engineer', 'checker'] },
   { route: 'customers', title: 'Customers', access: ['vendor'] },

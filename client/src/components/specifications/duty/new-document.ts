@@ -1,0 +1,46 @@
+import { blankSpecification, DEFAULT_PREFERENCES, type ProposalPreferences } from '#shared/engine/index'
+import type { RequirementSheet, SpecificationDocument, Stated } from '#shared/engine/specification'
+import { newRequirement } from './duty-fields'
+
+/** What is typed before there is a document. */
+export interface NewSpecification {
+  partNumber: string
+  title: string
+  way: 'flyback' | 'coupled-inductor' | 'direct'
+  flyback: RequirementSheet
+  coupled: RequirementSheet
+  productStandard: ProposalPreferences['productStandard']
+  standardEdition: string
+  wireSystem: ProposalPreferences['wireSystem']
+}
+
+export const newSpecification = (): NewSpecification => ({
+  partNumber: '',
+  title: '',
+  way: 'flyback',
+  flyback: newRequirement('flyback'),
+  coupled: newRequirement('coupled-inductor'),
+  productStandard: DEFAULT_PREFERENCES.productStandard,
+  standardEdition: DEFAULT_PREFERENCES.standardEdition,
+  wireSystem: DEFAULT_PREFERENCES.wireSystem,
+})
+
+export const requirementOf = ({ way, flyback, coupled }: NewSpecification): RequirementSheet | null => (way === 'direct' ? null : way === 'flyback' ? flyback : coupled)
+
+export const preferencesOf = ({ productStandard, standardEdition, wireSystem }: NewSpecification): Partial<ProposalPreferences> => ({ productStandard, standardEdition, wireSystem })
+
+const entered = (field: Stated<string>, value: string): Stated<string> => ({ ...field, value, origin: { kind: 'entered' } })
+
+/** The document with who owns it and what it is called. */
+export function named(document: SpecificationDocument, { partNumber, title }: Pick<NewSpecification, 'partNumber' | 'title'>, legalOwner: string): SpecificationDocument {
+  const block = document.specification.title
+  return {
+    ...document,
+    specification: {
+      ...document.specification,
+      title: { ...block, legalOwner: entered(block.legalOwner, legalOwner), partNumber: entered(block.partNumber, partNumber.trim()), title: entered(block.title, title.trim()) },
+    },
+  }
+}
+
+export const blankDocument = (): SpecificationDocument => ({ specification: blankSpecification(), requirement: null })

@@ -1,0 +1,25 @@
+import { describe, expect, it } from 'vitest'
+import type { CheckResult } from '#shared/engine/evaluation'
+import { groupChecks, stoppingCodes } from './check-groups'
+
+const check = (code: string, severity: CheckResult['severity'], state: CheckResult['state']): CheckResult => ({ code, severity, state, value: null, limit: null, unit: '', margin: null, source: '', path: '', values: {} })
+
+const checks = [check('E01', 'S', 'not-met'), check('I04', 'S', 'not-checkable'), check('T01', 'M', 'not-met'), check('T03', 'M', 'not-checkable'), check('W07', 'N', 'not-met'), check('D01', 'S', 'met')]
+const codes = (overridden: string[] = []) => Object.fromEntries(groupChecks(checks, new Set(overridden)).map(({ key, results }) => [key, results.map(({ code }) => code)]))
+
+describe('groupChecks', () => {
+  it('puts every result into exactly one group', () => {
+    expect(codes()).toEqual({ stops: ['E01'], unknown: ['I04', 'T03'], answer: ['T01'], notes: ['W07'], passed: [], met: ['D01'] })
+  })
+
+  it('moves what a second person let pass, and never counts it as met', () => {
+    expect(codes(['E01', 'I04'])).toMatchObject({ stops: [], unknown: ['T03'], passed: ['E01', 'I04'], met: ['D01'] })
+  })
+})
+
+describe('stoppingCodes', () => {
+  it('counts what could not be checked among what stops release', () => {
+    expect(stoppingCodes(checks, new Set())).toEqual(['E01', 'I04'])
+    expect(stoppingCodes(checks, new Set(['E01']))).toEqual(['I04'])
+  })
+})

@@ -1,0 +1,29 @@
+import type { CheckResult } from '#shared/engine/evaluation'
+
+export interface CheckGroup {
+  key: 'stops' | 'answer' | 'unknown' | 'notes' | 'passed' | 'met'
+  title: string
+  results: CheckResult[]
+}
+
+/**
+ * The results by what they ask of a person. What could not be checked is never met; where it belongs to a check that
+ * stops release it stops release too.
+ */
+export function groupChecks(checks: readonly CheckResult[], overridden: ReadonlySet<string> = new Set()): CheckGroup[] {
+  const stopped = (check: CheckResult) => check.severity === 'S' && check.state !== 'met'
+  const of = (key: CheckGroup['key'], title: string, belongs: (check: CheckResult) => boolean): CheckGroup => ({ key, title, results: checks.filter(belongs) })
+  return [
+    of('stops', 'Stops release', (check) => stopped(check) && check.state === 'not-met' && !overridden.has(check.code)),
+    of('unknown', 'Could not be checked', (check) => check.state === 'not-checkable' && !(stopped(check) && overridden.has(check.code))),
+    of('answer', 'Wants an answer', (check) => check.severity === 'M' && check.state === 'not-met'),
+    of('notes', 'For information', (check) => check.severity === 'N' && check.state === 'not-met'),
+    of('passed', 'Let pass with a reason', (check) => stopped(check) && overridden.has(check.code)),
+    of('met', 'Met', (check) => check.state === 'met'),
+  ]
+}
+
+/** Codes that stop release as things stand. */
+export function stoppingCodes(checks: readonly CheckResult[], overridden: ReadonlySet<string>): string[] {
+  return [...new Set(checks.filter(({ severity, state, code }) => severity === 'S' && state !== 'met' && !overridden.has(code)).map(({ code }) => code))]
+}

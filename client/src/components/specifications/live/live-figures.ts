@@ -1,0 +1,102 @@
+import type { Evaluation } from '#shared/engine/evaluation'
+import type { WindingSpecification } from '#shared/engine/specification'
+import { formatEngineering, formatNumber, formatQuantity } from '#shared/number-format'
+import { shownUnit } from '#shared/shown-units'
+import type { Verdict } from '@/components/base/VerdictTag.vue'
+
+export interface LiveFigure {
+  label: string
+  text: string
+  note?: string
+  verdict?: Verdict
+  /** Path in the evaluation under which its working is kept. */
+  why?: string
+}
+
+export interface FigureGroup {
+  title: string
+  figures: LiveFigure[]
+}
+
+const si = (value: number | null | undefined, base: string) => formatEngineering(value, base, { significant: 3 })
+const mm = (value: number | null | undefined) => formatQuantity(value, shownUnit('mm'), { significant: 3 })
+const percent = (value: number | null | undefined) => formatQuantity(value, shownUnit('%'), { significant: 3 })
+const celsius = (value: number | null | undefined) => formatQuantity(value, shownUnit('°C'), { significant: 3 })
+const kelvin = (value: number | null | undefined) => formatQuantity(value, shownUnit('K'), { significant: 3 })
+const grams = (value: number | null) => formatQuantity(value, shownUnit('g'), { significant: 3 })
+const plain = (value: number | null | undefined) => formatNumber(value, { significant: 3 })
+
+export const figureOf = { si, mm, percent, celsius, kelvin, grams, plain }
+
+/** Below the limit is met, above it is not, and without a figure nobody can tell. */
+export const below = (value: number | null, limit: number | null): Verdict => (value === null || limit === null ? 'not-checkable' : value <= limit ? 'met' : 'not-met')
+
+export const CORNER_WORDS: Readonly<Record<Evaluation['corners'][number]['name'], string>> = {
+  'minimum-input': 'minimum input',
+  'nominal-input': 'nominal input',
+  'maximum-input': 'maximum input',
+  'current-limit': 'current limit',
+  'light-load': 'light load',
+}
+
+function magnetics({ magnetics: m }: Evaluation): FigureGroup {
+  return {
+    title: 'Inductance, gap and flux',
+    figures: [
+      { label: 'Inductance', text: si(m.inductanceH, 'H'), note: `${si(m.inductanceMinimumH, 'H')} to ${si(m.inductanceMaximumH, 'H')}`, why: 'magnetics.inductanceH' },
+      { label: 'AL', text: si(m.alH, 'H') },
+      { label: 'Gap', text: mm(m.gapMm), note: m.fringingFactor === null ? m.gapModel : `fringing factor ${plain(m.fringingFactor)}`, why: 'magnetics.gapMm' },
+      { label: 'Boundary of continuous conduction', text: si(m.boundaryInductanceH, 'H') },
+      { label: 'Peak flux density, full load', text: si(m.fluxPeakT, 'T'), why: 'magnetics.fluxPeakT' },
+      { label: 'Worst flux density', text: si(m.fluxWorstT, 'T'), note: m.worstCurrentA === null ? undefined : `at ${si(m.worstCurrentA, 'A')}, on the least area`, why: 'magnetics.fluxWorstT' },
+      { label: 'Saturation', text: si(m.saturationT, 'T'), note: m.saturationTemperatureC === null ? undefined : `at ${celsius(m.saturationTemperatureC)}`, why: 'magnetics.saturationT' },
+      { label: 'Share of saturation used', text: percent(m.fluxUtilisation), verdict: below(m.fluxUtilisation, 0.8), note: 'limit 80 %' },
+    ],
+  }
+}
+
+function heat({ losses, thermal }: Evaluation): FigureGroup {
+  return {
+    title: `Loss and temperature, at ${CORNER_WORDS[losses.corner]}`,
+    figures: [
+      { label: 'Copper loss', text: si(losses.copperW, 'W') },
+      { label: 'Core loss', text: si(losses.coreW, 'W'), note: losses.coreDensityWPerM3 === null ? losses.model : formatQuantity(losses.coreDensityWPerM3, shownUnit('kW/m³'), { significant: 3 }), why: 'losses.coreW' },
+      { label: 'Total loss', text: si(losses.totalW, 'W') },
+      { label: 'Temperature rise', text: kelvin(thermal.riseK), note: thermal.model, why: 'thermal.riseK' },
+      { label: 'Winding temperature', text: celsius(thermal.windingC), note: thermal.limitC === null ? undefined : `limit ${celsius(thermal.limitC)}`, verdict: below(thermal.windingC, thermal.limitC) },
+      { label: 'Margin', text: kelvin(thermal.marginK) },
+    ],
+  }
+}
+
+function build({ layout, mass }: Evaluation): FigureGroup {
+  const exists = layout.windowHeightMm > 0
+  return {
+    title: 'Build',
+    figures: [
+      { label: 'Build, bulge included', text: exists ? mm(layout.buildMm) : '–', note: exists ? `of ${mm(layout.windowHeightMm)}` : undefined, verdict: exists ? below(layout.buildRatio, 1) : 'not-checkable' },
+      { label: 'Height used', text: exists ? percent(layout.buildRatio) : '–' },
+      { label: 'Copper fill', text: exists ? percent(layout.copperFill) : '–' },
+      { label: 'Window fill, squares of overall diameters', text: exists ? percent(layout.windowFill) : '–' },
+      { label: 'Mass', text: grams(mass.totalG), note: `copper ${grams(mass.copperG)}, core ${grams(mass.coreG)}` },
+    ],
+  }
+}
+
+function leakage({ leakages, magnetics: { inductanceH } }: Evaluation, { windings }: WindingSpecification): FigureGroup {
+  const name = (id: string) => windings.find((winding) => winding.id === id)?.name ?? id
+  return {
+    title: 'Leakage inductance',
+    figures: leakages.map(({ windingId, shortedWindingIds, inductanceH: leakageH, model }, index) => ({
+      label: `${name(windingId)}, ${shortedWindingIds.map(name).join(', ')} shorted`,
+      text: si(leakageH, 'H'),
+      note: leakageH !== null && inductanceH ? `${percent(leakageH / inductanceH)} of the inductance` : model,
+      why: `leakages.${index}.inductanceH`,
+    })),
+  }
+}
+
+/** The figures beside the form, in groups; `–` where nothing can be told. */
+export function liveFigures(evaluation: Evaluation, specification: WindingSpecification): FigureGroup[] {
+  return [magnetics(evaluation), heat(evaluation), build(evaluation), leakage(evaluation, specification)].filter(({ figures }) => figures.length > 0)
+}

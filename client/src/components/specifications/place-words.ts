@@ -1,0 +1,23 @@
+import { isWithin } from './document-paths'
+import type { FieldSpec, SectionPart } from './field-types'
+import { converterFields, newRequirement, supplyFields, surroundingFields } from './duty/duty-fields'
+import { SECTIONS, sectionOf } from './sections'
+
+const { duty: flyback } = newRequirement('flyback')
+const { duty: coupled } = newRequirement('coupled-inductor')
+const DUTY_FIELDS = [...supplyFields(flyback), ...converterFields(flyback), ...converterFields(coupled), ...surroundingFields]
+
+const fieldsOf = (part: SectionPart): readonly FieldSpec[] => (part.kind === 'stated' || part.kind === 'plain' ? part.fields : [])
+const FIELDS = [...SECTIONS.flatMap(({ parts }) => parts.flatMap(fieldsOf)), ...DUTY_FIELDS]
+const TABLES = SECTIONS.flatMap(({ parts }) => parts.flatMap((part) => (part.kind === 'rows' ? [part.rows] : [])))
+
+/** Where a place lies, in the words of the form: `Windings › winding 2`. */
+export function placeWords(place: string): string {
+  const section = sectionOf(place).title
+  const field = FIELDS.find(({ path }) => isWithin(place, path))
+  if (field) return `${section} › ${field.label}`
+  const table = TABLES.find(({ path }) => isWithin(place, path))
+  const index = table && Number(place.slice(table.path.length + 1).split('.')[0])
+  if (!table) return section
+  return Number.isInteger(index) && place !== table.path ? `${section} › ${table.one} ${index! + 1}` : `${section} › ${table.title.split(/[,:]/)[0]}`
+}

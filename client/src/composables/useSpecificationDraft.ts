@@ -1,0 +1,124 @@
+import { computed, onScopeDispose, ref, shallowRef, watch } from 'vue'
+import { specificationDocumentSchema } from '#shared/contracts/specification-document'
+import type { Revision } from '#shared/contracts/specifications'
+import type { SpecificationDocument } from '#shared/engine/specification'
+import { ApiError } from '@/api/api-error'
+import { documentPath, placeOf, withValue } from '@/components/specifications/document-paths'
+import { keepInStep } from '@/components/specifications/keep-in-step'
+import { forgetKept, keepLocally, readKept } from './kept-document'
+import { useHistory } from './useHistory'
+
+const PAUSE_MS = 1200
+
+export type SaveState = 'stored' | 'waiting' | 'storing' | 'not-fitting' | 'conflict' | 'failed'
+
+interface DraftServer {
+  save: (version: number, document: SpecificationDocument) => Promise<Revision>
+  load: () => Promise<Revision>
+}
+
+/**
+ * One draft being worked on: every change is kept in this tab at once and stored on the server after a pause, each
+ * from the version it was made on. When somebody else stored meanwhile, a person decides.
+ */
+export function useSpecificationDraft(initial: Revision, personId: string, server: DraftServer) {
+  const kept = readKept(personId, initial.id)
+  const history = useHistory<SpecificationDocument>(kept?.document ?? initial.document)
+  const document = history.current
+  const version = ref(kept?.version ?? initial.version)
+  const stored = shallowRef<SpecificationDocument>(initial.document)
+  const storedAt = ref(initial.updatedAt)
+  const state = ref<SaveState>('stored')
+  const failure = shallowRef<ApiError | null>(null)
+  const schemaProblems = shallowRef<ReadonlyMap<string, string>>(new Map())
+  const dirty = computed(() => document.value !== stored.value)
+  let timer: ReturnType<typeof setTimeout> | undefined
+  let running: Promise<void> | null = null
+
+  function write(changes: Readonly<Record<string, unknown>>) {
+    const all = keepInStep(document.value, changes)
+    const next = Object.entries(all).reduce((tree, [place, value]) => withValue(tree, documentPath(place), value), document.value)
+    history.commit(next, Object.keys(changes).sort().join())
+  }
+
+  function fits(): boolean {
+    const parsed = specificationDocumentSchema.safeParse(document.value)
+    schemaProblems.value = new Map(parsed.success ? [] : parsed.error.issues.map(({ path, message }) => [placeOf(path.join('.')), message]))
+    return parsed.success
+  }
+
+  function settle(result: Revision, sent: SpecificationDocument) {
+    version.value = result.version
+    stored.value = sent
+    storedAt.value = result.updatedAt
+    failure.value = null
+    if (dirty.value) schedule()
+    else done()
+  }
+
+  function done() {
+    state.value = 'stored'
+    schemaProblems.value = new Map()
+    forgetKept(personId, initial.id)
+  }
+
+  function fail(error: unknown) {
+    failure.value = error instanceof ApiError ? error : new ApiError({ code: 'internal', message: String(error) })
+    state.value = failure.value.code === 'stale-version' ? 'conflict' : 'failed'
+    for (const [path, sentence] of Object.entries(failure.value.fields)) schemaProblems.value = new Map([...schemaProblems.value, [placeOf(path), sentence]])
+  }
+
+  async function send() {
+    if (!dirty.value) return done()
+    if (!fits()) return void (state.value = 'not-fitting')
+    const sent = document.value
+    state.value = 'storing'
+    try {
+      settle(await server.save(version.value, sent), sent)
+    } catch (error) {
+      fail(error)
+    }
+  }
+
+  /** Stores what is not stored yet; true when everything is. */
+  async function flush(): Promise<boolean> {
+    clearTimeout(timer)
+    await running
+    if (state.value !== 'conflict') await (running = send().finally(() => (running = null)))
+    clearTimeout(timer)
+    return state.value === 'stored'
+  }
+
+  function schedule() {
+    if (state.value === 'conflict') return
+    state.value = 'waiting'
+    clearTimeout(timer)
+    timer = setTimeout(() => void flush(), PAUSE_MS)
+  }
+
+  watch(document, (next) => {
+    if (next === stored.value) return
+    keepLocally(personId, initial.id, { version: version.value, document: next })
+    schedule()
+  })
+  if (kept) schedule()
+  onScopeDispose(() => clearTimeout(timer))
+
+  /** After a conflict: theirs, or mine on top of theirs. */
+  async function resolve(choice: 'theirs' | 'mine') {
+    try {
+      const latest = await server.load()
+      version.value = latest.version
+      stored.value = latest.document
+      state.value = 'waiting'
+      if (choice === 'mine') return void (await flush())
+      history.restart(latest.document)
+      settle(latest, latest.document)
+    } catch (error) {
+      fail(error)
+    }
+  }
+
+  const { commit, undo, redo, canUndo, canRedo } = history
+  return { document, version, state, storedAt, failure, schemaProblems, dirty, restored: kept !== null, write, commit, undo, redo, canUndo, canRedo, flush, resolve }
+}

@@ -1,0 +1,77 @@
+import { defineQueryOptions, useMutation, useQueryCache } from '@pinia/colada'
+import type { BodyOf } from '#shared/contracts/endpoint'
+import * as contract from '#shared/contracts/specifications'
+import type { Revision } from '#shared/contracts/specifications'
+import { call } from '@/api/call'
+import { download } from '@/api/download'
+
+export interface RevisionKey {
+  specificationId: string
+  revisionId: string
+}
+
+const KEYS = {
+  root: ['specifications'] as const,
+  list: (search: string, state: string | undefined) => ['specifications', 'list', search, state ?? ''] as const,
+  one: (specificationId: string) => ['specifications', 'one', specificationId] as const,
+  revision: ({ specificationId, revisionId }: RevisionKey) => ['specifications', 'revision', specificationId, revisionId] as const,
+}
+
+export interface SpecificationFilter {
+  search: string
+  state?: contract.RevisionSummary['state']
+}
+
+export const specificationListQuery = defineQueryOptions((filter: SpecificationFilter) => ({
+  key: KEYS.list(filter.search, filter.state),
+  query: () => call(contract.listSpecifications, { query: filter }),
+  // The rows found before stay on the sheet while the next search runs.
+  placeholderData: (previous: contract.SpecificationSummary[] | undefined) => previous,
+}))
+
+export const specificationQuery = defineQueryOptions((specificationId: string) => ({
+  key: KEYS.one(specificationId),
+  query: () => call(contract.getSpecification, { params: { specificationId } }),
+}))
+
+export const revisionQuery = defineQueryOptions((key: RevisionKey) => ({
+  key: KEYS.revision(key),
+  query: () => call(contract.getRevision, { params: key }),
+  // A draft is worked on here and by others: what was seen before is never taken for the present.
+  staleTime: 0,
+}))
+
+export function useCreateSpecification() {
+  const cache = useQueryCache()
+  return useMutation({
+    mutation: (body: BodyOf<typeof contract.createSpecification>) => call(contract.createSpecification, { body }),
+    onSettled: () => cache.invalidateQueries({ key: KEYS.root }),
+  })
+}
+
+/** Storing does not fetch anything again: the workbench holds what it sent. */
+export const saveDraft = (params: RevisionKey, body: BodyOf<typeof contract.saveDraft>): Promise<Revision> => call(contract.saveDraft, { params, body })
+export const loadRevision = (params: RevisionKey): Promise<Revision> => call(contract.getRevision, { params })
+
+/** What moves a revision on; everything about it is fetched again afterwards, a refusal included. */
+export function useRevisionActions(params: () => RevisionKey) {
+  const cache = useQueryCache()
+  const moving = <V>(mutation: (value: V) => Promise<Revision>) => useMutation({ mutation, onSettled: () => cache.invalidateQueries({ key: KEYS.root }) })
+  return {
+    submit: moving((version: number) => call(contract.submitDraft, { params: params(), body: { version } })),
+    sendBack: moving((reason: string) => call(contract.returnDraft, { params: params(), body: { reason } })),
+    letPass: moving((body: BodyOf<typeof contract.overrideCheck>) => call(contract.overrideCheck, { params: params(), body })),
+    release: moving((version: number) => call(contract.releaseRevision, { params: params(), body: { version } })),
+    withdraw: moving((reason: string) => call(contract.withdrawRevision, { params: params(), body: { reason } })),
+    nextDraft: moving((_: void) => call(contract.createDraft, { params: { specificationId: params().specificationId } })),
+  }
+}
+
+export const useSheetsDownload = () => useMutation({ mutation: (params: RevisionKey) => download(contract.draftPdf, { params }) })
+export const useDocumentDownload = () => useMutation({ mutation: (params: RevisionKey) => download(contract.releasedDocument, { params }) })
+
+/** Leaving the workbench shows the revision as it is stored. */
+export function useForgetRevisions() {
+  const cache = useQueryCache()
+  return () => cache.invalidateQueries({ key: KEYS.root })
+}

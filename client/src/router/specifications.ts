@@ -1,0 +1,40 @@
+import type { RouteRecordRaw } from 'vue-router'
+import type { Access } from '#shared/contracts/endpoint'
+
+export const SPECIFICATION_READERS: Access = ['engineer', 'checker', 'quality', 'buyer', 'approver']
+
+export const specificationRoutes: RouteRecordRaw[] = [
+  {
+    path: '/specifications',
+    name: 'specifications',
+    component: () => import('@/views/specifications/SpecificationsView.vue'),
+    meta: { access: SPECIFICATION_READERS, title: 'Winding specifications' },
+  },
+  {
+    path: '/specifications/new',
+    name: 'new-specification',
+    component: () => import('@/views/specifications/NewSpecificationView.vue'),
+    meta: { access: ['engineer'], title: 'New specification' },
+  },
+  {
+    path: '/specifications/:specificationId',
+    name: 'specification',
+    props: true,
+    component: () => import('@/views/specifications/SpecificationView.vue'),
+    meta: { access: SPECIFICATION_READERS, title: 'Winding specification' },
+  },
+  {
+    path: '/specifications/:specificationId/revisions/:revisionId',
+    name: 'revision',
+    props: true,
+    component: () => import('@/views/specifications/RevisionView.vue'),
+    meta: { access: SPECIFICATION_READERS, title: 'Revision' },
+  },
+  {
+    path: '/specifications/:specificationId/revisions/:revisionId/workbench',
+    name: 'workbench',
+    props: true,
+    component: () => import('@/views/specifications/WorkbenchView.vue'),
+    meta: { access: SPECIFICATION_READERS, title: 'Workbench' },
+  },
+]
