@@ -12,8 +12,11 @@ import { attempt, explain, positive } from './context'
 import type { Context } from './context'
 import type { CornerState } from './corner-result'
 
-/** Harmonics that the ac loss is summed over; the rest is charged with the last one's factor. */
-const HARMONICS = 30
+/**
+ * Harmonics that the ac loss is summed over; the rest is charged with the last one's factor. Ideal edges would have no
+ * end of them: commutation through the leakage inductance takes a few percent of the period, which the fifteenth covers.
+ */
+const HARMONICS = 15
 
 /** What a winding is made of, before any current. */
 export interface WindingCopper {
@@ -201,7 +204,7 @@ function explainWinding(context: Context, { index, copper, result, hotC }: { ind
     inputs: [{ name: 'R_20', value: copper.resistance20Ohm, unit: 'Ω', origin: path('dcResistance20Ohm') }, { name: 'T', value: hotC, unit: '°C', origin: 'thermal.windingC' }],
   }))
   explain(context, path('acFactor'), () => ({
-    symbol: 'F_R', value: result.acFactor, unit: '', formula: 'Σ F(n)·I_n²/Σ I_n², F by Dowell for x = h·√η/δ and m layers', source: 'P. Dowell, Proc. IEE 113 (1966) 1387; each winding by its own ampere-turns',
+    symbol: 'F_R', value: result.acFactor, unit: '', formula: 'Σ F(n)·I_n²/Σ I_n², F by Dowell for x = h·√η/δ and m layers, 15 harmonics', source: 'P. Dowell, Proc. IEE 113 (1966) 1387; each winding by its own ampere-turns',
     inputs: [{ name: 'h', value: copper.layer?.heightMm ?? 'not known', unit: 'mm', origin: 'wire' }, { name: 'η', value: copper.layer?.porosity ?? 'not known', unit: '', origin: 'coil layout' }, { name: 'm', value: copper.fieldLayers, unit: '', origin: 'coil layout' }, { name: 'δ', value: result.skinDepthMm ?? 'not known', unit: 'mm', origin: path('skinDepthMm') }],
   }))
   explain(context, path('currentDensityAPerMm2'), () => ({

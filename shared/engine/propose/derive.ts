@@ -150,7 +150,8 @@ function withstandTest({ between, insulation }: InsulationBoundary, requiredV: n
 function certified(winding: Winding, specification: WindingSpecification): Winding {
   if (!isInsulatedWire(winding) || (winding.wire.certificate && !isProposed(winding))) return winding
   const peaks = specification.insulation.boundaries.filter(({ between, insulation }) => insulation !== 'functional' && between.some((end) => windingsAt(specification, end).some(({ id }) => id === winding.id))).map(({ recurringPeakV }) => recurringPeakV ?? 0)
-  const peakVoltageV = toStepUp(Math.max(0, ...peaks), 50)
+  const peakV = Math.max(0, ...peaks)
+  const peakVoltageV = peakV > 0 ? toStepUp(peakV, 50) : null
   const frequencyHz = specification.electrical.switchingFrequencyHz.value?.maximum ?? null
   return { ...winding, wire: { ...winding.wire, certificate: { standard: 'IEC 62368-1 Annex J', number: winding.wire.certificate?.number ?? '', peakVoltageV, maximumFrequencyHz: frequencyHz === null ? null : toStepUp(frequencyHz, 50e3) } } }
 }

@@ -44,7 +44,10 @@ export function propose(requirement: RequirementSheet, library: Library, prefere
   if (!choice.material || library.tapes.length === 0) return blankProposal(requirement, findings)
 
   const result = searchCore({ requirement, plan, material: choice.material, library, index: indexLibrary(library), preferences: wishes })
-  if (!result.chosen) return blankProposal(requirement, [...findings, { code: 'no-core-fits', severity: 'error', path: 'core.core', values: { tried: result.rejected.length } }])
+  if (!result.chosen) {
+    const finding: Finding = { code: 'no-core-fits', severity: 'error', path: 'core.core', values: { tried: result.rejected.length, reason: result.rejected[result.rejected.length - 1]?.rejection ?? 'height' } }
+    return { ...blankProposal(requirement, [...findings, finding]), reasons: [...plan.reasons, ...choice.reasons, ...rejectionReasons(result)] }
+  }
   const document = completed(result.chosen.document, library)
   return {
     document,
@@ -77,10 +80,14 @@ function choiceFindings({ duty }: RequirementSheet, { chosen, rejected }: Search
   return [...notFitting, ...ratioFindings(duty, turnsOf)]
 }
 
+/** The cores nearest to the chosen one that fell out. */
+const rejectionReasons = ({ rejected }: Pick<SearchResult, 'rejected'>): ProposalReason[] =>
+  rejected.slice(-8).map(({ core, rejection }) => ({ code: 'core-rejected', path: 'core.core', values: { core, reason: rejection } }))
+
 function choiceReasons({ design, evaluation }: Candidate, { rejected }: SearchResult): ProposalReason[] {
   return [
     { code: 'smallest-core-that-fits', path: 'core.core', values: { core: design.core.name, former: design.former.name, tried: rejected.length + 1 } },
-    ...rejected.slice(-8).map(({ core, rejection }): ProposalReason => ({ code: 'core-rejected', path: 'core.core', values: { core, reason: rejection } })),
+    ...rejectionReasons({ rejected }),
     { code: 'turns-from-flux', path: 'windings.0.turns', values: { turns: design.windings[0]!.turns, fluxWorstT: evaluation.magnetics.fluxWorstT ?? 0, saturationT: evaluation.magnetics.saturationT ?? 0 } },
     ...design.windings.map(({ name, wire }, index): ProposalReason => ({ code: 'wire-from-density-and-skin-depth', path: `windings.${index}.wire`, values: { winding: name, parallel: wire.parallel, wire: wire.wire.id, currentDensityAPerMm2: evaluation.windings[index]?.currentDensityAPerMm2 ?? 0 } })),
     ...(design.interleaved ? [{ code: 'primary-in-two-halves' as const, path: 'sequence', values: {} }] : []),

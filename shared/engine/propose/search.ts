@@ -225,6 +225,5 @@ function judge({ layout, checks, findings }: Evaluation, { buildLimit }: Proposa
   if (broken(['T03'])) return 'resistance'
   if (broken(['T07', 'T08', 'T11'])) return 'temperature'
   if (broken(['I04', 'I05', 'I08', 'I09', 'I10'])) return 'insulation'
-  if (broken(['P03'])) return 'pins'
   return null
 }

@@ -119,12 +119,14 @@ export function chooseTurns(duty: FlybackDuty, ratio: number, leastPrimary: numb
   const main = regulatedOutput(duty)
   const least = Math.max(1, Math.ceil(leastPrimary - 1e-9))
   const first = Math.max(1, Math.floor((least / ratio) * (1 - RATIO_SLACK)))
+  // Growth counts from the smallest choice there is, which on a large core lies far above what flux asks for.
+  const base = Math.max(least, Math.round(ratio * first))
   let best: { choice: TurnsChoice; cost: number } | null = null
   for (let mainTurns = first; mainTurns <= first + 12; mainTurns++) {
     const primary = Math.max(least, Math.round(ratio * mainTurns))
     const ratioError = Math.abs(primary / mainTurns / ratio - 1)
     const choice = turnsFor(duty, main, { mainTurns, primary })
-    const cost = 0.5 * (primary / least - 1) + 3 * Math.max(0, ratioError - RATIO_SLACK) + choice.mainError + 10 * Math.max(0, choice.mainError - FREE_ERROR.main) + 2 * Math.max(0, choice.auxiliaryError - FREE_ERROR.auxiliary)
+    const cost = 0.5 * (primary / base - 1) + 3 * Math.max(0, ratioError - RATIO_SLACK) + choice.mainError + 10 * Math.max(0, choice.mainError - FREE_ERROR.main) + 2 * Math.max(0, choice.auxiliaryError - FREE_ERROR.auxiliary)
     if (!best || cost < best.cost - 1e-12) best = { choice, cost }
   }
   return best!.choice

@@ -32,17 +32,20 @@ export interface WireNeed {
 
 /**
  * Wire for one winding: the least number of parallel round wires within two skin depths (six where the current is nearly
- * direct); else, or first where asked for, a litz of fine strands; else round wire up to four skin depths. Null when the
- * library has none.
+ * direct); else, or first where asked for, a litz of fine strands; else round wire up to four skin depths, and last whatever
+ * carries the current, which the checks then question. Null when the library has none.
  *
  * Source: `wireCandidates`; strands of a third of the skin depth: C. Sullivan, IEEE Trans. Power Electron. 14 (1999) 283.
  */
 export function chooseWire(library: Library, need: WireNeed, preferences: ProposalPreferences): WireUse | null {
   const rounds = stock(library, preferences, need.insulation)
   const nearlyDirect = need.acShare < SMALL_AC_SHARE
-  const round = () => roundWire(rounds, need, nearlyDirect ? 6 : 2)
-  const litz = () => (need.insulation.startsWith('enamel') ? litzWire(library, need) : null)
-  const wire = (need.style === 'litz' && !nearlyDirect ? (litz() ?? round()) : (round() ?? litz())) ?? roundWire(rounds, need, 4)
+  const depthMm = skinDepthMm({ frequencyHz: need.frequencyHz, temperatureC: CHOICE_TEMPERATURE_C })
+  const round = roundWire(rounds, need, { skinDepths: nearlyDirect ? 6 : 2 })
+  const litz = need.insulation.startsWith('enamel') ? (litzWire(library, need, depthMm / 3) ?? litzWire(library, need, (2 * depthMm) / 3)) : null
+  // A wire thinner than the skin depth gains nothing from strands.
+  const stranded = need.style === 'litz' && !nearlyDirect && !(round && round.row.conductorMm <= depthMm)
+  const wire = (stranded ? (litz ?? round) : (round ?? litz)) ?? roundWire(rounds, need, { skinDepths: 4 }) ?? roundWire(rounds, need, { skinDepths: 8, parallel: 12 })
   if (!wire) return null
   return {
     wire: referenceTo(wire.row),
@@ -62,7 +65,7 @@ function stock(library: Library, { wireSystem }: ProposalPreferences, insulation
   return ofSystem.length > 0 ? ofSystem : round
 }
 
-function roundWire(rows: readonly WireRow[], need: WireNeed, skinDepths: number): { row: WireRow; parallel: number } | null {
+function roundWire(rows: readonly WireRow[], need: WireNeed, { skinDepths, parallel = MOST_PARALLEL }: { skinDepths: number; parallel?: number }): { row: WireRow; parallel: number } | null {
   if (rows.length === 0) return null
   const candidates = wireCandidates({
     rmsCurrentA: need.rmsA,
@@ -70,7 +73,7 @@ function roundWire(rows: readonly WireRow[], need: WireNeed, skinDepths: number)
     frequencyHz: need.frequencyHz,
     temperatureC: CHOICE_TEMPERATURE_C,
     diameterLimitSkinDepths: skinDepths,
-    parallelLimit: MOST_PARALLEL,
+    parallelLimit: parallel,
     stock: rows.map((row) => ({ designation: row.id, conductorDiameterMm: row.conductorMm, outerDiameterMm: row.overallMm[need.insulation]! })),
   })
   const best = candidates[0]
@@ -78,11 +81,10 @@ function roundWire(rows: readonly WireRow[], need: WireNeed, skinDepths: number)
   return { row: rows.find(({ id }) => id === best.wire.designation)!, parallel: best.parallelCount }
 }
 
-function litzWire(library: Library, need: WireNeed): { row: WireRow; parallel: number } | null {
-  const finestMm = skinDepthMm({ frequencyHz: need.frequencyHz, temperatureC: CHOICE_TEMPERATURE_C }) / 3
+function litzWire(library: Library, need: WireNeed, thickestMm: number): { row: WireRow; parallel: number } | null {
   const areaMm2 = need.rmsA / need.currentDensityAPerMm2
   const fitting = library.wires
-    .filter((row) => row.form === 'litz' && usable(row, need.insulation) && row.conductorMm <= finestMm)
+    .filter((row) => row.form === 'litz' && usable(row, need.insulation) && row.conductorMm <= thickestMm)
     .map((row) => ({ row, parallel: Math.max(1, Math.ceil(areaMm2 / row.copperAreaMm2 - 1e-9)) }))
     .filter(({ parallel }) => parallel <= MOST_PARALLEL)
     .sort((a, b) => a.parallel - b.parallel || a.row.copperAreaMm2 - b.row.copperAreaMm2 || (a.row.id < b.row.id ? -1 : 1))
