@@ -28,11 +28,23 @@ export interface SpecificationPdf {
  * Equal input gives equal bytes. A copy with a watermark is another file that carries the same specification.
  */
 export async function renderSpecificationPdf({ sheets, info, attachment, watermark }: SpecificationPdf): Promise<Buffer> {
+  return renderPages({ pages: sheets, info, attachment, ...(watermark && { watermark }) })
+}
+
+export interface Pages {
+  pages: readonly Sheet[]
+  info: DocumentInfo
+  attachment?: Attachment
+  watermark?: Watermark
+}
+
+/** Any sheets as PDF/A-3b, one page each in its own size, tagged and with bookmarks. */
+export async function renderPages({ pages, info, attachment, watermark }: Pages): Promise<Buffer> {
   const doc = openDocument(info)
-  attach(doc, attachment, info.date)
+  if (attachment) attach(doc, attachment, info.date)
   const root = doc.struct('Document')
   doc.addStructure(root)
-  for (const sheet of sheets) renderSheet(doc, root, sheet, watermark)
+  for (const page of pages) renderSheet(doc, root, page, watermark)
   root.end()
   return documentBytes(doc)
 }
