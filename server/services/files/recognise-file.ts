@@ -26,7 +26,6 @@ const HEAD_BYTES = 8192
 /** The last part of the name a browser sent, without control and direction characters, at most 200 characters long. */
 export function cleanFileName(sent: string): string {
   const last = wellFormed(sent).split(/[/\\]/).at(-1) ?? ''
-  // eslint-disable-next-line no-control-regex
   const visible = last.replace(/[\u0000-\u001f\u007f-\u009f\u200e\u200f\u202a-\u202e\u2066-\u2069"<>|:*?]/g, '').trim()
   if (visible.length <= 200) return visible || 'file'
   const extension = extensionOf(visible)
@@ -67,10 +66,16 @@ async function kindOfContent(path: string, sizeBytes: number, extension: string)
     if (!isText(head)) return null
     if (head.subarray(0, 64).toString('latin1').includes('ISO-10303-21')) return 'step'
     // A table and a text are both plain text: here alone the name decides.
-    return EXTENSIONS.csv.includes(extension) ? 'csv' : EXTENSIONS.txt.includes(extension) ? 'txt' : EXTENSIONS.csv.length > 0 && looksTabular(head) ? 'csv' : 'txt'
+    return textKind(head, extension)
   } finally {
     await file.close()
   }
+}
+
+function textKind(head: Buffer, extension: string): 'csv' | 'txt' {
+  if (EXTENSIONS.csv.includes(extension)) return 'csv'
+  if (EXTENSIONS.txt.includes(extension)) return 'txt'
+  return looksTabular(head) ? 'csv' : 'txt'
 }
 
 const looksTabular = (head: Buffer) => /^[^\n]*[,;\t][^\n]*\n/.test(head.toString('latin1'))

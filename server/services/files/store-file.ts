@@ -3,7 +3,7 @@ import type { Actor, Transaction } from '#server/db/as-actor'
 import { files } from '#server/db/schema/index'
 import type { FileKind } from '#shared/contracts/endpoint'
 import { createHash, randomUUID } from 'node:crypto'
-import type { StagedFile } from './stage-upload'
+import type { StagedFile } from './staged-file'
 
 export interface StoredFile {
   id: string

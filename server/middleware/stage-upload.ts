@@ -1,6 +1,8 @@
 import type { Context } from '#server/context'
 import { AppError } from '#server/errors'
-import type { FileKind, Upload } from '#shared/contracts/endpoint'
+import { cleanFileName, recogniseFile } from '#server/services/files/recognise-file'
+import type { StagedFile } from '#server/services/files/staged-file'
+import type { Upload } from '#shared/contracts/endpoint'
 import type { Request, Response } from 'express'
 import multer, { MulterError, type StorageEngine } from 'multer'
 import { createHash, randomUUID } from 'node:crypto'
@@ -9,17 +11,6 @@ import { mkdir, rm } from 'node:fs/promises'
 import path from 'node:path'
 import { Transform } from 'node:stream'
 import { pipeline } from 'node:stream/promises'
-import { cleanFileName, recogniseFile } from './recognise-file'
-
-/** A file that has come in whole, was recognised by its content, and is not referenced by anything yet. */
-export interface StagedFile {
-  path: string
-  name: string
-  kind: FileKind
-  sizeBytes: number
-  /** SHA-256 over the bytes, lower-case hex. */
-  sha256: string
-}
 
 /** Streams one uploaded file to the staging folder; no transaction is open meanwhile. */
 export async function stageUpload(ctx: Context, upload: Upload, req: Request, res: Response): Promise<StagedFile | null> {
@@ -51,11 +42,6 @@ async function checked(file: ReceivedFile | undefined, upload: Upload): Promise<
     await rm(file.path, { force: true })
     throw error
   }
-}
-
-/** Removes what was not kept; a kept file no longer lies there. */
-export async function discardStaged(file: StagedFile | null): Promise<void> {
-  if (file) await rm(file.path, { force: true })
 }
 
 function hashingStorage(folder: string): StorageEngine {
