@@ -13,6 +13,8 @@ import type { Context } from './context'
 import type { CornerState } from './corner-result'
 import { coupledCorners, secondWinding } from './coupled-corners'
 import { reportContradictions } from './document-findings'
+import { explainCorners } from './explain-corners'
+import { explainResults } from './explain-results'
 import { finiteOnly } from './finite'
 import { flybackCornerAt, flybackCorners } from './flyback-corners'
 import { inductanceBasis } from './inductance'
@@ -65,6 +67,8 @@ export function evaluate(document: SpecificationDocument, library: Library, opti
     findings: [],
     working: {},
   }
+  explainCorners(context, body.corners)
+  explainResults(context, body)
   const checks = runChecks({ document, evaluation: body, coil, context, loopGain: heat.loopGain })
   return finiteOnly({ ...body, findings: distinct(context.findings), working: context.working ?? {}, checks })
 }

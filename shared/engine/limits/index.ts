@@ -31,7 +31,13 @@ export function proposeTests(document: SpecificationDocument, kept: readonly Tes
     while (ids.has(`t${next}`)) next += 1
     return `t${next++}`
   }
-  return [...rows.map((row) => ({ ...row, id: freshId() })), ...entered].map((row, index) => ({ ...row, number: index + 1 }))
+  return [...rows.map((row) => ({ ...row, ...limitsInRange(row), id: freshId() })), ...entered].map((row, index) => ({ ...row, number: index + 1 }))
+}
+
+/** A limit beyond what a document holds comes of an input that makes no sense, and is none. */
+const limitsInRange = ({ minimum, nominal, maximum }: TestRow) => {
+  const inRange = (value: number | null) => (value !== null && Math.abs(value) < 1e15 ? value : null)
+  return { minimum: inRange(minimum), nominal: inRange(nominal), maximum: inRange(maximum) }
 }
 
 const named = ({ windings }: WindingSpecification, id: string): Winding | undefined => windings.find((winding) => winding.id === id)

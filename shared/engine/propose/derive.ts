@@ -2,7 +2,7 @@ import type { Evaluation, WindingResult } from '../evaluation'
 import { proposeTests } from '../limits'
 import type { DcResistanceLimit, InsulationBoundary, LeakageLimit, SaturationLimit, SpecificationDocument, TurnsRatio, Winding, WindingSpecification, WithstandTest } from '../specification'
 import { isInsulatedWire, windingsAt } from '../evaluate/insulation-paths'
-import { isProposed, PROPOSED, proposed, toDigits, toStepUp } from './stated'
+import { isProposed, isStatable, PROPOSED, proposed, toDigits, toStepUp } from './stated'
 
 /**
  * The figures of a document that follow from an evaluation: currents, resistance, leakage, saturation, ratios, boundaries and the
@@ -13,7 +13,7 @@ export function derive(document: SpecificationDocument, evaluation: Evaluation):
   specification.windings = specification.windings.map((winding, index) => derivedWinding(winding, evaluation.windings[index], specification, evaluation))
   specification.electrical = derivedElectrical(specification, evaluation)
   specification.core = derivedCore(specification, evaluation)
-  specification.former = { ...specification.former, massG: isOpen(specification.former.massG) && evaluation.mass.totalG !== null ? proposed(toDigits(evaluation.mass.totalG, 2), 'reference') : specification.former.massG }
+  specification.former = { ...specification.former, massG: isOpen(specification.former.massG) && isStatable(evaluation.mass.totalG) ? proposed(toDigits(evaluation.mass.totalG, 2), 'reference') : specification.former.massG }
   specification.insulation = { ...specification.insulation, boundaries: specification.insulation.boundaries.map((boundary, index) => derivedBoundary(boundary, evaluation.boundaries[index], specification)) }
   specification.windings = specification.windings.map((winding) => certified(winding, specification))
   specification.tests = proposeTests({ ...document, specification }, specification.tests)
@@ -30,10 +30,10 @@ function derivedWinding(winding: Winding, result: WindingResult | undefined, spe
   const fromDuty = evaluation.corners.length > 0
   return {
     ...winding,
-    rmsCurrentA: fromDuty && result.rmsA !== null ? toDigits(result.rmsA, 3, true) : winding.rmsCurrentA,
-    peakCurrentA: fromDuty && result.peakA !== null ? toDigits(result.peakA, 3, true) : winding.peakCurrentA,
-    dcCurrentA: fromDuty && result.dcA !== null ? toDigits(result.dcA, 3, true) : winding.dcCurrentA,
-    dcResistance: result.dcResistance20Ohm === null ? winding.dcResistance : resistanceLimit(result.dcResistance20Ohm),
+    rmsCurrentA: fromDuty && isStatable(result.rmsA) ? toDigits(result.rmsA, 3, true) : winding.rmsCurrentA,
+    peakCurrentA: fromDuty && isStatable(result.peakA) ? toDigits(result.peakA, 3, true) : winding.peakCurrentA,
+    dcCurrentA: fromDuty && isStatable(result.dcA) ? toDigits(result.dcA, 3, true) : winding.dcCurrentA,
+    dcResistance: isStatable(result.dcResistance20Ohm) ? resistanceLimit(result.dcResistance20Ohm) : winding.dcResistance,
   }
 }
 
@@ -72,7 +72,7 @@ const LEAKAGE_LIMIT_SHARE = 1.5
 function leakageLimits(specification: WindingSpecification, { leakages }: Evaluation): LeakageLimit[] {
   const secondaries = specification.windings.filter(({ role }) => role === 'secondary').map(({ id }) => id)
   const all = leakages.find(({ shortedWindingIds }) => shortedWindingIds.length === secondaries.length && secondaries.every((id) => shortedWindingIds.includes(id)))
-  if (all?.inductanceH == null) return []
+  if (!all || !isStatable(all.inductanceH)) return []
   return [{ id: 'k1', status: 'mandatory', origin: PROPOSED, windingId: all.windingId, shortedWindingIds: all.shortedWindingIds, maximumH: toDigits(all.inductanceH * LEAKAGE_LIMIT_SHARE, 2, true), minimumH: null, frequencyHz: 100e3, levelV: 0.25, temperatureC: 25, model: 'series' }]
 }
 
@@ -83,7 +83,7 @@ function saturationLimits(specification: WindingSpecification, evaluation: Evalu
   const primary = primaryOf(specification)
   const peakA = Math.max(0, ...evaluation.corners.flatMap(({ windings }) => windings.filter(({ windingId }) => windingId === primary?.id).map(({ peakA: value }) => value)))
   const currentA = evaluation.magnetics.worstCurrentA ?? peakA
-  if (!primary || !(currentA > 0)) return []
+  if (!primary || !isStatable(currentA)) return []
   const limit = (id: string, temperatureC: number): SaturationLimit => ({ id, status: 'mandatory', origin: PROPOSED, windingId: primary.id, currentA: toDigits(currentA, 3, true), temperatureC, remainingShare: REMAINING_SHARE, method: 'pulse' })
   return [limit('x1', 25), limit('x2', 100)]
 }
@@ -110,9 +110,9 @@ function derivedCore(specification: WindingSpecification, evaluation: Evaluation
   const { core } = specification
   const primary = primaryOf(specification)
   const nominalH = specification.electrical.inductance.value?.nominalH
-  const alH = isProposed(core.gap.alH) && primary && nominalH && primary.turns > 0 ? proposed(toDigits(nominalH / primary.turns ** 2, 3)) : core.gap.alH
+  const alH = isProposed(core.gap.alH) && primary && nominalH && isStatable(nominalH / primary.turns ** 2) ? proposed(toDigits(nominalH / primary.turns ** 2, 3)) : core.gap.alH
   const gapMm = evaluation.magnetics.gapMm
-  const lengthMm = isProposed(core.gap.lengthMm) && gapMm !== null ? proposed(toDigits(gapMm, 2), 'reference') : core.gap.lengthMm
+  const lengthMm = isProposed(core.gap.lengthMm) && isStatable(gapMm) ? proposed(toDigits(gapMm, 2), 'reference') : core.gap.lengthMm
   return { ...core, gap: { ...core.gap, alH, lengthMm } }
 }
 
@@ -124,14 +124,14 @@ function derivedBoundary(boundary: InsulationBoundary, result: Evaluation['bound
   const covered = boundary.between.every((end) => end.kind === 'core' || windingsAt(specification, end).length > 0)
   return {
     ...boundary,
-    workingVoltageVRms: result.workingVoltageVRms === null ? null : toStepUp(result.workingVoltageVRms, 1),
-    recurringPeakV: result.recurringPeakV === null ? null : toStepUp(result.recurringPeakV, 1),
+    workingVoltageVRms: isStatable(result.workingVoltageVRms) ? toStepUp(result.workingVoltageVRms, 1) : null,
+    recurringPeakV: isStatable(result.recurringPeakV) ? toStepUp(result.recurringPeakV, 1) : null,
     frequencyHz: specification.electrical.switchingFrequencyHz.value?.maximum ?? null,
-    clearanceMm: required.clearanceMm.value === null ? null : toStepUp(required.clearanceMm.value, 0.1),
-    creepageMm: required.creepageMm.value === null ? null : toStepUp(required.creepageMm.value, 0.1),
+    clearanceMm: isStatable(required.clearanceMm.value) ? toStepUp(required.clearanceMm.value, 0.1) : null,
+    creepageMm: isStatable(required.creepageMm.value) ? toStepUp(required.creepageMm.value, 0.1) : null,
     distanceThroughInsulationMm: required.distanceThroughInsulationMm.value,
     insulationLayers: required.layers.value,
-    test: covered && required.testVoltageVRms.value !== null ? withstandTest(boundary, required.testVoltageVRms.value, specification) : boundary.test,
+    test: covered && isStatable(required.testVoltageVRms.value) ? withstandTest(boundary, required.testVoltageVRms.value, specification) : boundary.test,
   }
 }
 
@@ -151,7 +151,7 @@ function certified(winding: Winding, specification: WindingSpecification): Windi
   if (!isInsulatedWire(winding) || (winding.wire.certificate && !isProposed(winding))) return winding
   const peaks = specification.insulation.boundaries.filter(({ between, insulation }) => insulation !== 'functional' && between.some((end) => windingsAt(specification, end).some(({ id }) => id === winding.id))).map(({ recurringPeakV }) => recurringPeakV ?? 0)
   const peakV = Math.max(0, ...peaks)
-  const peakVoltageV = peakV > 0 ? toStepUp(peakV, 50) : null
+  const peakVoltageV = isStatable(peakV) ? toStepUp(peakV, 50) : null
   const frequencyHz = specification.electrical.switchingFrequencyHz.value?.maximum ?? null
   return { ...winding, wire: { ...winding.wire, certificate: { standard: 'IEC 62368-1 Annex J', number: winding.wire.certificate?.number ?? '', peakVoltageV, maximumFrequencyHz: frequencyHz === null ? null : toStepUp(frequencyHz, 50e3) } } }
 }

@@ -33,5 +33,11 @@ export function toDigits(value: number, digits: number, up = false): number {
   return Number((rounded / scale).toPrecision(digits))
 }
 
+/** No figure of a document is as large as this; what is calculated beyond it comes of an input that makes no sense. */
+const LARGEST_FIGURE = 1e15
+
+/** Whether a calculated figure may be specified: there, finite, above zero and of a size that means something. */
+export const isStatable = (value: number | null | undefined): value is number => typeof value === 'number' && value > 0 && value < LARGEST_FIGURE
+
 /** The next step of a size up, e.g. distances to 0.1 mm and voltages to 100 V. */
 export const toStepUp = (value: number, step: number): number => Number((Math.ceil(value / step - 1e-9) * step).toPrecision(12))
