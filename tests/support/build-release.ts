@@ -2,6 +2,7 @@ import { appNow, asActor } from '#server/db/as-actor'
 import { specificationReleases, specificationRevisions, specifications } from '#server/db/schema/index'
 import { keepMadeFile, referToFile } from '#server/services/files/store-file'
 import { canonicalJson } from '#shared/canonical-json'
+import type { WindingSpecification } from '#shared/engine/specification'
 import { eq } from 'drizzle-orm'
 import { createHash } from 'node:crypto'
 import { blankSpecification } from './blank-specification'
@@ -19,8 +20,15 @@ export interface TestRelease {
 }
 
 /** A released revision with the bytes that matter to what comes after it; the sheets are empty. */
-export async function buildRelease(test: TestApp, engineer: TestPerson, checker: TestPerson, partNumber = `T-${++count}`): Promise<TestRelease> {
+export async function buildRelease(
+  test: TestApp,
+  engineer: TestPerson,
+  checker: TestPerson,
+  partNumber = `T-${++count}`,
+  shape: (specification: WindingSpecification) => void = () => undefined,
+): Promise<TestRelease> {
   const specification = blankSpecification()
+  shape(specification)
   specification.title.partNumber.value = partNumber
   specification.title.title.value = 'Transformer, flyback'
   const document = Buffer.from(canonicalJson({ specification, requirement: null }))
