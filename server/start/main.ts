@@ -1,7 +1,7 @@
 import { bench, test } from './check'
 import { finish, isStopping } from './programs'
 import { Refusal } from './report'
-import { backup, restore } from './safekeeping'
+import { backup, restore, verifyAudit } from './safekeeping'
 import { dev, start } from './serve'
 import { readSettings, testSettings } from './settings'
 
@@ -13,6 +13,7 @@ const COMMANDS: Record<string, (args: string[]) => Promise<number | void>> = {
   bench,
   backup: (args) => backup(readSettings(), args),
   restore: (args) => restore(readSettings(), args),
+  'verify-audit': () => verifyAudit(readSettings()),
 }
 
 /**

@@ -16,10 +16,16 @@ export async function backup(settings: Settings, [file]: string[]): Promise<numb
   if (!existsSync(dataDir)) throw new Refusal(`There is nothing to back up: ${dataDir} does not exist.`)
   const stamp = new Date().toISOString().replace(/\D/g, '').slice(0, 14)
   const archive = file ? asTyped(file) : path.join(dataDir, 'backups', `dotside-${stamp}.tar.gz`)
-  return runShown('server/backup.ts', [archive], { ...env, ...(await databaseToBackUp(settings)), DATA_DIR: dataDir })
+  return runShown('server/backup.ts', [archive], { ...env, ...(await databaseAsFound(settings)), DATA_DIR: dataDir })
 }
 
-async function databaseToBackUp(settings: Settings): Promise<DatabaseEnvironment> {
+/** `npm run verify-audit`: computes the hash chain of the audit trail again, beside a running Dotside or without one. */
+export async function verifyAudit(settings: Settings): Promise<number> {
+  if (!existsSync(settings.dataDir)) throw new Refusal(`There is nothing to verify: ${settings.dataDir} does not exist.`)
+  return runShown('server/verify-audit.ts', [], { ...settings.env, ...(await databaseAsFound(settings)) })
+}
+
+async function databaseAsFound(settings: Settings): Promise<DatabaseEnvironment> {
   if (settings.ownerUrl) await ensureDebian('postgresql-client')
   else if (runningStart(settings)) return databaseOfRunning(settings)
   else await claimDataFolder(settings)

@@ -1,13 +1,11 @@
 import type { Context } from '#server/context'
-import { asAuth, type Actor, type Transaction } from '#server/db/as-actor'
-import { companies, credentials, memberships, people, vendorLinks } from '#server/db/schema/index'
+import { asActor, asAuth, type Actor, type Transaction } from '#server/db/as-actor'
+import { companies, credentials, memberships, people, vendorLinks, vendorRelations } from '#server/db/schema/index'
 import { recordAudit } from '#server/services/audit/record-audit'
 import { hashPassword } from '#server/services/people/secrets'
 import type { Role } from '#shared/contracts/endpoint'
 import { eq, sql } from 'drizzle-orm'
 import { randomUUID } from 'node:crypto'
-import { asActor } from '../as-actor'
-import { vendorRelations } from '../schema/index'
 
 /** Only for the demo, whose mail leaves the machine nowhere. */
 export const DEMO_PASSWORD = 'dotside demo 2026'
@@ -112,6 +110,8 @@ const RELATIONS = [
 export async function seedPeople(ctx: Context): Promise<void> {
   const passwordHash = await hashPassword(DEMO_PASSWORD)
   await asAuth(ctx, async (tx) => {
+    // A start that broke off between this transaction and the next left them here.
+    if ((await tx.$count(people, eq(people.email, DEMO_PEOPLE[0]!.email))) > 0) return
     const idOf = new Map<DemoCompany, string>()
     for (const company of COMPANIES) idOf.set(company, await insertCompany(tx, company, passwordHash))
     for (const { buying, vendor } of RELATIONS) {
