@@ -24,7 +24,7 @@ import { readOrder } from './read-orders'
 export async function placeOrder(ctx: Context, actor: Actor, awardId: string, input: OrderInput): Promise<Order> {
   const content = await asActor(ctx, actor, (tx) => prepare(tx, actor, awardId, input))
   refuseUnprintable(content)
-  const pdf = await renderPurchaseOrderPdf(content, contentBytes(content).sha256)
+  const pdf = await renderPurchaseOrderPdf({ content, ...contentBytes(content) })
   const kept = await keepMadeFile(ctx, pdf, `${content.number}.pdf`, 'pdf')
   return asActor(ctx, actor, async (tx) => {
     const award = await lockAward(tx, actor, awardId)
