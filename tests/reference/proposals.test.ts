@@ -17,12 +17,17 @@ const byName = (name: keyof typeof SHEETS) => proposals.find((one) => one.name =
 /** What only people can fill: whose drawing it is, and its number. */
 const BY_PEOPLE = new Set(['title.legalOwner', 'title.partNumber'])
 
+/** Stopping checks that are neither met nor left to people. */
+const stoppingChecks = ({ checks }: Evaluation) => checks.filter(({ severity, state, path }) => severity === 'S' && state !== 'met' && !BY_PEOPLE.has(path))
+
 describe.each(proposals)('the proposal for the $name', ({ proposal, evaluation, sheet }) => {
   const { specification } = proposal.document
 
-  it('can be released: every stopping check is met but for the title block', () => {
-    const stopping = evaluation.checks.filter(({ severity, state, path }) => severity === 'S' && state !== 'met' && !BY_PEOPLE.has(path))
-    expect(stopping).toEqual([])
+  it('can be released: no stopping check fails but for the title block', () => {
+    const stopping = stoppingChecks(evaluation)
+    expect(stopping.filter(({ state }) => state === 'not-met')).toEqual([])
+    // Creepage above 30 kHz rests on a table of IEC 60664-4 that is not held; across protective boundaries a person answers.
+    expect(new Set(stopping.map(({ code }) => code))).toEqual(new Set(sheet.insulationMethod === 'functional' ? [] : ['I06']))
   })
 
   it('leaves only the self-resonance open among the checks that must be answered', () => {
@@ -178,7 +183,7 @@ describe('other sheets', () => {
     expect(document.specification.sequence.some(({ kind }) => kind === 'margin')).toBe(true)
     expect(boundary.provided.creepageMm!).toBeGreaterThanOrEqual(boundary.required.creepageMm.value!)
     expect(boundary.provided.layers).toBe(3)
-    expect(evaluation.checks.filter(({ severity, state, path }) => severity === 'S' && state !== 'met' && !BY_PEOPLE.has(path))).toEqual([])
+    expect(new Set(stoppingChecks(evaluation).map(({ code, state }) => `${code} ${state}`))).toEqual(new Set(['I06 not-checkable']))
   })
 
   it('says why a sheet cannot be solved instead of proposing', () => {

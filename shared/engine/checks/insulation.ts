@@ -67,10 +67,12 @@ const distances = (kind: 'creepage' | 'clearance') => (input: CheckInput): Outco
 function highFrequency(input: CheckInput): Outcome[] {
   const frequencyHz = input.document.specification.electrical.switchingFrequencyHz.value?.maximum ?? 0
   if (frequencyHz <= 30e3) return []
-  return boundaries(input).filter(protective).map(({ result, boundary, path }) =>
-    result.required.clearanceMm.value === null || result.required.clearanceMm.reason === 'high-frequency-table-not-held'
-      ? notCheckable(path, { boundary: boundary.name, reason: result.required.clearanceMm.reason ?? '' })
-      : yesNo(true, path, { boundary: boundary.name, frequencyHz }))
+  return boundaries(input).filter(protective).map(({ result, boundary, path }) => {
+    const { clearanceMm, creepageMm } = result.required
+    // The creepage table of IEC 60664-4 is not held: a person looks it up and answers with its value.
+    const open = [clearanceMm, creepageMm].find(({ value, reason }) => value === null || reason === 'high-frequency-table-not-held')
+    return open ? notCheckable(path, { boundary: boundary.name, frequencyHz, reason: open.reason ?? '' }) : yesNo(true, path, { boundary: boundary.name, frequencyHz })
+  })
 }
 
 function altitude({ document }: CheckInput): Outcome[] {

@@ -12,7 +12,7 @@ export function planNotes(specification: WindingSpecification, design: Design): 
     { text: 'The core is floating and belongs to the primary side.', fields: ['core.potential'] },
     ...(design.interleaved ? [{ text: 'The primary is wound in two halves in series, the secondaries between them.', fields: ['sequence'] }] : []),
     ...(design.method === 'margin-tape' ? [{ text: 'Margin tape is built up to the height of the winding beside it. Leads that cross a margin are sleeved into the winding.', fields: ['sequence'] }] : []),
-    ...(insulated.length > 0 ? [{ text: `Insulated winding wire of ${insulated.map(({ name }) => name).join(', ')} is certified for reinforced insulation; the vendor declares certificate and maker. Leads do not cross bare leads under tension.`, fields: ['windings'] }] : []),
+    ...(insulated.length > 0 ? [{ text: `Insulated winding wire of ${insulated.map(({ name }) => name).join(', ')} is certified for reinforced insulation; the vendor declares certificate and maker. Its stripped ends keep the distances of the boundary list to the core and to the other side, and do not cross bare leads under tension.`, fields: ['windings'] }] : []),
     { text: 'No change of material, process, site or sub-supplier without written approval.', fields: [] },
   ]
   return texts.map(({ text, fields }, index) => ({ id: `n${index + 1}`, status: 'mandatory', origin: PROPOSED, number: index + 1, text, fields }))

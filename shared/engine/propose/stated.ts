@@ -40,4 +40,4 @@ const LARGEST_FIGURE = 1e15
 export const isStatable = (value: number | null | undefined): value is number => typeof value === 'number' && value > 0 && value < LARGEST_FIGURE
 
 /** The next step of a size up, e.g. distances to 0.1 mm and voltages to 100 V. */
-export const toStepUp = (value: number, step: number): number => Number((Math.ceil(value / step - 1e-9) * step).toPrecision(12))
+export const toStepUp = (value: number, step: number): number => Number((Math.max(value > 0 ? 1 : 0, Math.ceil(value / step - 1e-9)) * step).toPrecision(12))
