@@ -59,7 +59,7 @@ async function kindOfContent(path: string, sizeBytes: number, extension: string)
     const head = await read(file, 0, Math.min(HEAD_BYTES, sizeBytes))
     // ISO 32000-2 asks for the header in the first line; the trailer shows that the end is there.
     if (head.subarray(0, 1024).includes('%PDF-')) return (await tail(file, sizeBytes)).includes('%%EOF') ? 'pdf' : 'damaged'
-    if (startsWith(head, 0x50, 0x4b, 0x03, 0x04)) return inspectZip(file, sizeBytes)
+    if (startsWith(head, 0x50, 0x4b, 0x03, 0x04)) return await inspectZip(file, sizeBytes)
     if (startsWith(head, 0xd0, 0xcf, 0x11, 0xe0, 0xa1, 0xb1, 0x1a, 0xe1)) return 'doc-xls-ppt'
     if (startsWith(head, 0x89, 0x50, 0x4e, 0x47, 0x0d, 0x0a, 0x1a, 0x0a)) return 'png'
     if (startsWith(head, 0xff, 0xd8, 0xff)) return 'jpeg'
