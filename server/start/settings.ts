@@ -31,9 +31,9 @@ export function readSettings(): Settings {
 
 /** The tests see nothing of this installation's configuration. */
 export function testSettings(): Settings {
-  const ours = /^(DATABASE_.*|SMTP_URL|MAIL_.*|PORT|PUBLIC_URL|DEMO|DEV_PORT)$/
+  const ours = /^(DATABASE_.*|SMTP_URL|MAIL_.*|PORT|PUBLIC_URL|DATA_DIR|DEMO|DEV_PORT)$/
   const env = Object.fromEntries(Object.entries(process.env).filter(([name]) => !ours.test(name)))
-  const dataDir = path.resolve(ROOT, env.DATA_DIR || 'data', 'test')
+  const dataDir = path.resolve(ROOT, process.env.DATA_DIR || 'data', 'test')
   return { env, dataDir, ports: readPorts({ DATABASE_PORT: '5539' }), ownerUrl: undefined, throwAway: true }
 }
 
