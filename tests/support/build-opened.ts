@@ -165,8 +165,10 @@ export const orderInput = (overrides: Partial<OrderInput> = {}): OrderInput => (
   ...overrides,
 })
 
-export async function buildOrder(test: TestApp, world: World, quote = 0): Promise<Order> {
+/** An order placed with one of the world's vendors. */
+export async function buildOrder(test: TestApp, world: World, vendor = 0): Promise<Order> {
   const opened = await buildOpenedRfq(test, world)
+  const quote = opened.quotes.findIndex(({ vendorCompanyId }) => vendorCompanyId === world.vendors[vendor]!.company.id)
   const award = await buildApproved(test, world, opened, quote)
   const { body } = await request(test.app, placeOrder, { params: { awardId: award.id }, body: orderInput(), as: world.buyer.cookie }).expect(200)
   return body as Order

@@ -1,12 +1,15 @@
 import { audit } from './audit'
+import { awards } from './awards'
 import type { Expectation, FeatureExpectations } from './expectation'
 import { health } from './health'
 import { mail } from './mail'
+import { orders } from './orders'
 import { parts } from './parts'
 import { people } from './people'
+import { samples } from './samples'
 
 /** One line per feature, under the feature's name in `shared/contracts/index.ts`. */
-const FEATURES: Readonly<Record<string, FeatureExpectations>> = { health, people, parts, mail, audit }
+const FEATURES: Readonly<Record<string, FeatureExpectations>> = { health, people, parts, samples, awards, orders, mail, audit }
 
 /** Keyed like the endpoints: `people.signIn`. */
 export const EXPECTATIONS: ReadonlyMap<string, Expectation> = new Map(
