@@ -66,12 +66,15 @@ function widenGroups(columns: readonly Column[], needs: readonly Need[], heightM
   })
 }
 
-/** What is left goes to columns of text; figures and letters keep the width they need. */
+/** What is left gives some air to columns of figures and letters, and the rest to columns of text. */
 function stretch(columns: readonly Column[], needs: readonly Need[], leftMm: number): number[] {
   const texts = columns.map(({ align = 'start' }) => align === 'start')
-  const takes = (index: number) => (texts.includes(true) ? texts[index]! : true)
-  const base = sum(needs.map((each, index) => (takes(index) ? each.wantedMm : 0)))
-  return needs.map((each, index) => each.wantedMm + (takes(index) ? (leftMm * each.wantedMm) / base : 0))
+  if (!texts.includes(true)) return needs.map((each) => each.wantedMm + leftMm / needs.length)
+  const figures = texts.filter((text) => !text).length
+  const airMm = figures === 0 ? 0 : Math.min(AIR_MM, leftMm / 2 / figures)
+  const base = sum(needs.map((each, index) => (texts[index] ? each.wantedMm : 0)))
+  const rest = leftMm - airMm * figures
+  return needs.map((each, index) => each.wantedMm + (texts[index] ? (rest * each.wantedMm) / base : airMm))
 }
 
 function need(column: Column, rows: readonly Row[], heightMm: number): Need {
@@ -82,8 +85,7 @@ function need(column: Column, rows: readonly Row[], heightMm: number): Need {
   const header = longestWordMm(column.header, 'sans-bold', heightMm)
   const padding = 2 * CELL_PADDING_MM + 0.2
   const minimumMm = Math.max(header, Math.min(body(longestWordMm), WORD_LIMIT_MM)) + padding
-  const slack = (column.align ?? 'start') === 'start' ? 0 : AIR_MM
-  const wantedMm = Math.max(minimumMm, Math.min(body(lineWidth), WANTED_LIMIT_MM) + padding) + slack
+  const wantedMm = Math.max(minimumMm, Math.min(body(lineWidth), WANTED_LIMIT_MM) + padding)
   return { minimumMm, wantedMm }
 }
 

@@ -42,6 +42,9 @@ function labelElements(shape: LabelShape, heightMm: number): SvgElement[] {
         'font-weight': weight,
         'font-size': formatMm(fontSizeMm(shape.heightMm)),
         fill: INK_COLOURS[shape.ink],
+        // Browsers round advances to their own grid, and collapse blanks unless each text says otherwise.
+        textLength: formatMm(run.widthMm),
+        style: 'white-space:pre',
         ...rotation,
         ...tagOf(shape),
       },

@@ -18,7 +18,7 @@ const shapesMarkup = (shapes: readonly Shape[], heightMm: number) =>
   shapes.flatMap((shape) => svgElements(shape, heightMm)).map(markup).join('\n')
 
 /** Letters stand as the width table has them, so kerning and ligatures are off. */
-export const SVG_TEXT_STYLE = 'font-kerning:none;font-variant-ligatures:none;white-space:pre'
+export const SVG_TEXT_STYLE = 'font-kerning:none;font-variant-ligatures:none;text-rendering:geometricPrecision'
 
 function open(picture: Pick<Picture, 'widthMm' | 'heightMm'>, title: string): string {
   const size = `${formatMm(picture.widthMm)} ${formatMm(picture.heightMm)}`

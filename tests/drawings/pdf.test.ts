@@ -7,7 +7,7 @@ import { layOutDocument } from '#server/pdf/document'
 import { renderPurchaseOrderPdf } from '#server/pdf/render-purchase-order'
 import { renderSpecificationPdf } from '#server/pdf/render-sheets'
 import { attachedFile, pdfFonts, pdfInfo, pdfText, plainBlanks, qpdfCheck } from '../support/pdf-tools'
-import { sampleEvaluation } from '../support/sample-evaluation'
+import { evaluate } from '#shared/engine/index'
 import { buoySupply, coupledInductor, mainsFlyback, sampleLibrary } from '../support/sample-specification'
 import { stressPart } from '../support/stress-specification'
 
@@ -19,7 +19,7 @@ function prepare(make: typeof mainsFlyback) {
   const bytes = Buffer.from(JSON.stringify(document.specification), 'utf8')
   const sheets = drawSheets({
     specification: document.specification,
-    evaluation: sampleEvaluation(document, sampleLibrary),
+    evaluation: evaluate(document, sampleLibrary),
     library: sampleLibrary,
     revision: 'B',
     release: { revision: 'B', issuedOn: ISSUED, createdBy: 'E. Halloran', checkedBy: 'M. Okafor', approvedBy: 'J. Lindqvist' },

@@ -5,7 +5,7 @@ import { schematic } from '#shared/drawing/figures/schematic'
 import { drawSheets } from '#shared/drawing/sheets/index'
 import { terminals } from '#shared/drawing/sheets/terminals'
 import type { SpecificationDocument, WindingSpecification } from '#shared/engine/specification'
-import { sampleEvaluation } from '../support/sample-evaluation'
+import { evaluate } from '#shared/engine/index'
 import { buoySupply, coupledInductor, mainsFlyback, sampleLibrary } from '../support/sample-specification'
 import { fullSpecification } from '../support/full-specification'
 
@@ -34,7 +34,7 @@ function sheetText(sheets: readonly Sheet[]): string {
 }
 
 const document = fullSpecification()
-const evaluation = sampleEvaluation(document, sampleLibrary)
+const evaluation = evaluate(document, sampleLibrary)
 const draw = (specification: WindingSpecification) =>
   sheetText(drawSheets({ specification, evaluation, library: sampleLibrary, revision: 'B', release: RELEASE, specificationHash: null, status: 'released' }))
 

@@ -5,7 +5,7 @@ import { FRAME } from '#shared/drawing/sheets/frame'
 import { labelBox } from '#shared/drawing/text-metrics'
 import type { SpecificationDocument } from '#shared/engine/specification'
 import { blankSpecification } from '../support/blank-specification'
-import { sampleEvaluation } from '../support/sample-evaluation'
+import { evaluate } from '#shared/engine/index'
 import { buoySupply, coupledInductor, mainsFlyback, sampleLibrary } from '../support/sample-specification'
 import { stressPart } from '../support/stress-specification'
 
@@ -14,7 +14,7 @@ const RELEASE = { revision: 'B', issuedOn: '2026-09-02', createdBy: 'E. Halloran
 function inputFor(document: SpecificationDocument, overrides: Partial<DrawingInput> = {}): DrawingInput {
   return {
     specification: document.specification,
-    evaluation: sampleEvaluation(document, sampleLibrary),
+    evaluation: evaluate(document, sampleLibrary),
     library: sampleLibrary,
     revision: 'B',
     release: RELEASE,

@@ -1,7 +1,7 @@
 import { mount } from '@vue/test-utils'
 import { describe, expect, it } from 'vitest'
 import { drawSheets } from '#shared/drawing/sheets/index'
-import { sampleEvaluation } from '../../../../tests/support/sample-evaluation'
+import { evaluate } from '#shared/engine/index'
 import { mainsFlyback, sampleLibrary } from '../../../../tests/support/sample-specification'
 import CoilSection from './CoilSection.vue'
 import PinView from './PinView.vue'
@@ -10,7 +10,7 @@ import SheetView from './SheetView.vue'
 
 const document = mainsFlyback()
 const { specification } = document
-const evaluation = sampleEvaluation(document, sampleLibrary)
+const evaluation = evaluate(document, sampleLibrary)
 const sheets = drawSheets({ specification, evaluation, library: sampleLibrary, revision: 'P1', release: null, specificationHash: null, status: 'draft' })
 
 describe('CoilSection', () => {
