@@ -10,7 +10,7 @@ export interface OutlinePicture extends Picture {
   scale: number
 }
 
-const BETWEEN_MM = 20
+const BETWEEN_MM = 23
 const MARGIN = { left: 12, right: 14, bottom: 18, top: 10 } as const
 
 interface Size {

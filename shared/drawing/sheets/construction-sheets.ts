@@ -5,10 +5,9 @@ import type { Evaluation } from '../../engine/evaluation'
 import { formatNumber } from '../../number-format'
 import type { Picture, Shape } from '../model'
 import { box, label, labelLines, LETTERING, linesHeightMm, moved } from '../shapes'
-import { layoutTable, tableHeightMm } from '../table'
 import { wrapText } from '../text-metrics'
 import { PREDICTED } from './figures'
-import { add, addTable, BODY_BOTTOM_MM, BODY_WIDTH_MM, continuePage, FIGURE_TITLE_MM, type Flow, GAP_MM, newPage, placeFigure, roomMm, setScale, take } from './flow'
+import { add, addTable, BODY_BOTTOM_MM, continuePage, FIGURE_TITLE_MM, type Flow, newPage, placeFigure, roomMm, setScale, take } from './flow'
 import { SPACE } from './frame'
 import { rowName, type DrawingInput } from './input'
 import { materialsTable } from './materials-table'
@@ -30,25 +29,17 @@ export function constructionSheets(flow: Flow, input: DrawingInput): void {
 
 function coilFigures(flow: Flow, input: DrawingInput, evaluation: Evaluation): void {
   const side = sideColumn(input, evaluation)
-  const materialsMm = tableHeightMm(layoutTable(materialsTable(input), BODY_WIDTH_MM))
-  let picture = fittingPicture(flow, input, evaluation, materialsMm)
+  let picture = windowPicture(input, evaluation, Math.max(roomMm(flow) - FIGURE_TITLE_MM, LEAST_MM))
   const needMm = () => Math.max(picture.heightMm + FIGURE_TITLE_MM, side.heightMm)
   if (needMm() > roomMm(flow)) {
     continuePage(flow)
-    picture = fittingPicture(flow, input, evaluation, materialsMm)
+    picture = windowPicture(input, evaluation, roomMm(flow) - FIGURE_TITLE_MM)
   }
   const top = take(flow, Math.min(needMm(), roomMm(flow)))
   setScale(flow, `coil ${scaleText(picture.scale)}`)
   const words = `Turns, tapes and margins by step of the winding sequence; ${evaluation.layout.items.length} items`
   placeFigure(flow, `Coil section, winding window, scale ${scaleText(picture.scale)}`, words, picture, SPACE.leftMm, top, WINDOW_MM)
   drawSideColumn(flow, side, top)
-}
-
-/** The window as large as the sheet allows, the materials below it where both have room. */
-function fittingPicture(flow: Flow, input: DrawingInput, evaluation: Evaluation, materialsMm: number): CoilPicture {
-  const room = roomMm(flow) - FIGURE_TITLE_MM
-  const shared = windowPicture(input, evaluation, Math.max(room - materialsMm - 2 * GAP_MM, LEAST_MM))
-  return shared.heightMm + materialsMm + 2 * GAP_MM <= room ? shared : windowPicture(input, evaluation, Math.max(room, LEAST_MM))
 }
 
 function windowPicture({ specification, library }: DrawingInput, { layout }: Evaluation, maximumHeightMm: number): CoilPicture {

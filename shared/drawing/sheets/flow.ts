@@ -20,7 +20,7 @@ export interface Flow {
 
 export const BODY_BOTTOM_MM = TITLE_BLOCK.topMm + 3.5
 export const BODY_WIDTH_MM = SPACE.rightMm - SPACE.leftMm
-export const GAP_MM = 4.5
+const GAP_MM = 4.5
 const HEADING_MM = 7
 
 export const newFlow = (): Flow => ({ pages: [], topMm: BODY_BOTTOM_MM })
@@ -73,8 +73,15 @@ export const FIGURE_TITLE_MM = 6
 export function addTable(flow: Flow, content: TableContent): void {
   if (content.rows.length === 0) return
   const layout = layoutTable(content, BODY_WIDTH_MM)
+  if (readsBetterWhole(flow, tableHeightMm(layout))) continuePage(flow)
   let row = 0
   while (row < layout.rows.length) row = placePart(flow, layout, row)
+}
+
+/** A short table that would be cut near its head goes to the next sheet in one piece. */
+function readsBetterWhole(flow: Flow, heightMm: number): boolean {
+  const sheetMm = SPACE.topMm - HEADING_MM - BODY_BOTTOM_MM
+  return heightMm > roomMm(flow) && heightMm < sheetMm / 2 && roomMm(flow) < heightMm / 2
 }
 
 function placePart(flow: Flow, layout: TableLayout, firstRow: number): number {
