@@ -46,6 +46,12 @@ describe('signing in', () => {
     await test.database.setClock({})
   })
 
+  it('counts attempts at the same moment as it counts others', async () => {
+    const { email } = await buildPerson(test, world.buying, ['engineer'])
+    const answers = await Promise.all(Array.from({ length: 14 }, () => request(test.app, contract.signIn, { body: { email, password: 'wrong' } })))
+    expect(answers.map(({ status }) => status).sort()).toEqual([...Array(10).fill(401), ...Array(4).fill(429)])
+  })
+
   it('keeps only SHA-256 of what the cookie holds', async () => {
     const cookie = await signInAs(test, world.quality)
     const secret = cookie.split('=')[1]!

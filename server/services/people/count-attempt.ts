@@ -12,12 +12,14 @@ export interface AttemptLimit {
 }
 
 /**
- * Counts one attempt and refuses it when there were too many in the window. In a transaction of its own and
- * counted first, so that neither a failure afterwards nor attempts at the same moment get past it.
+ * Counts one attempt and refuses it when there were too many in the window. In a transaction of its own, so that
+ * a failure afterwards does not undo it, and one after the other for a key, so that attempts at the same moment
+ * see each other.
  */
 export async function countAttempt(ctx: Context, { bucket, limit, windowSeconds }: AttemptLimit, key: string): Promise<void> {
   const keyHash = sha256(`${bucket}:${key}`)
   const count = await asAuth(ctx, async (tx) => {
+    await tx.execute(sql`select pg_advisory_xact_lock(hashtextextended(${`${bucket}:${key}`}, 3))`)
     await tx.insert(attempts).values({ bucket, keyHash, at: sql`app_now()` })
     const window = sql`${attempts.at} > app_now() - make_interval(secs => ${windowSeconds})`
     return tx.$count(attempts, and(eq(attempts.bucket, bucket), eq(attempts.keyHash, keyHash), window))

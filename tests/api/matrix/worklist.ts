@@ -1,0 +1,5 @@
+import type { FeatureExpectations } from './expectation'
+
+export const worklist: FeatureExpectations = {
+  listWorklist: { own: () => ({}) },
+}
