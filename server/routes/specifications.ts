@@ -3,7 +3,7 @@ import { asActor } from '#server/db/as-actor'
 import { overrideCheck, returnDraft, submitDraft, withdrawRevision } from '#server/services/specifications/check-draft'
 import { listReleases, listSpecifications, readSpecification } from '#server/services/specifications/list-specifications'
 import { readRevision } from '#server/services/specifications/read-revision'
-import { downloadReleasedDocument, downloadSheets } from '#server/services/specifications/read-sheets'
+import { downloadReleasedDocument, downloadSheets, readReleasedResults } from '#server/services/specifications/read-sheets'
 import { releaseRevision } from '#server/services/specifications/release-revision'
 import { createNextDraft, createSpecification, saveDraft } from '#server/services/specifications/write-draft'
 import * as contract from '#shared/contracts/specifications'
@@ -30,6 +30,7 @@ export function specificationRoutes(ctx: Context): Router {
   handle(router, contract.withdrawRevision, ({ actor, params, body }) => asActor(ctx, actor, (tx) => withdrawRevision(tx, actor, params, body.reason)))
   handle(router, contract.draftPdf, ({ actor, params }) => downloadSheets(ctx, actor, params))
   handle(router, contract.releasedDocument, ({ actor, params }) => downloadReleasedDocument(ctx, actor, params))
+  handle(router, contract.releasedResults, ({ actor, params }) => asActor(ctx, actor, (tx) => readReleasedResults(tx, actor, params)))
   handle(router, contract.listReleases, ({ actor }) => asActor(ctx, actor, (tx) => listReleases(tx, actor)))
   handle(router, contract.specificationJsonSchema, async () => ({ ...z.toJSONSchema(windingSpecificationSchema, { io: 'input' }) }))
 

@@ -209,6 +209,20 @@ export const releasedDocument = defineEndpoint({
   download: ['application/json'],
 })
 
+export const releasedResults = defineEndpoint({
+  method: 'GET',
+  path: '/api/specifications/:specificationId/revisions/:revisionId/results',
+  summary: 'What was calculated and drawn at release, as it was sealed: never calculated again by a later engine',
+  access: readers,
+  params: revisionParams,
+  response: z.object({
+    /** The engine's evaluation. */
+    evaluation: z.looseObject({ engine: z.string() }),
+    /** The drawn sheets as data. */
+    sheets: z.array(z.looseObject({ number: z.int() })),
+  }),
+})
+
 export const listReleases = defineEndpoint({
   method: 'GET',
   path: '/api/releases',

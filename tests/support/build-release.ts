@@ -48,7 +48,7 @@ export async function buildRelease(
   const kept = await keepMadeFile(test.ctx, Buffer.from(`%PDF-1.7 ${partNumber}`), `${partNumber}-A.pdf`, 'pdf')
   const id = await asActor(test.ctx, checker, async (tx) => {
     const file = await referToFile(tx, checker, kept)
-    await tx.update(specificationRevisions).set({ state: 'released', checkedBy: checker.personId }).where(eq(specificationRevisions.id, revisionId))
+    await tx.update(specificationRevisions).set({ state: 'released', checkedBy: checker.personId, evaluation: Buffer.from('{"engine":"test"}') }).where(eq(specificationRevisions.id, revisionId))
     const [release] = await tx
       .insert(specificationReleases)
       .values({

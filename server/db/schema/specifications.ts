@@ -139,6 +139,8 @@ export const specificationOverrides = pgTable(
       .references(() => people.id),
     code: text('code').notNull(),
     reason: text('reason').notNull(),
+    /** When the revision was handed to this check: what is changed and handed in again is judged again. */
+    submittedAt: timestamptz('submitted_at').notNull(),
     at: timestamptz('at').notNull(),
   },
   (t) => [
@@ -147,7 +149,7 @@ export const specificationOverrides = pgTable(
       columns: [t.revisionId, t.companyId],
       foreignColumns: [specificationRevisions.id, specificationRevisions.companyId],
     }),
-    unique('specification_overrides_code_key').on(t.revisionId, t.code),
+    unique('specification_overrides_code_key').on(t.revisionId, t.code, t.submittedAt),
     index('specification_overrides_revision_idx').on(t.revisionId, t.companyId),
     index('specification_overrides_by_id_idx').on(t.byId),
   ],

@@ -6,7 +6,7 @@ import { recordAudit } from '#server/services/audit/record-audit'
 import { isSecondPerson } from '#server/policies/specifications'
 import type { Revision } from '#shared/contracts/specifications'
 import { eq } from 'drizzle-orm'
-import { lockRevision, presentRevision, type RevisionRow } from './read-revision'
+import { findRevision, lockRevision, presentRevision, type RevisionRow } from './read-revision'
 import { lockDraft, type DraftKey } from './write-draft'
 
 /** Hands the draft to the checkers of the company. */
@@ -36,11 +36,16 @@ export async function returnDraft(tx: Transaction, actor: Actor, key: DraftKey, 
   return presentRevision(tx, saved)
 }
 
-/** A check that stops release passes, because a second person says why. */
+/**
+ * A check that stops release passes, because a second person says why. Nothing is locked: should the revision move
+ * meanwhile, row security refuses the entry, or the next check does not count it.
+ */
 export async function overrideCheck(tx: Transaction, actor: Actor, key: DraftKey, code: string, reason: string): Promise<Revision> {
-  const row = await lockInCheck(tx, actor, key)
+  const row = inCheckFor(actor, await findRevision(tx, actor, key.specificationId, key.revisionId))
   try {
-    await tx.insert(specificationOverrides).values({ revisionId: row.id, companyId: row.companyId, byId: actor.personId, code, reason, at: await appNow(tx) })
+    await tx
+      .insert(specificationOverrides)
+      .values({ revisionId: row.id, companyId: row.companyId, byId: actor.personId, code, reason, submittedAt: row.submittedAt!, at: await appNow(tx) })
   } catch (error) {
     if (!violates(error, 'specification_overrides_code_key')) throw error
     throw new AppError('already-decided', `The check ${code} has been let pass already.`)
@@ -64,7 +69,10 @@ export async function withdrawRevision(tx: Transaction, actor: Actor, key: Draft
 
 /** The revision in check, locked, for a person who did not work on it. */
 export async function lockInCheck(tx: Transaction, actor: Actor, key: DraftKey): Promise<RevisionRow> {
-  const row = await lockRevision(tx, actor, key.specificationId, key.revisionId)
+  return inCheckFor(actor, await lockRevision(tx, actor, key.specificationId, key.revisionId))
+}
+
+function inCheckFor(actor: Actor, row: RevisionRow): RevisionRow {
   if (row.state !== 'in-check') throw new AppError('not-in-check', 'This revision is not in check; load the page again to see where it is.')
   if (!isSecondPerson(actor, row)) {
     throw new AppError('second-person-needed', 'You worked on this draft; somebody else has to check it.')

@@ -60,7 +60,7 @@ export async function readRevision(tx: Transaction, actor: Actor, specificationI
 }
 
 export async function presentRevision(tx: Transaction, row: RevisionRow): Promise<Revision> {
-  const overrides = await tx.select().from(specificationOverrides).where(eq(specificationOverrides.revisionId, row.id))
+  const overrides = await overridesInForce(tx, row)
   const names = await namesOf(tx, [row.createdBy, row.checkedBy, ...row.editorIds, ...overrides.map((override) => override.byId)])
   const [release] = await tx.select(RELEASE_COLUMNS).from(specificationReleases).where(eq(specificationReleases.revisionId, row.id))
   return {
@@ -72,6 +72,12 @@ export async function presentRevision(tx: Transaction, row: RevisionRow): Promis
     returnedReason: row.returnedReason,
     editors: row.editorIds.map((id) => personOf(names, id)),
   }
+}
+
+/** What was let pass in an earlier check does not count in this one: the document changed in between. */
+export async function overridesInForce(tx: Transaction, row: Pick<RevisionRow, 'id' | 'submittedAt'>) {
+  const rows = await tx.select().from(specificationOverrides).where(eq(specificationOverrides.revisionId, row.id))
+  return rows.filter(({ at }) => row.submittedAt !== null && at >= row.submittedAt)
 }
 
 export function summaryOf(row: RevisionRow, release: ReleaseRow | null, names: Names): RevisionSummary {

@@ -1,11 +1,13 @@
 import type { Context } from '#server/context'
-import { asActor, type Actor } from '#server/db/as-actor'
+import { asActor, type Actor, type Transaction } from '#server/db/as-actor'
 import { files, specificationReleases } from '#server/db/schema/index'
 import { notFound } from '#server/errors'
 import { renderSpecificationPdf } from '#server/pdf/render-sheets'
 import { downloadOf, type FileDownload } from '#server/services/files/download'
 import { libraryFor } from '#server/services/parts/library-for'
 import { canonicalJson } from '#shared/canonical-json'
+import type { ResponseOf } from '#shared/contracts/endpoint'
+import type { releasedResults } from '#shared/contracts/specifications'
 import { drawSheets } from '#shared/drawing/sheets/index'
 import { evaluate } from '#shared/engine/index'
 import { eq } from 'drizzle-orm'
@@ -47,6 +49,14 @@ export async function downloadSheets(ctx: Context, actor: Actor, key: DraftKey):
     attachment: pdfAttachment(Buffer.from(canonicalJson(document.specification), 'utf8')),
   })
   return bytesDownload(pdf, sheetsFileName(partNumber, revision), 'application/pdf')
+}
+
+/** What was calculated and drawn at release, as it is archived. */
+export async function readReleasedResults(tx: Transaction, actor: Actor, key: DraftKey): Promise<ResponseOf<typeof releasedResults>> {
+  const row = await findRevision(tx, actor, key.specificationId, key.revisionId)
+  const [release] = await tx.select({ sheets: specificationReleases.sheets }).from(specificationReleases).where(eq(specificationReleases.revisionId, row.id))
+  if (!release || row.evaluation === null) throw notFound('released specification')
+  return { evaluation: JSON.parse(row.evaluation.toString('utf8')), sheets: JSON.parse(release.sheets.toString('utf8')) }
 }
 
 /** The sealed bytes that the hash in the title block is over. */

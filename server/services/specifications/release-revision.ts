@@ -1,6 +1,6 @@
 import type { Context } from '#server/context'
 import { appNow, asActor, type Actor, type Transaction } from '#server/db/as-actor'
-import { companies, specificationOverrides, specificationReleases, specificationRevisions } from '#server/db/schema/index'
+import { companies, specificationReleases, specificationRevisions } from '#server/db/schema/index'
 import { AppError } from '#server/errors'
 import { queueMail } from '#server/mail/queue-mail'
 import { recordAudit } from '#server/services/audit/record-audit'
@@ -12,7 +12,7 @@ import type { ReleaseRecord, SpecificationDocument } from '#shared/engine/specif
 import { nextReleaseLetter } from '#shared/workflow/revision-letters'
 import { and, desc, eq } from 'drizzle-orm'
 import { lockInCheck } from './check-draft'
-import { namesOf, presentRevision, readDocument, type RevisionRow } from './read-revision'
+import { namesOf, overridesInForce, presentRevision, readDocument, type RevisionRow } from './read-revision'
 import { sealRelease, type SealedRelease } from './seal-release'
 import type { DraftKey } from './write-draft'
 
@@ -40,7 +40,7 @@ async function prepare(tx: Transaction, actor: Actor, key: DraftKey, version: nu
   if (row.version !== version) throw new AppError('stale-version', 'The revision changed meanwhile; load the page again.')
 
   const last = await lastRelease(tx, row.specificationId)
-  const overrides = await tx.select({ code: specificationOverrides.code }).from(specificationOverrides).where(eq(specificationOverrides.revisionId, row.id))
+  const overrides = await overridesInForce(tx, row)
   const names = await namesOf(tx, [row.createdBy, actor.personId])
   return {
     row,

@@ -5,9 +5,10 @@ import { awardItems } from './award-items'
 import { peopleItems } from './people-items'
 import type { WorklistProvider } from './provider'
 import { sampleItems } from './sample-items'
+import { specificationItems } from './specification-items'
 
 /** One line per feature. */
-const PROVIDERS: readonly WorklistProvider[] = [peopleItems, sampleItems, awardItems]
+const PROVIDERS: readonly WorklistProvider[] = [peopleItems, specificationItems, sampleItems, awardItems]
 
 const DONE_SHOWN_MS = 7 * 24 * 3_600_000
 

@@ -7,9 +7,13 @@ import { orders } from './orders'
 import { parts } from './parts'
 import { people } from './people'
 import { samples } from './samples'
+import { specifications } from './specifications'
+import { quotes } from './quotes'
+import { rfqs } from './rfqs'
+import { worklist } from './worklist'
 
 /** One line per feature, under the feature's name in `shared/contracts/index.ts`. */
-const FEATURES: Readonly<Record<string, FeatureExpectations>> = { health, people, parts, samples, awards, orders, mail, audit }
+const FEATURES: Readonly<Record<string, FeatureExpectations>> = { health, people, parts, specifications, rfqs, quotes, samples, awards, orders, mail, audit, worklist }
 
 /** Keyed like the endpoints: `people.signIn`. */
 export const EXPECTATIONS: ReadonlyMap<string, Expectation> = new Map(

@@ -1,0 +1,71 @@
+import * as contract from '#shared/contracts/specifications'
+import type { Revision } from '#shared/contracts/specifications'
+import { buildRelease } from '../../support/build-release'
+import { buildDraft, buildInCheck, newPartNumber, releasableDocument, revisionParams } from '../../support/build-specification'
+import type { CallParts } from '../../support/test-app'
+import type { Expectation, FeatureExpectations } from './expectation'
+import type { MatrixWorld, World } from './world'
+
+type Make = (world: MatrixWorld, of: World, title?: string) => Promise<Revision>
+
+const draft: Make = ({ test }, of, title) => buildDraft(test, of.engineer, title)
+const inCheck: Make = ({ test }, of, title) => buildInCheck(test, of.engineer, title)
+
+/** About a revision of one's own, and about one of elsewhere. */
+const about = (make: Make, call: (revision: Revision) => Omit<CallParts, 'params'> = () => ({})): Expectation => {
+  const parts = (revision: Revision): CallParts => ({ params: revisionParams(revision), ...call(revision) })
+  return {
+    own: async (world) => parts(await make(world, world.own)),
+    foreign: async (world) => parts(await make(world, world.foreign, world.foreignMark)),
+  }
+}
+
+const released = (world: MatrixWorld, of: World, partNumber?: string) => buildRelease(world.test, of.engineer, of.checker, partNumber)
+const aboutReleased: Expectation = {
+  own: async (world) => ({ params: paramsOf(await released(world, world.own)) }),
+  foreign: async (world) => ({ params: paramsOf(await released(world, world.foreign, `${world.foreignMark}-${newPartNumber()}`)) }),
+}
+const paramsOf = ({ specificationId, revisionId }: { specificationId: string; revisionId: string }) => ({ specificationId, revisionId })
+
+const reason = 'Looked at with the author.'
+
+export const specifications: FeatureExpectations = {
+  listSpecifications: {
+    own: async (world) => {
+      await draft(world, world.foreign, world.foreignMark)
+      return {}
+    },
+  },
+  createSpecification: {
+    own: () => {
+      const partNumber = newPartNumber()
+      return { body: { partNumber, title: 'Inductor', document: releasableDocument(partNumber) } }
+    },
+  },
+  getSpecification: {
+    own: async (world) => ({ params: { specificationId: (await draft(world, world.own)).specificationId } }),
+    foreign: async (world) => ({ params: { specificationId: (await draft(world, world.foreign, world.foreignMark)).specificationId } }),
+  },
+  getRevision: about(draft),
+  createDraft: {
+    own: async (world) => ({ params: { specificationId: (await released(world, world.own)).specificationId } }),
+    foreign: async (world) => ({ params: { specificationId: (await released(world, world.foreign)).specificationId } }),
+  },
+  saveDraft: about(draft, ({ version, document }) => ({ body: { version, document } })),
+  submitDraft: about(draft, ({ version }) => ({ body: { version } })),
+  returnDraft: about(inCheck, () => ({ body: { reason } })),
+  overrideCheck: about(inCheck, () => ({ body: { code: 'Q06', reason } })),
+  releaseRevision: about(inCheck, ({ version }) => ({ body: { version } })),
+  // An engineer withdraws a draft; a checker only what was released.
+  withdrawRevision: { ...about(draft, () => ({ body: { reason } })), status: { checker: 409 } },
+  draftPdf: about(draft),
+  releasedDocument: aboutReleased,
+  releasedResults: aboutReleased,
+  listReleases: {
+    own: async (world) => {
+      await released(world, world.foreign, `${world.foreignMark}-${newPartNumber()}`)
+      return {}
+    },
+  },
+  specificationJsonSchema: { own: () => ({}) },
+}

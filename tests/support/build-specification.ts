@@ -1,0 +1,38 @@
+import { COUPLED_INDUCTOR } from '#server/db/seed/specifications/requirements'
+import { shippedLibrary } from '#server/db/seed/parts/library'
+import * as contract from '#shared/contracts/specifications'
+import type { Revision } from '#shared/contracts/specifications'
+import { propose } from '#shared/engine/index'
+import type { SpecificationDocument } from '#shared/engine/specification'
+import { randomUUID } from 'node:crypto'
+import type { TestPerson } from './factories'
+import { request, type TestApp } from './test-app'
+
+let proposed: SpecificationDocument | null = null
+
+/** A document that meets every check which stops release: the proposal for a 1:1 coupled inductor, named. */
+export function releasableDocument(partNumber: string, title = 'Inductor, coupled 1:1'): SpecificationDocument {
+  proposed ??= propose(COUPLED_INDUCTOR, shippedLibrary()).document
+  const document = structuredClone(proposed)
+  const block = document.specification.title
+  for (const [field, value] of [['legalOwner', 'Owner'], ['partNumber', partNumber], ['title', title]] as const) {
+    block[field] = { value, status: 'mandatory', origin: { kind: 'entered' } }
+  }
+  return document
+}
+
+export const newPartNumber = () => `T-${randomUUID().slice(0, 8)}`
+
+/** A first draft, made through the interface. */
+export async function buildDraft(test: TestApp, engineer: TestPerson, title?: string): Promise<Revision> {
+  const partNumber = newPartNumber()
+  const body = { partNumber, title: title ?? 'Inductor, coupled 1:1', document: releasableDocument(partNumber, title) }
+  return (await request(test.app, contract.createSpecification, { as: engineer.cookie, body }).expect(200)).body
+}
+
+export const revisionParams = ({ specificationId, id }: Pick<Revision, 'specificationId' | 'id'>) => ({ specificationId, revisionId: id })
+
+export async function buildInCheck(test: TestApp, engineer: TestPerson, title?: string): Promise<Revision> {
+  const draft = await buildDraft(test, engineer, title)
+  return (await request(test.app, contract.submitDraft, { as: engineer.cookie, params: revisionParams(draft), body: { version: draft.version } }).expect(200)).body
+}
