@@ -2,6 +2,8 @@ import { defineQueryOptions, useMutation, useQueryCache } from '@pinia/colada'
 import type { BodyOf } from '#shared/contracts/endpoint'
 import * as contract from '#shared/contracts/specifications'
 import type { Revision } from '#shared/contracts/specifications'
+import type { Sheet } from '#shared/drawing/model'
+import type { Evaluation } from '#shared/engine/evaluation'
 import { call } from '@/api/call'
 import { download } from '@/api/download'
 
@@ -15,6 +17,8 @@ const KEYS = {
   list: (search: string, state: string | undefined) => ['specifications', 'list', search, state ?? ''] as const,
   one: (specificationId: string) => ['specifications', 'one', specificationId] as const,
   revision: ({ specificationId, revisionId }: RevisionKey) => ['specifications', 'revision', specificationId, revisionId] as const,
+  // Apart from the rest: nothing that happens to a part makes it old.
+  results: ({ revisionId }: RevisionKey) => ['released-results', revisionId] as const,
 }
 
 export interface SpecificationFilter {
@@ -39,6 +43,16 @@ export const revisionQuery = defineQueryOptions((key: RevisionKey) => ({
   query: () => call(contract.getRevision, { params: key }),
   // A draft is worked on here and by others: what was seen before is never taken for the present.
   staleTime: 0,
+}))
+
+/** What was sealed at release. It never changes. */
+export const releasedResultsQuery = defineQueryOptions((key: RevisionKey) => ({
+  key: KEYS.results(key),
+  query: async () => {
+    const { evaluation, sheets } = await call(contract.releasedResults, { params: key })
+    return { evaluation: evaluation as unknown as Evaluation, sheets: sheets as unknown as Sheet[] }
+  },
+  staleTime: Infinity,
 }))
 
 export function useCreateSpecification() {

@@ -182,5 +182,5 @@ const SUBJECTS = ['winding', 'boundary', 'output', 'row', 'characteristic', 'mis
 /** What a result is about: the winding, boundary or row, and the other place of a contradiction. */
 export function checkSubject({ values }: Pick<CheckResult, 'values'>): string {
   const about = SUBJECTS.map((key) => values[key]).filter((value) => value !== undefined && value !== '')
-  return about.map((value) => String(value).replaceAll('-', ' ')).join(', ')
+  return [...new Set(about.map((value) => String(value).replaceAll('-', ' ')))].join(', ')
 }

@@ -64,7 +64,7 @@ export interface RowsSpec {
   /** One row, such as `winding`. */
   one: string
   /** Fields that stand in the table itself; null where a row has no such field. */
-  columns: readonly { header: string; field: (row: Row) => FieldSpec | null; figure?: boolean; wide?: boolean }[]
+  columns: readonly { header: string; field: (row: Row) => FieldSpec | null; figure?: boolean; wide?: boolean; narrow?: boolean }[]
   /** Fields that open below the row. */
   more: (row: Row) => readonly FieldSpec[]
   /** Kinds of row to add, each with the row it begins as. */

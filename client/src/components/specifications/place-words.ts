@@ -19,5 +19,6 @@ export function placeWords(place: string): string {
   const table = TABLES.find(({ path }) => isWithin(place, path))
   const index = table && Number(place.slice(table.path.length + 1).split('.')[0])
   if (!table) return section
-  return Number.isInteger(index) && place !== table.path ? `${section} › ${table.one} ${index! + 1}` : `${section} › ${table.title.split(/[,:]/)[0]}`
+  if (Number.isInteger(index) && place !== table.path) return `${section} › ${table.one} ${index! + 1}`
+  return sectionOf(place).parts.length === 1 ? section : `${section} › ${table.title.split(/[,:]/)[0]}`
 }

@@ -11,15 +11,15 @@ export const windingsSection: SectionSpec = {
       kind: 'rows',
       rows: {
         path: 'windings',
-        title: 'Windings: the start is the dotted end',
+        title: 'Windings, each from its dotted start',
         one: 'winding',
         stated: true,
         ordered: true,
         empty: 'No winding yet.',
         columns: [
           { header: 'Name', field: () => text('name', 'Name', { maximum: 60 }) },
-          { header: 'Start •', field: () => ({ type: 'terminal', path: 'startTerminal', label: 'Start terminal' }) },
-          { header: 'Finish', field: () => ({ type: 'terminal', path: 'finishTerminal', label: 'Finish terminal' }) },
+          { header: 'Start •', field: () => ({ type: 'terminal', path: 'startTerminal', label: 'Start terminal' }), narrow: true },
+          { header: 'Finish', field: () => ({ type: 'terminal', path: 'finishTerminal', label: 'Finish terminal' }), narrow: true },
           { header: 'Turns', field: () => figure('turns', 'Turns', '', { min: 0.5, max: 20_000 }), figure: true },
           { header: 'Wire', field: () => reference('wire.wire', 'Wire', 'wire'), wide: true },
           { header: 'Parallel', field: () => count('wire.parallel', 'Wires in parallel', { min: 1, max: 200 }), figure: true },
