@@ -1,8 +1,11 @@
 import { createRouter, type Router, type RouterHistory, type RouteLocationNormalized } from 'vue-router'
 import { useSessionStore } from '@/stores/session'
 import { mayOpen } from './access'
+import { awardRoutes } from './awards'
+import { orderRoutes } from './orders'
 import { partRoutes } from './parts'
 import { peopleRoutes } from './people'
+import { sampleRoutes } from './samples'
 import { specificationRoutes } from './specifications'
 import { worklistRoutes } from './worklist'
 
@@ -24,6 +27,9 @@ export function createAppRouter(history: RouterHistory): Router {
       ...peopleRoutes,
       ...partRoutes,
       ...specificationRoutes,
+      ...sampleRoutes,
+      ...awardRoutes,
+      ...orderRoutes,
       { path: '/:path(.*)*', name: 'not-found', component: notFound, meta: { access: 'public', title: 'Not found' } },
     ],
     scrollBehavior: (to, from, saved) => saved ?? (to.hash && to.name !== 'sign-in-link' ? { el: to.hash } : to.path === from.path ? undefined : { top: 0 }),

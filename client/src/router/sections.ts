@@ -1,5 +1,7 @@
 import type { Access } from '#shared/contracts/endpoint'
 import { PART_READERS } from '#shared/contracts/parts'
+import { AWARD_READERS } from './awards'
+import { SAMPLE_READERS } from './samples'
 import { SPECIFICATION_READERS } from './specifications'
 
 export interface Section {
@@ -14,6 +16,11 @@ export const SECTIONS: readonly Section[] = [
   { route: 'worklist', title: 'Worklist', access: 'signed-in' },
   { route: 'specifications', title: 'Specifications', access: SPECIFICATION_READERS },
   { route: 'parts', title: 'Parts library', access: PART_READERS },
+  { route: 'samples', title: 'Samples', access: SAMPLE_READERS },
+  { route: 'vendor-samples', title: 'Samples', access: ['vendor'] },
+  { route: 'awards', title: 'Awards', access: AWARD_READERS },
+  { route: 'orders', title: 'Orders', access: AWARD_READERS },
+  { route: 'vendor-orders', title: 'Orders', access: ['vendor'] },
   { route: 'vendors', title: 'Vendors', access: ['buyer', 'quality', 'approver', 'admin', 'engineer', 'checker'] },
   { route: 'customers', title: 'Customers', access: ['vendor'] },
   { route: 'companies', title: 'Companies', access: ['operator'] },
