@@ -2,10 +2,10 @@ import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import { shippedLibrary } from '#server/db/seed/parts/library'
 import { BUOY_SUPPLY, COUPLED_INDUCTOR, HARBOUR_SUPPLY } from '#server/db/seed/specifications/requirements'
-import { specificationDocumentSchema } from '#shared/contracts/specification-document'
+import { requirementSheetSchema, specificationDocumentSchema } from '#shared/contracts/specification-document'
 import { evaluate, propose, refresh } from '#shared/engine/index'
 import type { Evaluation } from '#shared/engine/evaluation'
-import type { SpecificationDocument } from '#shared/engine/specification'
+import type { RequirementSheet, SpecificationDocument } from '#shared/engine/specification'
 
 const library = shippedLibrary()
 const samples = [BUOY_SUPPLY, HARBOUR_SUPPLY, COUPLED_INDUCTOR].map((sheet) => propose(sheet, library).document)
@@ -87,6 +87,26 @@ describe('evaluate on whatever a document may hold', () => {
         expect(again.success ? [] : again.error.issues.slice(0, 3)).toEqual([])
       }),
       { numRuns: 50 },
+    )
+  }, 120_000)
+
+  it('proposes for every admitted requirement sheet, or says why not', () => {
+    const sheets = [BUOY_SUPPLY, HARBOUR_SUPPLY, COUPLED_INDUCTOR]
+    fc.assert(
+      fc.property(edits, ({ sample, steps }) => {
+        let sheet = sheets[sample] as unknown as Json
+        for (const { place, choice } of steps) {
+          const all = places(sheet)
+          sheet = changed(sheet, all[place % all.length]!, (old) => mutate(old, choice))
+        }
+        const parsed = requirementSheetSchema.safeParse(sheet)
+        if (!parsed.success) return
+        const { document, findings } = propose(parsed.data as RequirementSheet, library)
+        const admitted = specificationDocumentSchema.safeParse(document)
+        expect(admitted.success ? [] : admitted.error.issues.slice(0, 3)).toEqual([])
+        if (document.specification.windings.length === 0) expect(findings.some(({ severity }) => severity === 'error')).toBe(true)
+      }),
+      { numRuns: 60 },
     )
   }, 120_000)
 

@@ -126,7 +126,7 @@ function derivedBoundary(boundary: InsulationBoundary, result: Evaluation['bound
     ...boundary,
     workingVoltageVRms: isStatable(result.workingVoltageVRms) ? toStepUp(result.workingVoltageVRms, 1) : null,
     recurringPeakV: isStatable(result.recurringPeakV) ? toStepUp(result.recurringPeakV, 1) : null,
-    frequencyHz: specification.electrical.switchingFrequencyHz.value?.maximum ?? null,
+    frequencyHz: greatestFrequencyHz(specification),
     clearanceMm: isStatable(required.clearanceMm.value) ? toStepUp(required.clearanceMm.value, 0.1) : null,
     creepageMm: isStatable(required.creepageMm.value) ? toStepUp(required.creepageMm.value, 0.1) : null,
     distanceThroughInsulationMm: required.distanceThroughInsulationMm.value,
@@ -146,12 +146,17 @@ function withstandTest({ between, insulation }: InsulationBoundary, requiredV: n
   return { voltageV, kind: 'ac-rms', frequencyHz: 50, rampS: 2, dwellS: 60, tripA: voltageV > 1000 ? 5e-3 : 2e-3, routineDwellS: 2, routineVoltageV: voltageV }
 }
 
+function greatestFrequencyHz({ electrical }: WindingSpecification): number | null {
+  const frequencyHz = electrical.switchingFrequencyHz.value?.maximum
+  return isStatable(frequencyHz) ? frequencyHz : null
+}
+
 /** What the certificate of an insulated wire must cover, from the boundaries that rest on it. */
 function certified(winding: Winding, specification: WindingSpecification): Winding {
   if (!isInsulatedWire(winding) || (winding.wire.certificate && !isProposed(winding))) return winding
   const peaks = specification.insulation.boundaries.filter(({ between, insulation }) => insulation !== 'functional' && between.some((end) => windingsAt(specification, end).some(({ id }) => id === winding.id))).map(({ recurringPeakV }) => recurringPeakV ?? 0)
   const peakV = Math.max(0, ...peaks)
   const peakVoltageV = isStatable(peakV) ? toStepUp(peakV, 50) : null
-  const frequencyHz = specification.electrical.switchingFrequencyHz.value?.maximum ?? null
+  const frequencyHz = greatestFrequencyHz(specification)
   return { ...winding, wire: { ...winding.wire, certificate: { standard: 'IEC 62368-1 Annex J', number: winding.wire.certificate?.number ?? '', peakVoltageV, maximumFrequencyHz: frequencyHz === null ? null : toStepUp(frequencyHz, 50e3) } } }
 }

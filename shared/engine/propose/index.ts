@@ -8,7 +8,6 @@ import { blankSpecification } from './blank'
 import { derive } from './derive'
 import { chooseMaterial } from './material'
 import { planOf } from './plan'
-import type { Plan } from './plan'
 import { ratioFindings } from './plan-flyback'
 import { DEFAULT_PREFERENCES } from './preferences'
 import type { ProposalPreferences } from './preferences'
@@ -37,8 +36,21 @@ export interface Proposal {
  */
 export function propose(requirement: RequirementSheet, library: Library, preferences: Partial<ProposalPreferences> = {}): Proposal {
   const wishes = { ...DEFAULT_PREFERENCES, ...preferences }
-  const plan = solved(requirement)
-  if ('finding' in plan) return blankProposal(requirement, [plan.finding])
+  return withoutSolution(requirement, () => proposed(requirement, library, wishes))
+}
+
+/** A sheet whose figures contradict each other is no misuse: the stage's refusal becomes a finding. */
+function withoutSolution(requirement: RequirementSheet, work: () => Proposal): Proposal {
+  try {
+    return work()
+  } catch (error) {
+    if (!(error instanceof RangeError)) throw error
+    return blankProposal(requirement, [{ code: 'duty-not-solvable', severity: 'error', path: 'requirement.duty', values: { reason: error.message } }])
+  }
+}
+
+function proposed(requirement: RequirementSheet, library: Library, wishes: ProposalPreferences): Proposal {
+  const plan = planOf(requirement)
   const choice = chooseMaterial(library, plan.frequencyHz, wishes.materialId)
   const findings = [...plan.findings, ...choice.findings]
   if (!choice.material || library.tapes.length === 0) return blankProposal(requirement, findings)
@@ -53,15 +65,6 @@ export function propose(requirement: RequirementSheet, library: Library, prefere
     document,
     findings: [...findings, ...choiceFindings(requirement, result), ...evaluate(document, library).findings],
     reasons: [...plan.reasons, ...choice.reasons, ...choiceReasons(result.chosen, result)],
-  }
-}
-
-function solved(requirement: RequirementSheet): Plan | { finding: Finding } {
-  try {
-    return planOf(requirement)
-  } catch (error) {
-    if (!(error instanceof RangeError)) throw error
-    return { finding: { code: 'duty-not-solvable', severity: 'error', path: 'requirement.duty', values: { reason: error.message } } }
   }
 }
 

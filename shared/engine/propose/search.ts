@@ -19,6 +19,9 @@ const TURN_SHARES = [1, 1.15, 1.35, 1.6]
 /** Temperature for the first flux limit, °C. */
 const SATURATION_TEMPERATURE_C = 100
 
+/** No core of the library takes more turns of the thinnest wire. */
+const MOST_TURNS = 100_000
+
 /** Share of the window beyond which no layout is tried, squares of the diameters counted. */
 const HOPELESS_FILL = 0.85
 
@@ -88,6 +91,7 @@ type Tried = { state: 'built'; candidate: Candidate } | { state: 'hopeless'; rej
 function bestOn(input: SearchInput, core: CoreRow, former: FormerRow): Tried {
   const leastTurns = turnsByFlux(input, core)
   if (leastTurns === null) return { state: 'hopeless', rejection: 'flux' }
+  if (!(leastTurns < MOST_TURNS)) return { state: 'hopeless', rejection: 'window' }
   const round = bestOfStyle(input, { core, former, leastTurns, style: 'round' })
   if (isGood(round) || !(round.state === 'built' && round.candidate.rejection === 'resistance')) return round
   const litz = bestOfStyle(input, { core, former, leastTurns, style: 'litz' })

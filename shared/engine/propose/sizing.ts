@@ -122,7 +122,8 @@ export function chooseTurns(duty: FlybackDuty, ratio: number, leastPrimary: numb
   // Growth counts from the smallest choice there is, which on a large core lies far above what flux asks for.
   const base = Math.max(least, Math.round(ratio * first))
   let best: { choice: TurnsChoice; cost: number } | null = null
-  for (let mainTurns = first; mainTurns <= first + 12; mainTurns++) {
+  for (let more = 0; more <= 12; more++) {
+    const mainTurns = first + more
     const primary = Math.max(least, Math.round(ratio * mainTurns))
     const ratioError = Math.abs(primary / mainTurns / ratio - 1)
     const choice = turnsFor(duty, main, { mainTurns, primary })
