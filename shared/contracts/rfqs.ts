@@ -269,6 +269,7 @@ export const vendorRfqSummarySchema = vendorRfqSchema.pick({
   customerName: true,
   state: true,
   invitationState: true,
+  issuedAt: true,
   dueAt: true,
   dueZone: true,
   now: true,

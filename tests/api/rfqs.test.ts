@@ -1,3 +1,6 @@
+import { closeDueRfqs } from '#server/services/rfqs/close-due'
+import { remindVendors } from '#server/services/rfqs/remind-vendors'
+import { listWorklist } from '#shared/contracts/worklist'
 import { asActor, asWorker } from '#server/db/as-actor'
 import { mailEvents, rfqInvitations, rfqIssues, rfqs } from '#server/db/schema/index'
 import { acceptConfidentiality, askOpening, cancelRfq, createRfq, declineRfq, extendRfq, getRfq, getVendorRfq, issueRfq, listVendorRfqs, openRfq, updateRfq } from '#shared/contracts/rfqs'
@@ -222,5 +225,54 @@ describe('cancelling', () => {
     await request(test.app, cancelRfq, { params: { rfqId: rfq.id }, body: { reason: 'The project stopped.' }, as: world.buyer.cookie }).expect(200)
     const { body } = await request(test.app, declineRfq, { params: { rfqId: rfq.id }, body: { reason: 'capacity', text: '' }, as: world.vendors[0]!.person.cookie }).expect(409)
     expect(body.code).toBe('rfq-cancelled')
+  })
+})
+
+describe('what happens without a person', () => {
+  const mailsOf = (rfqId: string, template: string) =>
+    asWorker(test.ctx, (tx) => tx.select().from(mailEvents).where(sql`template = ${template} and props ->> 'rfqId' = ${rfqId}`))
+
+  it('marks a due enquiry as closed and tells its buyer once', async () => {
+    const rfq = await buildIssuedRfq(test, world)
+    await closeDueRfqs(test.ctx)
+    expect((await mailsOf(rfq.id, 'rfq-due')).length).toBe(0)
+    await test.database.setClock({ hours: 2 })
+    await closeDueRfqs(test.ctx)
+    await closeDueRfqs(test.ctx)
+    await test.database.setClock({})
+    const mails = await mailsOf(rfq.id, 'rfq-due')
+    expect(mails.map(({ toPersonId }) => toPersonId)).toEqual([world.buyer.personId])
+    const { body } = await request(test.app, getRfq, { params: { rfqId: rfq.id }, as: world.buyer.cookie }).expect(200)
+    expect(body.state).toBe('closed')
+  })
+
+  it('reminds a vendor without an answer three days and one day before the due time, once each, and no other', async () => {
+    const rfq = await buildIssuedRfq(test, world, { dueAt: new Date(Date.now() + 5 * 86_400_000).toISOString() })
+    await request(test.app, declineRfq, { params: { rfqId: rfq.id }, body: { reason: 'capacity', text: '' }, as: world.vendors[1]!.person.cookie }).expect(200)
+    await remindVendors(test.ctx)
+    expect(await mailsOf(rfq.id, 'rfq-reminder')).toEqual([])
+    for (const hours of [60, 62, 108, 110]) {
+      await test.database.setClock({ hours })
+      await remindVendors(test.ctx)
+    }
+    await test.database.setClock({})
+    const mails = await mailsOf(rfq.id, 'rfq-reminder')
+    expect(mails.map(({ props, toCompanyId }) => [props.days, toCompanyId]).sort()).toEqual([[1, vendorIds()[0]], [3, vendorIds()[0]]])
+  })
+
+  it('shows each role what waits for it', async () => {
+    const rfq = await buildIssuedRfq(test, world)
+    const titles = async (person: TestPerson) => {
+      const { body } = await request(test.app, listWorklist, { as: person.cookie }).expect(200)
+      return body.items.filter((item: { link: { params: { rfqId?: string } } }) => item.link.params.rfqId === rfq.id).map((item: { kind: string }) => item.kind)
+    }
+    expect(await titles(world.vendors[0]!.person)).toEqual(['enquiry'])
+    expect(await titles(world.buyer)).toEqual([])
+    await test.database.setClock({ hours: 2 })
+    expect(await titles(world.buyer)).toEqual(['rfq-opening'])
+    await request(test.app, askOpening, { params: { rfqId: rfq.id }, as: world.buyer.cookie }).expect(200)
+    expect(await titles(world.approver)).toEqual(['rfq-second-opener'])
+    expect(await titles(world.buyer)).toEqual([])
+    await test.database.setClock({})
   })
 })

@@ -10,7 +10,7 @@ import { passwordSetMail } from './password-set'
 import { quoteReceivedMail } from './quote-received'
 import { revisionReleasedMail } from './revision-released'
 import { openingRequestedMail, quotesOpenedMail, rfqDueMail } from './rfq-buyer-mails'
-import { rfqCancelledMail, rfqExtendedMail, rfqInvitationMail, rfqOpenedMail } from './rfq-vendor-mails'
+import { rfqCancelledMail, rfqExtendedMail, rfqInvitationMail, rfqOpenedMail, rfqReminderMail } from './rfq-vendor-mails'
 import { sampleDisposedMail, sampleReportMail, samplesCancelledMail, samplesRequestedMail } from './sample-mails'
 import type { MailTemplate } from './template'
 import { vendorInvitationMail } from './vendor-invitation'
@@ -36,6 +36,7 @@ export const MAIL_TEMPLATES = {
   'rfq-extended': rfqExtendedMail,
   'rfq-invitation': rfqInvitationMail,
   'rfq-opened': rfqOpenedMail,
+  'rfq-reminder': rfqReminderMail,
   'vendor-invitation': vendorInvitationMail,
   'order-answered': orderAnsweredMail,
   'order-placed': orderPlacedMail,

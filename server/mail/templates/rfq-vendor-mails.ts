@@ -24,6 +24,21 @@ export const rfqInvitationMail: MailTemplate<RfqVendorProps> = {
   }),
 }
 
+export interface RfqReminderProps extends RfqVendorProps {
+  invitationId: string
+  /** Days before the due time. */
+  days: number
+}
+
+/** To a vendor that has neither quoted nor declined. */
+export const rfqReminderMail: MailTemplate<RfqReminderProps> = {
+  link: (props) => ({ path: vendorPath(props), welcomesNewcomers: true }),
+  write: ({ number, customerName, dueAt }, frame) => ({
+    subject: `${number} is due soon`,
+    text: letter(frame, [`${customerName} waits for your answer to ${number}. It is due on ${frame.moment(dueAt)}; you can also decline with a reason.`, '', `See the enquiry here: ${frame.link}`]),
+  }),
+}
+
 export const rfqExtendedMail: MailTemplate<RfqVendorProps> = {
   link: (props) => ({ path: vendorPath(props), welcomesNewcomers: true }),
   write: ({ number, dueAt }, frame) => ({

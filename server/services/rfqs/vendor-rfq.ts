@@ -49,7 +49,8 @@ export async function readVendorRfq(tx: Transaction, actor: Actor, rfqId: string
 
 function headOf({ rfq, invitation, customerName }: Invited, now: Date) {
   const { id, number, title, dueAt, dueZone } = rfq
-  return { id, number, title, customerName, state: stateFor(rfq, now), invitationState: invitation.state, dueAt: dueAt.toISOString(), dueZone, now: now.toISOString() }
+  const issuedAt = (rfq.issuedAt ?? now).toISOString()
+  return { id, number, title, customerName, state: stateFor(rfq, now), invitationState: invitation.state, issuedAt, dueAt: dueAt.toISOString(), dueZone, now: now.toISOString() }
 }
 
 /** As far as it concerns the vendor; that an enquiry is due is said by the clock, not by the worker. */
@@ -75,7 +76,6 @@ async function presentVendorRfq(tx: Transaction, found: Invited, now: Date): Pro
     buyerName: rfq.contactName,
     buyerEmail: rfq.contactEmail,
     issueNumber: rfq.issueNumber,
-    issuedAt: (rfq.issuedAt ?? now).toISOString(),
     currency: rfq.currency,
     deliveryRule: rfq.deliveryRule as VendorRfq['deliveryRule'],
     deliveryPlace: rfq.deliveryPlace,
