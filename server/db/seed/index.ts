@@ -8,6 +8,7 @@ import path from 'node:path'
 import { fileURLToPath } from 'node:url'
 import { makeFirstLinks } from './first-links'
 import { DEMO_PASSWORD, DEMO_PEOPLE, seedPeople } from './people'
+import { seedRfqs } from './rfqs'
 import { seedSpecifications } from './specifications/index'
 
 export interface SeedStep {
@@ -20,6 +21,7 @@ export interface SeedStep {
 export const DEMO_STEPS: readonly SeedStep[] = [
   { name: 'people', run: seedPeople },
   { name: 'specifications', run: seedSpecifications },
+  { name: 'rfqs', run: seedRfqs },
 ]
 
 export async function seedDemo(ctx: Context): Promise<void> {

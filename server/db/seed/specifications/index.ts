@@ -16,7 +16,11 @@ import { BUOY_SUPPLY, COUPLED_INDUCTOR, HARBOUR_SUPPLY } from './requirements'
 /** The part numbers that the demo's enquiries ask for. */
 export const DEMO_PARTS = { buoy: 'BM-T1180', harbour: 'BM-T1204', coupledInductor: 'BM-L0311', saltern: 'SI-40772' } as const
 
-const BENCH_REASON = 'Coil former, tape and sleeve compared with parts on the bench; their figures hold.'
+/** Why a second person let a check pass that the demo's data cannot decide. */
+const REASONS: Readonly<Record<string, string>> = {
+  I06: 'Creepage above 30 kHz looked up by hand in the copy of IEC 60664-4 in force; the 60664-1 distance governs here.',
+  L01: 'Coil former, tape and sleeve compared with parts on the bench; their figures hold.',
+}
 
 interface DemoPart {
   partNumber: string
@@ -69,9 +73,15 @@ async function ensureReleased(ctx: Context, engineer: Actor, checker: Actor, wan
   const library = await asActor(ctx, engineer, (tx) => currentLibrary(tx, engineer))
   const passed = new Set(inCheck.overrides.map(({ code }) => code))
   for (const code of new Set(openChecks(evaluate(inCheck.document, library), passed).map((check) => check.code))) {
-    await asActor(ctx, checker, (tx) => overrideCheck(tx, checker, keyOf(inCheck), code, BENCH_REASON))
+    await asActor(ctx, checker, (tx) => overrideCheck(tx, checker, keyOf(inCheck), code, reasonFor(code)))
   }
   return releaseRevision(ctx, checker, keyOf(inCheck), inCheck.version)
+}
+
+function reasonFor(code: string): string {
+  const reason = REASONS[code]
+  if (!reason) throw new Error(`The demo's parts are stopped by ${code}, for which nobody has a reason.`)
+  return reason
 }
 
 function findFirst(ctx: Context, engineer: Actor, partNumber: string): Promise<Revision | null> {
