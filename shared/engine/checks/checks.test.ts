@@ -45,7 +45,7 @@ describe('the checks of an empty specification', () => {
       expect(check.source, check.code).not.toBe('')
       expect(check.path, check.code).not.toBe('')
     }
-    expect(Object.keys(CHECKS).every((code) => /^[ETIWPDQ]\d\d$/.test(code))).toBe(true)
+    expect(Object.keys(CHECKS).every((code) => /^[ETIWPDQL]\d\d$/.test(code))).toBe(true)
   })
 })
 

@@ -3,6 +3,7 @@ import { COVERAGE_CHECKS } from './coverage'
 import { DOCUMENT_CHECKS } from './documentation'
 import { ELECTRICAL_CHECKS } from './electrical'
 import { INSULATION_CHECKS } from './insulation'
+import { LIBRARY_CHECKS } from './library'
 import { marginOf } from './outcome'
 import type { Check, CheckInput, Outcome } from './outcome'
 import { TERMINATION_CHECKS } from './terminations'
@@ -18,6 +19,7 @@ export const CHECKS: Readonly<Record<string, Check>> = {
   ...TERMINATION_CHECKS,
   ...DOCUMENT_CHECKS,
   ...COVERAGE_CHECKS,
+  ...LIBRARY_CHECKS,
 }
 
 /** Runs every check that applies; one result for each place a check looks at. */

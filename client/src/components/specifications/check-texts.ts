@@ -53,6 +53,8 @@ export const CHECK_TEXTS: Readonly<Record<string, string>> = {
   W07: 'Layers are filled to at least 85 %.',
   W08: 'At most four wires are wound in parallel.',
   W16: 'Margin tape is built up to the height of its winding.',
+  L01: 'Every library row in use has a source.',
+  L02: 'Every value of the library rows in use has a source.',
   P01: 'There are enough terminals.',
   P02: 'Every start and finish ends on a terminal that exists.',
   P03: 'The pins carry their current.',
