@@ -5,7 +5,7 @@ const invited: InvitationState = { phase: 'invited' }
 const seen: InvitationState = { phase: 'seen' }
 const accepted: InvitationState = { phase: 'terms-accepted' }
 const quoting: InvitationState = { phase: 'intends-to-quote' }
-const declined: InvitationState = { phase: 'declined', reason: 'capacity', remark: '' }
+const declined: InvitationState = { phase: 'no-bid', reason: 'capacity', remark: '' }
 const silent: InvitationState = { phase: 'no-answer' }
 const decline: InvitationEvent = { type: 'declined', reason: 'capacity', remark: '' }
 

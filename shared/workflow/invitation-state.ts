@@ -4,39 +4,15 @@ export type InvitationState =
   | { phase: 'seen' }
   | { phase: 'terms-accepted' }
   | { phase: 'intends-to-quote' }
-  | { phase: 'declined'; reason: NoBidReason; remark: string }
+  /** `reason` is one of the coded reasons of the enquiry's contract. */
+  | { phase: 'no-bid'; reason: string; remark: string }
   | { phase: 'no-answer' }
-
-/** Why a vendor does not quote. Codes are permanent: they are counted over years. */
-export const NO_BID_REASONS = [
-  'capacity',
-  'volume-too-small',
-  'volume-too-large',
-  'below-minimum-order-value',
-  'lead-time-impossible',
-  'target-price-unreachable',
-  'wire-type-not-processed',
-  'core-or-former-not-obtainable',
-  'no-impregnation-or-potting',
-  'no-insulation-system-approval',
-  'voltage-beyond-test-equipment',
-  'safety-responsibility-unclear',
-  'specification-contradictory',
-  'test-beyond-equipment',
-  'quality-level-not-offered',
-  'commercial-terms',
-  'export-restriction',
-  'conflict-with-customer',
-  'other',
-] as const
-
-export type NoBidReason = (typeof NO_BID_REASONS)[number]
 
 export type InvitationEvent =
   | { type: 'seen' }
   | { type: 'terms-accepted' }
   | { type: 'intends-to-quote' }
-  | { type: 'declined'; reason: NoBidReason; remark: string }
+  | { type: 'declined'; reason: string; remark: string }
   /** The due time passed without a quotation and without a word. */
   | { type: 'due-without-answer' }
 
@@ -52,12 +28,12 @@ export function nextInvitationState(state: InvitationState, event: InvitationEve
     case 'terms-accepted':
       return state.phase === 'invited' || state.phase === 'seen' ? { phase: 'terms-accepted' } : null
     case 'intends-to-quote':
-      return state.phase === 'terms-accepted' || state.phase === 'declined' ? { phase: 'intends-to-quote' } : null
+      return state.phase === 'terms-accepted' || state.phase === 'no-bid' ? { phase: 'intends-to-quote' } : null
     case 'declined':
-      if (state.phase === 'declined' || state.phase === 'no-answer') return null
+      if (state.phase === 'no-bid' || state.phase === 'no-answer') return null
       if (event.reason === 'other' && event.remark.trim() === '') return null
-      return { phase: 'declined', reason: event.reason, remark: event.remark }
+      return { phase: 'no-bid', reason: event.reason, remark: event.remark }
     case 'due-without-answer':
-      return state.phase === 'declined' || state.phase === 'no-answer' ? null : { phase: 'no-answer' }
+      return state.phase === 'no-bid' || state.phase === 'no-answer' ? null : { phase: 'no-answer' }
   }
 }

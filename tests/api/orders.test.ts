@@ -3,6 +3,7 @@ import { files, orderAcknowledgements, purchaseOrders } from '#server/db/schema/
 import { canReadOrder, readableOrders } from '#server/policies/orders'
 import { getVendorOrder, getOrder, listOrders, listVendorOrders, orderPdf, placeOrder, vendorOrderPdf, type Order } from '#shared/contracts/orders'
 import { getRfq } from '#shared/contracts/rfqs'
+import { listWorklist, type WorklistItem } from '#shared/contracts/worklist'
 import { eq } from 'drizzle-orm'
 import { execFile } from 'node:child_process'
 import { createHash } from 'node:crypto'
@@ -11,7 +12,7 @@ import { tmpdir } from 'node:os'
 import path from 'node:path'
 import { promisify } from 'node:util'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
-import { acknowledge, buildApproved, buildOpenedRfq, buildOrder, buildProposal, inDays, orderInput, type OpenedRfq } from '../support/build-opened'
+import { acknowledge, buildApproved, buildConfirmedSet, buildOpenedRfq, buildOrder, buildProposal, buildSampleRequest, inDays, orderInput, type OpenedRfq } from '../support/build-opened'
 import type { World } from '../support/build-rfq'
 import { buildCompany, buildPerson, buildWorld, signInAs, type TestPerson } from '../support/factories'
 import { request, startTestApp, type TestApp } from '../support/test-app'
@@ -170,6 +171,47 @@ describe('who reads it', () => {
     await request(test.app, getOrder, { params: { orderId: order.id }, as: stranger.cookie }).expect(404)
     const { body } = await request(test.app, listOrders, { as: world.engineer.cookie }).expect(200)
     expect(body.map(({ id }: Order) => id)).toContain(order.id)
+  })
+})
+
+describe('the worklist', () => {
+  const items = async (person: TestPerson) => {
+    const { body } = await request(test.app, listWorklist, { as: person.cookie }).expect(200)
+    return body.items as WorklistItem[]
+  }
+  const has = async (person: TestPerson, id: string) => (await items(person)).some((item) => item.id === id && item.state === 'open')
+
+  it('hands the award from buyer to approver to buyer to vendor, and to nobody else', async () => {
+    const opened = await buildOpenedRfq(test, world)
+    expect(await has(world.buyer, `award-comparison-${opened.rfq.id}`)).toBe(true)
+    const proposed = await buildProposal(test, world, opened, 0)
+    expect(await has(world.buyer, `award-comparison-${opened.rfq.id}`)).toBe(false)
+    expect(await has(world.approver, `award-approval-${proposed.id}`)).toBe(true)
+    expect(await has(world.engineer, `award-approval-${proposed.id}`)).toBe(false)
+
+    const award = await buildApproved(test, world, opened, 0)
+    expect(await has(world.approver, `award-approval-${award.id}`)).toBe(false)
+    expect(await has(world.buyer, `award-order-${award.id}`)).toBe(true)
+
+    const { body } = await place(award.id).expect(200)
+    const [winner, loser] = [vendorOf(opened, 0).person, vendorOf(opened, 1).person]
+    expect(await has(winner, `order-acknowledgement-${body.id}`)).toBe(true)
+    expect(await has(loser, `order-acknowledgement-${body.id}`)).toBe(false)
+    await acknowledge(test, winner, body.id, { answer: 'accepted', text: '' }).expect(200)
+    expect(await has(winner, `order-acknowledgement-${body.id}`)).toBe(false)
+    expect((await items(world.buyer)).find(({ id }) => id === `order-answer-${body.id}`)).toMatchObject({ state: 'done', detail: 'Accepted' })
+  })
+
+  it('asks the vendor for the report and quality for the disposition', async () => {
+    const { rfq } = await buildOpenedRfq(test, world)
+    const asked = await buildSampleRequest(test, world, rfq)
+    const vendor = world.vendors[0]!.person
+    expect(await has(vendor, `sample-report-${asked.id}`)).toBe(true)
+    expect(await has(world.vendors[1]!.person, `sample-report-${asked.id}`)).toBe(false)
+    await buildConfirmedSet(test, vendor, asked.id)
+    expect(await has(vendor, `sample-report-${asked.id}`)).toBe(false)
+    expect(await has(world.quality, `sample-disposition-${asked.id}`)).toBe(true)
+    expect(await has(world.buyer, `sample-disposition-${asked.id}`)).toBe(false)
   })
 })
 
