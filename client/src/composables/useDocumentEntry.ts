@@ -12,6 +12,8 @@ export interface DocumentEntry {
   readonly: Readonly<Ref<boolean>>
   /** Place → sentences of what does not fit the schema or stops release, to stand at the entry. */
   problems: Readonly<Ref<ReadonlyMap<string, string>>>
+  /** Place → codes of checks that are not met there. */
+  flags: Readonly<Ref<ReadonlyMap<string, readonly string[]>>>
   /** The place that a check or finding leads to, with a count that rises each time. */
   target: Readonly<Ref<{ path: string; turn: number } | null>>
   /** The row under the pointer or the focus, such as `step:s3`, to be marked in the coil. */

@@ -31,6 +31,7 @@ export function useRequirementEntry(requirement: WritableComputedRef<Requirement
     library: computed(() => toValue(library) ?? NO_LIBRARY),
     readonly: ref(false),
     problems: schemaProblems,
+    flags: ref(new Map()),
     target: ref(null),
     marked: ref(null),
   })

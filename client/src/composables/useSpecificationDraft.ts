@@ -80,12 +80,17 @@ export function useSpecificationDraft(initial: Revision, personId: string, serve
     }
   }
 
-  /** Stores what is not stored yet; true when everything is. */
-  async function flush(): Promise<boolean> {
+  /** One sending at a time; two would race for the same version. */
+  async function sendNow() {
     clearTimeout(timer)
     await running
     if (state.value !== 'conflict') await (running = send().finally(() => (running = null)))
-    clearTimeout(timer)
+  }
+
+  /** Stores what is not stored yet, also what was typed meanwhile; true when everything is. */
+  async function flush(): Promise<boolean> {
+    do await sendNow()
+    while (state.value === 'waiting')
     return state.value === 'stored'
   }
 
@@ -93,7 +98,7 @@ export function useSpecificationDraft(initial: Revision, personId: string, serve
     if (state.value === 'conflict') return
     state.value = 'waiting'
     clearTimeout(timer)
-    timer = setTimeout(() => void flush(), PAUSE_MS)
+    timer = setTimeout(() => void sendNow(), PAUSE_MS)
   }
 
   watch(document, (next) => {

@@ -10,6 +10,7 @@ interface Sources {
   document: Readonly<Ref<SpecificationDocument>>
   library: Readonly<Ref<Library>>
   problems: Readonly<Ref<ReadonlyMap<string, string>>>
+  flags: Readonly<Ref<ReadonlyMap<string, readonly string[]>>>
   readonly: Readonly<Ref<boolean>>
   write: (changes: Readonly<Record<string, unknown>>) => void
 }
@@ -26,7 +27,7 @@ function elementOf(place: string): HTMLElement | null {
 }
 
 /** The form's side of the workbench: which section is open, where a check leads, what is pointed at. */
-export function useWorkbench({ document: source, library, problems, readonly, write }: Sources) {
+export function useWorkbench({ document: source, library, problems, flags, readonly, write }: Sources) {
   const route = useRoute()
   const router = useRouter()
   const target = ref<{ path: string; turn: number } | null>(null)
@@ -62,6 +63,6 @@ export function useWorkbench({ document: source, library, problems, readonly, wr
     if (typeof route.query.go === 'string') void go(route.query.go)
   })
 
-  provideDocumentEntry({ read: (path) => valueAt(source.value, documentPath(path)), write, document: source, library, readonly, problems, target, marked })
+  provideDocumentEntry({ read: (path) => valueAt(source.value, documentPath(path)), write, document: source, library, readonly, problems, flags, target, marked })
   return { section, go, marked }
 }

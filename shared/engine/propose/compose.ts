@@ -100,12 +100,21 @@ function fillInsulation({ insulation }: WindingSpecification, { design, requirem
   const { duty } = requirement
   insulation.productStandard = proposed(preferences.productStandard)
   insulation.standardEdition = proposed(preferences.standardEdition)
+  fillSurroundings(insulation, preferences)
   // The greatest mains voltage is given with its tolerance, commonly 10 %.
   if (duty.topology === 'flyback' && duty.supply.kind === 'mains') insulation.mainsVoltageV = proposed(Math.round(duty.supply.maximumV / 11) * 10)
   insulation.materialGroup = fromLibrary(design.former.materialGroup, referenceTo(design.former))
   insulation.maximumAmbientC = proposed(requirement.ambientC)
   insulation.boundaries = planBoundaries(design)
   insulation.polymers = [{ id: 'y1', status: 'mandatory', origin: PROPOSED, use: 'Coil former', material: design.former.material, flammability: design.former.flammability, fileNumber: '' }]
+}
+
+function fillSurroundings(insulation: WindingSpecification['insulation'], { surroundings }: ProposalPreferences): void {
+  if (!surroundings) return
+  const entered = <T>(value: T) => ({ value, status: 'mandatory' as const, origin: { kind: 'entered' as const } })
+  insulation.overvoltageCategory = entered(surroundings.overvoltageCategory)
+  insulation.pollutionDegree = entered(surroundings.pollutionDegree)
+  insulation.altitudeM = entered(surroundings.altitudeM)
 }
 
 /** A_L controls, to three digits; the inductance follows from it, the gap is for reference. */

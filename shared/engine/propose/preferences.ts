@@ -1,5 +1,5 @@
 import type { CoreShape } from '../library'
-import type { ProductStandard, WireInsulation } from '../specification'
+import type { OvervoltageCategory, PollutionDegree, ProductStandard, WireInsulation } from '../specification'
 
 /** What the engineer prefers where the requirement sheet leaves a choice. */
 export interface ProposalPreferences {
@@ -19,6 +19,8 @@ export interface ProposalPreferences {
   buildLimit: number
   productStandard: ProductStandard
   standardEdition: string
+  /** What the person knows about the part's surroundings; null takes the defaults of the document. */
+  surroundings: { overvoltageCategory: OvervoltageCategory; pollutionDegree: PollutionDegree; altitudeM: number } | null
 }
 
 export const DEFAULT_PREFERENCES: ProposalPreferences = {
@@ -33,4 +35,5 @@ export const DEFAULT_PREFERENCES: ProposalPreferences = {
   buildLimit: 0.85,
   productStandard: 'IEC 62368-1',
   standardEdition: '2018',
+  surroundings: null,
 }

@@ -1,7 +1,6 @@
-import * as contract from '#shared/contracts/specifications'
 import type { Revision } from '#shared/contracts/specifications'
 import { buildRelease } from '../../support/build-release'
-import { buildDraft, buildInCheck, newPartNumber, releasableDocument, revisionParams } from '../../support/build-specification'
+import { buildChecked, buildDraft, buildInCheck, newPartNumber, releasableDocument, revisionParams } from '../../support/build-specification'
 import type { CallParts } from '../../support/test-app'
 import type { Expectation, FeatureExpectations } from './expectation'
 import type { MatrixWorld, World } from './world'
@@ -10,6 +9,8 @@ type Make = (world: MatrixWorld, of: World, title?: string) => Promise<Revision>
 
 const draft: Make = ({ test }, of, title) => buildDraft(test, of.engineer, title)
 const inCheck: Make = ({ test }, of, title) => buildInCheck(test, of.engineer, title)
+
+const checked: Make = ({ test }, of, title) => buildChecked(test, of.engineer, of.quality, title)
 
 /** About a revision of one's own, and about one of elsewhere. */
 const about = (make: Make, call: (revision: Revision) => Omit<CallParts, 'params'> = () => ({})): Expectation => {
@@ -55,7 +56,7 @@ export const specifications: FeatureExpectations = {
   submitDraft: about(draft, ({ version }) => ({ body: { version } })),
   returnDraft: about(inCheck, () => ({ body: { reason } })),
   overrideCheck: about(inCheck, () => ({ body: { code: 'Q06', reason } })),
-  releaseRevision: about(inCheck, ({ version }) => ({ body: { version } })),
+  releaseRevision: about(checked, ({ version }) => ({ body: { version } })),
   // An engineer withdraws a draft; a checker only what was released.
   withdrawRevision: { ...about(draft, () => ({ body: { reason } })), status: { checker: 409 } },
   draftPdf: about(draft),

@@ -12,6 +12,7 @@ export interface NewSpecification {
   productStandard: ProposalPreferences['productStandard']
   standardEdition: string
   wireSystem: ProposalPreferences['wireSystem']
+  surroundings: NonNullable<ProposalPreferences['surroundings']>
 }
 
 export const newSpecification = (): NewSpecification => ({
@@ -23,11 +24,12 @@ export const newSpecification = (): NewSpecification => ({
   productStandard: DEFAULT_PREFERENCES.productStandard,
   standardEdition: DEFAULT_PREFERENCES.standardEdition,
   wireSystem: DEFAULT_PREFERENCES.wireSystem,
+  surroundings: { overvoltageCategory: 'II', pollutionDegree: 2, altitudeM: 2000 },
 })
 
 export const requirementOf = ({ way, flyback, coupled }: NewSpecification): RequirementSheet | null => (way === 'direct' ? null : way === 'flyback' ? flyback : coupled)
 
-export const preferencesOf = ({ productStandard, standardEdition, wireSystem }: NewSpecification): Partial<ProposalPreferences> => ({ productStandard, standardEdition, wireSystem })
+export const preferencesOf = ({ productStandard, standardEdition, wireSystem, surroundings }: NewSpecification): Partial<ProposalPreferences> => ({ productStandard, standardEdition, wireSystem, surroundings })
 
 const entered = (field: Stated<string>, value: string): Stated<string> => ({ ...field, value, origin: { kind: 'entered' } })
 

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import type { CheckResult } from '#shared/engine/evaluation'
-import { groupChecks, stoppingCodes } from './check-groups'
+import { flagsByPlace, flagsWithin, groupChecks, stoppingCodes } from './check-groups'
 
 const check = (code: string, severity: CheckResult['severity'], state: CheckResult['state']): CheckResult => ({ code, severity, state, value: null, limit: null, unit: '', margin: null, source: '', path: '', values: {} })
 
@@ -21,5 +21,19 @@ describe('stoppingCodes', () => {
   it('counts what could not be checked among what stops release', () => {
     expect(stoppingCodes(checks, new Set())).toEqual(['E01', 'I04'])
     expect(stoppingCodes(checks, new Set(['E01']))).toEqual(['I04'])
+  })
+})
+
+describe('flags', () => {
+  const at = (code: string, path: string, state: CheckResult['state'] = 'not-met') => ({ ...check(code, 'S', state), path })
+  const flags = flagsByPlace([at('W01', 'sequence.1'), at('W01', 'sequence.1'), at('E14', 'sequence.1.turns'), at('E14', 'sequence.10.turns'), at('D01', 'title.title', 'met')])
+
+  it('stand at the place that is not met, each code once', () => {
+    expect(flags.get('sequence.1')).toEqual(['W01'])
+    expect(flags.has('title.title')).toBe(false)
+  })
+
+  it('of a row are those of its fields too, and not of a row whose number begins alike', () => {
+    expect(flagsWithin(flags, 'sequence.1')).toEqual(['W01', 'E14'])
   })
 })

@@ -1,4 +1,5 @@
 import type { CheckResult } from '#shared/engine/evaluation'
+import { isWithin } from '../document-paths'
 
 export interface CheckGroup {
   key: 'stops' | 'answer' | 'unknown' | 'notes' | 'passed' | 'met'
@@ -27,3 +28,19 @@ export function groupChecks(checks: readonly CheckResult[], overridden: Readonly
 export function stoppingCodes(checks: readonly CheckResult[], overridden: ReadonlySet<string>): string[] {
   return [...new Set(checks.filter(({ severity, state, code }) => severity === 'S' && state !== 'met' && !overridden.has(code)).map(({ code }) => code))]
 }
+
+/** Place → codes of the checks that are not met there and want something done. */
+export function flagsByPlace(checks: readonly CheckResult[]): Map<string, string[]> {
+  const flags = new Map<string, string[]>()
+  for (const { code, path, state, severity } of checks) {
+    if (state !== 'not-met' || severity === 'N') continue
+    const codes = flags.get(path) ?? []
+    if (!codes.includes(code)) flags.set(path, [...codes, code])
+  }
+  return flags
+}
+
+/** All codes at a place and within it. */
+export const flagsWithin = (flags: ReadonlyMap<string, readonly string[]>, place: string): string[] => [
+  ...new Set([...flags].filter(([path]) => isWithin(path, place)).flatMap(([, codes]) => codes)),
+]
