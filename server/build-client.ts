@@ -53,9 +53,10 @@ function filesBelow(folder: string): string[] {
   return entries.filter((entry) => entry.isFile()).map((entry) => path.relative(ROOT, path.join(entry.parentPath, entry.name))).sort()
 }
 
+/** Two starts of one clone may build at once: each builds into a folder of its own, so vite's lock would only stop one. */
 function runVite(outDir: string): void {
   const vite = path.join(ROOT, 'node_modules/vite/bin/vite.js')
-  const { status, stdout, stderr } = spawnSync(process.execPath, [vite, 'build', '--outDir', outDir, '--emptyOutDir', '--logLevel', 'warn'], {
+  const { status, stdout, stderr } = spawnSync(process.execPath, [vite, 'build', '--outDir', outDir, '--emptyOutDir', '--bypass-lock', '--logLevel', 'warn'], {
     cwd: ROOT,
     encoding: 'utf8',
     env: { ...process.env, NODE_ENV: 'production' },
