@@ -4,6 +4,7 @@ import { listWorklist } from '#shared/contracts/worklist'
 import type { WorklistItem } from '#shared/contracts/worklist'
 import type { SpecificationDocument } from '#shared/engine/specification'
 import { createHash } from 'node:crypto'
+import type { Response } from 'supertest'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { buildChecked, buildDraft, buildInCheck, letRowsPass, newPartNumber, releasableDocument, revisionParams } from '../support/build-specification'
 import { buildPerson, buildWorld, type TestPerson } from '../support/factories'
@@ -240,7 +241,7 @@ describe('release', () => {
   })
 })
 
-const binary = (response: NodeJS.ReadableStream, done: (error: Error | null, body: Buffer) => void) => {
+const binary = (response: Response, done: (error: Error | null, body: Buffer) => void) => {
   const chunks: Buffer[] = []
   response.on('data', (chunk: Buffer) => chunks.push(chunk))
   response.on('end', () => done(null, Buffer.concat(chunks)))
@@ -254,6 +255,22 @@ describe('withdrawing', () => {
     expect((await withdraw(world.checker).expect(409)).body.code).toBe('conflict')
     expect((await withdraw(world.engineer).expect(200)).body.state).toBe('withdrawn')
     expect((await save(draft, draft.document).expect(409)).body.code).toBe('not-a-draft')
+  })
+})
+
+describe('the list', () => {
+  it('shows the release in force when a later draft was given up', async () => {
+    const { id, specificationId } = (await release(await buildChecked(test, world.engineer, world.quality, 'Still in force')).expect(200)).body
+    const draft = (await request(test.app, contract.createDraft, { as: world.engineer.cookie, params: { specificationId } }).expect(200)).body
+    await request(test.app, contract.withdrawRevision, { as: world.engineer.cookie, params: revisionParams(draft), body: { reason: 'Not needed after all.' } }).expect(200)
+    const { body } = await request(test.app, contract.listSpecifications, { as: world.engineer.cookie, query: { search: 'Still in force' } }).expect(200)
+    expect(body.map(({ current }: { current: { id: string; state: string } }) => [current.id, current.state])).toEqual([[id, 'released']])
+  })
+
+  it('takes per cent and underscore as typed, not as patterns', async () => {
+    await buildDraft(test, world.engineer)
+    const { body } = await request(test.app, contract.listSpecifications, { as: world.engineer.cookie, query: { search: '%' } }).expect(200)
+    expect(body).toEqual([])
   })
 })
 

@@ -117,14 +117,15 @@ describe('useSpecificationDraft', () => {
     })
   })
 
-  it('keeps what could not be sent, and sends it when asked again', async () => {
+  it('keeps what could not be sent, and sends it by itself when the server is back', async () => {
     const server = serverWith(mainsFlyback())
     const draft = open(server)
     server.save.mockRejectedValueOnce(new ApiError({ code: 'no-connection', message: 'The server could not be reached.' }))
     retitle(draft, 'offline')
     await pause()
     expect([draft.state.value, draft.failure.value?.code, sessionStorage.length]).toEqual(['failed', 'no-connection', 1])
-    expect(await draft.flush()).toBe(true)
+    await vi.advanceTimersByTimeAsync(10_000)
+    expect(draft.state.value).toBe('stored')
     expect(titleOf(server.held.document)).toBe('offline')
   })
 })

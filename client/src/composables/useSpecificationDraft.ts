@@ -9,6 +9,8 @@ import { forgetKept, keepLocally, readKept } from './kept-document'
 import { useHistory } from './useHistory'
 
 const PAUSE_MS = 1200
+/** A server that could not be reached is tried again by itself. */
+const RETRY_MS = 10_000
 
 export type SaveState = 'stored' | 'waiting' | 'storing' | 'not-fitting' | 'conflict' | 'failed'
 
@@ -65,6 +67,7 @@ export function useSpecificationDraft(initial: Revision, personId: string, serve
   function fail(error: unknown) {
     failure.value = error instanceof ApiError ? error : new ApiError({ code: 'internal', message: String(error) })
     state.value = failure.value.code === 'stale-version' ? 'conflict' : 'failed'
+    if (failure.value.code === 'no-connection') timer = setTimeout(() => void sendNow(), RETRY_MS)
     for (const [path, sentence] of Object.entries(failure.value.fields)) schemaProblems.value = new Map([...schemaProblems.value, [placeOf(path), sentence]])
   }
 

@@ -53,7 +53,9 @@ export async function listSpecifications(tx: Transaction, actor: Actor, query: L
 
   return rows
     .flatMap((row) => {
-      const current = revisions.find((revision) => revision.specificationId === row.id)
+      const own = revisions.filter((revision) => revision.specificationId === row.id)
+      // A draft that was given up does not hide the release that is in force.
+      const current = own.find(({ state }) => state !== 'withdrawn') ?? own[0]
       if (!current || (query.state && current.state !== query.state)) return []
       const { id, partNumber, title } = row
       const summary = summaryOf(current, releases.get(current.id) ?? null, names)
