@@ -9,6 +9,7 @@ import { fileURLToPath } from 'node:url'
 import { makeFirstLinks } from './first-links'
 import { DEMO_PASSWORD, DEMO_PEOPLE, seedPeople } from './people'
 import { seedRfqs } from './rfqs'
+import { seedSamples } from './samples'
 import { seedSpecifications } from './specifications/index'
 
 export interface SeedStep {
@@ -22,6 +23,7 @@ export const DEMO_STEPS: readonly SeedStep[] = [
   { name: 'people', run: seedPeople },
   { name: 'specifications', run: seedSpecifications },
   { name: 'rfqs', run: seedRfqs },
+  { name: 'samples', run: seedSamples },
 ]
 
 export async function seedDemo(ctx: Context): Promise<void> {
