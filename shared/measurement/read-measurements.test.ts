@@ -244,3 +244,12 @@ it('reads its own template back once it is filled in', () => {
   expect(read.notes.filter(({ code }) => code === 'limit-differs')).toEqual([])
   expect(values(read, 't3')).toEqual([0.91, 0.912])
 })
+
+it('knows the limits of its own template again when the readings are written with a decimal comma', () => {
+  const rows = ROWS.map((row) => (row.symbol === 'Lp' ? { ...row, minimum: 540.125e-6 } : row))
+  const [, min] = reportTemplate(rows, []).split('\r\n')
+  expect(min).toMatch(/^Min;540\.125;/)
+  const filled = reportTemplate(rows, ['1']).replace('1;;;;;;;\r\n', '1;602,5;9,7;912;32;9,98;pass;500\r\n')
+  const read = readMeasurements(bytes(filled), rows)
+  expect(read.kind === 'read' && read.notes.filter(({ code }) => code === 'limit-differs')).toEqual([])
+})

@@ -18,13 +18,19 @@ function figureAt({ grid }: Layout, record: number, column: ReadingColumn, decim
   return cell.kind === 'reading' && cell.reading.kind === 'value' ? cell.reading.value : null
 }
 
-/** Limits that stand in the file beside those of the drawing. The drawing wins; a difference is said. */
+/**
+ * Limits that stand in the file beside those of the drawing. The drawing wins; a difference is said. The empty
+ * table writes its limits with a decimal point, and who fills it may write a comma: a limit that is the drawing's
+ * by either sign does not differ.
+ */
 export function limitNotes(layout: Layout, columns: readonly ReadingColumn[], decimalSign: DecimalSign): Note[] {
   return layout.limits.flatMap(({ record, side }) =>
     columns.flatMap((column): Note[] => {
       const inFile = figureAt(layout, record, column, decimalSign)
       const drawn = column.row[side]
-      if (inFile === null || (drawn !== null && !differ(inFile, drawn, RELATIVE_TOLERANCE))) return []
+      if (inFile === null) return []
+      const bySign = [decimalSign, 'point' as const, 'comma' as const].map((sign) => figureAt(layout, record, column, sign))
+      if (drawn !== null && bySign.some((figure) => figure !== null && !differ(figure, drawn, RELATIVE_TOLERANCE))) return []
       const address = cellAddress(layout.grid, record, column.field)
       return [{ code: 'limit-differs', address, values: { symbol: column.row.symbol, side, file: inFile, drawing: drawn ?? 'none', unit: column.row.unit } }]
     }),

@@ -78,7 +78,7 @@ describe('samples', () => {
     await page.getByRole('heading', { name: 'Questions about 3 cells' }).waitFor()
     await sound(page, 'vendor-report-questions', true)
     await page.getByRole('group', { name: /Cell B3/ }).getByLabel('Multiply by 1000').check()
-    await page.getByRole('button', { name: 'Same answer for the 1 other cells like it' }).click()
+    await page.getByRole('button', { name: 'Same answer for the other cell like it' }).click()
     await page.getByRole('group', { name: /Cell C5/ }).getByLabel('Value for cell C5').fill('9,4')
     await page.reload()
     await page.getByRole('button', { name: 'Give 3 of 3 answers' }).click()

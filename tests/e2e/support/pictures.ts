@@ -63,6 +63,8 @@ export async function picture(page: Page, name: string, widths: readonly number[
   for (const width of widths) {
     await page.setViewportSize({ width, height: HEIGHTS[width] ?? 900 })
     await settle(page)
+    // What sticks to the top of the screen would stand in the middle of the picture.
+    await page.evaluate(() => window.scrollTo(0, 0))
     await page.screenshot({ path: path.join(FOLDER, `${name}-${width}.png`), fullPage: true })
   }
   await page.setViewportSize({ width: DESK_WIDTH, height: HEIGHTS[DESK_WIDTH]! })
