@@ -4,12 +4,13 @@ import type { listWorklist as contract } from '#shared/contracts/worklist'
 import { awardItems } from './award-items'
 import { peopleItems } from './people-items'
 import type { WorklistProvider } from './provider'
+import { quoteItems } from './quote-items'
 import { rfqItems } from './rfq-items'
 import { sampleItems } from './sample-items'
 import { specificationItems } from './specification-items'
 
 /** One line per feature. */
-const PROVIDERS: readonly WorklistProvider[] = [peopleItems, specificationItems, rfqItems, sampleItems, awardItems]
+const PROVIDERS: readonly WorklistProvider[] = [peopleItems, specificationItems, rfqItems, quoteItems, sampleItems, awardItems]
 
 const DONE_SHOWN_MS = 7 * 24 * 3_600_000
 

@@ -1,21 +1,23 @@
-import type { Actor, Transaction } from '#server/db/as-actor'
+import type { Actor } from '#server/db/as-actor'
 import { rfqs } from '#server/db/schema/index'
 import { readableRfqs } from '#server/policies/rfqs'
-import { listVendorRfqs } from '#server/services/rfqs/vendor-rfq'
 import type { WorklistItem } from '#shared/contracts/worklist'
-import { and, inArray } from 'drizzle-orm'
+import { and, gte, inArray, or } from 'drizzle-orm'
 import type { WorklistMoment, WorklistProvider } from './provider'
 
 type RfqRow = typeof rfqs.$inferSelect
 
+/** For the buying side: enquiries to be issued, asked for and opened, and what was opened lately. */
 export const rfqItems: WorklistProvider = async (tx, actor, moment) => {
-  if (actor.companyKind === 'vendor') return vendorItems(tx, actor)
   if (actor.companyKind !== 'buying') return []
+  const waiting = inArray(rfqs.state, ['preparing', 'issued', 'closed'])
   const rows = await tx
     .select()
     .from(rfqs)
-    .where(and(readableRfqs(actor), inArray(rfqs.state, ['preparing', 'issued', 'closed'])))
-  return [...(actor.roles.includes('buyer') ? rows.flatMap((row) => buyerItems(row, moment)) : []), ...openerItems(rows, actor, moment)]
+    .where(and(readableRfqs(actor), or(waiting, gte(rfqs.openedAt, moment.doneSince))))
+  const unopened = rows.filter((row) => row.openedAt === null)
+  const open = [...(actor.roles.includes('buyer') ? unopened.flatMap((row) => buyerItems(row, moment)) : []), ...openerItems(unopened, actor, moment)]
+  return [...open, ...openedItems(rows, actor)]
 }
 
 const itemOf = (row: RfqRow, kind: string): Pick<WorklistItem, 'id' | 'kind' | 'link' | 'detail' | 'state'> => ({
@@ -42,18 +44,9 @@ function openerItems(rows: readonly RfqRow[], actor: Actor, { now }: WorklistMom
     .map((row) => ({ ...itemOf(row, 'rfq-second-opener'), title: `Open ${row.number} as the second person`, since: row.openingAskedAt!.toISOString(), dueAt: null }))
 }
 
-const VENDOR_STEPS: Partial<Record<Awaited<ReturnType<typeof listVendorRfqs>>[number]['invitationState'], string>> = {
-  invited: 'New enquiry',
-  seen: 'Accept confidentiality or decline',
-  'terms-accepted': 'Quote or decline',
-}
-
-async function vendorItems(tx: Transaction, actor: Actor): Promise<WorklistItem[]> {
-  const rows = await listVendorRfqs(tx, actor)
-  return rows.flatMap((row): WorklistItem[] => {
-    const step = VENDOR_STEPS[row.invitationState]
-    if (row.state !== 'open' || !step) return []
-    const link = { route: 'enquiry', params: { rfqId: row.id } }
-    return [{ id: `enquiry-${row.id}`, kind: 'enquiry', title: `${step}: ${row.number}`, detail: `${row.customerName} · ${row.title}`, state: 'open', since: row.issuedAt, dueAt: row.dueAt, link }]
-  })
+/** Told to the two who opened. */
+function openedItems(rows: readonly RfqRow[], actor: Actor): WorklistItem[] {
+  return rows
+    .filter((row) => row.openedAt && (row.openedBy === actor.personId || row.openingAskedBy === actor.personId))
+    .map((row) => ({ ...itemOf(row, 'rfq-opened'), title: `${row.number} was opened`, state: 'done' as const, since: row.openedAt!.toISOString(), dueAt: null }))
 }
