@@ -42,7 +42,7 @@ export const moneySchema = z.string().regex(/^\d{1,12}\.\d{6}$/)
 
 /** Decimal text as entered, with a point and at most six places; at most twelve digits before it. */
 export const moneyInputSchema = z
-  .string()
+  .string('The amount is missing.')
   .trim()
   .regex(/^\d{1,12}(\.\d{1,6})?$/, 'An amount is written as digits with a decimal point and at most six places.')
 

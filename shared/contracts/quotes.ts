@@ -1,9 +1,7 @@
 import { z } from 'zod'
 import { countrySchema, currencySchema, idSchema, momentSchema, moneyInputSchema, moneySchema, optionalText, requiredText, TEXT_LIMITS } from './common'
 import { defineEndpoint } from './endpoint'
-import { deliveryRuleSchema, quantitiesOutOfOrder } from './rfqs'
-
-export const QUOTE_STATES = ['submitted', 'superseded', 'withdrawn'] as const
+import { deliveryRuleSchema, QUOTE_STATES, quantitiesOutOfOrder } from './rfqs'
 
 const pieces = z.int('Enter a whole number of pieces.').min(1, 'Enter at least one piece.').max(100_000_000)
 const days = z.int('Enter whole days.').min(1, 'Enter at least one day.').max(730, 'Enter at most 730 days.')

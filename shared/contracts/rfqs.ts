@@ -4,6 +4,7 @@ import { defineEndpoint } from './endpoint'
 import { releaseSummarySchema } from './specifications'
 
 export const RFQ_STATES = ['preparing', 'issued', 'closed', 'opened', 'awarded', 'cancelled'] as const
+export const QUOTE_STATES = ['submitted', 'superseded', 'withdrawn'] as const
 export const INVITATION_STATES = ['invited', 'seen', 'terms-accepted', 'intends-to-quote', 'no-bid'] as const
 
 /** Reasons for declining, as a list so that they can be counted; the text beside says the rest. */
@@ -120,6 +121,8 @@ export const rfqSummarySchema = z.object({
 
 export const rfqSchema = z.object({
   ...rfqSummarySchema.shape,
+  /** The database's clock when this was read: whether the due time has passed is not the browser's opinion. */
+  now: momentSchema,
   version: z.int(),
   issueNumber: z.int(),
   issueSha256: z.string().nullable(),
@@ -258,6 +261,8 @@ export const vendorRfqSchema = z.object({
   termsAcceptedAt: momentSchema.nullable(),
   noBidReason: z.enum(NO_BID_REASONS).nullable(),
   noBidText: z.string(),
+  /** The latest revision of the own quotation. */
+  quotation: z.object({ revision: z.int(), state: z.enum(QUOTE_STATES) }).nullable(),
   lines: z.array(rfqLineSchema),
 })
 export type VendorRfq = z.infer<typeof vendorRfqSchema>
@@ -273,7 +278,9 @@ export const vendorRfqSummarySchema = vendorRfqSchema.pick({
   dueAt: true,
   dueZone: true,
   now: true,
+  quotation: true,
 })
+export type VendorRfqSummary = z.infer<typeof vendorRfqSummarySchema>
 
 export const listVendorRfqs = defineEndpoint({
   method: 'GET',
@@ -302,13 +309,18 @@ export const acceptConfidentiality = defineEndpoint({
   response: vendorRfqSchema,
 })
 
+export const noBidSchema = z
+  .strictObject({ reason: z.enum(NO_BID_REASONS, 'Choose a reason.'), text: optionalText('The explanation', TEXT_LIMITS.note) })
+  .refine(({ reason, text }) => reason !== 'other' || text !== '', { path: ['text'], message: 'Say what the reason is.' })
+export type NoBid = z.infer<typeof noBidSchema>
+
 export const declineRfq = defineEndpoint({
   method: 'POST',
   path: '/api/vendor/rfqs/:rfqId/no-bid',
   summary: 'Decline with a reason; possible until the due time, and taken back by quoting',
   access: ['vendor'],
   params: rfqParams,
-  body: z.strictObject({ reason: z.enum(NO_BID_REASONS, 'Choose a reason.'), text: optionalText('The explanation', TEXT_LIMITS.note) }),
+  body: noBidSchema,
   response: vendorRfqSchema,
 })
 

@@ -3,7 +3,9 @@ import { auditEntries, mailEvents, quoteDrafts, quoteLines, quotePriceBreaks, qu
 import { getOwnQuote, listQuotes, quoteFile, removeQuoteFile, saveQuoteDraft, submitQuote, uploadQuoteFile, withdrawQuote, ownQuoteFile, type Quote } from '#shared/contracts/quotes'
 import { acceptConfidentiality, cancelRfq, getVendorRfq, type Rfq } from '#shared/contracts/rfqs'
 import { listAudit } from '#shared/contracts/audit'
+import { canonicalJson } from '#shared/canonical-json'
 import { eq, sql } from 'drizzle-orm'
+import { createHash } from 'node:crypto'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { buildIssuedRfq, buildQuote, openAfterDue, quoteInput, type World } from '../support/build-rfq'
 import { buildPerson, buildWorld, type TestPerson } from '../support/factories'
@@ -51,6 +53,28 @@ describe('quoting', () => {
       [2, 'submitted'],
       [1, 'superseded'],
     ])
+  })
+
+  it('wants to know why a later revision replaces the one before', async () => {
+    const rfq = await buildIssuedRfq(test, world)
+    await buildQuote(test, first, rfq.id)
+    const { body } = await submit(rfq.id, quoteInput(rfq)).expect(400)
+    expect(body.fields.reason).toMatch(/why/)
+  })
+
+  it('seals the file with what was typed: another file is another hash', async () => {
+    const rfq = await acceptedRfq()
+    const upload = (content: Buffer) => request(test.app, uploadQuoteFile, { params: { rfqId: rfq.id }, file: { name: 'offer.pdf', content }, as: first.cookie }).expect(200)
+    await upload(PDF)
+    const { body: second } = await submit(rfq.id, quoteInput(rfq)).expect(200)
+    const own = await request(test.app, getVendorRfq, { params: { rfqId: rfq.id }, as: first.cookie }).expect(200)
+    expect(own.body.quotation).toEqual({ revision: 1, state: 'submitted' })
+    const { sha256, vendorReference, file } = second.submitted[0]
+    const typed = quoteInput(rfq)
+    const hash = (fileSha256: string | null) => createHash('sha256').update(canonicalJson({ schema: 'dotside/quotation/1', revision: 1, issueSha256: rfq.issueSha256, fileSha256, ...typed })).digest('hex')
+    expect(vendorReference).toBe(typed.vendorReference)
+    expect(sha256).toBe(hash(file.sha256))
+    expect(sha256).not.toBe(hash(null))
   })
 
   it('keeps a price per hundred as written and shows the price of one piece beside it', async () => {
@@ -130,6 +154,15 @@ describe('the draft', () => {
     expect(body.draft).toMatchObject({ version: 1, form: { 'lines.0.price': '1,2' } })
     await save(rfq.id, 1, { 'lines.0.price': '1,25' }).expect(200)
     expect((await save(rfq.id, 1, {}).expect(409)).body.code).toBe('stale-version')
+  })
+
+  it('is not made stale by a file that a colleague lays beside it', async () => {
+    const rfq = await acceptedRfq()
+    const upload = () => request(test.app, uploadQuoteFile, { params: { rfqId: rfq.id }, file: { name: 'offer.pdf', content: PDF }, as: first.cookie }).expect(200)
+    expect((await upload()).body.draft).toMatchObject({ version: 0, form: {} })
+    expect((await save(rfq.id, 0, { remarks: 'typed' }).expect(200)).body.draft).toMatchObject({ version: 1, file: { name: 'offer.pdf' } })
+    await upload()
+    await save(rfq.id, 1, { remarks: 'typed on' }).expect(200)
   })
 
   it('takes a quotation file by its content, and refuses one that is something else', async () => {

@@ -135,6 +135,7 @@ describe('the vendor’s side', () => {
     const rfq = await buildIssuedRfq(test, world)
     const vendor = world.vendors[0]!.person
     await request(test.app, declineRfq, { params: { rfqId: rfq.id }, body: { reason: 'no-such-reason', text: '' }, as: vendor.cookie }).expect(400)
+    await request(test.app, declineRfq, { params: { rfqId: rfq.id }, body: { reason: 'other', text: ' ' }, as: vendor.cookie }).expect(400)
     await request(test.app, declineRfq, { params: { rfqId: rfq.id }, body: { reason: 'capacity', text: 'Full until March.' }, as: vendor.cookie }).expect(200)
     const { body } = await request(test.app, getRfq, { params: { rfqId: rfq.id }, as: world.buyer.cookie }).expect(200)
     expect(body.invitations.find((row: { state: string }) => row.state === 'no-bid')).toMatchObject({ noBidReason: 'capacity', noBidText: 'Full until March.' })

@@ -1,4 +1,5 @@
-import type { QuoteDraft, QUOTE_STATES } from '#shared/contracts/quotes'
+import type { QuoteDraft } from '#shared/contracts/quotes'
+import type { QUOTE_STATES } from '#shared/contracts/rfqs'
 import { sql } from 'drizzle-orm'
 import { check, date, foreignKey, index, integer, jsonb, numeric, pgTable, text, unique, uuid } from 'drizzle-orm/pg-core'
 import { createdAt, id, timestamptz } from './columns'

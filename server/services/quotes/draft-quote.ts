@@ -50,12 +50,14 @@ export async function findDraft(tx: Transaction, invitation: InvitationRow): Pro
   return row ?? null
 }
 
+/** The version is that of the typed form: a file laid beside it makes nobody's typing stale. */
 async function writeDraft(tx: Transaction, actor: Actor, invitation: InvitationRow, present: DraftRow | null, now: Date, change: Partial<Pick<DraftRow, 'content' | 'fileId'>>) {
-  const common = { ...change, updatedBy: actor.personId, updatedAt: now }
+  const step = change.content ? 1 : 0
+  const common = { ...change, updatedBy: actor.personId, updatedAt: now, version: (present?.version ?? 0) + step }
   if (present) {
     await tx
       .update(quoteDrafts)
-      .set({ ...common, version: present.version + 1 })
+      .set(common)
       .where(eq(quoteDrafts.invitationId, invitation.id))
     return
   }

@@ -5,10 +5,10 @@ import { canReadQuotes } from '#server/policies/rfqs'
 import { findRfq } from '#server/services/rfqs/read-rfq'
 import { findInvited } from '#server/services/rfqs/vendor-rfq'
 import type { ownQuoteSchema, Quote } from '#shared/contracts/quotes'
+import { quoteHints, type AskedPart } from '#shared/costing/quote-hints'
 import { Decimal } from '#shared/money'
 import { and, asc, desc, eq, inArray, type SQL } from 'drizzle-orm'
 import type { z } from 'zod'
-import { quoteHints, type AskedLine } from './quote-hints'
 
 const FILE = { id: files.id, name: files.name, sizeBytes: files.sizeBytes, sha256: files.sha256 }
 
@@ -95,7 +95,7 @@ interface QuoteRow {
   rfq: Pick<typeof rfqs.$inferSelect, 'currency' | 'deliveryRule' | 'terms'>
 }
 
-function presentQuote({ quote, state, issueNumber, vendorName, submittedBy, file, rfq }: QuoteRow, lines: Quote['lines'], asked: AskedLine[]): Quote {
+function presentQuote({ quote, state, issueNumber, vendorName, submittedBy, file, rfq }: QuoteRow, lines: Quote['lines'], asked: AskedPart[]): Quote {
   const { id, rfqId, invitationId, vendorCompanyId, revision, vendorReference, reason, currency, deliveryPlace, paymentTerms, paymentDays, validUntil, remarks, sha256 } = quote
   const presented = {
     ...{ id, rfqId, invitationId, vendorCompanyId, revision, vendorReference, reason, currency, deliveryPlace, paymentTerms, paymentDays, validUntil, remarks, sha256 },

@@ -1,5 +1,5 @@
 import type { Actor, Transaction } from '#server/db/as-actor'
-import { quoteLines, quotePriceBreaks, quotes, quoteStates, rfqInvitations, rfqIssues, rfqLines } from '#server/db/schema/index'
+import { files, quoteLines, quotePriceBreaks, quotes, quoteStates, rfqInvitations, rfqIssues, rfqLines } from '#server/db/schema/index'
 import { AppError, notFound } from '#server/errors'
 import { queueMail } from '#server/mail/queue-mail'
 import { recordAudit } from '#server/services/audit/record-audit'
@@ -18,13 +18,13 @@ export async function submitQuote(tx: Transaction, actor: Actor, rfqId: string, 
   const { row: invitation, rfq, now } = await lockInvitation(tx, actor, rfqId)
   requireAcceptedTerms(invitation)
   requireOpenForAnswers(rfq, now)
-  await requireSoundQuote(tx, rfq, input, now)
+  const revision = await nextRevision(tx, invitation.id)
+  await requireSoundQuote(tx, rfq, input, { now, revision })
 
   const draft = await findDraft(tx, invitation)
-  const revision = await nextRevision(tx, invitation.id)
   const [issue] = await tx.select({ id: rfqIssues.id, sha256: rfqIssues.sha256 }).from(rfqIssues).where(eq(rfqIssues.rfqId, rfqId)).orderBy(desc(rfqIssues.number)).limit(1)
   const sha256 = createHash('sha256')
-    .update(canonicalJson({ schema: 'dotside/quotation/1', revision, issueSha256: issue!.sha256, ...input }))
+    .update(canonicalJson({ schema: 'dotside/quotation/1', revision, issueSha256: issue!.sha256, fileSha256: await fileHash(tx, draft?.fileId), ...input }))
     .digest('hex')
 
   await retireSubmitted(tx, invitation.id, 'superseded', now)
@@ -43,6 +43,12 @@ export async function submitQuote(tx: Transaction, actor: Actor, rfqId: string, 
   await recordAudit(tx, actor, { type: 'quote-submitted', rfqId, quoteId, revision, sha256 }, { companyId: rfq.companyId, sealedBy: rfqId })
   await queueMail(tx, actor, { template: 'quote-received', props: { rfqId, number: rfq.number, revision, sha256, at: now.toISOString() }, to: { personId: actor.personId } })
   return readOwnQuote(tx, actor, rfqId)
+}
+
+async function fileHash(tx: Transaction, fileId: string | null | undefined): Promise<string | null> {
+  if (!fileId) return null
+  const [file] = await tx.select({ sha256: files.sha256 }).from(files).where(eq(files.id, fileId))
+  return file!.sha256
 }
 
 async function nextRevision(tx: Transaction, invitationId: string): Promise<number> {
@@ -65,10 +71,11 @@ async function insertLine(tx: Transaction, parties: Parties, input: QuoteInput['
     .values(priceBreaks.map(({ fromQuantity, price }) => ({ ...owners, quoteLineId: line!.id, fromQuantity, price: amountText(price) })))
 }
 
-async function requireSoundQuote(tx: Transaction, rfq: RfqRow, input: QuoteInput, now: Date): Promise<void> {
+async function requireSoundQuote(tx: Transaction, rfq: RfqRow, input: QuoteInput, { now, revision }: { now: Date; revision: number }): Promise<void> {
   const fields: Record<string, string> = {}
   if (!isCurrency(input.currency)) fields.currency = `${input.currency} is no currency of ISO 4217 that is in use.`
   if (input.validUntil <= now.toISOString().slice(0, 10)) fields.validUntil = 'The validity has ended already; give a later date.'
+  if (revision > 1 && input.reason === '') fields.reason = 'Say why this revision replaces the one before.'
 
   const asked = await tx.select({ id: rfqLines.id }).from(rfqLines).where(eq(rfqLines.rfqId, rfq.id))
   const known = new Set(asked.map(({ id }) => id))

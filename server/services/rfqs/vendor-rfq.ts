@@ -4,7 +4,7 @@ import { notFound } from '#server/errors'
 import { answerableInvitations } from '#server/policies/rfqs'
 import { recordAudit } from '#server/services/audit/record-audit'
 import { CONFIDENTIALITY_TEXT, type NO_BID_REASONS, type VendorRfq } from '#shared/contracts/rfqs'
-import { and, asc, eq } from 'drizzle-orm'
+import { and, asc, eq, inArray } from 'drizzle-orm'
 import { lockInvitation, requireOpenForAnswers, type InvitationRow, type RfqRow } from './lock-rfq'
 import { readLines } from './read-rfq'
 
@@ -12,6 +12,8 @@ interface Invited {
   rfq: RfqRow
   invitation: InvitationRow
   customerName: string
+  /** The latest revision of the own quotation. */
+  quotation: VendorRfq['quotation']
 }
 
 async function invited(tx: Transaction, actor: Actor, rfqId?: string): Promise<Invited[]> {
@@ -22,7 +24,21 @@ async function invited(tx: Transaction, actor: Actor, rfqId?: string): Promise<I
     .leftJoin(companies, eq(companies.id, rfqs.companyId))
     .where(and(answerableInvitations(actor), rfqId ? eq(rfqs.id, rfqId) : undefined))
     .orderBy(asc(rfqs.dueAt))
-  return rows.map((row) => ({ ...row, customerName: row.customerName ?? '—' }))
+  const quotations = await latestQuotations(
+    tx,
+    rows.map(({ invitation }) => invitation.id),
+  )
+  return rows.map((row) => ({ ...row, customerName: row.customerName ?? '—', quotation: quotations.get(row.invitation.id) ?? null }))
+}
+
+async function latestQuotations(tx: Transaction, invitationIds: string[]) {
+  const rows = await tx
+    .select({ invitationId: quotes.invitationId, revision: quotes.revision, state: quoteStates.state })
+    .from(quotes)
+    .innerJoin(quoteStates, eq(quoteStates.quoteId, quotes.id))
+    .where(inArray(quotes.invitationId, invitationIds))
+    .orderBy(asc(quotes.revision))
+  return new Map(rows.map(({ invitationId, revision, state }) => [invitationId, { revision, state }]))
 }
 
 export async function listVendorRfqs(tx: Transaction, actor: Actor) {
@@ -47,10 +63,10 @@ export async function readVendorRfq(tx: Transaction, actor: Actor, rfqId: string
   return presentVendorRfq(tx, { ...found, invitation: invitation! }, now)
 }
 
-function headOf({ rfq, invitation, customerName }: Invited, now: Date) {
+function headOf({ rfq, invitation, customerName, quotation }: Invited, now: Date) {
   const { id, number, title, dueAt, dueZone } = rfq
   const issuedAt = (rfq.issuedAt ?? now).toISOString()
-  return { id, number, title, customerName, state: stateFor(rfq, now), invitationState: invitation.state, issuedAt, dueAt: dueAt.toISOString(), dueZone, now: now.toISOString() }
+  return { id, number, title, customerName, state: stateFor(rfq, now), invitationState: invitation.state, issuedAt, dueAt: dueAt.toISOString(), dueZone, now: now.toISOString(), quotation }
 }
 
 /** As far as it concerns the vendor; that an enquiry is due is said by the clock, not by the worker. */
