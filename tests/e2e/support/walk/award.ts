@@ -1,0 +1,81 @@
+import { expect } from 'vitest'
+import { pdfText } from '../../../support/pdf-tools'
+import { confirm, download, inDays, look } from './hands'
+import type { Rfq } from './enquiry'
+import { TAMSEN } from './invitation'
+import { PART } from './specification'
+import type { Stage } from './stage'
+
+
+/** The buyer states rates and what nobody quotes, compares, and proposes the cheapest landed cost. */
+export async function proposeAward({ enter, cast }: Stage, rfq: Rfq): Promise<string> {
+  const page = await enter(cast.buyer)
+  await page.getByRole('link', { name: new RegExp(`${rfq.number}`) }).first().waitFor()
+  await page.goto(`/comparisons/${rfq.id}`)
+  await page.getByLabel('Rates of').fill(inDays(-1))
+  await page.getByLabel('Source of the rates').fill('Reference rates of the central bank')
+  await page.getByLabel('1 USD is').fill('0,92')
+  for (const freight of await page.getByLabel('Freight of one shipment').all()) await freight.fill('900')
+  for (const inspection of await page.getByLabel('Incoming inspection of one shipment').all()) await inspection.fill('400')
+  for (const loss of await page.getByLabel('Expected loss').all()) await loss.fill('0,3')
+  await page.getByRole('button', { name: 'Compare' }).click()
+  await page.getByRole('rowheader', { name: 'Landed cost of one' }).waitFor()
+  expect(await page.getByText('1 USD = 0.92').count()).toBe(1)
+  await look(page, '50-comparison')
+  await page.getByRole('radio', { name: new RegExp(cast.quillon.name) }).check()
+  await page.getByLabel('Why this quotation').fill('Samples accepted; lowest landed cost among the compliant offers')
+  await page.getByRole('button', { name: 'Propose for approval' }).click()
+  await page.getByRole('heading', { level: 1, name: `Award for ${rfq.number}` }).waitFor()
+  expect(await page.getByRole('button', { name: 'Approve' }).count()).toBe(0)
+  await look(page, '51-award-proposed')
+  return new URL(page.url()).pathname
+}
+
+export async function approve({ enter, cast, mails }: Stage, rfq: Rfq): Promise<void> {
+  await mails(cast.approver.email, new RegExp(`award for ${rfq.number} waits`))
+  const page = await enter(cast.approver)
+  await look(page, '52-worklist-approver')
+  await page.getByRole('link', { name: `Approve the award for ${rfq.number}` }).click()
+  await page.getByRole('button', { name: 'Approve' }).click()
+  await confirm(page, 'Approve')
+  await page.getByText('Approved by').waitFor()
+  await look(page, '53-award-approved')
+}
+
+/** The order as a document: what was chosen stands in it. Returns its number. */
+export async function order({ enter, cast }: Stage, awardPath: string, price: RegExp): Promise<string> {
+  const page = await enter(cast.buyer)
+  await page.goto(awardPath)
+  await page.getByRole('button', { name: 'Place the order' }).click()
+  await page.getByLabel('Delivery on').fill(inDays(60))
+  await page.getByLabel('Acknowledge by').fill(inDays(7))
+  await page.getByLabel('Invoice address').fill('Brightmoor Power Works\nHarbour Road 1\n12345 Brightmoor')
+  await page.getByLabel('Delivery address').fill('Brightmoor Power Works, goods in\nHarbour Road 3\n12345 Brightmoor')
+  await look(page, '54-order-form')
+  await page.getByRole('button', { name: 'Place the order' }).click()
+  const heading = page.getByRole('heading', { level: 1, name: /Purchase order PO-/ })
+  await heading.waitFor()
+  const number = (await heading.innerText()).replace('Purchase order ', '')
+  await look(page, '55-order')
+
+  const pdf = await download(page, 'Download the PDF')
+  const text = pdfText(pdf.bytes)
+  for (const part of [number, PART, `rev A`, cast.quillon.name]) expect(text).toContain(part)
+  expect(text).toMatch(price)
+  expect(text).not.toContain(TAMSEN.name)
+  return number
+}
+
+/** The winner answers; the others hear that it is decided, and nobody hears a price or a name. */
+export async function acknowledge({ enter, cast, mails }: Stage, number: string, rfq: Rfq): Promise<void> {
+  const told = await mails(cast.quillonSales.email, new RegExp(`Purchase order ${number}`))
+  const regret = await mails(cast.oakhollowSales.email, new RegExp(`${rfq.number} has been decided`))
+  for (const { text } of [...told, ...regret]) expect(text).not.toMatch(/EUR|USD|Quillon|Tamsen|Oakhollow|\d[.,]\d{2}/)
+  const page = await enter(cast.quillonSales)
+  await page.getByRole('link', { name: `Acknowledge the purchase order ${number}` }).click()
+  await page.getByLabel('We accept the order as it stands').check()
+  await look(page, '56-vendor-order', { phone: true })
+  await page.getByRole('button', { name: 'Send the answer' }).click()
+  await page.getByRole('heading', { name: 'Answer of the vendor' }).waitFor()
+  await mails(cast.buyer.email, new RegExp(`has answered the purchase order ${number}`))
+}
