@@ -20,7 +20,8 @@ export async function extendRfq(tx: Transaction, actor: Actor, rfqId: string, du
   const saved = await change(tx, row, { dueAt, issueNumber: row.issueNumber + 1 })
   await writeIssue(tx, actor, saved, await readLines(tx, rfqId), now)
   await recordAudit(tx, actor, { type: 'rfq-extended', rfqId, dueAt: dueAt.toISOString(), reason })
-  await mailInvited(tx, actor, saved, 'rfq-extended')
+  // Who declined for want of time may come back, so the later time is told to all alike.
+  await mailInvited(tx, actor, saved, 'rfq-extended', 'all')
   return presentRfq(tx, actor, saved)
 }
 
@@ -78,11 +79,11 @@ async function change(tx: Transaction, row: RfqRow, values: Partial<RfqRow>): Pr
   return saved!
 }
 
-/** Everybody who has not declined. */
-async function mailInvited(tx: Transaction, actor: Actor, row: RfqRow, template: VendorMail): Promise<void> {
+/** Everybody who has not declined, or all who were invited. */
+async function mailInvited(tx: Transaction, actor: Actor, row: RfqRow, template: VendorMail, whom: 'not-declined' | 'all' = 'not-declined'): Promise<void> {
   const invitations = await tx
     .select({ vendorCompanyId: rfqInvitations.vendorCompanyId })
     .from(rfqInvitations)
-    .where(and(eq(rfqInvitations.rfqId, row.id), ne(rfqInvitations.state, 'no-bid')))
+    .where(and(eq(rfqInvitations.rfqId, row.id), whom === 'all' ? undefined : ne(rfqInvitations.state, 'no-bid')))
   for (const { vendorCompanyId } of invitations) await mailVendor(tx, actor, row, vendorCompanyId, template)
 }

@@ -4,13 +4,16 @@ import { companies, mailEvents, rfqInvitations, rfqs } from '#server/db/schema/i
 import { queueMail } from '#server/mail/queue-mail'
 import { and, eq, inArray, isNotNull, notExists, sql } from 'drizzle-orm'
 
-/** Days before the due time at which a vendor that has not answered is reminded. */
-const REMINDER_DAYS = [3, 1] as const
+/**
+ * Days before the due time at which a vendor that has not answered is reminded. The nearest first: when both
+ * moments have passed unseen, the later reminder says it all and the earlier one is left out.
+ */
+const REMINDER_DAYS = [1, 3] as const
 
 /** Any number will do; two workers must not remind at once. */
 const REMINDER_LOCK = 7_426_902
 
-/** One reminder per invitation and day, to vendors that neither quoted nor declined. */
+/** One reminder per invitation, due time and day, to vendors that neither quoted nor declined. */
 export function remindVendors(ctx: Context): Promise<void> {
   return asWorker(ctx, async (tx) => {
     await tx.execute(sql`select pg_advisory_xact_lock(${REMINDER_LOCK})`)
@@ -23,7 +26,15 @@ async function remind(tx: Transaction, days: (typeof REMINDER_DAYS)[number]): Pr
   const sent = tx
     .select({ id: mailEvents.id })
     .from(mailEvents)
-    .where(and(eq(mailEvents.template, 'rfq-reminder'), sql`${mailEvents.props} ->> 'invitationId' = ${rfqInvitations.id}::text`, sql`(${mailEvents.props} ->> 'days')::int <= ${days}`))
+    .where(
+      and(
+        eq(mailEvents.template, 'rfq-reminder'),
+        sql`${mailEvents.props} ->> 'invitationId' = ${rfqInvitations.id}::text`,
+        sql`(${mailEvents.props} ->> 'days')::int <= ${days}`,
+        // A due time that moved later is reminded of anew; the mail names it to the millisecond.
+        sql`(${mailEvents.props} ->> 'dueAt')::timestamptz = date_trunc('milliseconds', ${rfqs.dueAt})`,
+      ),
+    )
   const waiting = await tx
     .select({ invitationId: rfqInvitations.id, vendorCompanyId: rfqInvitations.vendorCompanyId, rfq: rfqs, customerName: companies.name })
     .from(rfqInvitations)
