@@ -1,3 +1,4 @@
+import { AppError } from '#server/errors'
 import { describe, expect, it } from 'vitest'
 import { z } from 'zod'
 import { parseForm, parseInput } from './parse-input'
@@ -20,7 +21,24 @@ describe('parseInput', () => {
     expect(() => parseInput(z.unknown(), { a: ['x\u0000'] })).toThrow(expect.objectContaining({ code: 'invalid-input', fields: { 'a.0': expect.any(String) } }))
     expect(() => parseInput(z.unknown(), { 'a\u0000': 1 })).toThrow(expect.objectContaining({ code: 'invalid-input' }))
   })
+
+  it('refuses what is nested without end, and names no more than a hundred faults', () => {
+    const nested = Array.from({ length: 5000 }).reduce<unknown>((inner) => [inner], 'x')
+    expect(() => parseInput(z.unknown(), { a: nested })).toThrow(expect.objectContaining({ code: 'invalid-input', message: expect.stringContaining('nested deeper') }))
+    const many = Array.from({ length: 5000 }, () => 'x')
+    const faults = captured(() => parseInput(z.array(z.int()), many))
+    expect(Object.keys(faults.fields ?? {})).toHaveLength(100)
+  })
 })
+
+function captured(work: () => unknown): AppError {
+  try {
+    work()
+  } catch (error) {
+    if (error instanceof AppError) return error
+  }
+  throw new Error('Nothing was refused.')
+}
 
 describe('parseForm', () => {
   const schema = z.strictObject({ note: z.string(), count: z.int(), serials: z.array(z.string()).optional() })
