@@ -1,4 +1,4 @@
-import type { Actor, Transaction } from '#server/db/as-actor'
+import { appNow, type Actor, type Transaction } from '#server/db/as-actor'
 import { companies, memberships, outboxMails, people, rfqInvitations, rfqIssues, rfqLines, rfqs, specificationReleases, vendorRelations } from '#server/db/schema/index'
 import { notFound } from '#server/errors'
 import { canReadRfq, readableRfqs } from '#server/policies/rfqs'
@@ -58,6 +58,7 @@ export async function presentRfq(tx: Transaction, actor: Actor, row: RfqRow): Pr
   const [issue] = await tx.select({ sha256: rfqIssues.sha256 }).from(rfqIssues).where(eq(rfqIssues.rfqId, row.id)).orderBy(desc(rfqIssues.number)).limit(1)
   return {
     ...summaryOf(row, personOf(names, row.buyerId).name),
+    now: (await appNow(tx)).toISOString(),
     lineCount: lines.length,
     invitationCount: invitations.length,
     version: row.version,
