@@ -5,6 +5,8 @@ import { awardRoutes } from './awards'
 import { orderRoutes } from './orders'
 import { partRoutes } from './parts'
 import { peopleRoutes } from './people'
+import { enquiryRoutes } from './enquiries'
+import { rfqRoutes } from './rfqs'
 import { sampleRoutes } from './samples'
 import { specificationRoutes } from './specifications'
 import { worklistRoutes } from './worklist'
@@ -27,6 +29,8 @@ export function createAppRouter(history: RouterHistory): Router {
       ...peopleRoutes,
       ...partRoutes,
       ...specificationRoutes,
+      ...rfqRoutes,
+      ...enquiryRoutes,
       ...sampleRoutes,
       ...awardRoutes,
       ...orderRoutes,

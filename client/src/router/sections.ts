@@ -1,6 +1,7 @@
 import type { Access } from '#shared/contracts/endpoint'
 import { PART_READERS } from '#shared/contracts/parts'
 import { AWARD_READERS } from './awards'
+import { RFQ_READERS } from './rfqs'
 import { SAMPLE_READERS } from './samples'
 import { SPECIFICATION_READERS } from './specifications'
 
@@ -16,6 +17,8 @@ export const SECTIONS: readonly Section[] = [
   { route: 'worklist', title: 'Worklist', access: 'signed-in' },
   { route: 'specifications', title: 'Specifications', access: SPECIFICATION_READERS },
   { route: 'parts', title: 'Parts library', access: PART_READERS },
+  { route: 'rfqs', title: 'Enquiries', access: RFQ_READERS },
+  { route: 'enquiries', title: 'Enquiries', access: ['vendor'] },
   { route: 'samples', title: 'Samples', access: SAMPLE_READERS },
   { route: 'vendor-samples', title: 'Samples', access: ['vendor'] },
   { route: 'awards', title: 'Awards', access: AWARD_READERS },
