@@ -18,7 +18,7 @@ import { DEMO_PARTS } from './specifications/index'
 
 const DAY_MS = 86_400_000
 /** Time in which the demo's vendors quote before their enquiries close. */
-const QUOTING_MS = 6_000
+const QUOTING_MS = 4_000
 
 const MAREK = 'marek.dusek@quillon.example'
 const GRETA = 'greta.tamsen@tamsen.example'
@@ -57,6 +57,7 @@ export async function seedRfqs(ctx: Context): Promise<void> {
   await ensureIssued(ctx, lotte, { title: DEMO_RFQS.saltern, partNumber: DEMO_PARTS.saltern, vendors: [GRETA], dueAt: afternoonIn(12, now, 'Europe/Amsterdam'), dueZone: 'Europe/Amsterdam', deliveryPlace: 'Saltern', quantities: [200, 1000], orderQuantity: 200 })
 
   await typeDraft(ctx, await demoActor(ctx, MAREK), open)
+  await look(ctx, DALE, open)
   await quote(ctx, GRETA, closed, tamsenOffer(['2.95', '2.38'], '850'))
   await quote(ctx, RUTH, closed, zellmarkOffer(['3.05', '2.21'], '1200'))
   await quote(ctx, MAREK, opened, quillonOffer(['7.90', '6.35', '5.42'], '2600'))
@@ -158,13 +159,21 @@ async function quote(ctx: Context, email: string, rfq: Rfq, { prices, line, ...t
   })
 }
 
-/** A vendor in the middle of it: confidentiality accepted, a few fields typed. */
+/** A vendor in the middle of it: confidentiality accepted, the first fields typed. */
 async function typeDraft(ctx: Context, vendor: Actor, rfq: Rfq): Promise<void> {
   await asActor(ctx, vendor, async (tx) => {
     if ((await readOwnQuote(tx, vendor, rfq.id)).draft) return
-    await acceptConfidentiality(tx, vendor, rfq.id)
-    await saveQuoteDraft(tx, vendor, rfq.id, 0, { form: {} })
+    const { lines } = await acceptConfidentiality(tx, vendor, rfq.id)
+    const line = `lines.${lines[0]!.id}`
+    const form = { vendorReference: 'QW/4502', remarks: 'Insulated wire in stock for the first 5 000.', [`${line}.breaks.0.fromQuantity`]: 1000, [`${line}.breaks.0.price`]: '3.42', [`${line}.firstOrderLeadTimeDays`]: 49 }
+    await saveQuoteDraft(tx, vendor, rfq.id, 0, { form })
   })
+}
+
+/** A vendor that has looked and not answered. */
+async function look(ctx: Context, email: string, rfq: Rfq): Promise<void> {
+  const vendor = await demoActor(ctx, email)
+  await asActor(ctx, vendor, (tx) => readVendorRfq(tx, vendor, rfq.id))
 }
 
 async function openAfterDue(ctx: Context, buyer: Actor, rfq: Rfq): Promise<void> {
