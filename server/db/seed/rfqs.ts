@@ -18,7 +18,7 @@ import { DEMO_PARTS } from './specifications/index'
 
 const DAY_MS = 86_400_000
 /** Time in which the demo's vendors quote before their enquiries close. */
-const QUOTING_MS = 4_000
+const QUOTING_MS = 6_000
 
 const MAREK = 'marek.dusek@quillon.example'
 const GRETA = 'greta.tamsen@tamsen.example'
