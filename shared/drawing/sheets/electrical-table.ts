@@ -79,7 +79,7 @@ function saturationRows(specification: WindingSpecification): Row[] {
       what: 'Inductance left at bias',
       where: windingWithTerminals(specification, limit.windingId),
       condition: joined([`${quantity(limit.currentA, 'A')} d.c.`, celsius(limit.temperatureC), limit.method === 'pulse' ? 'pulse method' : 'd.c. superposition']),
-      minimum: `${percent(limit.remainingShare)} of the value without bias`,
+      minimum: `${percent(limit.remainingShare)} of the least value without bias`,
     }),
   )
 }

@@ -1,3 +1,4 @@
+import { CORE_TERMINAL } from '../../engine/limits/terminals'
 import type { WindingSpecification } from '../../engine/specification'
 import { STATUS_LETTERS } from './figures'
 import type { DrawingInput } from './input'
@@ -35,7 +36,7 @@ export function notStated(input: DrawingInput): string[] {
 /** What cannot be right in this document, for the face of a draft. */
 export function contradictions({ windings, sequence, former, tests, insulation }: WindingSpecification): string[] {
   const known = new Set([...former.pins.filter(({ state }) => state !== 'missing').map(({ number }) => number), ...former.flyingLeads.map(({ name }) => name)])
-  const terminal = (where: string, name: string) => (known.has(name) || name === '' ? [] : [`${where}: there is no terminal ${name}.`])
+  const terminal = (where: string, name: string) => (known.has(name) || name === '' || name === CORE_TERMINAL ? [] : [`${where}: there is no terminal ${name}.`])
   return [
     ...windings.flatMap((winding) => [
       ...terminal(`Winding ${winding.name}`, winding.startTerminal),

@@ -1,3 +1,4 @@
+import { limitsAround, toDigits } from '../digits'
 import type { BoundaryEnd, SpecificationDocument, TestRow, Winding, WindingSpecification } from '../specification'
 import { testRow } from './rows'
 import { terminalsAt, terminalsBut, terminalsOf } from './terminals'
@@ -57,9 +58,8 @@ function inductanceRows(specification: WindingSpecification): TestRow[] {
       frequencyHz: limit.frequencyHz,
       levelV: limit.levelV,
       temperatureC: limit.temperatureC,
-      minimum: lowerTolerance === null ? null : nominalH * (1 + lowerTolerance),
+      ...limitsAround(nominalH, { lower: lowerTolerance, upper: upperTolerance }),
       nominal: nominalH,
-      maximum: upperTolerance === null ? null : nominalH * (1 + upperTolerance),
       criticalToQuality: true,
     }),
   ]
@@ -108,24 +108,27 @@ function resistanceRows({ windings }: WindingSpecification): TestRow[] {
   })
 }
 
+/** A ratio is read to four digits. */
+const RATIO_DIGITS = 4
+
 function ratioRows(specification: WindingSpecification): TestRow[] {
   return specification.electrical.turnsRatios.flatMap((ratio) => {
     const numerator = named(specification, ratio.numeratorWindingId)
     const denominator = named(specification, ratio.denominatorWindingId)
     if (!numerator || !denominator || !(denominator.turns > 0)) return []
     const nominal = numerator.turns / denominator.turns
+    const [driven, read] = nominal >= 1 ? [numerator, denominator] : [denominator, numerator]
     return [
       testRow('turns-ratio', `${numerator.name}:${denominator.name}`, '1', {
         windingId: denominator.id,
-        drivenTerminals: terminalsOf(numerator),
-        openTerminals: terminalsOf(denominator),
+        drivenTerminals: terminalsOf(driven),
+        openTerminals: terminalsOf(read),
         method: 'Voltage ratio, driven at the winding with more turns',
         instrumentClass: 'Ratio bridge, 0.1 % or better',
         frequencyHz: ratio.frequencyHz,
         levelV: ratio.levelV,
-        minimum: nominal * (1 - ratio.tolerance),
-        nominal,
-        maximum: nominal * (1 + ratio.tolerance),
+        ...limitsAround(nominal, { lower: -ratio.tolerance, upper: ratio.tolerance }),
+        nominal: toDigits(nominal, RATIO_DIGITS),
         criticalToQuality: true,
       }),
     ]
@@ -154,21 +157,22 @@ function biasRows(specification: WindingSpecification): TestRow[] {
   return specification.electrical.saturation.flatMap((limit) => {
     const winding = named(specification, limit.windingId)
     if (!winding) return []
-    // Another winding's inductance is not stated; the share of its own reading then is the limit.
-    const nominalH = inductance?.windingId === winding.id ? inductance.nominalH * (1 + (inductance.lowerTolerance ?? 0)) : null
+    // Of a winding without a stated least inductance the share of its own reading is the limit.
+    const leastH = inductance?.windingId === winding.id && inductance.lowerTolerance !== null ? inductance.nominalH * (1 + inductance.lowerTolerance) : null
+    const share = `${toDigits(limit.remainingShare * 100, 3)} %`
     const hot = limit.temperatureC > 40
     return [
       testRow('inductance-at-bias', `L ${winding.name} ${limit.temperatureC} °C bias`, 'H', {
         windingId: winding.id,
         drivenTerminals: terminalsOf(winding),
         openTerminals: terminalsBut(specification, [winding.id]),
-        method: `${limit.method === 'pulse' ? 'Current pulse' : 'Direct current superposed'}, at least ${limit.remainingShare * 100} % of the value without bias`,
+        method: `${limit.method === 'pulse' ? 'Current pulse' : 'Direct current superposed'}, ${leastH === null ? `at least ${share} of its own value without bias` : `limit ${share} of the least inductance without bias`}`,
         instrumentClass: 'Pulse inductance meter, 3 % or better',
         frequencyHz: inductance?.frequencyHz ?? null,
         levelV: inductance?.levelV ?? null,
         biasA: limit.currentA,
         temperatureC: limit.temperatureC,
-        minimum: nominalH === null ? null : nominalH * limit.remainingShare,
+        minimum: leastH === null ? null : toDigits(leastH * limit.remainingShare, 3, 'up'),
         extent: hot ? 'type-test' : 'sample',
         acceptableQualityLimit: hot ? null : 0.65,
         criticalToQuality: true,
@@ -188,7 +192,7 @@ function withstandRows(specification: WindingSpecification): TestRow[] {
       testRow('hipot', `HV ${boundary.name}`, 'V', {
         boundaryId: boundary.id,
         drivenTerminals: one!,
-        shortedTerminals: [one!, other!].filter((group) => group.length > 1),
+        shortedTerminals: [one!, other!],
         openTerminals: [],
         method: `Electric strength ${kind}, ${test.routineDwellS} s on every part (type test ${test.voltageV} V, ${test.dwellS} s), ramp ${test.rampS} s, trip ${test.tripA * 1000} mA; against ${other!.join(', ')}`,
         frequencyHz: test.kind === 'dc' ? null : test.frequencyHz,
@@ -203,16 +207,17 @@ function withstandRows(specification: WindingSpecification): TestRow[] {
 
 const isSide = ({ kind }: BoundaryEnd) => kind === 'side'
 
-/** Least insulation resistance between the sides. Source: common practice. */
+/** Least insulation resistance between the sides, and from a protected side to the core. Source: common practice. */
 const INSULATION_RESISTANCE_OHM = 100e6
 
 function insulationRows(specification: WindingSpecification): TestRow[] {
-  return specification.insulation.boundaries.filter(({ between }) => between.every(isSide)).map((boundary) => {
+  const tested = specification.insulation.boundaries.filter(({ between, insulation }) => between.every(isSide) || insulation !== 'functional')
+  return tested.map((boundary) => {
     const [one, other] = boundary.between.map((end) => terminalsAt(specification, end))
     return testRow('insulation-resistance', `IR ${boundary.name}`, 'Ω', {
       boundaryId: boundary.id,
       drivenTerminals: one!,
-      shortedTerminals: [one!, other!].filter((group) => group.length > 1),
+      shortedTerminals: [one!, other!],
       method: `500 V d.c., 2 s; against ${other!.join(', ')}`,
       levelV: 500,
       minimum: INSULATION_RESISTANCE_OHM,

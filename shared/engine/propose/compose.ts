@@ -4,8 +4,9 @@ import { gapForInductance } from '../magnetics/gap'
 import { gappedCore } from '../evaluate/inductance'
 import { referenceTo } from '../evaluate/lookup'
 import type { LibraryIndex } from '../evaluate/lookup'
+import { clean, toDigits } from '../digits'
 import type { Library, TapeRow } from '../library'
-import type { RequirementSheet, SpecificationDocument, Winding, WindingSpecification } from '../specification'
+import type { MainsSupply, RequirementSheet, SpecificationDocument, Winding, WindingSpecification } from '../specification'
 import { blankSpecification } from './blank'
 import { planBoundaries } from './boundaries'
 import type { Design } from './design'
@@ -14,7 +15,7 @@ import { planPins } from './pins'
 import type { PinPlan } from './pins'
 import type { ProposalPreferences } from './preferences'
 import { planSequence } from './sequence'
-import { fromLibrary, PROPOSED, proposed, toDigits, toStepUp } from './stated'
+import { fromLibrary, PROPOSED, proposed, toStepUp } from './stated'
 
 export interface ComposeInput {
   requirement: RequirementSheet
@@ -101,13 +102,15 @@ function fillInsulation({ insulation }: WindingSpecification, { design, requirem
   insulation.productStandard = proposed(preferences.productStandard)
   insulation.standardEdition = proposed(preferences.standardEdition)
   fillSurroundings(insulation, preferences)
-  // The greatest mains voltage is given with its tolerance, commonly 10 %.
-  if (duty.topology === 'flyback' && duty.supply.kind === 'mains') insulation.mainsVoltageV = proposed(Math.round(duty.supply.maximumV / 11) * 10)
+  if (duty.topology === 'flyback' && duty.supply.kind === 'mains') insulation.mainsVoltageV = proposed(ratedMainsV(duty.supply))
   insulation.materialGroup = fromLibrary(design.former.materialGroup, referenceTo(design.former))
   insulation.maximumAmbientC = proposed(requirement.ambientC)
   insulation.boundaries = planBoundaries(design)
   insulation.polymers = [{ id: 'y1', status: 'mandatory', origin: PROPOSED, use: 'Coil former', material: design.former.material, flammability: design.former.flammability, fileNumber: '' }]
 }
+
+/** The greatest mains voltage is given with its tolerance, commonly 10 %; a single voltage without one is rated itself. */
+const ratedMainsV = ({ nominalV, maximumV }: MainsSupply) => Math.max(nominalV, Math.round(maximumV / 11) * 10)
 
 function fillSurroundings(insulation: WindingSpecification['insulation'], { surroundings }: ProposalPreferences): void {
   if (!surroundings) return
@@ -117,19 +120,28 @@ function fillSurroundings(insulation: WindingSpecification['insulation'], { surr
   insulation.altitudeM = entered(surroundings.altitudeM)
 }
 
-/** A_L controls, to three digits; the inductance follows from it, the gap is for reference. */
+/** How far a specified inductance may lie from the calculated one to do with two digits. */
+const TWO_DIGITS_SHARE = 0.004
+
+/** A figure that a person would specify: two digits where they come near, else three. */
+function roundInductance(inductanceH: number): number {
+  const short = toDigits(inductanceH, 2)
+  return Math.abs(short / inductanceH - 1) <= TWO_DIGITS_SHARE ? short : toDigits(inductanceH, 3)
+}
+
+/** The inductance to two or three digits; A_L to three, which controls; the gap is for reference. */
 function fillInductance(document: SpecificationDocument, { design, library, preferences }: ComposeInput): void {
   const { core, electrical } = document.specification
   const primary = design.windings.find(({ role }) => role === 'primary')!
-  const alH = toDigits(design.inductanceH / primary.turns ** 2, 3)
-  const nominalH = alH * primary.turns ** 2
+  const nominalH = roundInductance(design.inductanceH)
+  const alH = toDigits(nominalH / primary.turns ** 2, 3)
   const gapped = gappedCore(createContext(document, library, false))
   const solution = gapped ? gapForInductance(gapped, nominalH, primary.turns) : null
   const gapMm = solution?.state === 'found' ? solution.gapMm : null
   // The tolerance of grinding weighs more the shorter the gap is.
   const small = gapMm !== null && gapMm < 0.1
   const alTolerance = small ? Math.max(0.1, preferences.alTolerance) : preferences.alTolerance
-  const tolerance = Math.max(preferences.inductanceTolerance, alTolerance + (small ? 0.05 : 0.01))
+  const tolerance = clean(Math.max(preferences.inductanceTolerance, alTolerance + (small ? 0.05 : 0.01)))
   core.gap = { ...core.gap, control: proposed('al'), alH: proposed(alH), alTolerance: proposed(alTolerance), lengthMm: proposed(gapMm === null ? null : toDigits(gapMm, 2), 'reference'), position: proposed('centre-leg') }
   electrical.inductance = proposed({
     windingId: primary.id,

@@ -1,8 +1,9 @@
+import { toDigits } from '../digits'
 import type { Evaluation, WindingResult } from '../evaluation'
 import { proposeTests } from '../limits'
 import type { DcResistanceLimit, InsulationBoundary, LeakageLimit, SaturationLimit, SpecificationDocument, TurnsRatio, Winding, WindingSpecification, WithstandTest } from '../specification'
 import { isInsulatedWire, windingsAt } from '../evaluate/insulation-paths'
-import { isProposed, isStatable, PROPOSED, proposed, toDigits, toStepUp } from './stated'
+import { isProposed, isStatable, PROPOSED, proposed, toStepUp } from './stated'
 
 /**
  * The figures of a document that follow from an evaluation: currents, resistance, leakage, saturation, ratios, boundaries and the
@@ -30,9 +31,9 @@ function derivedWinding(winding: Winding, result: WindingResult | undefined, spe
   const fromDuty = evaluation.corners.length > 0
   return {
     ...winding,
-    rmsCurrentA: fromDuty && isStatable(result.rmsA) ? toDigits(result.rmsA, 3, true) : winding.rmsCurrentA,
-    peakCurrentA: fromDuty && isStatable(result.peakA) ? toDigits(result.peakA, 3, true) : winding.peakCurrentA,
-    dcCurrentA: fromDuty && isStatable(result.dcA) ? toDigits(result.dcA, 3, true) : winding.dcCurrentA,
+    rmsCurrentA: fromDuty && isStatable(result.rmsA) ? toDigits(result.rmsA, 3, 'up') : winding.rmsCurrentA,
+    peakCurrentA: fromDuty && isStatable(result.peakA) ? toDigits(result.peakA, 3, 'up') : winding.peakCurrentA,
+    dcCurrentA: fromDuty && isStatable(result.dcA) ? toDigits(result.dcA, 3, 'up') : winding.dcCurrentA,
     dcResistance: isStatable(result.dcResistance20Ohm) ? resistanceLimit(result.dcResistance20Ohm) : winding.dcResistance,
   }
 }
@@ -40,9 +41,10 @@ function derivedWinding(winding: Winding, result: WindingResult | undefined, spe
 /** Below this a reading varies more with contact and lead length. Source: common practice, 20 mΩ. */
 const SMALL_RESISTANCE_OHM = 0.02
 
-function resistanceLimit(nominalOhm: number): DcResistanceLimit {
-  const share = nominalOhm < SMALL_RESISTANCE_OHM ? 1.2 : 1.15
-  return { nominalOhm: toDigits(nominalOhm, 3), maximumOhm: toDigits(nominalOhm * share, 3), minimumOhm: null, temperatureC: 20, fourTerminal: true }
+function resistanceLimit(resistanceOhm: number): DcResistanceLimit {
+  const share = resistanceOhm < SMALL_RESISTANCE_OHM ? 1.2 : 1.15
+  const nominalOhm = toDigits(resistanceOhm, 3)
+  return { nominalOhm, maximumOhm: toDigits(nominalOhm * share, 3, 'down'), minimumOhm: null, temperatureC: 20, fourTerminal: true }
 }
 
 // ---------------------------------------------------------------------------------------------
@@ -73,7 +75,7 @@ function leakageLimits(specification: WindingSpecification, { leakages }: Evalua
   const secondaries = specification.windings.filter(({ role }) => role === 'secondary').map(({ id }) => id)
   const all = leakages.find(({ shortedWindingIds }) => shortedWindingIds.length === secondaries.length && secondaries.every((id) => shortedWindingIds.includes(id)))
   if (!all || !isStatable(all.inductanceH)) return []
-  return [{ id: 'k1', status: 'mandatory', origin: PROPOSED, windingId: all.windingId, shortedWindingIds: all.shortedWindingIds, maximumH: toDigits(all.inductanceH * LEAKAGE_LIMIT_SHARE, 2, true), minimumH: null, frequencyHz: 100e3, levelV: 0.25, temperatureC: 25, model: 'series' }]
+  return [{ id: 'k1', status: 'mandatory', origin: PROPOSED, windingId: all.windingId, shortedWindingIds: all.shortedWindingIds, maximumH: toDigits(all.inductanceH * LEAKAGE_LIMIT_SHARE, 2, 'up'), minimumH: null, frequencyHz: 100e3, levelV: 0.25, temperatureC: 25, model: 'series' }]
 }
 
 /** Share of the inductance without bias that is left at the worst current. Source: common practice, 80 to 90 %. */
@@ -84,7 +86,7 @@ function saturationLimits(specification: WindingSpecification, evaluation: Evalu
   const peakA = Math.max(0, ...evaluation.corners.flatMap(({ windings }) => windings.filter(({ windingId }) => windingId === primary?.id).map(({ peakA: value }) => value)))
   const currentA = evaluation.magnetics.worstCurrentA ?? peakA
   if (!primary || !isStatable(currentA)) return []
-  const limit = (id: string, temperatureC: number): SaturationLimit => ({ id, status: 'mandatory', origin: PROPOSED, windingId: primary.id, currentA: toDigits(currentA, 3, true), temperatureC, remainingShare: REMAINING_SHARE, method: 'pulse' })
+  const limit = (id: string, temperatureC: number): SaturationLimit => ({ id, status: 'mandatory', origin: PROPOSED, windingId: primary.id, currentA: toDigits(currentA, 3, 'up'), temperatureC, remainingShare: REMAINING_SHARE, method: 'pulse' })
   return [limit('x1', 25), limit('x2', 100)]
 }
 

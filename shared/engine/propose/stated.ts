@@ -20,19 +20,6 @@ export const fromLibrary = <T>(value: T | null, row: LibraryReference, status: F
 
 export const isProposed = ({ origin }: { origin: Origin }): boolean => origin.kind === 'proposed'
 
-/**
- * Rounds a figure that a specification states to a number of significant digits; `up` never makes a limit tighter.
- * This chooses a value to specify, it rounds no result.
- */
-export function toDigits(value: number, digits: number, up = false): number {
-  if (!(Math.abs(value) > 0) || !Number.isFinite(value)) return value
-  const scale = 10 ** (digits - 1 - Math.floor(Math.log10(Math.abs(value))))
-  const scaled = value * scale
-  // The hair keeps a figure that has these digits already from being raised by its last bit.
-  const rounded = up ? Math.ceil(scaled * (1 - 1e-12)) : Math.round(scaled)
-  return Number((rounded / scale).toPrecision(digits))
-}
-
 /** No figure of a document is as large as this; what is calculated beyond it comes of an input that makes no sense. */
 const LARGEST_FIGURE = 1e15
 
