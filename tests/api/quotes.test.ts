@@ -1,7 +1,7 @@
 import { asActor, asWorker } from '#server/db/as-actor'
-import { auditEntries, mailEvents, quoteDrafts, quoteLines, quotePriceBreaks, quotes, quoteStates, rfqs } from '#server/db/schema/index'
+import { auditEntries, mailEvents, quoteDrafts, quoteLines, quotePriceBreaks, quotes, quoteStates, rfqInvitations, rfqs } from '#server/db/schema/index'
 import { getOwnQuote, listQuotes, quoteFile, removeQuoteFile, saveQuoteDraft, submitQuote, uploadQuoteFile, withdrawQuote, ownQuoteFile, type Quote } from '#shared/contracts/quotes'
-import { acceptConfidentiality, cancelRfq, getVendorRfq, type Rfq } from '#shared/contracts/rfqs'
+import { acceptConfidentiality, cancelRfq, getRfq, getVendorRfq, type Rfq } from '#shared/contracts/rfqs'
 import { listAudit } from '#shared/contracts/audit'
 import { canonicalJson } from '#shared/canonical-json'
 import { eq, sql } from 'drizzle-orm'
@@ -268,5 +268,23 @@ describe('the seal', () => {
     expect(await asActor(test.ctx, admin, (tx) => tx.select().from(quotePriceBreaks))).toEqual([])
     const trail = await asActor(test.ctx, world.buyer, (tx) => tx.select().from(auditEntries).where(sql`event ->> 'type' = 'quote-submitted' and event ->> 'rfqId' = ${rfq.id}`))
     expect(trail).toHaveLength(1)
+  })
+
+  it('does not tell the buying side who has quoted, not by the invitation either', async () => {
+    const later = await buildIssuedRfq(test, world)
+    for (const vendor of [first, second]) await request(test.app, acceptConfidentiality, { params: { rfqId: later.id }, body: { accepted: true }, as: vendor.cookie }).expect(200)
+    const invitations = () => asActor(test.ctx, world.buyer, (tx) => tx.select().from(rfqInvitations).where(eq(rfqInvitations.rfqId, later.id)).orderBy(rfqInvitations.id))
+    const shown = async () => (await request(test.app, getRfq, { params: { rfqId: later.id }, as: world.buyer.cookie }).expect(200)).body.invitations
+    await request(test.app, getVendorRfq, { params: { rfqId: later.id }, as: first.cookie }).expect(200)
+    const before = [await invitations(), await shown()]
+    await submit(later.id, quoteInput(later)).expect(200)
+    expect([await invitations(), await shown()]).toEqual(before)
+    const own = await request(test.app, getVendorRfq, { params: { rfqId: later.id }, as: first.cookie }).expect(200)
+    expect(own.body.invitationState).toBe('intends-to-quote')
+
+    await openAfterDue(test, world, later.id)
+    expect((await shown()).map(({ vendorCompanyId, state }: { vendorCompanyId: string; state: string }) => [vendorCompanyId, state])).toEqual(
+      expect.arrayContaining([[first.companyId, 'intends-to-quote'], [second.companyId, 'terms-accepted']]),
+    )
   })
 })

@@ -7,12 +7,13 @@ import { recordAudit } from '#server/services/audit/record-audit'
 import { namesOf, personOf } from '#server/services/specifications/read-revision'
 import type { Award, APPROVAL_REFUSALS } from '#shared/contracts/awards'
 import { eq } from 'drizzle-orm'
-import { lockAward, readAward, refusalFor, type AwardRow } from './read-awards'
+import { lockAward, readAward, refusalFor, requireEnquiryOpen, type AwardRow } from './read-awards'
 
 /** Two approvers in the same second meet at the award's row: one approves, the other is told who did. */
 export async function approveAward(tx: Transaction, actor: Actor, awardId: string, comparisonSha256: string, remark: string): Promise<Award> {
   const award = await lockAward(tx, actor, awardId)
   await requireOpen(tx, award)
+  await requireEnquiryOpen(tx, award)
   const refusal = await refusalFor(tx, actor, award, comparisonSha256)
   if (refusal !== null) throw approvalRefused(refusal, award)
   await decide(tx, actor, award, 'approved', remark)

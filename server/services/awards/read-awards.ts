@@ -1,7 +1,8 @@
 import type { Actor, Transaction } from '#server/db/as-actor'
 import { awardLines, awards, comparisons, companies, memberships, purchaseOrders, quotes, rfqLines, rfqs, specificationReleases } from '#server/db/schema/index'
-import { notFound } from '#server/errors'
+import { AppError, notFound } from '#server/errors'
 import { canReadAward, isApprover, readableAwards } from '#server/policies/awards'
+import { lockRfq } from '#server/services/rfqs/lock-rfq'
 import { companyToday } from '#server/services/samples/request-samples'
 import { namesOf, personOf, type Names } from '#server/services/specifications/read-revision'
 import type { Award, AwardSummary, Comparison } from '#shared/contracts/awards'
@@ -63,8 +64,13 @@ export async function findAward(tx: Transaction, actor: Actor, awardId: string):
   return row
 }
 
-/** The award locked until the transaction ends: who decides second finds it decided. */
+/**
+ * The award locked until the transaction ends: who decides second finds it decided. Its enquiry is locked before it,
+ * as a proposal does, so that nothing is decided of an enquiry that is cancelled at the same moment.
+ */
 export async function lockAward(tx: Transaction, actor: Actor, awardId: string): Promise<AwardRow> {
+  const { rfqId } = await findAward(tx, actor, awardId)
+  await lockRfq(tx, actor, rfqId)
   const [row] = await tx.select().from(awards).where(eq(awards.id, awardId)).for('update')
   if (!row || !canReadAward(actor, row)) throw notFound('award')
   return row
@@ -100,6 +106,12 @@ export async function readAwardLines(tx: Transaction, awardId: string): Promise<
     .innerJoin(specificationReleases, eq(specificationReleases.id, rfqLines.releaseId))
     .where(eq(awardLines.awardId, awardId))
     .orderBy(asc(rfqLines.position))
+}
+
+/** A cancelled enquiry takes its proposals and approvals with it. */
+export async function requireEnquiryOpen(tx: Transaction, { rfqId }: Pick<AwardRow, 'rfqId'>): Promise<void> {
+  const [rfq] = await tx.select({ state: rfqs.state }).from(rfqs).where(eq(rfqs.id, rfqId))
+  if (rfq?.state === 'cancelled') throw new AppError('rfq-cancelled', 'This enquiry was cancelled; nothing of it is awarded or ordered any more.')
 }
 
 /** Why this person could not approve now; null when they could. */

@@ -6,7 +6,7 @@ import { queueMail } from '#server/mail/queue-mail'
 import { renderPurchaseOrderPdf } from '#server/pdf/render-purchase-order'
 import { canPlaceOrder } from '#server/policies/orders'
 import { recordAudit } from '#server/services/audit/record-audit'
-import { findAward, isOfferValid, lockAward, readAwardLines, type AwardRow } from '#server/services/awards/read-awards'
+import { findAward, isOfferValid, lockAward, readAwardLines, requireEnquiryOpen, type AwardRow } from '#server/services/awards/read-awards'
 import { drawNumber } from '#server/services/draw-number'
 import { keepMadeFile, referToFile } from '#server/services/files/store-file'
 import { listQuotes } from '#server/services/quotes/read-quotes'
@@ -56,6 +56,7 @@ async function requireOrderable(tx: Transaction, actor: Actor, award: AwardRow):
   if (!canPlaceOrder(actor, award)) throw new AppError('not-allowed', 'A buyer places orders.')
   if (award.state === 'ordered') throw new AppError('already-ordered', 'The order of this award was placed already.')
   if (award.state !== 'approved') throw new AppError('not-approved', `This award is ${award.state}; an order needs an approved one.`)
+  await requireEnquiryOpen(tx, award)
   if (!(await isOfferValid(tx, award))) throw new AppError('offer-expired', 'The quotation has expired since it was approved; it cannot be ordered without an extension.')
 }
 

@@ -37,9 +37,12 @@ export async function submitQuote(tx: Transaction, actor: Actor, rfqId: string, 
   const quoteId = quote!.id
   await tx.insert(quoteStates).values({ ...parties, quoteId, state: 'submitted', changedAt: now })
   for (const line of lines) await insertLine(tx, { ...parties, quoteId }, line)
-  await tx.update(rfqInvitations).set({ state: 'intends-to-quote', noBidReason: null, noBidText: '', decidedAt: now }).where(eq(rfqInvitations.id, invitation.id))
+  if (invitation.state === 'no-bid') {
+    await tx.update(rfqInvitations).set({ state: 'terms-accepted', noBidReason: null, noBidText: '', decidedAt: null }).where(eq(rfqInvitations.id, invitation.id))
+  }
 
-  // Until the opening the customer must not learn that a quotation is there, so the entry is sealed with it.
+  // Until the opening the customer must not learn that a quotation is there: the entry is sealed with it, and the
+  // invitation, which the customer reads, does not tell it.
   await recordAudit(tx, actor, { type: 'quote-submitted', rfqId, quoteId, revision, sha256 }, { companyId: rfq.companyId, sealedBy: rfqId })
   await queueMail(tx, actor, { template: 'quote-received', props: { rfqId, number: rfq.number, revision, sha256, at: now.toISOString() }, to: { personId: actor.personId } })
   return readOwnQuote(tx, actor, rfqId)

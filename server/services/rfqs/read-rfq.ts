@@ -1,10 +1,10 @@
 import { appNow, type Actor, type Transaction } from '#server/db/as-actor'
-import { companies, memberships, outboxMails, people, rfqInvitations, rfqIssues, rfqLines, rfqs, specificationReleases, vendorRelations } from '#server/db/schema/index'
+import { companies, memberships, outboxMails, people, quoteStates, rfqInvitations, rfqIssues, rfqLines, rfqs, specificationReleases, vendorRelations } from '#server/db/schema/index'
 import { notFound } from '#server/errors'
 import { canReadRfq, readableRfqs } from '#server/policies/rfqs'
 import { namesOf, personOf, RELEASE_COLUMNS, releaseSummary } from '#server/services/specifications/read-revision'
 import type { Rfq, RfqSummary } from '#shared/contracts/rfqs'
-import { and, asc, count, desc, eq, inArray, or } from 'drizzle-orm'
+import { and, asc, count, desc, eq, inArray, isNotNull, or } from 'drizzle-orm'
 import type { RfqRow } from './lock-rfq'
 
 export async function readRfq(tx: Transaction, actor: Actor, rfqId: string): Promise<Rfq> {
@@ -107,17 +107,28 @@ async function readInvitations(tx: Transaction, actor: Actor, rfqId: string): Pr
     actor,
     rows.map((row) => row.invitation.vendorCompanyId),
   )
+  const quoting = await vendorsQuoting(tx, rfqId)
   return rows.map(({ invitation, relationName, companyName }) => ({
     id: invitation.id,
     vendorCompanyId: invitation.vendorCompanyId,
     vendorName: companyName ?? relationName ?? '—',
-    state: invitation.state,
+    state: quoting.has(invitation.vendorCompanyId) ? 'intends-to-quote' : invitation.state,
     noBidReason: invitation.noBidReason,
     noBidText: invitation.noBidText,
     seenAt: invitation.seenAt?.toISOString() ?? null,
     termsAcceptedAt: invitation.termsAcceptedAt?.toISOString() ?? null,
     undeliverable: bounced.get(invitation.vendorCompanyId) ?? 0,
   }))
+}
+
+/** Vendors whose quotation lies in the box; nobody before the opening, since the rows are sealed until then. */
+export async function vendorsQuoting(tx: Transaction, rfqId: string): Promise<Set<string>> {
+  const rows = await tx
+    .select({ vendorCompanyId: quoteStates.vendorCompanyId })
+    .from(quoteStates)
+    .innerJoin(rfqs, and(eq(rfqs.id, quoteStates.rfqId), isNotNull(rfqs.openedAt)))
+    .where(and(eq(quoteStates.rfqId, rfqId), eq(quoteStates.state, 'submitted')))
+  return new Set(rows.map(({ vendorCompanyId }) => vendorCompanyId))
 }
 
 /** Mails of ours that did not reach the people of a vendor, or its contact as we typed it. */

@@ -1,8 +1,8 @@
 import type { Context } from '#server/context'
 import { asWorker, type Transaction } from '#server/db/as-actor'
-import { companies, mailEvents, rfqInvitations, rfqs } from '#server/db/schema/index'
+import { companies, mailEvents, quoteStates, rfqInvitations, rfqs } from '#server/db/schema/index'
 import { queueMail } from '#server/mail/queue-mail'
-import { and, eq, inArray, isNotNull, notExists, sql } from 'drizzle-orm'
+import { and, eq, isNotNull, ne, notExists, sql } from 'drizzle-orm'
 
 /**
  * Days before the due time at which a vendor that has not answered is reminded. The nearest first: when both
@@ -35,6 +35,10 @@ async function remind(tx: Transaction, days: (typeof REMINDER_DAYS)[number]): Pr
         sql`(${mailEvents.props} ->> 'dueAt')::timestamptz = date_trunc('milliseconds', ${rfqs.dueAt})`,
       ),
     )
+  const quoted = tx
+    .select({ id: quoteStates.quoteId })
+    .from(quoteStates)
+    .where(and(eq(quoteStates.rfqId, rfqInvitations.rfqId), eq(quoteStates.vendorCompanyId, rfqInvitations.vendorCompanyId), eq(quoteStates.state, 'submitted')))
   const waiting = await tx
     .select({ invitationId: rfqInvitations.id, vendorCompanyId: rfqInvitations.vendorCompanyId, rfq: rfqs, customerName: companies.name })
     .from(rfqInvitations)
@@ -44,7 +48,8 @@ async function remind(tx: Transaction, days: (typeof REMINDER_DAYS)[number]): Pr
       and(
         eq(rfqs.state, 'issued'),
         isNotNull(rfqInvitations.issuedAt),
-        inArray(rfqInvitations.state, ['invited', 'seen', 'terms-accepted']),
+        ne(rfqInvitations.state, 'no-bid'),
+        notExists(quoted),
         // An enquiry with less time than that needs no reminder on the day it arrives.
         sql`${rfqInvitations.issuedAt} < ${from} and ${from} <= app_now() and app_now() < ${rfqs.dueAt}`,
         notExists(sent),

@@ -66,7 +66,8 @@ export async function readVendorRfq(tx: Transaction, actor: Actor, rfqId: string
 function headOf({ rfq, invitation, customerName, quotation }: Invited, now: Date) {
   const { id, number, title, dueAt, dueZone } = rfq
   const issuedAt = (rfq.issuedAt ?? now).toISOString()
-  return { id, number, title, customerName, state: stateFor(rfq, now), invitationState: invitation.state, issuedAt, dueAt: dueAt.toISOString(), dueZone, now: now.toISOString(), quotation }
+  const invitationState = quotation?.state === 'submitted' ? 'intends-to-quote' : invitation.state
+  return { id, number, title, customerName, state: stateFor(rfq, now), invitationState, issuedAt, dueAt: dueAt.toISOString(), dueZone, now: now.toISOString(), quotation }
 }
 
 /** As far as it concerns the vendor; that an enquiry is due is said by the clock, not by the worker. */

@@ -6,6 +6,7 @@ import { canReadRfq } from '#server/policies/rfqs'
 import { canRequestSamples } from '#server/policies/samples'
 import { recordAudit } from '#server/services/audit/record-audit'
 import { withDrawnNumber } from '#server/services/draw-number'
+import { vendorsQuoting } from '#server/services/rfqs/read-rfq'
 import type { SampleRequest, SampleRequestInput } from '#shared/contracts/samples'
 import { and, eq, sql } from 'drizzle-orm'
 import { findRequest, meetAtRequest } from './find-samples'
@@ -44,7 +45,7 @@ async function requireOpenedVendor(tx: Transaction, actor: Actor, { rfqId, lineI
     .where(and(eq(rfqInvitations.rfqId, rfqId), eq(rfqInvitations.vendorCompanyId, vendorCompanyId)))
   if (!line) throw notFound('part in this enquiry')
   if (!invitation) throw notFound('vendor in this enquiry')
-  if (invitation.state !== 'intends-to-quote') throw new AppError('conflict', 'This vendor has not quoted; samples are asked of vendors whose quotation was opened.')
+  if (!(await vendorsQuoting(tx, rfqId)).has(vendorCompanyId)) throw new AppError('conflict', 'This vendor has not quoted; samples are asked of vendors whose quotation was opened.')
   return { line, invitation }
 }
 
