@@ -36,6 +36,8 @@ function failureOf(error: unknown): AppError {
 /** Faults of the request that Express and its body parser find before we do. */
 function parserFault(error: unknown): AppError | null {
   if (!(error instanceof Error) || !('status' in error) || typeof error.status !== 'number' || error.status < 400 || error.status >= 500) return null
+  // A file of the client that is not there: the message would name a folder of this machine.
+  if (error.status === 404) return new AppError('not-found', 'There is no such address.')
   if (error.status === 413) return new AppError('body-too-large', 'The request is larger than 2 MB.')
   if ('type' in error && error.type === 'entity.parse.failed') return new AppError('invalid-json', `The request is not JSON: ${error.message}`)
   return new AppError('invalid-input', `The request cannot be read: ${error.message}`)

@@ -1,5 +1,6 @@
 import { readHealth, readOpenApi } from '#shared/contracts/health'
 import { readSession } from '#shared/contracts/people'
+import supertest from 'supertest'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { request, startTestApp, type TestApp } from '../support/test-app'
 
@@ -46,5 +47,16 @@ describe('every answer', () => {
     const { body, status } = await request(test.app, endpoint)
     expect(status).toBe(404)
     expect(body).toMatchObject({ code: 'not-found', requestId: expect.any(String) })
+  })
+
+  it('names no folder of the machine for a file of the pages that is not there', async () => {
+    const { body, status } = await supertest(test.app).get('/assets/nothing-here.js')
+    expect([status, body.code]).toEqual([404, 'not-found'])
+    expect(JSON.stringify(body)).not.toContain('dist')
+  })
+
+  it('takes a cookie that cannot be decoded for no session', async () => {
+    const { body } = await request(test.app, readSession, { as: 'dotside_session=%ff' }).expect(200)
+    expect(body).toEqual({ person: null })
   })
 })

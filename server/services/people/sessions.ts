@@ -81,11 +81,21 @@ export interface OpenSession {
 /** The session of a cookie header, extended when half of its time has passed; null when there is none any more. */
 export async function resolveSession(tx: Transaction, config: Config, cookieHeader: string): Promise<OpenSession | null> {
   const auth = lucia(tx, config)
-  const sessionId = auth.readSessionCookie(cookieHeader)
+  const sessionId = readCookie(auth, cookieHeader)
   if (!sessionId || sessionId.length > 200) return null
   const { session } = await auth.validateSession(sessionId)
   const person = session && (await readSessionPerson(tx, session.userId))
   return person ? { id: sessionId, person } : null
+}
+
+/** A cookie header that cannot be decoded carries no session. */
+function readCookie(auth: ReturnType<typeof lucia>, cookieHeader: string): string | null {
+  try {
+    return auth.readSessionCookie(cookieHeader)
+  } catch (error) {
+    if (error instanceof URIError) return null
+    throw error
+  }
 }
 
 /** Starts a session and returns the cookie that carries it. */
