@@ -4,6 +4,7 @@ import { ROWS } from './expected-rows.fixture'
 import { judge } from './judge'
 import type { Answer, MeasurementReading } from './model'
 import { readMeasurements } from './read-measurements'
+import { matchHeading } from './match-heading'
 import { reportTemplate } from './report-template'
 
 const bytes = (text: string) => new TextEncoder().encode(text)
@@ -252,4 +253,11 @@ it('knows the limits of its own template again when the readings are written wit
   const filled = reportTemplate(rows, ['1']).replace('1;;;;;;;\r\n', '1;602,5;9,7;912;32;9,98;pass;500\r\n')
   const read = readMeasurements(bytes(filled), rows)
   expect(read.kind === 'read' && read.notes.filter(({ code }) => code === 'limit-differs')).toEqual([])
+})
+
+it('gives a heading that begins like a formula as text, and knows it again', () => {
+  const rows = [{ ...ROWS[0]!, symbol: "=cmd|'/C calc'!A0" }]
+  const [head] = reportTemplate(rows, []).split('\r\n')
+  expect(head!.split(';')[1]).toMatch(/^"?'=cmd/)
+  expect(matchHeading(head!.split(';')[1]!, rows)).toEqual({ rowId: rows[0]!.id, how: 'symbol' })
 })

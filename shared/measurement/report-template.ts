@@ -12,6 +12,9 @@ export function unitForRow(row: Pick<ExpectedRow, 'unit' | 'minimum' | 'nominal'
   return units.findLast(({ modelExponent }) => size >= 10 ** modelExponent * 0.9999) ?? usual
 }
 
+/** A spreadsheet would run a heading that begins like a formula; a leading apostrophe keeps it text. */
+const inert = (heading: string) => (/^[=+\-@\t\r]/.test(heading) ? `'${heading}` : heading)
+
 const quoted = (field: string) => (/[;"\r\n]/.test(field) ? `"${field.replace(/"/g, '""')}"` : field)
 
 /**
@@ -26,6 +29,6 @@ export function reportTemplate(rows: readonly ExpectedRow[], serials: readonly s
   const limit = (side: 'minimum' | 'nominal' | 'maximum') =>
     columns.map(({ row, unit, attribute }) => (attribute || row[side] === null ? '' : enteredText(row[side]!, unit)))
   const headings = columns.map(({ row, unit, attribute }) => (attribute ? `${row.symbol} (pass/fail)` : unit.symbol === '' ? row.symbol : `${row.symbol} (${unit.symbol})`))
-  const lines = [['Serial', ...headings], ['Min', ...limit('minimum')], ['Nom', ...limit('nominal')], ['Max', ...limit('maximum')], ...serials.map((serial) => [serial, ...columns.map(() => '')])]
+  const lines = [['Serial', ...headings.map(inert)], ['Min', ...limit('minimum')], ['Nom', ...limit('nominal')], ['Max', ...limit('maximum')], ...serials.map((serial) => [serial, ...columns.map(() => '')])]
   return lines.map((fields) => `${fields.map(quoted).join(';')}\r\n`).join('')
 }
