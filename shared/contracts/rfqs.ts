@@ -43,13 +43,13 @@ export const rfqTermsSchema = z.strictObject({
   awardBasis: optionalText('Award basis', TEXT_LIMITS.note),
   general: optionalText('Terms', TEXT_LIMITS.note),
   /** Minimum validity that is asked for, days. */
-  validityDays: z.int('Enter whole days.').min(1).max(730),
-  samplesNeededOn: z.iso.date().nullable(),
+  validityDays: z.int('Enter whole days.').min(1, 'Enter at least one day.').max(730, 'Enter at most 730 days.'),
+  samplesNeededOn: z.iso.date('Give the date as year, month and day.').nullable(),
   questionsUntil: momentSchema.nullable(),
 })
 export type RfqTerms = z.infer<typeof rfqTermsSchema>
 
-const quantity = z.int('Enter a whole number of pieces.').min(1, 'Enter at least one piece.').max(100_000_000)
+const quantity = z.int('Enter a whole number of pieces.').min(1, 'Enter at least one piece.').max(100_000_000, 'Enter at most 100 000 000 pieces.')
 
 /** Indices of quantities that do not rise. Empty when the list is in order. */
 export function quantitiesOutOfOrder(quantities: readonly number[]): number[] {
@@ -57,7 +57,7 @@ export function quantitiesOutOfOrder(quantities: readonly number[]): number[] {
 }
 
 export const rfqLineInputSchema = z.strictObject({
-  releaseId: idSchema,
+  releaseId: z.uuid('Choose a released revision.'),
   quantities: z
     .array(quantity)
     .min(1, 'Ask for at least one quantity.')
@@ -65,7 +65,7 @@ export const rfqLineInputSchema = z.strictObject({
     .refine((values) => quantitiesOutOfOrder(values).length === 0, 'The quantities must rise from one price break to the next.'),
   orderQuantity: quantity,
   annualQuantity: quantity.nullable(),
-  sampleQuantity: z.int('Enter a whole number of pieces.').min(0).max(10_000),
+  sampleQuantity: z.int('Enter a whole number of pieces.').min(0, 'Samples are counted; enter 0 for none.').max(10_000, 'Enter at most 10 000 samples.'),
 })
 
 export const rfqInputSchema = z.strictObject({

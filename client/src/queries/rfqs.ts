@@ -34,8 +34,8 @@ export const rfqChoicesQuery = defineQueryOptions({
 export function useWriteRfq() {
   const cache = useQueryCache()
   return useMutation({
-    mutation: ({ rfq, input }: { rfq: Rfq | null; input: RfqInput }) =>
-      rfq ? call(rfqs.updateRfq, { params: { rfqId: rfq.id }, body: { ...input, version: rfq.version } }) : call(rfqs.createRfq, { body: input }),
+    mutation: ({ rfqId, version, input }: { rfqId: string; version: number; input: RfqInput }) =>
+      rfqId === '' ? call(rfqs.createRfq, { body: input }) : call(rfqs.updateRfq, { params: { rfqId }, body: { ...input, version } }),
     onSettled: () => cache.invalidateQueries({ key: KEYS.root }),
   })
 }

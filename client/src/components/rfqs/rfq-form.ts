@@ -2,6 +2,8 @@ import type { Rfq, RfqInput } from '#shared/contracts/rfqs'
 import type { ZonedMoment } from '@/components/base/DateTimeZoneInput.vue'
 
 export interface LineEntry {
+  /** Tells entries of the form apart while others are removed. */
+  key: number
   releaseId: string
   quantities: (number | null)[]
   orderQuantity: number | null
@@ -11,6 +13,8 @@ export interface LineEntry {
 
 /** What the form holds while it is typed; plain data, so that it survives a reload. */
 export interface RfqEntry {
+  /** Version of the stored enquiry that the typing began from; 0 for a new one. */
+  version: number
   title: string
   due: ZonedMoment | null
   currency: string
@@ -29,11 +33,12 @@ export interface RfqEntry {
   vendorCompanyIds: string[]
 }
 
-export const emptyLine = (releaseId = ''): LineEntry => ({ releaseId, quantities: [1000, 5000], orderQuantity: 1000, annualQuantity: null, sampleQuantity: 5 })
+export const emptyLine = (key = 0): LineEntry => ({ key, releaseId: '', quantities: [1000, 5000], orderQuantity: 1000, annualQuantity: null, sampleQuantity: 5 })
 
 export function entryOf(rfq: Rfq | null, home: { currency: string }): RfqEntry {
   if (!rfq) {
     return {
+      version: 0,
       title: '',
       due: null,
       currency: home.currency,
@@ -54,6 +59,7 @@ export function entryOf(rfq: Rfq | null, home: { currency: string }): RfqEntry {
   }
   const { terms } = rfq
   return {
+    version: rfq.version,
     title: rfq.title,
     due: { at: rfq.dueAt, zone: rfq.dueZone },
     currency: rfq.currency,
@@ -61,15 +67,15 @@ export function entryOf(rfq: Rfq | null, home: { currency: string }): RfqEntry {
     deliveryPlace: rfq.deliveryPlace,
     ...terms,
     questionsUntil: terms.questionsUntil === null ? null : { at: terms.questionsUntil, zone: rfq.dueZone },
-    lines: rfq.lines.map(({ release, quantities, orderQuantity, annualQuantity, sampleQuantity }) => ({ releaseId: release.id, quantities: [...quantities], orderQuantity, annualQuantity, sampleQuantity })),
+    lines: rfq.lines.map(({ release, quantities, orderQuantity, annualQuantity, sampleQuantity }, key) => ({ key, releaseId: release.id, quantities: [...quantities], orderQuantity, annualQuantity, sampleQuantity })),
     vendorCompanyIds: rfq.invitations.map(({ vendorCompanyId }) => vendorCompanyId),
   }
 }
 
 /** What is sent. Entries left empty go as zero or empty text, which the server refuses at their place. */
 export function inputOf(entry: RfqEntry): RfqInput {
-  const { title, due, currency, deliveryRule, deliveryPlace, lines, vendorCompanyIds, questionsUntil, validityDays, samplesNeededOn, ...words } = entry
-  const { paymentTerms, packing, quality, compliance, awardBasis, general } = words
+  const { title, due, currency, deliveryRule, deliveryPlace, lines, vendorCompanyIds, questionsUntil, validityDays, samplesNeededOn } = entry
+  const { paymentTerms, packing, quality, compliance, awardBasis, general } = entry
   return {
     title,
     dueAt: due?.at ?? '',
@@ -87,4 +93,37 @@ export function inputOf(entry: RfqEntry): RfqInput {
     })),
     vendorCompanyIds,
   }
+}
+
+/** Input paths whose sentence stands at its entry in the form. */
+export const isShownPath = (path: string): boolean =>
+  /^(title|dueAt|dueZone|currency|deliveryRule|deliveryPlace|terms\.\w+|lines\.\d+\.\w+(\.\d+)?|lines|vendorCompanyIds(\.\d+)?)$/.test(path)
+
+const LABELS: readonly [keyof RfqEntry, string][] = [
+  ['title', 'title'],
+  ['due', 'due time'],
+  ['currency', 'currency'],
+  ['deliveryRule', 'delivery rule'],
+  ['deliveryPlace', 'named place'],
+  ['paymentTerms', 'payment terms'],
+  ['packing', 'packing'],
+  ['quality', 'quality requirements'],
+  ['compliance', 'compliance'],
+  ['awardBasis', 'award basis'],
+  ['general', 'other terms'],
+  ['validityDays', 'validity'],
+  ['samplesNeededOn', 'date of the samples'],
+  ['questionsUntil', 'end of questions'],
+  ['lines', 'parts and quantities'],
+  ['vendorCompanyIds', 'vendors'],
+]
+
+/** What differs between what is typed and what a colleague stored meanwhile, in the words of the form. */
+export function differences(typed: RfqEntry, stored: RfqEntry): string[] {
+  const comparable = (entry: RfqEntry, key: keyof RfqEntry): string => {
+    if (key === 'vendorCompanyIds') return [...entry.vendorCompanyIds].sort().join()
+    if (key === 'lines') return JSON.stringify(entry.lines.map((line) => ({ ...line, key: 0 })))
+    return JSON.stringify(entry[key])
+  }
+  return LABELS.filter(([key]) => comparable(typed, key) !== comparable(stored, key)).map(([, label]) => label)
 }

@@ -1,4 +1,4 @@
-import type { DELIVERY_RULES, INVITATION_STATES, NO_BID_REASONS, RFQ_STATES } from '#shared/contracts/rfqs'
+import type { DELIVERY_RULES, INVITATION_STATES, NO_BID_REASONS, QUOTE_STATES, Rfq, RFQ_STATES } from '#shared/contracts/rfqs'
 
 export const RFQ_STATE_WORDS: Record<(typeof RFQ_STATES)[number], string> = {
   preparing: 'Prepared',
@@ -13,7 +13,7 @@ export const INVITATION_WORDS: Record<(typeof INVITATION_STATES)[number], string
   invited: 'Invited',
   seen: 'Seen',
   'terms-accepted': 'Confidentiality accepted',
-  'intends-to-quote': 'Intends to quote',
+  'intends-to-quote': 'Quoted',
   'no-bid': 'Declined',
 }
 
@@ -38,6 +38,16 @@ export const NO_BID_WORDS: Record<(typeof NO_BID_REASONS)[number], string> = {
   'conflict-with-customer': 'Conflict with an existing customer',
   other: 'Another reason',
 }
+
+export const QUOTE_STATE_WORDS: Record<(typeof QUOTE_STATES)[number], string> = {
+  submitted: 'the one that counts',
+  superseded: 'replaced by a later revision',
+  withdrawn: 'withdrawn',
+}
+
+/** What a vendor has answered; nothing was asked before the issue. */
+export const answerText = ({ issuedAt }: Pick<Rfq, 'issuedAt'>, state: (typeof INVITATION_STATES)[number]): string =>
+  issuedAt === null ? 'Not sent yet' : INVITATION_WORDS[state]
 
 /** Incoterms® 2020: the rules with their names. */
 export const DELIVERY_RULE_WORDS: Record<(typeof DELIVERY_RULES)[number], string> = {
