@@ -138,6 +138,15 @@ export function useQuoteDraft(start: QuoteEntry, initial: StoredDraft | null, pl
     if (state.value === 'waiting') void sendNow()
   })
 
+  /** What a colleague stored meanwhile shows at once where nothing of one's own is at stake. */
+  function adopt(draft: StoredDraft | null) {
+    const settled = state.value === 'stored' || state.value === 'untouched'
+    if (!draft || draft.version <= version || dirty.value || !settled || Object.keys(draft.form).length === 0) return
+    storedText.value = textOf(draft.form)
+    entry.value = fromDraftForm(draft.form, start)
+    settle(draft, form.value)
+  }
+
   /** After a conflict: theirs, or mine over theirs. */
   async function resolve(choice: 'theirs' | 'mine') {
     try {
@@ -154,5 +163,5 @@ export function useQuoteDraft(start: QuoteEntry, initial: StoredDraft | null, pl
     }
   }
 
-  return { entry, state, storedAt, failure, flush, resolve }
+  return { entry, state, storedAt, failure, flush, adopt, resolve }
 }
