@@ -21,7 +21,7 @@ export const cellText = (grid: Grid, record: number, field: number): string =>
 
 /** The same cells with records and fields exchanged; short records are filled up with empty cells. */
 export function transpose(grid: Grid): Grid {
-  const width = Math.max(0, ...grid.records.map(({ length }) => length))
+  const width = grid.records.reduce((widest, { length }) => Math.max(widest, length), 0)
   const records = Array.from({ length: width }, (_, field) => grid.records.map((record) => record[field] ?? ''))
   return { records, transposed: !grid.transposed }
 }

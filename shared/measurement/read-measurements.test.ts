@@ -261,3 +261,9 @@ it('gives a heading that begins like a formula as text, and knows it again', () 
   expect(head!.split(';')[1]).toMatch(/^"?'=cmd/)
   expect(matchHeading(head!.split(';')[1]!, rows)).toEqual({ rowId: rows[0]!.id, how: 'symbol' })
 })
+
+it('counts the rectangle that a table takes up, so that no small file fills the memory', () => {
+  const hostile = `Serial${';Lp'.repeat(20_000)}\n${'1\n'.repeat(20_000)}`
+  expect(readMeasurements(bytes(hostile), ROWS)).toMatchObject({ kind: 'refused', code: 'too-many-cells' })
+  expect(readMeasurements(bytes('1\n'.repeat(150_000)), ROWS)).toMatchObject({ kind: 'refused', code: 'no-table' })
+})

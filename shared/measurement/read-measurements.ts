@@ -36,7 +36,8 @@ export function readWith(bytes: Uint8Array, expected: readonly ExpectedRow[], di
   const separator = detectSeparator(decoded.text)
   const csv = parseCsv(decoded.text, separator)
   if (csv.kind === 'broken-quotes') return refused('broken-quotes', { line: csv.line })
-  const cells = csv.records.reduce((count, record) => count + record.length, 0)
+  // The whole rectangle, since a table on its side is filled up to it: one long line and many short ones are not few cells.
+  const cells = csv.records.length * csv.records.reduce((widest, { length }) => Math.max(widest, length), 0)
   if (cells > MOST_CELLS) return refused('too-many-cells', { cells, most: MOST_CELLS })
 
   const layout = findLayout({ records: csv.records, transposed: false }, expected)
