@@ -165,7 +165,11 @@ async function typeDraft(ctx: Context, vendor: Actor, rfq: Rfq): Promise<void> {
     if ((await readOwnQuote(tx, vendor, rfq.id)).draft) return
     const { lines } = await acceptConfidentiality(tx, vendor, rfq.id)
     const line = `lines.${lines[0]!.id}`
-    const form = { vendorReference: 'QW/4502', remarks: 'Insulated wire in stock for the first 5 000.', [`${line}.breaks.0.fromQuantity`]: 1000, [`${line}.breaks.0.price`]: '3.42', [`${line}.firstOrderLeadTimeDays`]: 49 }
+    const breaks = lines[0]!.quantities.flatMap((fromQuantity, index): [string, number | string | null][] => [
+      [`${line}.breaks.${index}.fromQuantity`, fromQuantity],
+      [`${line}.breaks.${index}.price`, index === 0 ? '3.42' : null],
+    ])
+    const form = { vendorReference: 'QW/4502', remarks: 'Insulated wire in stock for the first 5 000.', ...Object.fromEntries(breaks), [`${line}.firstOrderLeadTimeDays`]: 49 }
     await saveQuoteDraft(tx, vendor, rfq.id, 0, { form })
   })
 }
