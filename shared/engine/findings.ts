@@ -56,6 +56,7 @@ export type CompositionFindingCode =
   | 'boundary-missing'
   // the proposal
   | 'no-core-fits'
+  | 'duty-ratio-high'
   | 'ratio-compromise'
   | 'too-few-pins'
   | 'current-limit-assumed'

@@ -10,6 +10,12 @@ export interface PlannedWinding {
   outputId: string | null
   turns: number
   wire: WireUse
+  /** The winding of the equal and opposite output, beside which this one belongs; null without one. */
+  partnerId: string | null
+  /** Strands of one wire: 1 unless it is litz. */
+  strands: number
+  /** The library holds no wire that suits; this one only carries the current. */
+  makeshift: boolean
   /** Decides the order in the coil: the strongest secondary lies nearest to the primary. */
   powerW: number
 }

@@ -9,6 +9,7 @@ import { derive } from './derive'
 import { chooseMaterial } from './material'
 import { planOf } from './plan'
 import { ratioFindings } from './plan-flyback'
+import { brokenChecks } from './judge'
 import { DEFAULT_PREFERENCES } from './preferences'
 import type { ProposalPreferences } from './preferences'
 import type { ProposalReason } from './reasons'
@@ -78,9 +79,29 @@ const completed = (document: SpecificationDocument, library: Library): Specifica
 
 function choiceFindings({ duty }: RequirementSheet, { chosen, rejected }: SearchResult): Finding[] {
   const notFitting: Finding[] = chosen?.rejection ? [{ code: 'no-core-fits', severity: 'error', path: 'core.core', values: { tried: rejected.length, reason: chosen.rejection } }] : []
-  if (duty.topology !== 'flyback' || !chosen) return notFitting
+  if (!chosen) return notFitting
+  const ofWindings = [...notFitting, ...wireFindings(chosen), ...pinFindings(chosen)]
+  if (duty.topology !== 'flyback') return ofWindings
   const turnsOf = (outputId: string) => chosen.design.windings.find((winding) => winding.outputId === outputId)?.turns ?? 1
-  return [...notFitting, ...ratioFindings(duty, turnsOf)]
+  return [...ofWindings, ...ratioFindings(duty, turnsOf)]
+}
+
+/** Windings for which the library holds no wire that suits. */
+const wireFindings = ({ design }: Candidate): Finding[] =>
+  design.windings.flatMap(({ name, wire, makeshift }, index) => (makeshift ? [{ code: 'no-suitable-wire', severity: 'warning', path: `windings.${index}.wire`, values: { winding: name, parallel: wire.parallel, wire: wire.wire.id } }] : []))
+
+/** Wires that one pin takes. Source: common practice, two or three. */
+const WIRES_PER_PIN = 3
+
+/** Ends that would better be shared between two pins: too much current, or too many wires. */
+function pinFindings({ design, evaluation }: Candidate): Finding[] {
+  const overloaded = brokenChecks(evaluation, 'P03').map(({ path, value, limit, values }): Finding => ({ code: 'too-few-pins', severity: 'warning', path, values: { winding: values.winding ?? '', currentA: value ?? 0, limitA: limit ?? 0 } }))
+  const crowded = design.windings.flatMap(({ name, wire }, index): Finding[] => {
+    const path = `windings.${index}.startTerminal`
+    if (wire.parallel <= WIRES_PER_PIN || overloaded.some((finding) => finding.path === path)) return []
+    return [{ code: 'too-few-pins', severity: 'note', path, values: { winding: name, wires: wire.parallel, usual: WIRES_PER_PIN } }]
+  })
+  return [...overloaded, ...crowded]
 }
 
 /** The cores nearest to the chosen one that fell out. */

@@ -39,8 +39,8 @@ export function planCoupled(duty: CoupledInductorDuty): Plan {
     const greater = one.rmsA >= other.rmsA ? one : other
     const [first, second] = duty.ratio === 1 ? [greater, greater] : [one, other]
     return [
-      { id: 'w1', name: 'L1', role: 'primary', side: 'primary', outputId: null, turns, ...first, powerW },
-      { id: 'w2', name: 'L2', role: 'secondary', side: 'secondary', outputId: null, turns: Math.max(1, Math.round(turns * duty.ratio)), ...second, powerW },
+      { id: 'w1', name: 'L1', role: 'primary', side: 'primary', outputId: null, partnerId: null, turns, ...first, powerW },
+      { id: 'w2', name: 'L2', role: 'secondary', side: 'secondary', outputId: null, partnerId: null, turns: Math.max(1, Math.round(turns * duty.ratio)), ...second, powerW },
     ]
   }
   return {

@@ -5,6 +5,15 @@ import type { Plan, WindingNeed } from './plan'
 import type { ProposalReason } from './reasons'
 import { chooseTurns, largestLoads, sizeFlyback } from './sizing'
 
+/** Above this the secondaries' peak currents and the voltage of the switch rise steeply. Source: common practice. */
+const HIGH_DUTY_RATIO = 0.7
+
+function dutyRatioFindings({ reflectedVoltageV }: FlybackDuty, dutyRatio: number): Finding[] {
+  if (dutyRatio <= HIGH_DUTY_RATIO) return []
+  const path = `requirement.duty.${reflectedVoltageV === null ? 'maximumDutyRatio' : 'reflectedVoltageV'}`
+  return [{ code: 'duty-ratio-high', severity: 'warning', path, values: { dutyRatio, usual: HIGH_DUTY_RATIO } }]
+}
+
 /** Error of an output's voltage by whole turns that is worth saying. */
 const WORTH_SAYING = { main: 0.01, auxiliary: 0.08 }
 
@@ -18,7 +27,7 @@ export function planFlyback(duty: FlybackDuty): Plan {
     onMains: duty.supply.kind === 'mains',
     worstCurrentA: sizing.worstCurrent,
     windings: (least) => windingNeeds(duty, sizing, least),
-    findings: sizing.findings,
+    findings: [...sizing.findings, ...dutyRatioFindings(duty, sizing.dutyRatio)],
     reasons: sizingReasons(duty, sizing),
   }
 }
@@ -28,18 +37,27 @@ function windingNeeds(duty: FlybackDuty, sizing: ReturnType<typeof sizeFlyback>,
   const loads = largestLoads(duty, turns, sizing)
   const names = outputNames(duty)
   return [
-    { id: 'w1', name: 'P', role: 'primary', side: 'primary', outputId: null, turns: turns.primary, ...loads[0]!, powerW: outputPowerW(duty) },
+    { id: 'w1', name: 'P', role: 'primary', side: 'primary', outputId: null, partnerId: null, turns: turns.primary, ...loads[0]!, powerW: outputPowerW(duty) },
     ...duty.outputs.map((output, index): WindingNeed => ({
-      id: `w${index + 2}`,
+      id: outputWindingId(index),
       name: names[index]!,
       role: output.role === 'auxiliary' ? 'auxiliary' : 'secondary',
       side: output.side,
       outputId: output.id,
+      partnerId: partnerId(duty, index),
       turns: turns.outputs.get(output.id)!,
       ...loads[index + 1]!,
       powerW: Math.abs(output.voltageV) * output.fullLoadCurrentA,
     })),
   ]
+}
+
+const outputWindingId = (index: number) => `w${index + 2}`
+
+function partnerId({ outputs }: FlybackDuty, index: number): string | null {
+  const own = outputs[index]!
+  const partner = outputs.findIndex(({ voltageV, side }) => voltageV === -own.voltageV && side === own.side)
+  return partner < 0 ? null : outputWindingId(partner)
 }
 
 /** `S1`, `S2` … for the outputs and `AUX` for a single auxiliary one. */

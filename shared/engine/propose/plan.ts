@@ -11,6 +11,8 @@ export interface WindingNeed {
   role: 'primary' | 'secondary' | 'auxiliary'
   side: Side
   outputId: string | null
+  /** The winding of the equal and opposite output, e.g. of −15 V for +15 V. */
+  partnerId: string | null
   turns: number
   rmsA: number
   /** Alternating over total rms current: where it is small, skin depth limits the wire little. */

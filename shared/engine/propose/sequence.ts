@@ -1,9 +1,9 @@
-import { mostTurnsPerLayer } from '../build'
 import { overallDiameterMm, referenceTo } from '../evaluate/lookup'
 import type { LibraryIndex } from '../evaluate/lookup'
 import type { SleeveRow, TapeRow } from '../library'
 import type { LeadSleeve, MarginStep, SequenceStep, TapeStep, WindingStep } from '../specification'
 import type { Design, PlannedWinding } from './design'
+import { evenLayers, layersOf } from './layer-fit'
 import type { WindingPins } from './pins'
 import { PROPOSED } from './stated'
 
@@ -46,16 +46,17 @@ export function planSequence(input: SequenceInput): SequenceStep[] {
 function groups({ windings, interleaved }: Design): Group[] {
   const primary = windings.find(({ role }) => role === 'primary')!
   const own = windings.filter(({ side, role }) => side === 'primary' && role !== 'primary')
-  const others = windings.filter(({ side, role }) => side !== 'primary' && role !== 'primary').sort((a, b) => b.powerW - a.powerW)
+  const others = besidePartners(windings.filter(({ side, role }) => side !== 'primary' && role !== 'primary').sort((a, b) => b.powerW - a.powerW))
   const whole = (planned: PlannedWinding) => ({ planned, part: 'whole' as const })
   const secondary: Group[] = others.length > 0 ? [{ side: 'other', windings: others.map(whole) }] : []
-  if (!interleaved) return [{ side: 'primary', windings: [whole(primary), ...own.map(whole)] }, ...secondary]
-  return [
-    { side: 'primary', windings: [{ planned: primary, part: 'first-half' }] },
-    ...secondary,
-    { side: 'primary', windings: [{ planned: primary, part: 'second-half' }, ...own.map(whole)] },
-  ]
+  // The primary side's other windings lie beside the strongest secondary, whose voltage they follow.
+  const inner: Group = { side: 'primary', windings: [{ planned: primary, part: interleaved ? 'first-half' : 'whole' }, ...own.map(whole)] }
+  return [inner, ...secondary, ...(interleaved ? [{ side: 'primary' as const, windings: [{ planned: primary, part: 'second-half' as const }] }] : [])]
 }
+
+/** Each winding followed by that of the equal and opposite output: in neighbouring layers the two track each other best. */
+const besidePartners = (windings: readonly PlannedWinding[]): PlannedWinding[] =>
+  windings.reduce<PlannedWinding[]>((placed, winding) => (placed.includes(winding) ? placed : [...placed, winding, ...windings.filter((other) => other.id === winding.partnerId && !placed.includes(other))]), [])
 
 const tapeStep = (tape: TapeRow, layers: number, purpose: TapeStep['purpose']): TapeStep => ({ ...row, id: '', kind: 'tape', tape: referenceTo(tape), layers, widthMm: null, purpose })
 
@@ -70,8 +71,9 @@ function windingStep({ design, pins, index, tape }: SequenceInput, planned: Plan
   const wire = index.find('wire', planned.wire.wire)!
   const overallMm = overallDiameterMm(wire, planned.wire.insulation)!
   const marginMm = design.method === 'margin-tape' ? design.marginMm : 0
-  const most = Math.max(1, mostTurnsPerLayer(design.former.windingWidthMm - 2 * marginMm, overallMm * planned.wire.parallel))
-  const layers = Math.ceil(turns / most)
+  const availableMm = design.former.windingWidthMm - 2 * marginMm
+  const bundleMm = overallMm * planned.wire.parallel
+  const { layers, most } = layersOf(turns, availableMm, bundleMm)
   const own = planned.side === 'primary' ? 'left' : 'right'
   const far = own === 'left' ? 'right' : 'left'
   // An odd number of layers ends at the far flange, from where the lead returns to its row of pins.
@@ -87,7 +89,7 @@ function windingStep({ design, pins, index, tape }: SequenceInput, planned: Plan
     section: 1,
     direction: 'clockwise',
     lay: turns % most === 0 ? 'close-wound' : 'spread',
-    layers: null,
+    layers: evenLayers(turns, availableMm, bundleMm),
     marginLeftMm: marginMm,
     marginRightMm: marginMm,
     // Between the ends of two layers the mains side has more voltage than enamel should bear for good.

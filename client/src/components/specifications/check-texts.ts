@@ -82,6 +82,7 @@ export const CHECK_TEXTS: Readonly<Record<string, string>> = {
 type Values = Finding['values']
 const named = (values: Values, key: string, otherwise = '') => String(values[key] ?? otherwise)
 const amount = (values: Values, key: string, base: string) => formatEngineering(Number(values[key]), base, { significant: 3 })
+const percent = (values: Values, key: string) => formatQuantity(Number(values[key]), shownUnit('%'), { significant: 3 })
 const millimetres = (values: Values, key: string) => formatQuantity(Number(values[key]), shownUnit('mm'), { significant: 3 })
 
 /** What the engine found about a document or a proposal. */
@@ -133,10 +134,17 @@ export const FINDING_TEXTS: Readonly<Record<FindingCode, (values: Values) => str
   'boundary-missing': () => 'A boundary is missing.',
   'no-core-fits': (v) => `No core of the library fits${v.reason ? `; the nearest fails by ${rejectionWord(v.reason)}` : ''}. Allow more height, more loss or another insulation.`,
   'ratio-compromise': (v) => `Whole turns are a compromise${v.output ? ` for ${named(v, 'output')}` : ''}.`,
-  'too-few-pins': () => 'The former has too few pins.',
+  'too-few-pins': (v) => tooFewPins(v),
   'current-limit-assumed': (v) => `No current limit is stated; ${amount(v, 'assumedA', 'A')} is assumed.`,
-  'no-suitable-wire': (v) => `The library has no suitable wire${v.winding ? ` for ${named(v, 'winding')}` : ''}.`,
+  'no-suitable-wire': (v) => `The library has no suitable wire${v.winding ? ` for ${named(v, 'winding')}` : ''}${v.wire ? `; ${named(v, 'parallel')} × ${named(v, 'wire')} only carries the current` : ''}.`,
+  'duty-ratio-high': (v) => `A duty ratio of ${percent(v, 'dutyRatio')} is high: above ${percent(v, 'usual')} peak currents and the voltage of the switch rise steeply.`,
   'material-fit-out-of-range': () => 'The frequency lies outside the material’s loss data; another material may suit better.',
+}
+
+function tooFewPins(v: Finding['values']): string {
+  if (v.currentA !== undefined) return `${named(v, 'winding', 'A winding')} carries ${amount(v, 'currentA', 'A')}, and a pin of this former ${amount(v, 'limitA', 'A')}: share its ends between two pins, or take flying leads.`
+  if (v.wires !== undefined) return `${named(v, 'winding', 'A winding')} brings ${named(v, 'wires')} wires to one pin, where ${named(v, 'usual')} are usual.`
+  return 'The former has too few pins.'
 }
 
 const REJECTION_WORDS: Readonly<Record<Rejection, string>> = {
