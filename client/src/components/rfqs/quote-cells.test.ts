@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest'
-import { amountText, unitPriceAt } from './quote-cells'
+import { exampleQuote, exampleRfq } from '../../../../tests/support/rfq-example'
+import { amountText, breaksAsWritten, rowsOf, standing, unitPriceAt } from './quote-cells'
 
 const line = {
   priceBreaks: [
@@ -24,5 +25,33 @@ describe('amountText', () => {
     expect(amountText(null, 'EUR')).toBe('not quoted')
     expect(amountText('0.000000', 'EUR')).toBe('included')
     expect(amountText('3500.000000', 'EUR')).toContain('EUR')
+  })
+})
+
+describe('rowsOf', () => {
+  const [asked] = exampleRfq().lines
+  const cell = (label: RegExp, ...quotes: Parameters<typeof rowsOf>[1][number][]) => rowsOf(asked!, quotes).find((row) => label.test(row.label))?.cells
+
+  it('gives the price of one piece whatever unit it was written for, and says where there is none', () => {
+    const quote = exampleQuote()
+    expect(cell(/^Unit price at 500\s/, quote)).toEqual([['not quoted']])
+    expect(cell(/^Unit price at 5000\s/, quote)).toEqual([['1.09 USD'.replace(' ', '\u00a0')]])
+    expect(breaksAsWritten(quote.lines[0]!, 'USD')[1]).toMatch(/^from 5000\spcs: 109\.00\sUSD per 100$/)
+  })
+
+  it('adds the quantity that is compared where it is no price break', () => {
+    expect(cell(/^Unit price at 2000\spcs, compared here$/, exampleQuote())).toEqual([[expect.stringMatching(/^1\.185\sUSD$/)]])
+  })
+
+  it('says not quoted all the way down where a vendor left the part out', () => {
+    const without = exampleQuote({ id: 'other', lines: [] })
+    const rows = rowsOf(asked!, [without])
+    expect(rows.length).toBeGreaterThan(9)
+    expect(rows.flatMap(({ cells }) => cells.flat()).every((text) => text === 'not quoted')).toBe(true)
+  })
+
+  it('compares the revision that counts and no earlier or withdrawn one', () => {
+    const quotes = [exampleQuote({ id: '1', state: 'superseded' }), exampleQuote({ id: '2', revision: 2 }), exampleQuote({ id: '3', state: 'withdrawn' })]
+    expect(standing(quotes).map(({ id }) => id)).toEqual(['2'])
   })
 })
