@@ -196,12 +196,12 @@ describe('a quotation', () => {
   it('can only be read after the due time, which the page notices by itself', async () => {
     const rfq = await buildIssuedRfq(test, world)
     await buildQuote(test, vendor, rfq.id)
-    const untilDue = (Date.parse(rfq.dueAt) - Date.now()) / 1000
-    await test.database.setClock({ seconds: Math.floor(untilDue - 12) })
     const page = await enter()
+    const untilDue = (Date.parse(rfq.dueAt) - Date.now()) / 1000
+    await test.database.setClock({ seconds: Math.floor(untilDue - 20) })
     await openEnquiry(page, rfq)
     await page.getByRole('button', { name: 'Check and submit revision 2' }).waitFor()
-    await page.getByText('The due time has passed.').waitFor({ timeout: 30_000 })
+    await page.getByText('The due time has passed.').waitFor({ timeout: 60_000 })
     expect(await page.getByRole('button', { name: /submit|Withdraw/ }).count()).toBe(0)
     await page.getByText('What revision 1 says').click()
     await sound(page, 'closed')
