@@ -102,7 +102,7 @@ export const invitationSchema = z.object({
   noBidText: z.string(),
   seenAt: momentSchema.nullable(),
   termsAcceptedAt: momentSchema.nullable(),
-  /** Mails of this invitation that could not be delivered. */
+  /** Mails of the company to this vendor's people that could not be delivered. */
   undeliverable: z.int(),
 })
 
