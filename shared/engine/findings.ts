@@ -57,6 +57,7 @@ export type CompositionFindingCode =
   // the proposal
   | 'no-core-fits'
   | 'duty-ratio-high'
+  | 'mains-without-protection'
   | 'ratio-compromise'
   | 'too-few-pins'
   | 'current-limit-assumed'

@@ -158,6 +158,14 @@ describe('the order of windings', () => {
   })
 })
 
+describe('a part on the mains', () => {
+  it('that is to have functional insulation is proposed with an error', () => {
+    const codes = (sheet: RequirementSheet) => propose(sheet, library).findings.filter(({ severity }) => severity === 'error').map(({ code }) => code)
+    expect(codes({ ...HARBOUR_SUPPLY, insulationMethod: 'functional' })).toContain('mains-without-protection')
+    expect(codes(HARBOUR_SUPPLY)).toEqual([])
+  })
+})
+
 describe('a duty ratio that is hardly meant', () => {
   it('is proposed with a warning', () => {
     const { findings } = propose(withDuty(BUOY_SUPPLY, { maximumDutyRatio: 0.95 }), library)

@@ -53,7 +53,7 @@ function withoutSolution(requirement: RequirementSheet, work: () => Proposal): P
 function proposed(requirement: RequirementSheet, library: Library, wishes: ProposalPreferences): Proposal {
   const plan = planOf(requirement)
   const choice = chooseMaterial(library, plan.frequencyHz, wishes.materialId)
-  const findings = [...plan.findings, ...choice.findings]
+  const findings = [...plan.findings, ...protectionFindings(requirement, plan.onMains), ...choice.findings]
   if (!choice.material || library.tapes.length === 0) return blankProposal(requirement, findings)
 
   const result = searchCore({ requirement, plan, material: choice.material, library, index: indexLibrary(library), preferences: wishes })
@@ -68,6 +68,10 @@ function proposed(requirement: RequirementSheet, library: Library, wishes: Propo
     reasons: [...plan.reasons, ...choice.reasons, ...choiceReasons(result.chosen, result)],
   }
 }
+
+/** Functional insulation protects nobody: on the mains it suits only a part whose outputs nobody can touch. */
+const protectionFindings = ({ insulationMethod }: RequirementSheet, onMains: boolean): Finding[] =>
+  onMains && insulationMethod === 'functional' ? [{ code: 'mains-without-protection', severity: 'error', path: 'requirement.insulationMethod', values: {} }] : []
 
 const blankProposal = (requirement: RequirementSheet, findings: Finding[]): Proposal => ({ document: { specification: blankSpecification(), requirement }, findings, reasons: [] })
 

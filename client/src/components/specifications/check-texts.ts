@@ -137,6 +137,7 @@ export const FINDING_TEXTS: Readonly<Record<FindingCode, (values: Values) => str
   'too-few-pins': (v) => tooFewPins(v),
   'current-limit-assumed': (v) => `No current limit is stated; ${amount(v, 'assumedA', 'A')} is assumed.`,
   'no-suitable-wire': (v) => `The library has no suitable wire${v.winding ? ` for ${named(v, 'winding')}` : ''}${v.wire ? `; ${named(v, 'parallel')} × ${named(v, 'wire')} only carries the current` : ''}.`,
+  'mains-without-protection': () => 'The supply is the mains, and functional insulation protects nobody: choose margin tape or triple-insulated wire, unless no output can be touched.',
   'duty-ratio-high': (v) => `A duty ratio of ${percent(v, 'dutyRatio')} is high: above ${percent(v, 'usual')} peak currents and the voltage of the switch rise steeply.`,
   'material-fit-out-of-range': () => 'The frequency lies outside the material’s loss data; another material may suit better.',
 }
