@@ -1,24 +1,25 @@
 import type { Page } from 'playwright-core'
 import { expect } from 'vitest'
 import { chooseFrom, confirm, download, inDays, look, pathOf } from './hands'
-import type { Rfq } from './enquiry'
+import type { Enquiry } from './enquiry'
+import { TAMSEN } from './invitation'
 import type { Stage } from './stage'
 
 /** As asked for in the enquiry. */
 export const SAMPLES = 5
 
 /** The buyer asks one vendor whose quotation is opened; its people are told by mail. Returns the number of the request. */
-export async function askForSamples({ enter, cast, mails }: Stage, rfq: Rfq): Promise<{ number: string; link: string }> {
+export async function askForSamples({ enter, cast, mails }: Stage, rfq: Enquiry): Promise<{ number: string; link: string }> {
   const page = await enter(cast.buyer)
   await page.goto(`/samples/new?rfq=${rfq.id}`)
-  await chooseFrom(page, 'Vendor', cast.quillon.name)
+  await chooseFrom(page, 'Vendor', TAMSEN.name)
   await page.getByLabel('Needed by').fill(inDays(21))
   await look(page, '40-ask-for-samples')
   await page.getByRole('button', { name: 'Ask for samples' }).click()
   const heading = page.getByRole('heading', { level: 1, name: /Samples SR-/ })
   await heading.waitFor()
   const number = (await heading.innerText()).replace('Samples ', '')
-  const [mail] = await mails(cast.quillonTest.email, /asks you for samples/)
+  const [mail] = await mails(TAMSEN.email, /asks you for samples/)
   return { number, link: mail!.links[0]! }
 }
 
@@ -30,15 +31,15 @@ export function fillTemplate(template: string): string[][] {
     return middle ?? (low != null && high != null ? (low + high) / 2 : high != null ? high * 0.8 : low! * 1.2)
   }
   const reading = (column: number, part: number) => (head![column]!.includes('pass/fail') ? 'PASS' : comma(aim(column) * (1 + (part - 2) * 0.0015)))
-  return [head!, min!, nom!, max!, ...parts.map((_, part) => head!.map((__, column) => (column === 0 ? `Q${part + 1}` : reading(column, part))))]
+  return [head!, min!, nom!, max!, ...parts.map((_, part) => head!.map((__, column) => (column === 0 ? `T${part + 1}` : reading(column, part))))]
 }
 
 const comma = (value: number) => String(Number(value.toPrecision(5))).replace('.', ',')
 const written = (table: string[][]) => Buffer.from(table.map((line) => `${line.join(';')}\r\n`).join(''))
 
 /** A technician of the vendor fills the table, answers what cannot be read for certain, declares and sends. */
-export async function reportSamples({ enter, cast }: Stage, link: string): Promise<void> {
-  const page = await enter(cast.quillonTest)
+export async function reportSamples({ enter }: Stage, link: string): Promise<void> {
+  const page = await enter(TAMSEN)
   await page.goto(pathOf(link))
   await page.getByRole('heading', { name: 'Hand in a report' }).waitFor()
   await look(page, '41-vendor-sample-request', { phone: true })
@@ -61,7 +62,7 @@ async function answerAndDeclare(page: Page) {
   await page.getByText('Save the declaration first.').waitFor()
   await page.getByLabel('Measured on').fill(inDays(-1))
   await page.getByLabel('Temperature of the parts').fill('20,5')
-  await page.getByLabel('Measured by').fill('Tove Lind')
+  await page.getByLabel('Measured by').fill('Teun Smits')
   await page.getByLabel('Instruments').fill('LCR meter no. 4711, calibrated until 2027-03; open, short and load compensated')
   await page.getByLabel('As drawn').check()
   await page.getByRole('button', { name: 'Save the declaration' }).click()
@@ -87,5 +88,5 @@ export async function disposeOf({ enter, cast, mails }: Stage, number: string): 
   await page.getByLabel('Reason').fill('Every reading lies within the limits of the drawing.')
   await page.getByRole('button', { name: 'Decide' }).click()
   await page.getByText('Every reading lies within the limits of the drawing.').waitFor()
-  await mails(cast.quillonTest.email, /was decided about/)
+  await mails(TAMSEN.email, /was decided about/)
 }
