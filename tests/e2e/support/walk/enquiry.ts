@@ -86,7 +86,7 @@ export async function findItSealed({ enter, cast }: Stage, { id }: Enquiry): Pro
   expect(await page.getByRole('main').innerText()).not.toMatch(PRICES)
   expect(await page.getByRole('button', { name: 'Ask for the opening' }).count()).toBe(0)
   await page.goto(`/comparisons/${id}`)
-  await page.getByRole('heading', { level: 1 }).waitFor()
+  await page.getByText('The quotations are sealed until the enquiry is opened.').waitFor()
   expect(await page.getByRole('main').innerText()).not.toMatch(PRICES)
   await look(page, '30-comparison-sealed')
 }
