@@ -1,7 +1,7 @@
 import type { CoreRow, FormerRow } from '../library'
 import type { Candidate, SearchInput } from './candidate'
 import type { Rejection } from './reasons'
-import { isGood, tryCore } from './try-core'
+import { goodCandidate, tryCore } from './try-core'
 
 export type { Candidate, SearchInput } from './candidate'
 
@@ -26,17 +26,25 @@ export function searchCore(input: SearchInput): SearchResult {
   return { chosen: derived.chosen?.rejection === null ? derived.chosen : (sold.chosen ?? derived.chosen), rejected: [...sold.rejected, ...derived.rejected] }
 }
 
+/** The best core so far, how large a better one may be, and what fell out before it. */
+interface Best {
+  candidate: Candidate
+  mostVolumeMm3: number
+  rejected: SearchResult['rejected']
+}
+
 function trySizes(input: SearchInput, sizes: ReturnType<typeof candidateCores>): SearchResult {
   const rejected: SearchResult['rejected'] = []
   let fallback: (() => Candidate) | null = null
-  let best: { candidate: Candidate; mostVolumeMm3: number; rejected: SearchResult['rejected'] } | null = null
+  let best: Best | null = null
   for (const { core, former } of sizes) {
     if (best && core.effectiveVolumeMm3 > best.mostVolumeMm3) break
     const tried = tryCore(input, core, former)
-    if (isGood(tried)) {
-      const { candidate } = tried
+    const candidate = goodCandidate(tried)
+    if (candidate) {
       if (!best || candidate.compromises < best.candidate.compromises) {
-        best = { candidate, mostVolumeMm3: best?.mostVolumeMm3 ?? core.effectiveVolumeMm3 * WORTH_VOLUME, rejected: [...rejected] }
+        const mostVolumeMm3: number = best?.mostVolumeMm3 ?? core.effectiveVolumeMm3 * WORTH_VOLUME
+        best = { candidate, mostVolumeMm3, rejected: [...rejected] }
       }
       if (candidate.compromises === 0) break
       continue

@@ -40,7 +40,8 @@ export type Tried = { state: 'built'; candidate: Candidate } | Hopeless
 
 const hopeless = (rejection: Rejection, of: Pick<Hopeless, 'design' | 'show'> = { design: null, show: null }): Hopeless => ({ state: 'hopeless', rejection, ...of })
 
-export const isGood = (tried: Tried): tried is Extract<Tried, { state: 'built' }> => tried.state === 'built' && tried.candidate.rejection === null
+/** The candidate of a try that is no failure; null for one that is. */
+export const goodCandidate = (tried: Tried): Candidate | null => (tried.state === 'built' && tried.candidate.rejection === null ? tried.candidate : null)
 
 /** What earlier layouts on this core taught about its wires. */
 interface WireWishes {
@@ -60,8 +61,8 @@ export function tryCore(input: SearchInput, core: CoreRow, former: FormerRow): T
     rounds.push(tried)
     wishes = tried.state === 'built' ? betterWishes(tried.candidate, wishes) : tried.rejection === 'build' ? slimmerWishes(tried, wishes) : null
   }
-  const good = rounds.filter(isGood).sort((a, b) => a.candidate.compromises - b.candidate.compromises)
-  return good[0] ?? rounds[0]!
+  const good = rounds.flatMap((tried) => goodCandidate(tried) ?? []).sort((a, b) => a.compromises - b.compromises)
+  return good[0] ? { state: 'built', candidate: good[0] } : rounds[0]!
 }
 
 /** Litz for the windings that lose too much; wire for the skin depth at the temperature that the part settles at. */
@@ -92,7 +93,7 @@ function overTurns(input: SearchInput, { leastTurns, ...on }: CoreInput & { leas
     const tried = tryDesign(input, { ...on, needs: input.plan.windings(leastTurns * share) })
     // More turns help against a hot core and nothing else.
     const hot = tried.state === 'built' && (tried.candidate.rejection === 'temperature' || tried.candidate.rejection === 'flux')
-    if (last.state === 'hopeless' || !hot || isGood(tried)) last = tried
+    if (last.state === 'hopeless' || !hot || goodCandidate(tried)) last = tried
     if (!hot) return last
   }
   return last
