@@ -131,7 +131,8 @@ describe('Erickson and Maksimović, continuous flyback of 200 V to 20 V, 5 A', (
     const { magnetics, corners } = answer(withTurns(59, 9))
     const factor = magnetics.fringingFactor!
     expectRows([
-      { name: 'flux at 1.5 A, chosen 0.25 T', actual: magnetics.fluxWorstT, expected: 0.2488, relative: 2e-3 },
+      // With 9/59 full load itself takes a little more than the 1.5 A of the limit, and the worst flux follows it.
+      { name: 'flux at 1.5 A, chosen 0.25 T', actual: (magnetics.fluxWorstT! * 1.5) / magnetics.worstCurrentA!, expected: 0.2488, relative: 2e-3 },
       // 9/59 is 1.7 % above the ratio of the example, which the ripple follows.
       { name: 'half of the flux swing, stated 0.0415 T', actual: corners[0]!.fluxSwingT! / 2, expected: 0.0415, relative: 0.02 },
       // The source neglects core and fringing; the reluctance of both together is that of its gap of 0.44 mm at 58.7 turns.

@@ -45,7 +45,19 @@ function crossMatch({ document }: CheckInput): Outcome[] {
     if (unknown.length > 0) wrong.push(yesNo(false, `tests.${index}`, { row: row.symbol, terminal: unknown.join(', '), other: 'former.pins' }))
     if (row.windingId !== null && !windings.has(row.windingId)) wrong.push(yesNo(false, `tests.${index}.windingId`, { row: row.symbol, winding: row.windingId, other: 'windings' }))
   })
+  const drawn = specification.electrical.topology.value
+  const asked = document.requirement?.duty.topology ?? null
+  if (drawn !== null && asked !== null && drawn !== asked) wrong.push(yesNo(false, 'electrical.topology', { topology: drawn, other: 'requirement.duty' }))
   return wrong.length > 0 ? wrong : [yesNo(true, 'windings')]
+}
+
+/** Doubts that are no errors of their own but leave the calculation without its ground. */
+const STOPPING_FINDINGS: ReadonlySet<string> = new Set(['several-primary-windings', 'output-has-several-windings', 'value-out-of-range'])
+
+/** A document about which the calculation reports an error is not the part that was calculated. */
+function withoutErrors({ context }: CheckInput): Outcome[] {
+  const errors = context.findings.filter(({ code, severity }) => severity === 'error' || STOPPING_FINDINGS.has(code))
+  return errors.length > 0 ? errors.map(({ code, path }) => yesNo(false, path || 'windings', { reason: code })) : [yesNo(true, 'windings')]
 }
 
 /** Name under which test rows speak of the core. */
@@ -61,9 +73,15 @@ function toleranced({ document }: CheckInput): Outcome[] {
   return wrong.length > 0 ? wrong : [yesNo(true, 'tests')]
 }
 
-/** Statuses are part of every field; the check says how many are left to the vendor. */
+/** Statuses are part of every field; what builds the part is mandatory or the vendor's choice. */
 const statuses = ({ document }: CheckInput): Outcome[] => {
   const rows = [...document.specification.windings, ...document.specification.sequence, ...document.specification.tests]
+  const open = [
+    ...document.specification.windings.flatMap(({ status, name }, index) => (status === 'reference' ? [yesNo(false, `windings.${index}`, { winding: name })] : [])),
+    ...document.specification.sequence.flatMap((step, index) => (step.status === 'reference' && step.kind !== 'varnish' ? [yesNo(false, `sequence.${index}`)] : [])),
+  ]
+  // A construction for information only binds nobody.
+  if (open.length > 0) return open.map((outcome) => ({ ...outcome, severity: 'S' as const }))
   return [yesNo(true, 'windings', { rows: rows.length, vendorChoice: rows.filter(({ status }) => status === 'vendor-choice').length })]
 }
 
@@ -80,6 +98,7 @@ export const DOCUMENT_CHECKS: Readonly<Record<string, Check>> = {
   D05: { severity: 'M', source: 'common practice', run: equivalents },
   D07: { severity: 'S', source: 'common practice', run: crossMatch },
   D08: { severity: 'S', source: 'ISO 8015', run: toleranced },
+  D14: { severity: 'S', source: 'the calculation’s own findings', run: withoutErrors },
   D11: { severity: 'M', source: 'common practice', run: packing },
 }
 

@@ -1,5 +1,7 @@
 import { gappedCore, alFromGap } from '../evaluate/inductance'
+import { fullLoadPeakA } from '../evaluate/magnetics'
 import { inductanceSpread } from '../magnetics/gap'
+import type { SaturationLimit } from '../specification'
 import { atLeast, atMost, notCheckable, storesEnergy, yesNo } from './outcome'
 import type { Check, CheckInput, Outcome } from './outcome'
 
@@ -11,6 +13,9 @@ const WINDING_SPREAD = 0.01
 
 function worstFlux(input: CheckInput): Outcome[] {
   if (!storesEnergy(input)) return []
+  const stated = input.document.specification.electrical.inductance.value
+  // Without an upper limit the vendor may deliver any inductance, and no flux is the greatest.
+  if (stated && stated.upperTolerance === null) return [notCheckable('electrical.inductance')]
   const { fluxWorstT, saturationT, worstCurrentA, saturationTemperatureC } = input.evaluation.magnetics
   const share = Math.min(FLUX_LIMIT_SHARE, input.document.requirement?.fluxUtilisation ?? FLUX_LIMIT_SHARE)
   const values = { share, ...(worstCurrentA !== null ? { currentA: worstCurrentA } : {}), ...(saturationTemperatureC !== null ? { temperatureC: saturationTemperatureC } : {}) }
@@ -38,9 +43,11 @@ function gapAgrees({ document, context }: CheckInput): Outcome[] {
   const oneControls = gap.control.value === 'al' ? gap.lengthMm.status !== 'mandatory' : gap.control.value === 'length' ? gap.alH.status !== 'mandatory' : false
   const alH = gap.alH.value
   const fromGapH = alFromGap({ ...context, findings: [] })
-  const control: Outcome = yesNo(oneControls, 'core.gap.control', { control: gap.control.value ?? '' })
+  // The vendor grinds to what controls: two controls, or a controlling length that does not give A_L, make another part.
+  const control: Outcome = { ...yesNo(oneControls, 'core.gap.control', { control: gap.control.value ?? '' }), severity: 'S' }
+  const severity = gap.control.value === 'length' ? ('S' as const) : ('M' as const)
   if (alH === null || fromGapH === null) return [control]
-  return [control, atMost({ value: Math.abs(fromGapH - alH) / alH, limit: 0.1, unit: '1', path: 'core.gap.lengthMm', values: { alH, fromGapH } })]
+  return [control, atMost({ value: Math.abs(fromGapH - alH) / alH, limit: 0.1, unit: '1', path: 'core.gap.lengthMm', values: { alH, fromGapH }, severity })]
 }
 
 /** Spread of A_L that the core brings: as stated, or from the tolerance of the gap where that controls. */
@@ -119,17 +126,46 @@ function switchStress({ document, evaluation }: CheckInput): Outcome[] {
   return [atMost({ value: peaks.length > 0 ? Math.max(...peaks) : null, limit: 0.8 * duty.switchRatingV, unit: 'V', path: 'requirement.duty.switchRatingV' })]
 }
 
-function currentsGiven({ document }: CheckInput): Outcome[] {
-  return document.specification.windings
-    .map((winding, index) => ({ winding, index }))
-    .filter(({ winding }) => winding.role !== 'shield')
-    .map(({ winding, index }) => yesNo(winding.rmsCurrentA !== null && winding.peakCurrentA !== null && winding.dcCurrentA !== null, `windings.${index}.rmsCurrentA`, { winding: winding.name }))
+/** Pins, leads and copper are chosen by the stated currents: they are there, and the rms is no lower than calculated. */
+function currentsGiven({ document, evaluation }: CheckInput): Outcome[] {
+  return document.specification.windings.flatMap((winding, index) => {
+    if (winding.role === 'shield') return []
+    const path = `windings.${index}.rmsCurrentA`
+    const values = { winding: winding.name }
+    const complete = winding.rmsCurrentA !== null && winding.peakCurrentA !== null && winding.dcCurrentA !== null
+    const calculatedA = evaluation.windings[index]?.rmsA ?? null
+    return [complete && calculatedA !== null ? atLeast({ value: winding.rmsCurrentA, limit: calculatedA, unit: 'A', path, values }) : yesNo(complete, path, values)]
+  })
 }
 
 function biasSpecified(input: CheckInput): Outcome[] {
   if (!storesEnergy(input)) return []
   const { saturation } = input.document.specification.electrical
-  return [yesNo(saturation.length > 0, 'electrical.saturation', { points: saturation.length })]
+  const own = saturation.map((limit, index) => ({ limit, index })).filter(({ limit }) => limit.windingId === input.context.primary?.id)
+  const isHot = own.some(({ limit }) => limit.temperatureC > COLD_C)
+  return [yesNo(isHot, 'electrical.saturation', { points: saturation.length }), ...own.map(({ limit, index }) => biasCurrent(input, limit, index))]
+}
+
+/** Up to here a limit of inductance at bias is the one at room temperature, °C. */
+const COLD_C = 40
+
+/** Hot, where saturation is least, the limit holds at the worst current; cold at that of full load at least. */
+function biasCurrent({ evaluation }: CheckInput, { temperatureC, currentA, windingId }: SaturationLimit, index: number): Outcome {
+  const { worstCurrentA } = evaluation.magnetics
+  const limit = temperatureC > COLD_C ? worstCurrentA : (fullLoadPeakA(evaluation, windingId) ?? worstCurrentA)
+  return atLeast({ value: currentA, limit, unit: 'A', path: `electrical.saturation.${index}.currentA`, values: { temperatureC } })
+}
+
+/** The limit of the switch's current, at its lower tolerance, lets full load through at the least input. */
+function limitAboveLoad({ document, evaluation, context }: CheckInput): Outcome[] {
+  const duty = document.requirement?.duty
+  const corner = evaluation.corners.find(({ name }) => name === 'minimum-input')
+  if (!duty?.currentLimit || !corner) return []
+  const { nominalA, tolerance } = duty.currentLimit
+  // The switch of a coupled inductor carries both windings' currents, which peak together.
+  const carried = duty.topology === 'coupled-inductor' ? corner.windings : corner.windings.filter(({ windingId }) => windingId === context.primary?.id)
+  const peakA = carried.reduce((sum, winding) => sum + winding.peakA, 0)
+  return [atLeast({ value: nominalA * (1 - tolerance), limit: peakA, unit: 'A', path: 'requirement.duty.currentLimit' })]
 }
 
 function leakageFeasible({ document, evaluation }: CheckInput): Outcome[] {
@@ -169,6 +205,7 @@ export const ELECTRICAL_CHECKS: Readonly<Record<string, Check>> = {
   E16: { severity: 'M', source: '80 % of the rated voltage: common practice', run: switchStress },
   E17: { severity: 'M', source: 'common practice', run: currentsGiven },
   E18: { severity: 'S', source: 'IEC 62024-2; common practice', run: biasSpecified },
+  E35: { severity: 'S', source: 'the converter delivers full load before its limit acts: common practice', run: limitAboveLoad },
   E20: { severity: 'M', source: 'Snelling, Soft Ferrites, ch. 11; 30 % over the estimate', run: leakageFeasible },
   E31: { severity: 'M', source: 'range of the material', run: materialFrequency },
   E33: { severity: 'M', source: 'IEC 60205: the least area is used', run: leastArea },

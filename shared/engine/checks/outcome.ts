@@ -67,8 +67,8 @@ export function marginOf({ state, value, limit }: Outcome): number | null {
   return state === 'met' ? distance : -distance
 }
 
-/** Parts that keep energy in their gap: saturation is their first limit. */
+/** Parts that keep energy in their gap, by the drawing or by the duty: saturation is their first limit. */
 export function storesEnergy({ document }: Pick<CheckInput, 'document'>): boolean {
-  const topology = document.specification.electrical.topology.value ?? document.requirement?.duty.topology
-  return topology === 'flyback' || topology === 'coupled-inductor' || topology === 'inductor'
+  const topologies = [document.specification.electrical.topology.value, document.requirement?.duty.topology]
+  return topologies.some((topology) => topology === 'flyback' || topology === 'coupled-inductor' || topology === 'inductor')
 }

@@ -67,10 +67,22 @@ const layerFill = (input: CheckInput): Outcome[] =>
   })
 
 const parallelWires = (input: CheckInput): Outcome[] =>
-  input.document.specification.windings.flatMap(({ wire, name }, index) => (wire.parallel > 1 ? [atMost({ value: wire.parallel, limit: 4, unit: '', path: `windings.${index}.wire.parallel`, values: { winding: name } })] : []))
+  input.document.specification.windings.flatMap(({ wire, name }, index) => (wire.parallel < 1 ? [{ ...yesNo(false, `windings.${index}.wire.parallel`, { winding: name }), severity: 'S' as const }] : wire.parallel > 1 ? [atMost({ value: wire.parallel, limit: 4, unit: '', path: `windings.${index}.wire.parallel`, values: { winding: name } })] : []))
 
 const marginHeight = ({ coil }: CheckInput): Outcome[] =>
   (coil?.margins ?? []).map(({ index, topMm, bottomMm, windingTopMm }) => ({ state: topMm >= windingTopMm - 1e-9 ? 'met' : 'not-met', value: topMm - bottomMm, limit: windingTopMm - bottomMm, unit: 'mm', path: `sequence.${index}.heightMm` }))
+
+/** What tape, adhesive and label stand over core and former at the least, mm. */
+const OVER_CORE_MM = 0.3
+
+/** The specified envelope, and never less than core and former with what stands over them. */
+function overallHeight({ document, context }: CheckInput): Outcome[] {
+  const limit = document.requirement?.maximumHeightMm ?? null
+  if (limit === null) return []
+  const stated = document.specification.former.envelope.value?.heightMm ?? null
+  const bare = context.former ? context.former.envelopeMm.height + OVER_CORE_MM : 0
+  return [atMost({ value: stated === null ? null : Math.max(stated, bare), limit, unit: 'mm', path: 'former.envelope' })]
+}
 
 export const WINDABILITY_CHECKS: Readonly<Record<string, Check>> = {
   W01: { severity: 'S', source: 'helix of a layer: geometry', run: layerWidth },
@@ -81,5 +93,6 @@ export const WINDABILITY_CHECKS: Readonly<Record<string, Check>> = {
   W06: { severity: 'M', source: 'common practice', run: lastLayer },
   W07: { severity: 'N', source: 'coupling: common practice', run: layerFill },
   W08: { severity: 'M', source: 'machine winding: common practice', run: parallelWires },
+  W25: { severity: 'S', source: 'core, former, tape and label over the board: geometry', run: overallHeight },
   W16: { severity: 'M', source: 'common practice', run: marginHeight },
 }

@@ -9,6 +9,7 @@ import type { RequiredDistance } from '../insulation/distances'
 import type { BoundaryEnd, InsulationBoundary, Side } from '../specification'
 import { attempt, explain, report } from './context'
 import type { Context } from './context'
+import { ratedMainsV } from './mains'
 import { providedInsulation, windingsAt } from './insulation-paths'
 import type { ProvidedInsulation } from './insulation-paths'
 import { boundaryVoltage } from './working-voltage'
@@ -33,7 +34,7 @@ function boundaryResult(context: Context, input: { boundary: InsulationBoundary;
   if (stress.rmsV === null || stress.peakV === null) report(context, 'working-voltage-not-known', 'warning', path, { boundary: boundary.name })
   const needs = requirements(context, boundary, stress, path)
   const provided = coil && context.former ? providedInsulation({ specification: context.specification, former: context.former, coil, boundary }) : null
-  const required = requiredValues(needs, boundary)
+  const required = requiredValues(needs, boundary, stress.peakV)
   const testVoltageVRms = boundary.test ? (boundary.test.kind === 'dc' ? boundary.test.voltageV / Math.SQRT2 : boundary.test.voltageV) : null
   explainBoundary(context, { index, boundary, stress, required, corners })
   return {
@@ -62,22 +63,28 @@ const larger = (calculated: number | null | undefined, stated: number | null): n
 
 // ---------------------------------------------------------------------------------------------
 
-const sideOf = (context: Context, end: BoundaryEnd): Side => {
+/** The side that an end of a boundary belongs to; the core that of its potential. */
+export const sideOf = (context: Pick<Context, 'specification'>, end: BoundaryEnd): Side => {
   if (end.kind === 'side') return end.side
   if (end.kind === 'core') return context.specification.core.potential.value?.side ?? 'floating'
   return windingsAt(context.specification, end)[0]?.side ?? 'floating'
 }
 
 /** Mains transients lie between the mains side and every other. */
-function crossesMains(context: Context, { between }: InsulationBoundary): boolean {
+export function crossesMains(context: Pick<Context, 'specification'>, { between }: InsulationBoundary): boolean {
   const [one, other] = between.map((end) => sideOf(context, end))
   return (one === 'primary') !== (other === 'primary')
 }
 
+/** The highest frequency that stresses a boundary, Hz: one stated at the boundary never lies below the switching frequency. */
+export function boundaryFrequencyHz({ specification, requirement }: Pick<Context, 'specification' | 'requirement'>, { frequencyHz }: InsulationBoundary): number {
+  return Math.max(frequencyHz ?? 0, specification.electrical.switchingFrequencyHz.value?.maximum ?? 0, requirement?.duty.switchingFrequencyHz ?? 0)
+}
+
 function requirements(context: Context, boundary: InsulationBoundary, { rmsV, peakV }: Stress, path: string): BoundaryRequirements | null {
-  const { insulation, electrical } = context.specification
+  const { insulation } = context.specification
   if (rmsV === null || peakV === null) return null
-  const mainsV = insulation.mainsVoltageV.value
+  const mainsV = ratedMainsV(context)
   const crossing = crossesMains(context, boundary)
   const impulse = mainsV !== null && crossing ? attempt(context, 'insulation.mainsVoltageV', () => ratedImpulseV({ lineToNeutralV: mainsV, overvoltageCategory: insulation.overvoltageCategory.value ?? 'II' })) : null
   return attempt(context, path, () =>
@@ -86,7 +93,7 @@ function requirements(context: Context, boundary: InsulationBoundary, { rmsV, pe
       insulation: boundary.insulation,
       workingVoltageRmsV: rmsV,
       recurringPeakV: peakV,
-      frequencyHz: boundary.frequencyHz ?? electrical.switchingFrequencyHz.value?.maximum ?? context.requirement?.duty.switchingFrequencyHz ?? 0,
+      frequencyHz: boundaryFrequencyHz(context, boundary),
       ratedImpulseV: impulse?.state === 'known' ? impulse.value : null,
       pollutionDegree: insulation.pollutionDegree.value ?? 2,
       materialGroup: insulation.materialGroup.value ?? context.former?.materialGroup ?? 'IIIb',
@@ -109,7 +116,7 @@ function requiredDistance(answer: Answer<RequiredDistance> | undefined): Sourced
   return { value: distanceMm, source: cite(citation), fromMemory: citation.basis === 'memory', reason: unchecked[0]?.reason ?? null }
 }
 
-function requiredValues(needs: BoundaryRequirements | null, { insulation }: InsulationBoundary): BoundaryResult['required'] {
+function requiredValues(needs: BoundaryRequirements | null, { insulation }: InsulationBoundary, peakV: number | null): BoundaryResult['required'] {
   const solid = needs?.throughInsulation
   const test = needs?.testVoltage
   const notSolid = absent(!needs ? 'working-voltage-not-known' : solid?.state === 'not-checkable' ? solid.reason : 'not-required')
@@ -120,7 +127,7 @@ function requiredValues(needs: BoundaryRequirements | null, { insulation }: Insu
     distanceThroughInsulationMm: solid?.state === 'known' ? sourced(solid.value.minimumThicknessMm, solid.value.citation) : notSolid,
     // Nothing is known about one layer alone, so the alternative in which any two of three withstand is taken.
     layers: solid?.state === 'known' ? sourced(layers, solid.value.citation) : notSolid,
-    testVoltageVRms: test?.state === 'known' ? testValue(test.value.acRmsV, test.value) : functionalTest(insulation, test?.state === 'not-checkable' ? test.reason : needs ? 'not-required' : 'working-voltage-not-known'),
+    testVoltageVRms: test?.state === 'known' ? testValue(test.value.acRmsV, test.value) : functionalTest(insulation, peakV, test?.state === 'not-checkable' ? test.reason : needs ? 'not-required' : 'working-voltage-not-known'),
   }
 }
 
@@ -133,8 +140,15 @@ function testValue(acRmsV: number, { contributions, governedBy }: { contribution
 /** Test voltage that finds damaged enamel between windings of one side, V rms. Source: common practice. */
 export const FUNCTIONAL_TEST_V_RMS = 500
 
-const functionalTest = (insulation: InsulationBoundary['insulation'], reason: string): SourcedValue =>
-  insulation === 'functional' ? { value: FUNCTIONAL_TEST_V_RMS, source: 'common practice for functional insulation', fromMemory: false, reason: null } : absent(reason)
+/** Peak of a withstand test over the recurring peak that the insulation bears for good. Source: IEC 62368-1, factor for basic insulation. */
+const TEST_OVER_RECURRING_PEAK = 1.3
+
+/** At least what finds damaged enamel, and never less than what the insulation bears in use. */
+function functionalTest(insulation: InsulationBoundary['insulation'], peakV: number | null, reason: string): SourcedValue {
+  if (insulation !== 'functional') return absent(reason)
+  const inUseV = (TEST_OVER_RECURRING_PEAK * (peakV ?? 0)) / Math.SQRT2
+  return { value: Math.max(FUNCTIONAL_TEST_V_RMS, inUseV), source: 'common practice for functional insulation', fromMemory: false, reason: null }
+}
 
 // ---------------------------------------------------------------------------------------------
 

@@ -23,6 +23,7 @@ import { leakageBetweenH, leakages } from './leakage'
 import { reportLibrary } from './library-findings'
 import { buildWire } from './lookup'
 import { magneticsResult } from './magnetics'
+import { mainsSupply, ratedMainsV } from './mains'
 import { heatBalance } from './thermal'
 import { voltageCorner } from './working-voltage'
 import type { VoltageCorners } from './working-voltage'
@@ -111,8 +112,8 @@ function cornersOf(context: Context, basis: InductanceBasis, coil: Coil | null):
 function voltageCorners(context: Context, basis: InductanceBasis | null, corners: readonly CornerState[]): VoltageCorners {
   const duty = context.requirement?.duty
   const peak = corners.map(voltageCorner(context))
-  if (duty?.topology !== 'flyback' || duty.supply.kind !== 'mains' || !basis) return { peak, rms: peak, onMains: false }
-  const ratedV = context.specification.insulation.mainsVoltageV.value ?? duty.supply.nominalV
+  const ratedV = ratedMainsV(context)
+  if (duty?.topology !== 'flyback' || !mainsSupply(context) || ratedV === null || !basis) return { peak, rms: peak, onMains: false }
   const rated = flybackCornerAt(context, duty, basis, ratedV * Math.SQRT2)
   return { peak, rms: rated ? [voltageCorner(context)(rated)] : peak, onMains: true }
 }

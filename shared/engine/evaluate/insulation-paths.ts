@@ -1,6 +1,6 @@
 import type { Coil, StepPlacement } from '../build'
 import type { FormerRow } from '../library'
-import type { BoundaryEnd, FormerSpecification, InsulationBoundary, Winding, WindingSpecification } from '../specification'
+import type { BoundaryEnd, InsulationBoundary, SequenceStep, Winding, WindingSpecification } from '../specification'
 
 /** What the build puts between the two ends of a boundary; null where it cannot be told. */
 export interface ProvidedInsulation {
@@ -35,6 +35,27 @@ export function windingsAt(specification: WindingSpecification, end: BoundaryEnd
   }
 }
 
+/** Margin that tape holds free beside a winding step: that of the margin steps directly before it, none without one. */
+function tapedMargins(sequence: readonly SequenceStep[], index: number): { leftMm: number; rightMm: number } {
+  const before: { leftMm: number; rightMm: number }[] = []
+  for (let position = index - 1; position >= 0; position -= 1) {
+    const step = sequence[position]!
+    if (step.kind !== 'margin') break
+    before.push(step)
+  }
+  const least = (side: 'leftMm' | 'rightMm') => (before.length > 0 ? Math.min(...before.map((step) => step[side])) : 0)
+  return { leftMm: least('leftMm'), rightMm: least('rightMm') }
+}
+
+/** The coil with the margins that tape holds: wire without margin tape beside it falls to the flange. */
+export const withTapedMargins = (coil: Coil, sequence: readonly SequenceStep[]): Coil => ({
+  ...coil,
+  placements: coil.placements.map((placement) => {
+    const { leftMm, rightMm } = tapedMargins(sequence, placement.index)
+    return { ...placement, marginLeftMm: Math.min(placement.marginLeftMm, leftMm), marginRightMm: Math.min(placement.marginRightMm, rightMm) }
+  }),
+})
+
 interface Path {
   lengthMm: number
   layers: number
@@ -50,7 +71,8 @@ export interface PathInput {
 }
 
 /** The weakest path of the build across a boundary: along the coil, and from pin to pin. */
-export function providedInsulation({ specification, former, coil, boundary }: PathInput): ProvidedInsulation {
+export function providedInsulation({ specification, former, coil: laidOut, boundary }: PathInput): ProvidedInsulation {
+  const coil = boundary.insulation === 'functional' ? laidOut : withTapedMargins(laidOut, specification.sequence)
   const [first, second] = boundary.between
   const one = windingsAt(specification, first)
   const other = windingsAt(specification, second)
@@ -62,7 +84,7 @@ export function providedInsulation({ specification, former, coil, boundary }: Pa
   if (laid.length === 0) return NOT_KNOWN
   const bare = laid.filter(([a, b]) => !insulates(a, functional) && !insulates(b, functional))
   const paths = bare.flatMap(([a, b]) => coilPaths(coil, former, a, b))
-  const pins = pinDistance(specification.former, former, one, other)
+  const pins = pinDistance(specification, former, one, other)
   const distances = [...paths, ...(pins ? [pins] : [])]
   const nearest = distances.reduce<Path | null>((least, path) => (least && least.lengthMm <= path.lengthMm ? least : path), null)
   const byInsulatedWire = bare.length === 0
@@ -123,7 +145,7 @@ function toCore({ former, coil }: Pick<PathInput, 'former' | 'coil'>, windings: 
   const laid = windings.filter(({ id }) => coil.windings.has(id))
   if (laid.length === 0) return NOT_KNOWN
   const bare = laid.filter((winding) => !insulates(winding, functional)).map(({ id }) => id)
-  if (bare.length === 0) return { ...NOT_KNOWN, known: true, byInsulatedWire: true, how: `${wireText(functional)}; stripped ends keep their distance by the pins` }
+  if (bare.length === 0) return { ...NOT_KNOWN, known: true, byInsulatedWire: true, how: `${wireText(functional)}; how far stripped ends and pins lie from the core is not held` }
   const paths = coil.placements.filter(({ windingId }) => bare.includes(windingId)).map((placement) => corePath(coil, former, placement, isOutermost(coil, placement)))
   const nearest = paths.reduce((least, path) => (least.lengthMm <= path.lengthMm ? least : path))
   return {
@@ -154,12 +176,20 @@ function corePath(coil: Coil, { windingHeightMm, tubeWallMm, flangeThicknessMm }
 
 // ---------------------------------------------------------------------------------------------
 
+/** Every terminal that windings come to: starts, finishes, and where their steps begin and end. */
+export function terminalNames({ sequence }: Pick<WindingSpecification, 'sequence'>, windings: readonly Winding[]): Set<string> {
+  const ids = new Set(windings.map(({ id }) => id))
+  const steps = sequence.flatMap((step) => (step.kind === 'winding' && ids.has(step.windingId) ? [step.startTerminal, step.finishTerminal] : step.kind === 'shield' && ids.has(step.windingId) ? [step.connectedTerminal] : []))
+  return new Set([...windings.flatMap(({ startTerminal, finishTerminal }) => [startTerminal, finishTerminal]), ...steps].filter((name) => name !== ''))
+}
+
 /** Least distance between the pins of two groups of windings, pin section taken off; null without positions. */
-export function pinDistance(specified: FormerSpecification, former: FormerRow, one: readonly Winding[], other: readonly Winding[]): Path | null {
+export function pinDistance(specification: WindingSpecification, former: FormerRow, one: readonly Winding[], other: readonly Winding[]): Path | null {
+  const specified = specification.former
   const pins = specified.pins.length > 0 ? specified.pins : former.pins
   const sizeMm = specified.pinSection.value?.sizeMm ?? former.pinSection.sizeMm
   const at = (windings: readonly Winding[]) => {
-    const terminals = new Set(windings.flatMap(({ startTerminal, finishTerminal }) => [startTerminal, finishTerminal]))
+    const terminals = terminalNames(specification, windings)
     return pins.filter(({ number }) => terminals.has(number))
   }
   const distances = at(one).flatMap((a) => at(other).filter(({ number }) => number !== a.number).map((b) => Math.hypot(a.xMm - b.xMm, a.yMm - b.yMm) - sizeMm))

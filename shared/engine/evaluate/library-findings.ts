@@ -1,7 +1,6 @@
-import type { LibraryRow } from '../library'
-import type { LibraryReference } from '../specification'
 import { report } from './context'
 import type { Context } from './context'
+import { rowUses, unverifiedFields } from './library-use'
 import { buildWire } from './lookup'
 
 /** What the library lacks for this document, and which of its rows nobody has verified. */
@@ -17,26 +16,16 @@ export function reportLibrary(context: Context): void {
     const wire = index.find('wire', winding.wire.wire)
     if (!wire) report(context, 'wire-not-in-library', 'error', path, { winding: winding.name, id: winding.wire.wire.id })
     else if (!buildWire(index, winding)) report(context, 'wire-overall-diameter-unknown', 'error', path, { winding: winding.name, wire: wire.name })
-    reportGeneric(context, wire, path)
   })
-  reportGeneric(context, core, 'core.core')
-  reportGeneric(context, former, 'former.former')
-  reportGeneric(context, material, 'core.material')
-  reportTapes(context)
+  reportUses(context)
 }
 
-function reportTapes(context: Context): void {
-  const seen = new Set<string>()
-  context.specification.sequence.forEach((step, position) => {
-    const reference: LibraryReference | null = step.kind === 'tape' || step.kind === 'margin' || step.kind === 'core-tape' ? step.tape : step.kind === 'winding' ? step.interlayerTape : null
-    if (!reference || seen.has(`${reference.id} ${reference.version}`)) return
-    seen.add(`${reference.id} ${reference.version}`)
-    reportGeneric(context, context.index.find('tape', reference), `sequence.${position}.tape`)
-  })
-}
-
-function reportGeneric(context: Context, row: LibraryRow | null, path: string): void {
-  if (!row) return
-  if (row.confidence === 'generic') report(context, 'generic-row-used', 'warning', path, { row: row.name, source: row.source })
-  else if (row.unverified.length > 0) report(context, 'generic-row-used', 'note', path, { row: row.name, unverified: row.unverified.join(', '), source: row.source })
+/** Rows that nobody's data sheet stands behind, and fields in use that no source gives. */
+function reportUses(context: Context): void {
+  for (const use of rowUses(context)) {
+    const { row, path } = use
+    const unverified = unverifiedFields(use).join(', ')
+    if (row.confidence === 'generic') report(context, 'generic-row-used', 'warning', path, { row: row.name, source: row.source })
+    else if (unverified !== '') report(context, 'generic-row-used', 'warning', path, { row: row.name, unverified, source: row.source })
+  }
 }

@@ -1,9 +1,11 @@
-import type { MagneticsResult } from '../evaluation'
+import type { Evaluation, MagneticsResult } from '../evaluation'
 import { peakFluxDensityT, saturationFluxDensityT } from '../magnetics/flux'
 import { flybackBoundaryInductanceH } from '../topologies/flyback-design'
+import { maximum } from '../waveforms/statistics'
 import { attempt, explain, positive, report } from './context'
 import type { Context } from './context'
 import type { CornerState } from './corner-result'
+import { flybackCornerAt } from './flyback-corners'
 import { gapOf, originOf } from './inductance'
 import type { InductanceBasis } from './inductance'
 
@@ -18,7 +20,7 @@ interface MagneticsInput {
 
 export function magneticsResult(context: Context, { basis, corners, temperatureC }: MagneticsInput): MagneticsResult {
   const gap = gapOf(context, basis)
-  const worst = basis ? worstFlux(context, basis) : null
+  const worst = basis ? worstFlux(context, basis, corners) : null
   const hotC = Math.max(LEAST_SATURATION_TEMPERATURE_C, temperatureC ?? 0)
   const saturationT = saturationOf(context, hotC)
   const fluxUtilisation = worst?.fluxT != null && saturationT !== null ? worst.fluxT / saturationT : null
@@ -60,8 +62,8 @@ interface WorstFlux {
  * The worst flux: greatest inductance at the greatest current the switch lets through, on the least area. The delay of
  * the limit adds V·t_d volt-seconds whatever the inductance, so one inductance is used for both parts.
  */
-function worstFlux(context: Context, basis: InductanceBasis): WorstFlux | null {
-  const worst = worstCurrent(context, basis)
+function worstFlux(context: Context, basis: InductanceBasis, corners: readonly CornerState[]): WorstFlux | null {
+  const worst = worstCurrent(context, basis, corners)
   if (!worst) {
     report(context, 'current-limit-not-stated', 'warning', 'requirement.duty.currentLimit')
     return null
@@ -86,9 +88,45 @@ interface WorstCurrent {
   inputs: { name: string; value: number | string; unit: string; origin: string }[]
 }
 
-function worstCurrent(context: Context, basis: InductanceBasis): WorstCurrent | null {
+/** Corners at full load: neither at light load nor in the overload of the current limit. */
+const FULL_LOAD: readonly string[] = ['minimum-input', 'nominal-input', 'maximum-input']
+
+/** Greatest peak current of a winding at full load, A; null where its corners are not known. */
+export function fullLoadPeakA({ corners }: Pick<Evaluation, 'corners'>, windingId: string): number | null {
+  const peaks = corners.filter(({ name }) => FULL_LOAD.includes(name)).flatMap(({ windings }) => windings.filter((winding) => winding.windingId === windingId).map(({ peakA }) => peakA))
+  return peaks.length > 0 ? Math.max(...peaks) : null
+}
+
+/** The greater of limit and full load: a limit below what the load takes limits nothing that is known. */
+function worstCurrent(context: Context, basis: InductanceBasis, corners: readonly CornerState[]): WorstCurrent | null {
+  if (!context.requirement) return statedWorstCurrent(context)
+  const limited = limitedCurrent(context, basis)
+  const loadA = limited ? magnetisingPeakA(context, basis, corners) : null
+  if (!limited || loadA === null || loadA <= limited.currentA) return limited
+  return { currentA: loadA, formula: 'Î at full load with L_min, above the current limit', inputs: [{ name: 'L_min', value: basis.minimumH, unit: 'H', origin: 'electrical.inductance, lower tolerance' }, ...limited.inputs] }
+}
+
+/** Peak of the magnetising current at full load, A, with the least inductance, where the ripple is greatest. */
+function magnetisingPeakA(context: Context, basis: InductanceBasis, corners: readonly CornerState[]): number | null {
   const duty = context.requirement?.duty
-  if (!duty) return statedWorstCurrent(context)
+  const silent = { ...context, findings: [], working: null }
+  const loaded = corners.filter(({ result }) => FULL_LOAD.includes(result.name))
+  const flyback = duty?.topology === 'flyback'
+  const states = flyback ? loaded.flatMap(({ result }) => flybackCornerAt(silent, duty, { ...basis, nominalH: basis.minimumH }, result.inputV) ?? []) : loaded
+  const peaks = states.map(({ waves }) =>
+    [...waves].filter(([id]) => !flyback || id === context.primary?.id).reduce((sum, [id, { currentA }]) => sum + maximum(currentA) * turnsShare(context, id), 0))
+  return peaks.length > 0 ? Math.max(...peaks) : null
+}
+
+/** A winding's turns over those of the first: its current magnetises the core by as much. */
+function turnsShare({ specification, primary }: Context, id: string): number {
+  const turns = specification.windings.find((winding) => winding.id === id)?.turns ?? 0
+  return primary && primary.turns > 0 ? turns / primary.turns : 0
+}
+
+function limitedCurrent(context: Context, basis: InductanceBasis): WorstCurrent | null {
+  const duty = context.requirement?.duty
+  if (!duty) return null
   const limit = duty.currentLimit
   if (!limit) return null
   const maximumV = duty.supply.kind === 'dc' ? duty.supply.maximumV : Math.SQRT2 * duty.supply.maximumV

@@ -108,14 +108,29 @@ function pairsOf(context: Context, boundary: InsulationBoundary, { corner, nodes
 function nodesAt(context: Context, end: BoundaryEnd, nodes: readonly Node[]): { node: Node; side: Side }[] {
   if (end.kind === 'core') {
     const side = context.specification.core.potential.value?.side ?? 'floating'
-    const first = nodes[0]
-    return first ? [{ node: { windingId: 'core', potentialV: steady(first.potentialV, 0), spikeV: 0 }, side }] : []
+    return coreNodes(context, side, nodes).map((node) => ({ node: { ...node, windingId: 'core' }, side }))
   }
   const windings = windingsAt(context.specification, end)
   return nodes.flatMap((one) => {
     const winding = windings.find(({ id }) => id === one.windingId)
     return winding ? [{ node: one, side: winding.side }] : []
   })
+}
+
+/**
+ * Potentials that the core may take: a floating one follows whatever of its side couples to it, one tied to a pin that
+ * of the winding which ends there; which of a winding's two ends is which the document does not say. The return of the
+ * side is always among them. Source: ferrite is treated as part of the circuit it is assigned to, practice of certification bodies.
+ */
+function coreNodes({ specification }: Context, side: Side, nodes: readonly Node[]): Node[] {
+  const first = nodes[0]
+  if (!first) return []
+  const potential = specification.core.potential.value
+  const pin = potential?.connection === 'pin' ? potential.pin : null
+  const own = specification.windings.filter((winding) => winding.side === side)
+  const tied = own.filter(({ startTerminal, finishTerminal }) => pin !== null && (startTerminal === pin || finishTerminal === pin))
+  const ids = new Set((tied.length > 0 ? tied : own).map(({ id }) => id))
+  return [{ windingId: 'core', potentialV: steady(first.potentialV, 0), spikeV: 0 }, ...nodes.filter(({ windingId }) => ids.has(windingId))]
 }
 
 function pairRms({ differenceV, offsetV }: Pair): number {
