@@ -24,7 +24,7 @@ export function specificationRoutes(ctx: Context): Router {
   handle(router, contract.submitDraft, ({ actor, params, body }) => asActor(ctx, actor, (tx) => submitDraft(tx, actor, params, body.version)))
   handle(router, contract.returnDraft, ({ actor, params, body }) => asActor(ctx, actor, (tx) => returnDraft(tx, actor, params, body.reason)))
   handle(router, contract.overrideCheck, ({ actor, params, body }) =>
-    asActor(ctx, actor, (tx) => overrideCheck(tx, actor, params, body.code, body.reason)),
+    asActor(ctx, actor, (tx) => overrideCheck(tx, actor, params, body)),
   )
   handle(router, contract.releaseRevision, ({ actor, params, body }) => releaseRevision(ctx, actor, params, body.version))
   handle(router, contract.withdrawRevision, ({ actor, params, body }) => asActor(ctx, actor, (tx) => withdrawRevision(tx, actor, params, body.reason)))

@@ -30,7 +30,7 @@ export const auditEventSchema = z.discriminatedUnion('type', [
   z.object({ type: z.literal('draft-created'), specificationId: idSchema, revisionId: idSchema }),
   z.object({ type: z.literal('draft-submitted'), specificationId: idSchema, revisionId: idSchema }),
   z.object({ type: z.literal('draft-returned'), specificationId: idSchema, revisionId: idSchema }),
-  z.object({ type: z.literal('check-overridden'), specificationId: idSchema, revisionId: idSchema, code: z.string() }),
+  z.object({ type: z.literal('check-overridden'), specificationId: idSchema, revisionId: idSchema, code: z.string(), path: z.string().optional() }),
   z.object({ type: z.literal('revision-withdrawn'), specificationId: idSchema, revisionId: idSchema }),
   z.object({
     type: z.literal('revision-released'),

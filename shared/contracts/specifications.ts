@@ -50,9 +50,11 @@ export const specificationSchema = z.object({
   revisions: z.array(revisionSummarySchema),
 })
 
-/** A stopped check that a second person let pass, with the reason. */
+/** A stopped check that a second person let pass at one place of the document, with the reason. */
 export const overrideSchema = z.object({
   code: z.string(),
+  /** Dotted path of the place; empty where it was let pass before places were told apart, which counts for none. */
+  path: z.string(),
   reason: z.string(),
   by: personNameSchema,
   at: momentSchema,
@@ -70,6 +72,9 @@ export const revisionSchema = z.object({
   /** Persons who changed this draft: none of them may release it. */
   editors: z.array(personNameSchema),
 })
+
+/** What one answer of a second person covers: one check at one place. The same check elsewhere stays open. */
+export const placeOfCheck = ({ code, path }: { code: string; path: string }): string => `${code} ${path}`
 
 export type RevisionSummary = z.infer<typeof revisionSummarySchema>
 export type ReleaseSummary = z.infer<typeof releaseSummarySchema>
@@ -164,10 +169,10 @@ export const returnDraft = defineEndpoint({
 export const overrideCheck = defineEndpoint({
   method: 'POST',
   path: '/api/specifications/:specificationId/revisions/:revisionId/overrides',
-  summary: 'Let a check that stops release pass, with a reason, as a person who did not work on the draft',
+  summary: 'Let a check that stops release pass at one place, with a reason, as a person who did not work on the draft',
   access: ['checker', 'quality'],
   params: revisionParams,
-  body: z.strictObject({ code: z.string().regex(/^[A-Z]\d{2}$/, 'A check has a letter and two digits.'), reason: requiredText('The reason', TEXT_LIMITS.note) }),
+  body: z.strictObject({ code: z.string().regex(/^[A-Z]\d{2}$/, 'A check has a letter and two digits.'), path: z.string().min(1, 'Name the place of the document that the check is about.').max(200), reason: requiredText('The reason', TEXT_LIMITS.note) }),
   response: revisionSchema,
 })
 

@@ -110,7 +110,7 @@ describe('releasing past the service', () => {
 describe('letting a check pass past the service', () => {
   it('is refused to an editor and in another’s name', async () => {
     const inCheck = await buildInCheck(test, both)
-    const insert = (by: string) => sql`INSERT INTO specification_overrides (revision_id, company_id, by_id, code, reason, submitted_at, at) VALUES (${inCheck.id}, ${own.buying.id}, ${by}, 'E01', 'x', app_now(), app_now())`
+    const insert = (by: string) => sql`INSERT INTO specification_overrides (revision_id, company_id, by_id, code, path, reason, submitted_at, at) VALUES (${inCheck.id}, ${own.buying.id}, ${by}, 'E01', 'core.material', 'x', app_now(), app_now())`
     await refused(both, insert(both.personId), '42501')
     await refused(own.checker, insert(own.quality.personId), '42501')
     await run(own.checker, insert(own.checker.personId))

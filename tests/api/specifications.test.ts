@@ -141,14 +141,26 @@ describe('checking', () => {
 
   it('lets a check pass once, by a second person', async () => {
     const inCheck = await buildInCheck(test, world.engineer)
-    const pass = (as: TestPerson) => request(test.app, contract.overrideCheck, { as: as.cookie, params: revisionParams(inCheck), body: { code: 'Q06', reason: 'Known from the earlier part.' } })
-    expect((await pass(world.quality).expect(200)).body.overrides).toMatchObject([{ code: 'Q06', by: { id: world.quality.personId } }])
+    const pass = (as: TestPerson) => request(test.app, contract.overrideCheck, { as: as.cookie, params: revisionParams(inCheck), body: { code: 'Q06', path: 'electrical.selfResonance', reason: 'Known from the earlier part.' } })
+    expect((await pass(world.quality).expect(200)).body.overrides).toMatchObject([{ code: 'Q06', path: 'electrical.selfResonance', by: { id: world.quality.personId } }])
     expect((await pass(world.checker).expect(409)).body.code).toBe('already-decided')
+  })
+
+  it('lets a check pass at one place only, and asks for that place', async () => {
+    const inCheck = await buildInCheck(test, world.engineer)
+    const pass = (body: object) => request(test.app, contract.overrideCheck, { as: world.quality.cookie, params: revisionParams(inCheck), body: body as { code: string; path: string; reason: string } })
+    expect((await pass({ code: 'L01', reason: 'Seen.' }).expect(400)).body.fields).toHaveProperty('path')
+    const tape = inCheck.document.specification.sequence.findIndex(({ kind }) => kind === 'tape')
+    await pass({ code: 'L01', path: `sequence.${tape}.tape`, reason: 'Compared with the roll on the bench.' }).expect(200)
+    // The former's figures are nobody's either, and nobody has answered for them.
+    expect((await release(inCheck).expect(409)).body.fields).toHaveProperty('L01')
+    await letRowsPass(test, await read(inCheck), world.checker, [`sequence.${tape}.tape`])
+    await release(inCheck).expect(200)
   })
 
   it('asks again about a check that was let pass before the draft was changed', async () => {
     const inCheck = await buildInCheck(test, world.engineer)
-    const pass = () => request(test.app, contract.overrideCheck, { as: world.checker.cookie, params: revisionParams(inCheck), body: { code: 'Q14', reason: 'Seen.' } })
+    const pass = () => request(test.app, contract.overrideCheck, { as: world.checker.cookie, params: revisionParams(inCheck), body: { code: 'Q14', path: 'tests', reason: 'Seen.' } })
     await pass().expect(200)
     const back = (await sendBack(inCheck).expect(200)).body
     const worse = changed(back.document, ({ specification }) => (specification.tests = []))

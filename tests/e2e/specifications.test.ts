@@ -5,6 +5,7 @@ import { buildDraft, buildInCheck, revisionParams } from '../support/build-speci
 import { launchChromium } from '../support/chromium'
 import { buildPerson, buildWorld, PASSWORD, type TestPerson } from '../support/factories'
 import { request, startTestApp, type TestApp } from '../support/test-app'
+import { letAllPass } from './support/let-pass'
 import { DESK_WIDTH, expectNoSeriousAxe, openAs, picture, serve } from './support/pictures'
 
 let test: TestApp
@@ -86,10 +87,7 @@ describe('from a duty to a released drawing', () => {
 
     const checker = await enter(world.checker)
     await checker.getByRole('link', { name: 'Check BM-T7001, P1' }).click()
-    await checker.getByRole('button', { name: 'Let L01 pass with a reason' }).click()
-    await checker.getByLabel('Why L01 may pass').fill('Tape and former compared with parts on the bench.')
-    await checker.getByRole('button', { name: 'Let pass', exact: true }).click()
-    await checker.getByText('Nothing stops release.').waitFor()
+    await letAllPass(checker, 'Compared with the part on the bench.')
     await checker.getByRole('button', { name: 'Release' }).click()
     await checker.getByRole('dialog').getByRole('button', { name: 'Release' }).click()
     await checker.getByRole('heading', { name: 'Seal' }).waitFor()
@@ -189,7 +187,7 @@ describe('checking', () => {
     await look(page, 'revision-release-stopped')
     await page.getByRole('dialog').getByRole('button', { name: 'Cancel' }).click()
 
-    await page.getByRole('button', { name: 'Let I01 pass with a reason' }).click()
+    await page.getByRole('button', { name: 'Let I01 pass at' }).click()
     await page.getByLabel('Why I01 may pass').fill('The edition is agreed with the laboratory.')
     await page.getByRole('button', { name: 'Let pass', exact: true }).click()
     await page.getByRole('heading', { name: 'Checks let pass' }).waitFor()

@@ -127,7 +127,7 @@ export const specificationReleases = pgTable(
   ],
 )
 
-/** A stopped check that a second person let pass; kept for good, with the reason. */
+/** A stopped check that a second person let pass at one place; kept for good, with the reason. */
 export const specificationOverrides = pgTable(
   'specification_overrides',
   {
@@ -138,6 +138,8 @@ export const specificationOverrides = pgTable(
       .notNull()
       .references(() => people.id),
     code: text('code').notNull(),
+    /** Dotted path of the place in the document; empty in rows from before places were told apart. */
+    path: text('path').notNull(),
     reason: text('reason').notNull(),
     /** When the revision was handed to this check: what is changed and handed in again is judged again. */
     submittedAt: timestamptz('submitted_at').notNull(),
@@ -149,7 +151,7 @@ export const specificationOverrides = pgTable(
       columns: [t.revisionId, t.companyId],
       foreignColumns: [specificationRevisions.id, specificationRevisions.companyId],
     }),
-    unique('specification_overrides_code_key').on(t.revisionId, t.code, t.submittedAt),
+    unique('specification_overrides_code_key').on(t.revisionId, t.code, t.path, t.submittedAt),
     index('specification_overrides_revision_idx').on(t.revisionId, t.companyId),
     index('specification_overrides_by_id_idx').on(t.byId),
   ],

@@ -36,21 +36,27 @@ export async function returnDraft(tx: Transaction, actor: Actor, key: DraftKey, 
   return presentRevision(tx, saved)
 }
 
+interface CheckAnswer {
+  code: string
+  path: string
+  reason: string
+}
+
 /**
- * A check that stops release passes, because a second person says why. Nothing is locked: should the revision move
- * meanwhile, row security refuses the entry, or the next check does not count it.
+ * A check that stops release passes at one place, because a second person says why. Nothing is locked: should the
+ * revision move meanwhile, row security refuses the entry, or the next check does not count it.
  */
-export async function overrideCheck(tx: Transaction, actor: Actor, key: DraftKey, code: string, reason: string): Promise<Revision> {
+export async function overrideCheck(tx: Transaction, actor: Actor, key: DraftKey, { code, path, reason }: CheckAnswer): Promise<Revision> {
   const row = inCheckFor(actor, await findRevision(tx, actor, key.specificationId, key.revisionId))
   try {
     await tx
       .insert(specificationOverrides)
-      .values({ revisionId: row.id, companyId: row.companyId, byId: actor.personId, code, reason, submittedAt: row.submittedAt!, at: await appNow(tx) })
+      .values({ revisionId: row.id, companyId: row.companyId, byId: actor.personId, code, path, reason, submittedAt: row.submittedAt!, at: await appNow(tx) })
   } catch (error) {
     if (!violates(error, 'specification_overrides_code_key')) throw error
-    throw new AppError('already-decided', `The check ${code} has been let pass already.`)
+    throw new AppError('already-decided', `The check ${code} has been let pass at this place already.`)
   }
-  await recordAudit(tx, actor, { type: 'check-overridden', specificationId: row.specificationId, revisionId: row.id, code })
+  await recordAudit(tx, actor, { type: 'check-overridden', specificationId: row.specificationId, revisionId: row.id, code, path })
   return presentRevision(tx, row)
 }
 

@@ -68,7 +68,7 @@ export async function presentRevision(tx: Transaction, row: RevisionRow): Promis
     specificationId: row.specificationId,
     version: row.version,
     document: readDocument(row.document),
-    overrides: overrides.map(({ code, reason, byId, at }) => ({ code, reason, by: personOf(names, byId), at: at.toISOString() })),
+    overrides: overrides.map(({ code, path, reason, byId, at }) => ({ code, path, reason, by: personOf(names, byId), at: at.toISOString() })),
     returnedReason: row.returnedReason,
     editors: row.editorIds.map((id) => personOf(names, id)),
   }

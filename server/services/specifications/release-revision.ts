@@ -6,7 +6,7 @@ import { queueMail } from '#server/mail/queue-mail'
 import { recordAudit } from '#server/services/audit/record-audit'
 import { referToFile } from '#server/services/files/store-file'
 import { libraryFor } from '#server/services/parts/library-for'
-import type { Revision } from '#shared/contracts/specifications'
+import { placeOfCheck, type Revision } from '#shared/contracts/specifications'
 import type { Library } from '#shared/engine/library'
 import type { ReleaseRecord, SpecificationDocument } from '#shared/engine/specification'
 import { nextReleaseLetter } from '#shared/workflow/revision-letters'
@@ -46,7 +46,7 @@ async function prepare(tx: Transaction, actor: Actor, key: DraftKey, version: nu
     row,
     document: readDocument(row.document),
     library: await libraryFor(tx, actor),
-    overridden: new Set(overrides.map(({ code }) => code)),
+    overridden: new Set(overrides.map(placeOfCheck)),
     release: {
       revision: nextReleaseLetter(last?.revision ?? null),
       issuedOn: await todayIn(tx, actor),

@@ -3,6 +3,7 @@ import { AppError } from '#server/errors'
 import { renderSpecificationPdf } from '#server/pdf/render-sheets'
 import { keepMadeFile, type StoredFile } from '#server/services/files/store-file'
 import { canonicalJson } from '#shared/canonical-json'
+import { placeOfCheck } from '#shared/contracts/specifications'
 import { drawSheets } from '#shared/drawing/sheets/index'
 import { unprintable } from '#shared/drawing/text-metrics'
 import type { CheckResult, Evaluation } from '#shared/engine/evaluation'
@@ -17,7 +18,7 @@ export interface ReleaseInput {
   document: SpecificationDocument
   library: Library
   release: ReleaseRecord
-  /** Codes of checks that a second person let pass. */
+  /** Checks that a second person let pass, each at its place. */
   overridden: ReadonlySet<string>
 }
 
@@ -76,9 +77,12 @@ function missingRows(rows: string[]): AppError {
   return new AppError('release-stopped', `The parts library does not hold what the document uses: ${rows.join('; ')}. Choose other parts.`)
 }
 
-/** What is not met stops release, and so does what could not be checked: it never counts as met. */
+/**
+ * What is not met stops release, and so does what could not be checked: it never counts as met. A check that was let
+ * pass at one place stops release at every other.
+ */
 export function openChecks(evaluation: Evaluation, overridden: ReadonlySet<string>): CheckResult[] {
-  return evaluation.checks.filter((check) => check.severity === 'S' && check.state !== 'met' && !overridden.has(check.code))
+  return evaluation.checks.filter((check) => check.severity === 'S' && check.state !== 'met' && !overridden.has(placeOfCheck(check)))
 }
 
 function refuseOpenChecks(evaluation: Evaluation, overridden: ReadonlySet<string>): void {

@@ -55,7 +55,7 @@ export const specifications: FeatureExpectations = {
   saveDraft: about(draft, ({ version, document }) => ({ body: { version, document } })),
   submitDraft: about(draft, ({ version }) => ({ body: { version } })),
   returnDraft: about(inCheck, () => ({ body: { reason } })),
-  overrideCheck: about(inCheck, () => ({ body: { code: 'Q06', reason } })),
+  overrideCheck: about(inCheck, () => ({ body: { code: 'Q06', path: 'electrical.selfResonance', reason } })),
   releaseRevision: about(checked, ({ version }) => ({ body: { version } })),
   // An engineer withdraws a draft; a checker only what was released.
   withdrawRevision: { ...about(draft, () => ({ body: { reason } })), status: { checker: 409 } },

@@ -1,6 +1,7 @@
 import type { Page } from 'playwright-core'
 import { expect } from 'vitest'
 import { pdfText } from '../../../support/pdf-tools'
+import { letAllPass } from '../let-pass'
 import { confirm, download, look } from './hands'
 import type { Stage } from './stage'
 
@@ -81,15 +82,7 @@ async function changeTurns(page: Page) {
 
 /** Everything that stops the release is answered for by the checker, in words that stay with the drawing. */
 async function letPass(page: Page) {
-  const stopped = page.getByText(/^Release is stopped by /)
-  const codes = (await stopped.innerText()).match(/[A-Z]\d+/g) ?? []
-  for (const code of codes) {
-    await page.getByRole('button', { name: `Let ${code} pass with a reason` }).click()
-    await page.getByLabel(`Why ${code} may pass`).fill(`Figures measured on the first series and kept with it (${code}).`)
-    await page.getByRole('button', { name: 'Let pass', exact: true }).click()
-    await stopped.filter({ hasText: code }).waitFor({ state: 'detached' })
-  }
-  await page.getByText('Nothing stops release.').waitFor()
+  await letAllPass(page, 'Figures measured on the first series and kept with it.')
 }
 
 /** Another person checks, answers for what a person has to answer for, and releases; the PDF says what was released. */

@@ -1,11 +1,13 @@
 import { describe, expect, it } from 'vitest'
+import { placeOfCheck } from '#shared/contracts/specifications'
 import type { CheckResult } from '#shared/engine/evaluation'
-import { flagsByPlace, flagsWithin, groupChecks, stoppingCodes } from './check-groups'
+import { flagsByPlace, flagsWithin, groupChecks, stoppingChecks, stoppingCodes } from './check-groups'
 
-const check = (code: string, severity: CheckResult['severity'], state: CheckResult['state']): CheckResult => ({ code, severity, state, value: null, limit: null, unit: '', margin: null, source: '', path: '', values: {} })
+const check = (code: string, severity: CheckResult['severity'], state: CheckResult['state']): CheckResult => ({ code, severity, state, value: null, limit: null, unit: '', margin: null, source: '', path: 'former.former', values: {} })
 
 const checks = [check('E01', 'S', 'not-met'), check('I04', 'S', 'not-checkable'), check('T01', 'M', 'not-met'), check('T03', 'M', 'not-checkable'), check('W07', 'N', 'not-met'), check('D01', 'S', 'met')]
-const codes = (overridden: string[] = []) => Object.fromEntries(groupChecks(checks, new Set(overridden)).map(({ key, results }) => [key, results.map(({ code }) => code)]))
+const at = (...codes: string[]) => new Set(codes.map((code) => placeOfCheck({ code, path: 'former.former' })))
+const codes = (overridden: string[] = []) => Object.fromEntries(groupChecks(checks, at(...overridden)).map(({ key, results }) => [key, results.map(({ code }) => code)]))
 
 describe('groupChecks', () => {
   it('puts every result into exactly one group', () => {
@@ -20,13 +22,19 @@ describe('groupChecks', () => {
 describe('stoppingCodes', () => {
   it('counts what could not be checked among what stops release', () => {
     expect(stoppingCodes(checks, new Set())).toEqual(['E01', 'I04'])
-    expect(stoppingCodes(checks, new Set(['E01']))).toEqual(['I04'])
+    expect(stoppingCodes(checks, at('E01'))).toEqual(['I04'])
+  })
+
+  it('lets a check pass only at the place that was answered for', () => {
+    const elsewhere = [...checks, { ...check('E01', 'S', 'not-met'), path: 'core.core' }]
+    expect(stoppingCodes(elsewhere, at('E01'))).toEqual(['I04', 'E01'])
+    expect(stoppingChecks(elsewhere, at('E01', 'I04')).map(({ path }) => path)).toEqual(['core.core'])
   })
 })
 
 describe('flags', () => {
-  const at = (code: string, path: string, state: CheckResult['state'] = 'not-met') => ({ ...check(code, 'S', state), path })
-  const flags = flagsByPlace([at('W01', 'sequence.1'), at('W01', 'sequence.1'), at('E14', 'sequence.1.turns'), at('E14', 'sequence.10.turns'), at('D01', 'title.title', 'met')])
+  const flag = (code: string, path: string, state: CheckResult['state'] = 'not-met') => ({ ...check(code, 'S', state), path })
+  const flags = flagsByPlace([flag('W01', 'sequence.1'), flag('W01', 'sequence.1'), flag('E14', 'sequence.1.turns'), flag('E14', 'sequence.10.turns'), flag('D01', 'title.title', 'met')])
 
   it('stand at the place that is not met, each code once', () => {
     expect(flags.get('sequence.1')).toEqual(['W01'])

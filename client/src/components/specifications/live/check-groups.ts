@@ -1,3 +1,4 @@
+import { placeOfCheck } from '#shared/contracts/specifications'
 import type { CheckResult } from '#shared/engine/evaluation'
 import { isWithin } from '../document-paths'
 
@@ -15,18 +16,22 @@ export function groupChecks(checks: readonly CheckResult[], overridden: Readonly
   const stopped = (check: CheckResult) => check.severity === 'S' && check.state !== 'met'
   const of = (key: CheckGroup['key'], title: string, belongs: (check: CheckResult) => boolean): CheckGroup => ({ key, title, results: checks.filter(belongs) })
   return [
-    of('stops', 'Stops release', (check) => stopped(check) && check.state === 'not-met' && !overridden.has(check.code)),
-    of('unknown', 'Could not be checked', (check) => check.state === 'not-checkable' && !(stopped(check) && overridden.has(check.code))),
+    of('stops', 'Stops release', (check) => stopped(check) && check.state === 'not-met' && !overridden.has(placeOfCheck(check))),
+    of('unknown', 'Could not be checked', (check) => check.state === 'not-checkable' && !(stopped(check) && overridden.has(placeOfCheck(check)))),
     of('answer', 'Wants an answer', (check) => check.severity === 'M' && check.state === 'not-met'),
     of('notes', 'For information', (check) => check.severity === 'N' && check.state === 'not-met'),
-    of('passed', 'Let pass with a reason', (check) => stopped(check) && overridden.has(check.code)),
+    of('passed', 'Let pass with a reason', (check) => stopped(check) && overridden.has(placeOfCheck(check))),
     of('met', 'Met', (check) => check.state === 'met'),
   ]
 }
 
+/** Results that stop release as things stand; a check let pass at one place stops it at every other. */
+export const stoppingChecks = (checks: readonly CheckResult[], overridden: ReadonlySet<string>): CheckResult[] =>
+  checks.filter((check) => check.severity === 'S' && check.state !== 'met' && !overridden.has(placeOfCheck(check)))
+
 /** Codes that stop release as things stand. */
 export function stoppingCodes(checks: readonly CheckResult[], overridden: ReadonlySet<string>): string[] {
-  return [...new Set(checks.filter(({ severity, state, code }) => severity === 'S' && state !== 'met' && !overridden.has(code)).map(({ code }) => code))]
+  return [...new Set(stoppingChecks(checks, overridden).map(({ code }) => code))]
 }
 
 /** Place → codes of the checks that are not met there and want something done. */
