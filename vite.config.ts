@@ -14,6 +14,8 @@ export default defineConfig({
   build: { outDir: folder('./dist/client'), emptyOutDir: true, chunkSizeWarningLimit: 700 },
   server: { proxy: { '/api': `http://127.0.0.1:${process.env.PORT ?? 3000}` } },
   test: {
+    // Most tests wait for PostgreSQL: one more worker than two processors keeps both busy.
+    maxWorkers: 3,
     projects: [
       {
         extends: true,
