@@ -170,8 +170,24 @@ export interface BoundaryResult {
     layers: number | null
     testVoltageVRms: number | null
     how: string
+    /** The weakest ways as they would be drawn; none where the coil is not laid. */
+    paths?: readonly InsulationPath[]
   }
   state: CheckState
+}
+
+/** In the winding window the coordinates of `Layout`, y above the window's height lying in the core; among the pins those of `Pin`. */
+export type PathPoint = readonly [xMm: number, yMm: number]
+
+/** The shortest way across one boundary, as a line from one conductor to the other. */
+export interface InsulationPath {
+  kind: 'clearance' | 'creepage' | 'through-insulation'
+  /** The winding window's cross-section, or the pins seen from above the board. */
+  plane: 'window' | 'pins'
+  /** What counts as its length; a part that conducts counts as no distance though the line runs along it. */
+  lengthMm: number
+  how: string
+  points: readonly PathPoint[]
 }
 
 export interface SourcedValue {

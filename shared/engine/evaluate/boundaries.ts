@@ -51,6 +51,7 @@ function boundaryResult(context: Context, input: { boundary: InsulationBoundary;
       layers: provided?.layers ?? null,
       testVoltageVRms,
       how: provided?.how ?? 'no coil layout',
+      paths: provided?.paths ?? [],
     },
     state: judge(required, provided, testVoltageVRms),
   }
@@ -166,7 +167,7 @@ export interface BoundaryStates {
   test: CheckState
 }
 
-export function boundaryStates(required: BoundaryResult['required'], provided: Omit<ProvidedInsulation, 'how'>, testVoltageVRms: number | null): BoundaryStates {
+export function boundaryStates(required: BoundaryResult['required'], provided: Omit<ProvidedInsulation, 'how' | 'paths'>, testVoltageVRms: number | null): BoundaryStates {
   const covered = provided.byInsulatedWire
   const thickness = compare(required.distanceThroughInsulationMm, provided.distanceThroughInsulationMm, covered)
   const layers = compare(required.layers, provided.layers, covered)

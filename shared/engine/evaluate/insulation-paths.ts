@@ -1,6 +1,9 @@
 import type { Coil, StepPlacement } from '../build'
+import type { InsulationPath } from '../evaluation'
 import type { FormerRow } from '../library'
 import type { BoundaryEnd, InsulationBoundary, SequenceStep, Winding, WindingSpecification } from '../specification'
+import { acrossTape, overFlange, shieldPlacements, shorter, toOuterLeg, viaConductor } from './path-geometry'
+import type { Path } from './path-geometry'
 
 /** What the build puts between the two ends of a boundary; null where it cannot be told. */
 export interface ProvidedInsulation {
@@ -13,6 +16,8 @@ export interface ProvidedInsulation {
   /** A boundary with no laid winding on one side is not judged. */
   known: boolean
   how: string
+  /** The weakest ways, for a drawing. */
+  paths: readonly InsulationPath[]
 }
 
 export const isInsulatedWire = ({ wire }: Winding): boolean => wire.insulation === 'triple-insulated' || wire.insulation === 'fully-insulated'
@@ -56,13 +61,6 @@ export const withTapedMargins = (coil: Coil, sequence: readonly SequenceStep[]):
   }),
 })
 
-interface Path {
-  lengthMm: number
-  layers: number
-  thicknessMm: number
-  how: string
-}
-
 export interface PathInput {
   specification: WindingSpecification
   former: FormerRow
@@ -70,108 +68,103 @@ export interface PathInput {
   boundary: InsulationBoundary
 }
 
-/** The weakest path of the build across a boundary: along the coil, and from pin to pin. */
+/** The weakest path of the build across a boundary: along the coil, by way of core or shield, and from pin to pin. */
 export function providedInsulation({ specification, former, coil: laidOut, boundary }: PathInput): ProvidedInsulation {
-  const coil = boundary.insulation === 'functional' ? laidOut : withTapedMargins(laidOut, specification.sequence)
+  const functional = boundary.insulation === 'functional'
+  const coil = functional ? laidOut : withTapedMargins(laidOut, specification.sequence)
+  const shields = shieldPlacements(coil, former, specification.sequence)
+  const laid: LaidCoil = { coil, former, shields, placements: [...coil.placements, ...shields], functional }
   const [first, second] = boundary.between
   const one = windingsAt(specification, first)
   const other = windingsAt(specification, second)
-  const functional = boundary.insulation === 'functional'
-  if (first.kind === 'core' || second.kind === 'core') return toCore({ former, coil }, first.kind === 'core' ? other : one, functional)
-
-  const pairs = one.flatMap((a) => other.filter(({ id }) => id !== a.id).map((b) => [a, b] as const))
-  const laid = pairs.filter(([a, b]) => coil.windings.has(a.id) && coil.windings.has(b.id))
-  if (laid.length === 0) return NOT_KNOWN
-  const bare = laid.filter(([a, b]) => !insulates(a, functional) && !insulates(b, functional))
-  const paths = bare.flatMap(([a, b]) => coilPaths(coil, former, a, b))
-  const pins = pinDistance(specification, former, one, other)
-  const distances = [...paths, ...(pins ? [pins] : [])]
-  const nearest = distances.reduce<Path | null>((least, path) => (least && least.lengthMm <= path.lengthMm ? least : path), null)
-  const byInsulatedWire = bare.length === 0
-  return {
-    clearanceMm: nearest?.lengthMm ?? null,
-    creepageMm: nearest?.lengthMm ?? null,
-    distanceThroughInsulationMm: paths.length > 0 ? Math.min(...paths.map(({ thicknessMm }) => thicknessMm)) : null,
-    layers: paths.length > 0 ? Math.min(...paths.map(({ layers }) => layers)) : null,
-    byInsulatedWire,
-    known: byInsulatedWire || paths.length > 0,
-    how: [byInsulatedWire ? wireText(functional) : null, nearest?.how ?? null].filter((part) => part !== null).join('; '),
-  }
+  if (first.kind === 'core' || second.kind === 'core') return toCore(laid, first.kind === 'core' ? other : one)
+  return betweenWindings(laid, { one, other, pins: pinDistance(specification, former, one, other) })
 }
 
-const NOT_KNOWN: ProvidedInsulation = { clearanceMm: null, creepageMm: null, distanceThroughInsulationMm: null, layers: null, byInsulatedWire: false, known: false, how: 'not laid in the coil' }
+const NOT_KNOWN: ProvidedInsulation = { clearanceMm: null, creepageMm: null, distanceThroughInsulationMm: null, layers: null, byInsulatedWire: false, known: false, how: 'not laid in the coil', paths: [] }
 
 const wireText = (functional: boolean) => (functional ? 'enamelled or insulated winding wire' : 'insulated winding wire')
 
-/** Paths between the neighbouring parts of two windings. */
-function coilPaths(coil: Coil, former: FormerRow, a: Winding, b: Winding): Path[] {
-  const of = (id: string) => coil.placements.filter(({ windingId }) => windingId === id)
-  return of(a.id).flatMap((one) => of(b.id).map((other) => (one.section === other.section ? acrossTape(coil, former, one, other) : overFlange(former, one, other))))
+/** The coil with everything in it that conducts. */
+interface LaidCoil {
+  coil: Coil
+  former: FormerRow
+  shields: readonly StepPlacement[]
+  /** Windings and shields. */
+  placements: readonly StepPlacement[]
+  functional: boolean
 }
 
-/** Round the end of the tapes between: along one margin to the flange, and back along the other. */
-function acrossTape(coil: Coil, former: FormerRow, one: StepPlacement, other: StepPlacement): Path {
-  const [inner, outer] = one.index < other.index ? [one, other] : [other, one]
-  const tapes = coil.tapes.filter(({ section, index }) => section === inner.section && index > inner.index && index < outer.index)
-  const covering = tapes.filter(({ fullWidth }) => fullWidth)
-  const thicknessMm = covering.reduce((sum, { topMm, bottomMm }) => sum + topMm - bottomMm, 0)
-  const layers = covering.reduce((sum, tape) => sum + tape.layers, 0)
-  if (layers > 0) {
-    const leftMm = inner.marginLeftMm + outer.marginLeftMm
-    const rightMm = inner.marginRightMm + outer.marginRightMm
-    return { lengthMm: Math.min(leftMm, rightMm) + thicknessMm, layers, thicknessMm, how: 'along the margins round the end of the tape' }
+const placementsOf = ({ placements }: LaidCoil, id: string) => placements.filter(({ windingId }) => windingId === id)
+const isLaid = (laid: LaidCoil, { id }: Winding) => placementsOf(laid, id).length > 0
+
+/** Wire in the coil that only its own covering would part from what lies beside it. */
+const isBare = (laid: LaidCoil, winding: Winding) => winding.role === 'shield' || !insulates(winding, laid.functional)
+
+function betweenWindings(laid: LaidCoil, { one, other, pins }: { one: readonly Winding[]; other: readonly Winding[]; pins: Path | null }): ProvidedInsulation {
+  const pairs = one.flatMap((a) => other.filter((b) => b.id !== a.id && isLaid(laid, a) && isLaid(laid, b)).map((b) => [a, b] as const))
+  if (pairs.length === 0) return NOT_KNOWN
+  const bare = pairs.filter(([a, b]) => isBare(laid, a) && isBare(laid, b))
+  const direct = bare.flatMap(([a, b]) => coilPaths(laid, a, b))
+  const around = bare.flatMap(([a, b]) => conductorPaths(laid, a, b))
+  const nearest = nearestOf([...direct, ...around, ...(pins ? [pins] : [])])
+  return {
+    ...lengths(nearest, direct),
+    byInsulatedWire: bare.length === 0,
+    known: bare.length === 0 || direct.length > 0,
+    how: [bare.length === 0 ? wireText(laid.functional) : null, nearest?.how ?? null].filter((part) => part !== null).join('; '),
   }
-  const narrow = tapes[0]
-  if (!narrow) return { lengthMm: 0, layers: 0, thicknessMm: 0, how: 'no tape between' }
-  const edges = [
-    { edgeMm: narrow.leftMm, margins: [inner.marginLeftMm, outer.marginLeftMm] },
-    { edgeMm: former.windingWidthMm - narrow.rightMm, margins: [inner.marginRightMm, outer.marginRightMm] },
-  ]
-  const tapeMm = narrow.topMm - narrow.bottomMm
-  const along = edges.map(({ edgeMm, margins }) => margins.reduce((sum, marginMm) => sum + Math.max(0, marginMm - edgeMm), 0) + tapeMm)
-  return { lengthMm: Math.min(...along), layers: narrow.layers, thicknessMm: tapeMm, how: 'round the end of a tape narrower than the former' }
 }
 
-function overFlange({ windingHeightMm, flangeThicknessMm }: FormerRow, one: StepPlacement, other: StepPlacement): Path {
-  const climbMm = (placement: StepPlacement) => Math.max(0, windingHeightMm - placement.topMm)
-  return { lengthMm: climbMm(one) + climbMm(other) + flangeThicknessMm, layers: 1, thicknessMm: flangeThicknessMm, how: 'over the flange between the sections' }
+const nearestOf = (paths: readonly Path[]): Path | null => paths.reduce<Path | null>((least, path) => (least ? shorter(least, path) : path), null)
+
+/** Distances of the nearest path, and the least solid insulation of those that cross it. */
+function lengths(nearest: Path | null, crossing: readonly Path[]): Pick<ProvidedInsulation, 'clearanceMm' | 'creepageMm' | 'distanceThroughInsulationMm' | 'layers' | 'paths'> {
+  const thinnest = crossing.reduce<Path | null>((least, path) => (least && least.thicknessMm <= path.thicknessMm ? least : path), null)
+  return {
+    clearanceMm: nearest?.lengthMm ?? null,
+    creepageMm: nearest?.lengthMm ?? null,
+    distanceThroughInsulationMm: thinnest?.thicknessMm ?? null,
+    layers: crossing.length > 0 ? Math.min(...crossing.map(({ layers }) => layers)) : null,
+    paths: [
+      // Tape and former leave no air beside the surface, so that clearance and creepage run the same way.
+      ...(nearest ? (['creepage', 'clearance'] as const).map((kind) => ({ kind, plane: nearest.plane, lengthMm: nearest.lengthMm, how: nearest.how, points: nearest.points })) : []),
+      ...(thinnest && thinnest.through.length > 0 ? [{ kind: 'through-insulation' as const, plane: thinnest.plane, lengthMm: thinnest.thicknessMm, how: 'through the insulation', points: thinnest.through }] : []),
+    ],
+  }
+}
+
+/** Paths between the neighbouring parts of two windings. */
+const coilPaths = (laid: LaidCoil, a: Winding, b: Winding): Path[] =>
+  placementsOf(laid, a.id).flatMap((one) => placementsOf(laid, b.id).map((other) => along(laid, one, other)))
+
+const along = ({ coil, former }: LaidCoil, one: StepPlacement, other: StepPlacement): Path =>
+  one.section === other.section ? acrossTape(coil, former, one, other) : overFlange(former, one, other)
+
+/** By way of the core, and of any shield that is neither of the two. */
+function conductorPaths(laid: LaidCoil, a: Winding, b: Winding): Path[] {
+  const { coil, former, shields } = laid
+  return placementsOf(laid, a.id).flatMap((one) =>
+    placementsOf(laid, b.id).flatMap((other) => [
+      viaConductor(toOuterLeg(coil, former, one), toOuterLeg(coil, former, other), 'along the margins and by way of the core'),
+      ...shields.filter(({ windingId }) => windingId !== a.id && windingId !== b.id).map((shield) => viaConductor(along(laid, one, shield), along(laid, other, shield), 'round the ends of the tapes by way of a shield')),
+    ]),
+  )
 }
 
 /**
  * To the core: along the margin to the flange and up it, where the outer leg begins; through the tube's wall, or
  * through the tapes over the outermost part.
  */
-function toCore({ former, coil }: Pick<PathInput, 'former' | 'coil'>, windings: readonly Winding[], functional: boolean): ProvidedInsulation {
-  const laid = windings.filter(({ id }) => coil.windings.has(id))
-  if (laid.length === 0) return NOT_KNOWN
-  const bare = laid.filter((winding) => !insulates(winding, functional)).map(({ id }) => id)
-  if (bare.length === 0) return { ...NOT_KNOWN, known: true, byInsulatedWire: true, how: `${wireText(functional)}; how far stripped ends and pins lie from the core is not held` }
-  const paths = coil.placements.filter(({ windingId }) => bare.includes(windingId)).map((placement) => corePath(coil, former, placement, isOutermost(coil, placement)))
-  const nearest = paths.reduce((least, path) => (least.lengthMm <= path.lengthMm ? least : path))
-  return {
-    clearanceMm: nearest.lengthMm,
-    creepageMm: nearest.lengthMm,
-    distanceThroughInsulationMm: Math.min(...paths.map(({ thicknessMm }) => thicknessMm)),
-    layers: Math.min(...paths.map(({ layers }) => layers)),
-    byInsulatedWire: false,
-    known: true,
-    how: nearest.how,
-  }
-}
-
-const isOutermost = (coil: Coil, placement: StepPlacement) =>
-  !coil.placements.some(({ section, index }) => section === placement.section && index > placement.index)
-
-function corePath(coil: Coil, { windingHeightMm, tubeWallMm, flangeThicknessMm }: FormerRow, placement: StepPlacement, outermost: boolean): Path {
-  const lengthMm = Math.min(placement.marginLeftMm, placement.marginRightMm) + Math.max(0, windingHeightMm - placement.topMm)
-  const how = 'along the margin and up the flange to the outer leg'
-  const wall = { layers: 1, thicknessMm: Math.min(tubeWallMm, flangeThicknessMm) }
-  if (!outermost) return { lengthMm, how, ...wall }
-  const over = coil.tapes.filter(({ section, index, fullWidth }) => section === placement.section && index > placement.index && fullWidth)
-  const layers = over.reduce((sum, tape) => sum + tape.layers, 0)
-  const thicknessMm = over.reduce((sum, { topMm, bottomMm }) => sum + topMm - bottomMm, 0)
-  // Outward there is only the tape, inward and sideways the plastic of the former.
-  return { lengthMm, how, layers, thicknessMm: Math.min(thicknessMm, wall.thicknessMm) }
+function toCore(laid: LaidCoil, windings: readonly Winding[]): ProvidedInsulation {
+  const { coil, former } = laid
+  const wound = windings.filter((winding) => isLaid(laid, winding))
+  if (wound.length === 0) return NOT_KNOWN
+  const bare = wound.filter((winding) => isBare(laid, winding))
+  if (bare.length === 0) return { ...NOT_KNOWN, known: true, byInsulatedWire: true, how: `${wireText(laid.functional)}; how far stripped ends and pins lie from the core is not held` }
+  const paths = bare.flatMap(({ id }) => placementsOf(laid, id)).map((placement) => toOuterLeg(coil, former, placement))
+  const nearest = nearestOf(paths)!
+  return { ...lengths(nearest, paths), byInsulatedWire: false, known: true, how: nearest.how }
 }
 
 // ---------------------------------------------------------------------------------------------
@@ -192,6 +185,15 @@ export function pinDistance(specification: WindingSpecification, former: FormerR
     const terminals = terminalNames(specification, windings)
     return pins.filter(({ number }) => terminals.has(number))
   }
-  const distances = at(one).flatMap((a) => at(other).filter(({ number }) => number !== a.number).map((b) => Math.hypot(a.xMm - b.xMm, a.yMm - b.yMm) - sizeMm))
-  return distances.length > 0 ? { lengthMm: Math.max(0, Math.min(...distances)), layers: 0, thicknessMm: 0, how: 'from pin to pin' } : null
+  const ways = at(one).flatMap((a) => at(other).filter(({ number }) => number !== a.number).map((b) => betweenPins(a, b, sizeMm)))
+  return ways.reduce<Path | null>((least, way) => (least ? shorter(least, way) : way), null)
+}
+
+const betweenPins = (a: Position, b: Position, sizeMm: number): Path => ({
+  lengthMm: Math.max(0, Math.hypot(a.xMm - b.xMm, a.yMm - b.yMm) - sizeMm), layers: 0, thicknessMm: 0, how: 'from pin to pin', plane: 'pins', points: [[a.xMm, a.yMm], [b.xMm, b.yMm]], through: [],
+})
+
+interface Position {
+  xMm: number
+  yMm: number
 }
