@@ -49,7 +49,7 @@ export default defineConfig({
           globalSetup: ['tests/support/template-database.ts'],
           testTimeout: 300_000,
           hookTimeout: 120_000,
-          fileParallelism: false,
+          maxWorkers: 2,
         },
       },
     ],
