@@ -338,7 +338,7 @@ const wireUse = z.strictObject({
 const winding = z.strictObject({
   ...statedRow,
   name,
-  role: z.enum(['primary', 'secondary', 'auxiliary', 'shield']),
+  role: z.enum(['primary', 'secondary', 'auxiliary', 'shield', 'reset']),
   side,
   outputId: rowId.nullable(),
   startTerminal: terminal,

@@ -5,6 +5,7 @@
 
 import type { Finding } from './findings'
 import type { InsulationType, Side, TestRow } from './specification'
+import type { CircuitFigure, CircuitMode, PointName } from './topologies/topology'
 
 export interface Evaluation {
   /** Version of the engine that made it. */
@@ -26,20 +27,48 @@ export interface Evaluation {
 
 /** One working point: an input voltage with a load. */
 export interface CornerResult {
-  name: 'minimum-input' | 'nominal-input' | 'maximum-input' | 'current-limit' | 'light-load'
+  name: PointName
   inputV: number
-  mode: 'discontinuous' | 'boundary' | 'continuous'
+  mode: CircuitMode
+  /** Conduction of one switch over the period. */
   dutyRatio: number
+  frequencyHz: number
   windings: CornerWinding[]
+  /** Volt-seconds of the primary winding that swing the flux from one end to the other. */
+  voltSecondsVs: number
   /** Peak-to-peak of the flux density on the effective area; null without a core. */
   fluxSwingT: number | null
+  /** Greatest magnitude of the flux density on the effective area. */
   fluxPeakT: number | null
   inputPowerW: number
+  /** Clamp spike included; null without a switch. */
   switchPeakV: number | null
+  /** Reverse voltage without spike. */
+  rectifiers: { outputId: string; reversePeakV: number }[]
+  outputs: CornerOutput[]
+  /** Time that the current takes to pass between windings at an edge; null where edges are taken as ideal. */
+  commutationS: number | null
+  /** Figures of this topology alone. */
+  figures: CircuitFigure[]
+}
+
+/** What one output gets, and what its capacitor takes. */
+export interface CornerOutput {
+  outputId: string
+  /** At the load, with its sign. */
+  voltageV: number
+  mode: CircuitMode
+  /** Peak-to-peak of the current behind rectifier and filter inductor. */
+  rippleA: number
+  /** Rms current of the output capacitor. */
+  capacitorRmsA: number
+  /** Charge that goes into the capacitor and out again in a period: the voltage ripple is ΔQ/C + ESR·ΔI. */
+  rippleChargeC: number
 }
 
 export interface CornerWinding {
   windingId: string
+  /** Magnitude of the mean. */
   dcA: number
   rmsA: number
   acRmsA: number
@@ -71,6 +100,12 @@ export interface MagneticsResult {
   /** fluxWorstT / saturationT. */
   fluxUtilisation: number | null
   boundaryInductanceH: number | null
+  /** Volt-seconds at the primary that swing the flux from one end to the other, greatest of the corners. */
+  voltSecondsVs: number | null
+  /** Greatest swing of the corners at full load, on the least area. */
+  fluxSwingT: number | null
+  /** Converters that drive the flux both ways: the peak of the first pulse after start or a step, on the least area. */
+  fluxTransientT: number | null
 }
 
 export interface WindingResult {

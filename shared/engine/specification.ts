@@ -111,6 +111,9 @@ export type InsulationMethod = 'margin-tape' | 'triple-insulated-wire' | 'functi
 
 export type Duty = FlybackDuty | CoupledInductorDuty
 
+/** The duty of one topology. */
+export type DutyOf<T extends Duty['topology']> = Extract<Duty, { topology: T }>
+
 export type ConductionChoice =
   | { kind: 'discontinuous'; /** Share of the period in which no current flows at full load and minimum input. */ idleShare: number }
   | { kind: 'boundary' }
@@ -477,7 +480,8 @@ export type Side = 'primary' | 'secondary' | 'secondary-2' | 'secondary-3' | 'fl
 export interface Winding extends StatedRow {
   /** As it stands in the schematic: `P`, `AUX`, `S1`, `SH`. */
   name: string
-  role: 'primary' | 'secondary' | 'auxiliary' | 'shield'
+  /** `reset`: demagnetises the core of a forward converter back into the supply. */
+  role: 'primary' | 'secondary' | 'auxiliary' | 'shield' | 'reset'
   side: Side
   /** The output of the requirement sheet that this winding feeds; null for others. */
   outputId: string | null

@@ -2,6 +2,7 @@ import { crossesMains, sideOf } from '../evaluate/boundaries'
 import { isVouched } from '../evaluate/library-use'
 import { isOnMains, leastRatedMainsV, mainsSupply } from '../evaluate/mains'
 import type { MaterialGroup } from '../specification'
+import { dutyTraits } from '../topologies'
 import { reinforced } from './boundary-input'
 import { atLeast, notCheckable, yesNo } from './outcome'
 import type { Check, CheckInput, Outcome } from './outcome'
@@ -27,7 +28,7 @@ function mainsBoundaries({ document, context }: CheckInput): Outcome[] {
 
 /** A winding counts as of the side on which the sheet has its output: else no boundary would part it from the mains. */
 function outputSides({ document: { specification, requirement } }: Pick<CheckInput, 'document'>): Outcome[] {
-  const outputs = requirement?.duty.topology === 'flyback' ? requirement.duty.outputs : []
+  const outputs = requirement ? dutyTraits(requirement.duty).outputs : []
   return specification.windings.flatMap(({ name, outputId, side }, index) => {
     const output = outputs.find(({ id }) => id === outputId)
     return output && output.side !== side ? [yesNo(false, `windings.${index}.side`, { winding: name, output: output.name })] : []

@@ -9,7 +9,7 @@ export function finiteOnly(evaluation: Evaluation): Evaluation {
 }
 
 /** Figures of the evaluation that cannot be null. */
-const ALWAYS_NUMBERS = new Set(['inputV', 'dutyRatio', 'dcA', 'rmsA', 'acRmsA', 'peakA', 'positivePeakV', 'negativePeakV', 'rmsV', 'inputPowerW', 'copperAreaMm2', 'buildMm', 'buildRatio', 'copperFill', 'windowFill', 'windowWidthMm', 'windowHeightMm', 'xMm', 'yMm', 'widthMm', 'thicknessMm', 'heightMm', 'currentWaveform'])
+const ALWAYS_NUMBERS = new Set(['inputV', 'frequencyHz', 'voltSecondsVs', 'voltageV', 'rippleA', 'capacitorRmsA', 'rippleChargeC', 'reversePeakV', 'dutyRatio', 'dcA', 'rmsA', 'acRmsA', 'peakA', 'positivePeakV', 'negativePeakV', 'rmsV', 'inputPowerW', 'copperAreaMm2', 'buildMm', 'buildRatio', 'copperFill', 'windowFill', 'windowWidthMm', 'windowHeightMm', 'xMm', 'yMm', 'widthMm', 'thicknessMm', 'heightMm', 'currentWaveform'])
 
 function isFinite(value: unknown): boolean {
   if (typeof value === 'number') return Number.isFinite(value)

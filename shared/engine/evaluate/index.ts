@@ -11,15 +11,14 @@ import { coreHeat, reportCoreLoss } from './core-loss'
 import { createContext, report } from './context'
 import type { Context } from './context'
 import type { CornerState } from './corner-result'
-import { coupledCorners, secondWinding } from './coupled-corners'
+import { cornerAt, cornersOf } from './corners'
 import { reportContradictions } from './document-findings'
 import { explainCorners } from './explain-corners'
 import { explainResults } from './explain-results'
 import { finiteOnly } from './finite'
-import { flybackCornerAt, flybackCorners } from './flyback-corners'
 import { inductanceBasis } from './inductance'
 import type { InductanceBasis } from './inductance'
-import { leakageBetweenH, leakages } from './leakage'
+import { leakages } from './leakage'
 import { reportLibrary } from './library-findings'
 import { buildWire } from './lookup'
 import { magneticsResult } from './magnetics'
@@ -49,7 +48,7 @@ export function evaluate(document: SpecificationDocument, library: Library, opti
 
   const coil = layOut(context)
   const basis = inductanceBasis(context)
-  const corners = basis ? cornersOf(context, basis, coil) : []
+  const corners = dutyCorners(context, basis, coil)
   const coppers = windingCoppers(context, coil)
   const heat = heatBalance(context, { coppers, corners })
   const hotC = heat.temperatureC
@@ -63,7 +62,7 @@ export function evaluate(document: SpecificationDocument, library: Library, opti
     layout: coil?.layout ?? EMPTY_LAYOUT,
     losses: heat.losses,
     thermal: heat.thermal,
-    boundaries: boundaryResults(context, coil, voltageCorners(context, basis, corners)),
+    boundaries: boundaryResults(context, coil, voltageCorners(context, { basis, coil, corners })),
     mass: massOf(context, coppers),
     findings: [],
     working: {},
@@ -96,26 +95,18 @@ function layOut(context: Context): Coil | null {
   return coil
 }
 
-function cornersOf(context: Context, basis: InductanceBasis, coil: Coil | null): CornerState[] {
-  const duty = context.requirement?.duty
-  if (!duty) {
-    report(context, 'currents-from-stated-values', 'note', 'windings')
-    return []
-  }
-  if (duty.topology === 'flyback') return flybackCorners(context, duty, basis)
-  const second = secondWinding(context)
-  const leakageH = coil && context.primary && second ? leakageBetweenH(coil, context.primary, [second]) : null
-  return coupledCorners(context, duty, basis, leakageH)
+function dutyCorners(context: Context, basis: InductanceBasis | null, coil: Coil | null): CornerState[] {
+  if (!context.requirement && basis) report(context, 'currents-from-stated-values', 'note', 'windings')
+  return basis ? cornersOf(context, basis, coil) : []
 }
 
 /** The rms working voltage belongs to the rated mains voltage; the recurring peak to the greatest input. */
-function voltageCorners(context: Context, basis: InductanceBasis | null, corners: readonly CornerState[]): VoltageCorners {
-  const duty = context.requirement?.duty
-  const peak = corners.map(voltageCorner(context))
+function voltageCorners(context: Context, { basis, coil, corners }: { basis: InductanceBasis | null; coil: Coil | null; corners: readonly CornerState[] }): VoltageCorners {
+  const peak = corners.map(voltageCorner)
   const ratedV = ratedMainsV(context)
-  if (duty?.topology !== 'flyback' || !mainsSupply(context) || ratedV === null || !basis) return { peak, rms: peak, onMains: false }
-  const rated = flybackCornerAt(context, duty, basis, ratedV * Math.SQRT2)
-  return { peak, rms: rated ? [voltageCorner(context)(rated)] : peak, onMains: true }
+  if (!mainsSupply(context) || ratedV === null || !basis) return { peak, rms: peak, onMains: false }
+  const rated = cornerAt(context, { inductanceH: basis.nominalH, coil, inputV: ratedV * Math.SQRT2 })
+  return { peak, rms: rated ? [voltageCorner(rated)] : peak, onMains: true }
 }
 
 function massOf({ core, sets, specification }: Context, coppers: readonly WindingCopper[]): MassResult {

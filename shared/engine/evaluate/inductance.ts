@@ -1,5 +1,6 @@
 import { gapForInductance, gappedInductanceFactorH } from '../magnetics/gap'
 import type { GappedCore } from '../magnetics/gap'
+import { topologyOf } from '../topologies'
 import { attempt, explain, positive, report } from './context'
 import type { Context } from './context'
 
@@ -10,25 +11,26 @@ export interface InductanceBasis {
   maximumH: number
   alH: number
   turns: number
-  from: 'stated' | 'al' | 'gap'
+  from: 'stated' | 'al' | 'gap' | 'ungapped'
 }
 
 /** Relative spread of an ungapped ferrite core where nothing better is stated. Source: IEC 62358 practice, ±25 %. */
 const UNGAPPED_SPREAD = 0.25
 
-/** Inductance at the primary: as stated, else from A_L, else from the gap. */
+/** Inductance at the primary: as stated, else from A_L, else from the gap; a transformer's core without any of them has no gap. */
 export function inductanceBasis(context: Context): InductanceBasis | null {
   const { specification, primary } = context
   const stated = specification.electrical.inductance.value
   const turns = primary?.turns
   if (!positive(turns)) return null
   const alH = specification.core.gap.alH.value
-  const fromGap = alFromGap(context)
+  const gapMm = specification.core.gap.lengthMm.value ?? (isTransformer(context) ? 0 : null)
+  const fromGap = alFromGap(context, gapMm)
   const { nominalH, from } = positive(stated?.nominalH)
     ? { nominalH: stated.nominalH, from: 'stated' as const }
     : positive(alH)
       ? { nominalH: alH * turns ** 2, from: 'al' as const }
-      : { nominalH: (fromGap ?? 0) * turns ** 2, from: 'gap' as const }
+      : { nominalH: (fromGap ?? 0) * turns ** 2, from: gapMm === 0 ? ('ungapped' as const) : ('gap' as const) }
   if (!positive(nominalH)) {
     report(context, 'inductance-not-stated', 'warning', 'electrical.inductance')
     return null
@@ -43,11 +45,14 @@ export function inductanceBasis(context: Context): InductanceBasis | null {
     from,
   }
   explain(context, 'magnetics.inductanceH', () => ({
-    symbol: 'L', value: nominalH, unit: 'H', formula: from === 'stated' ? 'as specified' : 'A_L·N²', source: 'IEC 62044-2, definition of A_L',
+    symbol: 'L', value: nominalH, unit: 'H', formula: from === 'stated' ? 'as specified' : from === 'ungapped' ? 'µ0·µ_i·A_e/l_e·N²' : 'A_L·N²', source: 'IEC 62044-2, definition of A_L',
     inputs: [{ name: 'A_L', value: basis.alH, unit: 'H', origin: 'core.gap.alH' }, { name: 'N', value: turns, unit: '', origin: 'windings.turns' }],
   }))
   return basis
 }
+
+/** Parts whose flux follows the volt-seconds: a gap only lowers their inductance. */
+const isTransformer = ({ requirement }: Context) => requirement !== null && topologyOf(requirement.duty).core !== 'stores-energy'
 
 /** The core with its gap as the magnetics stage takes it; null without core or material. */
 export function gappedCore(context: Context): GappedCore | null {
@@ -87,6 +92,7 @@ export function gapOf(context: Context, basis: InductanceBasis | null): GapResul
   const model = core?.fringing === 'mclyman-gap' ? 'McLyman, fringing on the gap term, area of the centre leg' : 'without fringing'
   const none = { gapMm: null, fringingFactor: null, model }
   if (!core || !basis) return none
+  if (basis.from === 'ungapped') return { gapMm: 0, fringingFactor: null, model: 'no gap' }
   const solution = attempt(context, 'core.gap', () => gapForInductance(core, basis.nominalH, basis.turns))
   if (solution?.state !== 'found') return none
   const gapMm = solution.gapMm / gapsInPath(context)

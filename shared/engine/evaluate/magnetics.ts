@@ -1,13 +1,14 @@
-import type { Evaluation, MagneticsResult } from '../evaluation'
-import { peakFluxDensityT, saturationFluxDensityT } from '../magnetics/flux'
-import { flybackBoundaryInductanceH } from '../topologies/flyback-design'
-import { maximum } from '../waveforms/statistics'
+import type { MagneticsResult } from '../evaluation'
+import { saturationFluxDensityT } from '../magnetics/flux'
+import { topologyOf } from '../topologies'
 import { attempt, explain, positive, report } from './context'
 import type { Context } from './context'
 import type { CornerState } from './corner-result'
-import { flybackCornerAt } from './flyback-corners'
 import { gapOf, originOf } from './inductance'
 import type { InductanceBasis } from './inductance'
+import { worstFlux } from './worst-flux'
+
+export { fullLoadPeakA } from './worst-flux'
 
 /** Saturation is never taken colder than this, °C: power ferrite runs there, and catalogues state it. */
 const LEAST_SATURATION_TEMPERATURE_C = 100
@@ -38,9 +39,13 @@ export function magneticsResult(context: Context, { basis, corners, temperatureC
     saturationT,
     saturationTemperatureC: saturationT === null ? null : hotC,
     fluxUtilisation,
-    boundaryInductanceH: boundaryInductance(context, corners),
+    boundaryInductanceH: boundaryInductance(corners),
+    ...swingOf(context, corners),
+    fluxTransientT: isBipolar(context) ? (worst?.fluxT ?? null) : null,
   }
 }
+
+const isBipolar = ({ requirement }: Context) => requirement !== null && topologyOf(requirement.duty).core === 'bipolar'
 
 function peakFlux(context: Context, corners: readonly CornerState[]): number | null {
   const { core } = context
@@ -51,105 +56,6 @@ function peakFlux(context: Context, corners: readonly CornerState[]): number | n
     inputs: [{ name: 'corner', value: corner?.result.name ?? 'none', unit: '', origin: 'corners' }, { name: 'A_e', value: core?.effectiveAreaMm2 ?? 'not known', unit: 'mm²', origin: originOf(context, 'core') }],
   }))
   return value
-}
-
-interface WorstFlux {
-  currentA: number
-  fluxT: number | null
-}
-
-/**
- * The worst flux: greatest inductance at the greatest current the switch lets through, on the least area. The delay of
- * the limit adds V·t_d volt-seconds whatever the inductance, so one inductance is used for both parts.
- */
-function worstFlux(context: Context, basis: InductanceBasis, corners: readonly CornerState[]): WorstFlux | null {
-  const worst = worstCurrent(context, basis, corners)
-  if (!worst) {
-    report(context, 'current-limit-not-stated', 'warning', 'requirement.duty.currentLimit')
-    return null
-  }
-  const { core, sets } = context
-  const areaMm2 = core ? core.minimumAreaMm2 * sets : null
-  const fluxT = areaMm2 === null ? null : attempt(context, 'core.core', () => peakFluxDensityT({ inductanceH: basis.maximumH, currentA: worst.currentA, turns: basis.turns, areaMm2 }))
-  explain(context, 'magnetics.worstCurrentA', () => ({ symbol: 'Î_max', value: worst.currentA, unit: 'A', formula: worst.formula, source: 'Faraday’s law over the delay of the current limit', inputs: worst.inputs }))
-  explain(context, 'magnetics.fluxWorstT', () => ({
-    symbol: 'B̂_max', value: fluxT, unit: 'T', formula: 'L_max·Î_max/(N·A_min)', source: 'Faraday’s law',
-    inputs: [
-      { name: 'L_max', value: basis.maximumH, unit: 'H', origin: 'electrical.inductance, upper tolerance' }, { name: 'Î_max', value: worst.currentA, unit: 'A', origin: 'magnetics.worstCurrentA' },
-      { name: 'N', value: basis.turns, unit: '', origin: 'windings.turns' }, { name: 'A_min', value: areaMm2 ?? 'not known', unit: 'mm²', origin: originOf(context, 'core') },
-    ],
-  }))
-  return { currentA: worst.currentA, fluxT }
-}
-
-interface WorstCurrent {
-  currentA: number
-  formula: string
-  inputs: { name: string; value: number | string; unit: string; origin: string }[]
-}
-
-/** Corners at full load: neither at light load nor in the overload of the current limit. */
-const FULL_LOAD: readonly string[] = ['minimum-input', 'nominal-input', 'maximum-input']
-
-/** Greatest peak current of a winding at full load, A; null where its corners are not known. */
-export function fullLoadPeakA({ corners }: Pick<Evaluation, 'corners'>, windingId: string): number | null {
-  const peaks = corners.filter(({ name }) => FULL_LOAD.includes(name)).flatMap(({ windings }) => windings.filter((winding) => winding.windingId === windingId).map(({ peakA }) => peakA))
-  return peaks.length > 0 ? Math.max(...peaks) : null
-}
-
-/** The greater of limit and full load: a limit below what the load takes limits nothing that is known. */
-function worstCurrent(context: Context, basis: InductanceBasis, corners: readonly CornerState[]): WorstCurrent | null {
-  if (!context.requirement) return statedWorstCurrent(context)
-  const limited = limitedCurrent(context, basis)
-  const loadA = limited ? magnetisingPeakA(context, basis, corners) : null
-  if (!limited || loadA === null || loadA <= limited.currentA) return limited
-  return { currentA: loadA, formula: 'Î at full load with L_min, above the current limit', inputs: [{ name: 'L_min', value: basis.minimumH, unit: 'H', origin: 'electrical.inductance, lower tolerance' }, ...limited.inputs] }
-}
-
-/** Peak of the magnetising current at full load, A, with the least inductance, where the ripple is greatest. */
-function magnetisingPeakA(context: Context, basis: InductanceBasis, corners: readonly CornerState[]): number | null {
-  const duty = context.requirement?.duty
-  const silent = { ...context, findings: [], working: null }
-  const loaded = corners.filter(({ result }) => FULL_LOAD.includes(result.name))
-  const flyback = duty?.topology === 'flyback'
-  const states = flyback ? loaded.flatMap(({ result }) => flybackCornerAt(silent, duty, { ...basis, nominalH: basis.minimumH }, result.inputV) ?? []) : loaded
-  const peaks = states.map(({ waves }) =>
-    [...waves].filter(([id]) => !flyback || id === context.primary?.id).reduce((sum, [id, { currentA }]) => sum + maximum(currentA) * turnsShare(context, id), 0))
-  return peaks.length > 0 ? Math.max(...peaks) : null
-}
-
-/** A winding's turns over those of the first: its current magnetises the core by as much. */
-function turnsShare({ specification, primary }: Context, id: string): number {
-  const turns = specification.windings.find((winding) => winding.id === id)?.turns ?? 0
-  return primary && primary.turns > 0 ? turns / primary.turns : 0
-}
-
-function limitedCurrent(context: Context, basis: InductanceBasis): WorstCurrent | null {
-  const duty = context.requirement?.duty
-  if (!duty) return null
-  const limit = duty.currentLimit
-  if (!limit) return null
-  const maximumV = duty.supply.kind === 'dc' ? duty.supply.maximumV : Math.SQRT2 * duty.supply.maximumV
-  // The switch of a coupled inductor carries both windings' currents; with more turns on the second they weigh more.
-  const weight = duty.topology === 'coupled-inductor' ? Math.max(1, duty.ratio) : 1
-  const currentA = limit.nominalA * (1 + limit.tolerance) * weight + (maximumV * limit.delayS) / basis.maximumH
-  return {
-    currentA,
-    formula: weight === 1 ? 'I_lim·(1 + tol) + V_max·t_d/L_max' : 'I_lim·(1 + tol)·N_2/N_1 + V_max·t_d/L_max',
-    inputs: [
-      { name: 'I_lim', value: limit.nominalA, unit: 'A', origin: 'requirement.duty.currentLimit' }, { name: 'tol', value: limit.tolerance, unit: '', origin: 'requirement.duty.currentLimit' },
-      { name: 't_d', value: limit.delayS, unit: 's', origin: 'requirement.duty.currentLimit' }, { name: 'V_max', value: maximumV, unit: 'V', origin: 'requirement.duty.supply' },
-      { name: 'L_max', value: basis.maximumH, unit: 'H', origin: 'electrical.inductance' },
-    ],
-  }
-}
-
-/** Without a requirement sheet the current of the saturation limit is the worst one. */
-function statedWorstCurrent({ specification, primary }: Context): WorstCurrent | null {
-  const stated = specification.electrical.saturation.filter(({ windingId }) => windingId === primary?.id).map(({ currentA }) => currentA)
-  const currentA = Math.max(0, ...stated)
-  if (!positive(currentA)) return null
-  return { currentA, formula: 'as stated for the inductance at bias', inputs: [{ name: 'I', value: currentA, unit: 'A', origin: 'electrical.saturation' }] }
 }
 
 function saturationOf(context: Context, temperatureC: number): number | null {
@@ -171,15 +77,24 @@ function saturationOf(context: Context, temperatureC: number): number | null {
 }
 
 /** Inductance at which conduction is just continuous at minimum input and full load. */
-function boundaryInductance(context: Context, corners: readonly CornerState[]): number | null {
-  const duty = context.requirement?.duty
-  const corner = corners.find(({ result }) => result.name === 'minimum-input')
-  const wave = corner?.waves.get(context.primary?.id ?? '')
-  if (duty?.topology !== 'flyback' || !corner || !wave) return null
-  const inputVoltageV = corner.result.inputV - duty.switchDropV
-  const reflectedV = -Math.min(...wave.voltageV.points.map(([, voltageV]) => voltageV))
-  const powerW = corner.result.inputPowerW * (inputVoltageV / corner.result.inputV)
-  return attempt(context, 'requirement.duty', () =>
-    flybackBoundaryInductanceH({ inputVoltageV, dutyCycle: reflectedV / (reflectedV + inputVoltageV), powerW, frequencyHz: duty.switchingFrequencyHz }),
-  )
+const boundaryInductance = (corners: readonly CornerState[]): number | null =>
+  corners.find(({ result }) => result.name === 'minimum-input')?.result.figures.find(({ code }) => code === 'boundary-inductance')?.value ?? null
+
+interface Swing {
+  voltSecondsVs: number | null
+  fluxSwingT: number | null
+}
+
+/** Greatest volt-seconds and swing over all corners, on the least area. */
+function swingOf(context: Context, corners: readonly CornerState[]): Swing {
+  const { core, sets, primary } = context
+  const voltSecondsVs = corners.length > 0 ? Math.max(...corners.map(({ result }) => result.voltSecondsVs)) : null
+  const areaMm2 = core ? core.minimumAreaMm2 * sets : null
+  const fluxSwingT = voltSecondsVs !== null && areaMm2 && positive(primary?.turns) ? (voltSecondsVs * 1e6) / (primary.turns * areaMm2) : null
+  explain(context, 'magnetics.voltSecondsVs', () => ({ symbol: 'λ', value: voltSecondsVs, unit: 'V·s', formula: 'max of ∫u dt over the corners', source: 'Faraday’s law', inputs: [{ name: 'corners', value: corners.length, unit: '', origin: 'corners' }] }))
+  explain(context, 'magnetics.fluxSwingT', () => ({
+    symbol: 'ΔB', value: fluxSwingT, unit: 'T', formula: 'λ/(N·A_min)', source: 'Faraday’s law',
+    inputs: [{ name: 'λ', value: voltSecondsVs ?? 'not known', unit: 'V·s', origin: 'magnetics.voltSecondsVs' }, { name: 'N', value: primary?.turns ?? 'not known', unit: '', origin: 'windings.turns' }, { name: 'A_min', value: areaMm2 ?? 'not known', unit: 'mm²', origin: originOf(context, 'core') }],
+  }))
+  return { voltSecondsVs, fluxSwingT }
 }

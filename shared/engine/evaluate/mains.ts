@@ -1,11 +1,12 @@
 import type { MainsSupply, SpecificationDocument } from '../specification'
+import { dutyTraits } from '../topologies'
 
 type Parts = Pick<SpecificationDocument, 'specification' | 'requirement'>
 
 /** The mains that the duty hangs on; null for a direct voltage or without a duty. */
 export function mainsSupply({ requirement }: Pick<Parts, 'requirement'>): MainsSupply | null {
-  const duty = requirement?.duty
-  return duty?.topology === 'flyback' && duty.supply.kind === 'mains' ? duty.supply : null
+  const supply = requirement && dutyTraits(requirement.duty).supply
+  return supply?.kind === 'mains' ? supply : null
 }
 
 /** Whether a part hangs on the mains: by its duty, or because a document without one states a mains voltage. */

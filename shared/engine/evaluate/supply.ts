@@ -1,5 +1,5 @@
 import { bulkMaximumV, bulkMinimum } from '../topologies/mains-bulk'
-import type { FlybackDuty, Supply } from '../specification'
+import type { Supply } from '../specification'
 
 /** Direct voltages between which the converter works. */
 export interface SupplyRange {
@@ -9,10 +9,6 @@ export interface SupplyRange {
 }
 
 export type SupplyAnswer = { state: 'known'; range: SupplyRange } | { state: 'capacitor-too-small'; missingEnergyJ: number }
-
-/** Power that all outputs take at full load, W. */
-export const outputPowerW = (duty: Pick<FlybackDuty, 'outputs'>): number =>
-  duty.outputs.reduce((sum, { voltageV, fullLoadCurrentA }) => sum + Math.abs(voltageV) * fullLoadCurrentA, 0)
 
 /**
  * The direct voltages at the converter: as given, or behind a bridge rectifier with its bulk capacitor, where

@@ -1,5 +1,5 @@
-import type { BoundaryEnd, InsulationBoundary, Side, Winding } from '../specification'
-import { differenceOfWaveforms, offsetWaveform, scaleWaveform } from '../waveforms/combine'
+import type { BoundaryEnd, InsulationBoundary, Side } from '../specification'
+import { differenceOfWaveforms, steadyLike } from '../waveforms/combine'
 import { mean, meanSquare, maximum, minimum } from '../waveforms/statistics'
 import type { Waveform } from '../waveforms/waveform'
 import type { Context } from './context'
@@ -19,30 +19,12 @@ export interface BoundaryVoltage {
   recurringPeakV: number
 }
 
-/**
- * Potentials of both ends of each winding. The primary hangs on the input voltage and its other end on the switch;
- * every other winding has one end on its return and the other on its rectifier.
- */
-export function nodesOf(context: Context, corner: CornerState): Node[] {
-  const duty = context.requirement?.duty
-  const negative = new Set(duty?.topology === 'flyback' ? duty.outputs.filter(({ voltageV }) => voltageV < 0).map(({ id }) => id) : [])
-  const spikeV = duty?.topology === 'flyback' ? (duty.clampSpikeV ?? 0) : 0
-  return context.specification.windings.flatMap((winding) => {
-    const wave = corner.waves.get(winding.id)
-    if (!wave) return []
-    const { voltageV } = wave
-    if (winding.id === context.primary?.id) {
-      const { inputV } = corner.result
-      return [node(winding, steady(voltageV, inputV)), { ...node(winding, offsetWaveform(scaleWaveform(voltageV, -1), inputV)), spikeV }]
-    }
-    return [node(winding, steady(voltageV, 0)), node(winding, winding.outputId !== null && negative.has(winding.outputId) ? voltageV : scaleWaveform(voltageV, -1))]
-  })
-}
-
-const node = ({ id }: Winding, potentialV: Waveform): Node => ({ windingId: id, potentialV, spikeV: 0 })
-
-/** A potential that stays, with the corners in time of another waveform. */
-const steady = ({ periodS, points }: Waveform, valueV: number): Waveform => ({ periodS, points: points.map(([tS]) => [tS, valueV] as const) })
+/** Potentials of both ends of each winding that is part of the circuit. */
+export const nodesOf = (corner: CornerState): Node[] =>
+  [...corner.ends].flatMap(([windingId, { start, finish, startSpikeV, finishSpikeV }]) => [
+    { windingId, potentialV: start, spikeV: startSpikeV },
+    { windingId, potentialV: finish, spikeV: finishSpikeV },
+  ])
 
 /** Difference of two potentials; point by point where both change at the same times, as all windings of one core do. */
 function difference(one: Waveform, other: Waveform): Waveform {
@@ -57,7 +39,7 @@ export interface VoltageCorner {
   nodes: readonly Node[]
 }
 
-export const voltageCorner = (context: Context) => (corner: CornerState): VoltageCorner => ({ corner, nodes: nodesOf(context, corner) })
+export const voltageCorner = (corner: CornerState): VoltageCorner => ({ corner, nodes: nodesOf(corner) })
 
 export interface VoltageCorners {
   /** Corners in which the recurring peak is looked for. */
@@ -130,7 +112,7 @@ function coreNodes({ specification }: Context, side: Side, nodes: readonly Node[
   const own = specification.windings.filter((winding) => winding.side === side)
   const tied = own.filter(({ startTerminal, finishTerminal }) => pin !== null && (startTerminal === pin || finishTerminal === pin))
   const ids = new Set((tied.length > 0 ? tied : own).map(({ id }) => id))
-  return [{ windingId: 'core', potentialV: steady(first.potentialV, 0), spikeV: 0 }, ...nodes.filter(({ windingId }) => ids.has(windingId))]
+  return [{ windingId: 'core', potentialV: steadyLike(first.potentialV, 0), spikeV: 0 }, ...nodes.filter(({ windingId }) => ids.has(windingId))]
 }
 
 function pairRms({ differenceV, offsetV }: Pair): number {

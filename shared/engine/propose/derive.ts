@@ -3,6 +3,7 @@ import type { Evaluation, WindingResult } from '../evaluation'
 import { proposeTests } from '../limits'
 import type { DcResistanceLimit, InsulationBoundary, LeakageLimit, SaturationLimit, SpecificationDocument, TurnsRatio, Winding, WindingSpecification, WithstandTest } from '../specification'
 import { isInsulatedWire, windingsAt } from '../evaluate/insulation-paths'
+import { atFullLoad } from '../evaluate/worst-flux'
 import { isProposed, isStatable, PROPOSED, proposed, toStepUp } from './stated'
 
 /**
@@ -51,7 +52,7 @@ function resistanceLimit(resistanceOhm: number): DcResistanceLimit {
 
 function derivedElectrical(specification: WindingSpecification, evaluation: Evaluation): WindingSpecification['electrical'] {
   const { electrical } = specification
-  const ratios = evaluation.corners.filter(({ name }) => name !== 'light-load' && name !== 'current-limit').map(({ dutyRatio }) => dutyRatio)
+  const ratios = evaluation.corners.filter(atFullLoad).map(({ dutyRatio }) => dutyRatio)
   return {
     ...electrical,
     dutyRatio: isOpen(electrical.dutyRatio) && ratios.length > 0 ? proposed({ minimum: toDigits(Math.min(...ratios), 2), maximum: toDigits(Math.max(...ratios), 2) }, 'reference') : electrical.dutyRatio,

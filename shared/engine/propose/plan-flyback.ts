@@ -1,4 +1,4 @@
-import { outputPowerW } from '../evaluate/supply'
+import { outputPowerW } from '../topologies/outputs'
 import type { FlybackDuty } from '../specification'
 import type { Finding } from '../findings'
 import type { Plan, WindingNeed } from './plan'

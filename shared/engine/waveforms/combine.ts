@@ -14,6 +14,9 @@ export const offsetWaveform = ({ periodS, points }: Waveform, offset: number): W
   points: points.map(([tS, value]) => [tS, value + offset] as const),
 })
 
+/** A value that stays, with the corners in time of another waveform. */
+export const steadyLike = ({ periodS, points }: Waveform, value: number): Waveform => ({ periodS, points: points.map(([tS]) => [tS, value] as const) })
+
 /**
  * Sum of waveforms of one period, exact: the sum has every corner of its parts.
  *

@@ -36,7 +36,9 @@ export const CORNER_WORDS: Readonly<Record<Evaluation['corners'][number]['name']
   'nominal-input': 'nominal input',
   'maximum-input': 'maximum input',
   'current-limit': 'current limit',
-  'light-load': 'light load',
+  'light-load-minimum-input': 'light load, minimum input',
+  'light-load': 'light load, nominal input',
+  'light-load-maximum-input': 'light load, maximum input',
 }
 
 function magnetics({ magnetics: m }: Evaluation): FigureGroup {

@@ -25,7 +25,7 @@ export const windingsSection: SectionSpec = {
           { header: 'Parallel', field: () => count('wire.parallel', 'Wires in parallel', { min: 1, max: 200 }), figure: true },
         ],
         more: () => [
-          choice('role', 'role', plainly('primary', 'secondary', 'auxiliary', 'shield')),
+          choice('role', 'role', plainly('primary', 'secondary', 'auxiliary', 'shield', 'reset')),
           choice('side', 'side of the insulation', words(SIDE_WORDS)),
           { type: 'output', path: 'outputId', label: 'feeds output', optional: true },
           choice('wire.insulation', 'wire insulation', words(WIRE_INSULATION_WORDS)),

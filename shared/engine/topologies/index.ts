@@ -1,0 +1,15 @@
+import type { Duty, DutyOf } from '../specification'
+import { COUPLED_INDUCTOR } from './coupled-circuit'
+import { FLYBACK } from './flyback-circuit'
+import type { DutyTraits, Topology } from './topology'
+
+/** Every topology that the engine turns into waveforms: a new one is one file and one line. */
+const TOPOLOGIES: { readonly [T in Duty['topology']]: Topology<DutyOf<T>> } = {
+  'flyback': FLYBACK,
+  'coupled-inductor': COUPLED_INDUCTOR,
+}
+
+/** The topology of a duty. The table's key and the duty's own agree, which the type of an index cannot say. */
+export const topologyOf = <D extends Duty>(duty: D): Topology<D> => TOPOLOGIES[duty.topology] as unknown as Topology<D>
+
+export const dutyTraits = (duty: Duty): DutyTraits => topologyOf(duty).traits(duty)
