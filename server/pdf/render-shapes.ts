@@ -1,6 +1,6 @@
 import { fontSizeMm, alignmentShiftMm, textRuns } from '#shared/drawing/text-metrics'
 import { FILL_COLOURS, INK_COLOURS, LINES, type CircleShape, type LabelShape, type PathShape, type Shape } from '#shared/drawing/model'
-import { pathData } from '#shared/drawing/path-data'
+import { modulesPathData, pathData } from '#shared/drawing/path-data'
 
 export const POINTS_PER_MM = 72 / 25.4
 
@@ -20,6 +20,9 @@ function renderShape(doc: PDFKit.PDFDocument, shape: Shape, heightMm: number): v
       return paint(doc, shape, true)
     case 'label':
       return renderLabel(doc, shape, heightMm)
+    case 'modules':
+      doc.path(modulesPathData(shape, heightMm)).fill(INK_COLOURS.ink)
+      return
   }
 }
 

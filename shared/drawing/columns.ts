@@ -53,6 +53,10 @@ export function columnWidthsMm(columns: readonly Column[], rows: readonly Row[],
   return needs.map((each) => each.minimumMm + (each.wantedMm - each.minimumMm) * share)
 }
 
+/** Width below which words of a table would be broken, mm. */
+export const leastWidthMm = (columns: readonly Column[], rows: readonly Row[], heightMm: number): number =>
+  sum(widenGroups(columns, columns.map((column) => need(column, rows, heightMm)), heightMm).map(({ minimumMm }) => minimumMm))
+
 /** A heading over several columns has to fit above them. */
 function widenGroups(columns: readonly Column[], needs: readonly Need[], heightMm: number): Need[] {
   return needs.map((each, index) => {

@@ -9,6 +9,7 @@ export const LINES = {
   symbol: { widthMm: 0.35, dashMm: [] },
   screen: { widthMm: 0.35, dashMm: [2, 1] },
   thin: { widthMm: 0.25, dashMm: [] },
+  phantom: { widthMm: 0.18, dashMm: [6, 0.75, 0.5, 0.75, 0.5, 0.75] },
   hidden: { widthMm: 0.25, dashMm: [3, 0.75] },
   centre: { widthMm: 0.25, dashMm: [6, 0.75, 0.5, 0.75] },
   dimension: { widthMm: 0.18, dashMm: [] },
@@ -78,7 +79,17 @@ export interface LabelShape extends ShapeBase {
   rotationDeg: number
 }
 
-export type Shape = PathShape | CircleShape | LabelShape
+/** A matrix of square modules, e.g. a two-dimensional code. */
+export interface ModulesShape extends ShapeBase {
+  kind: 'modules'
+  /** Lower left corner of the matrix, without quiet zone. */
+  corner: PointMm
+  moduleMm: number
+  /** From the top, one character per module: `1` is dark. */
+  rows: readonly string[]
+}
+
+export type Shape = PathShape | CircleShape | LabelShape | ModulesShape
 
 /** Something drawn that can stand alone: in a sheet, or by itself on a screen. */
 export interface Picture {

@@ -100,6 +100,8 @@ function move(shape: Shape, dxMm: number, dyMm: number): Shape {
       return { ...shape, center: movePoint(shape.center, dxMm, dyMm) }
     case 'label':
       return { ...shape, anchor: movePoint(shape.anchor, dxMm, dyMm) }
+    case 'modules':
+      return { ...shape, corner: movePoint(shape.corner, dxMm, dyMm) }
   }
 }
 

@@ -1,6 +1,6 @@
 import { fontSizeMm, alignmentShiftMm, textRuns } from './text-metrics'
 import { FILL_COLOURS, INK_COLOURS, LINES, type CircleShape, type FontRole, type LabelShape, type PathShape, type Shape } from './model'
-import { formatMm, pathData } from './path-data'
+import { formatMm, modulesPathData, pathData } from './path-data'
 
 /** An SVG element as plain data, for a text of markup and for a component alike. */
 export interface SvgElement {
@@ -66,5 +66,8 @@ export function svgElements(shape: Shape, heightMm: number): SvgElement[] {
     }
     case 'label':
       return labelElements(shape, heightMm)
+    case 'modules':
+      // Without smoothing the runs meet each other without a seam.
+      return [{ name: 'path', attributes: { d: modulesPathData(shape, heightMm), fill: INK_COLOURS.ink, stroke: 'none', 'shape-rendering': 'crispEdges', ...tagOf(shape) }, text: '' }]
   }
 }

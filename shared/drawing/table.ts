@@ -1,4 +1,4 @@
-import { CELL_PADDING_MM, columnWidthsMm, filledColumns, fractionOf, type Column, type Row } from './columns'
+import { CELL_PADDING_MM, columnWidthsMm, filledColumns, fractionOf, leastWidthMm, type Column, type Row } from './columns'
 import type { LabelShape, Shape, TableBlock, TableCell, TableRow } from './model'
 import { label, labelLines, LETTERING, line, linesHeightMm } from './shapes'
 import { LINE_PITCH, textWidthMm, wrapText } from './text-metrics'
@@ -9,7 +9,7 @@ export interface TableContent {
   title: string
   columns: readonly Column[]
   rows: readonly Row[]
-  /** Lettering of the cells; small when nothing is said. */
+  /** Lettering of the cells; the largest that reads well when nothing is said. */
   heightMm?: number
   /** Key–value tables have none. */
   headerless?: boolean
@@ -40,9 +40,24 @@ const MOST_LINES = 36
 
 const rowHeightMm = (lineCount: number, heightMm: number) => linesHeightMm(Math.max(lineCount, 1), heightMm) + 2 * ROW_PADDING_MM - heightMm * 0.1
 
+/** A table in the larger lettering may become this much taller; beyond that, its columns are too narrow for it. */
+const MOST_GROWTH = 1.75
+
+/**
+ * The lettering of ISO 3098 that suits a table in its width: 2.5 mm, which stays legible on an A4 copy, or 1.8 mm
+ * where the larger one would break words or most lines.
+ */
+export function suitingHeightMm(content: TableContent, widthMm: number): number {
+  const [small, large] = [LETTERING.small, LETTERING.body].map((heightMm) => ({ ...content, heightMm }))
+  const columns = filledColumns(content.columns, content.rows)
+  if (leastWidthMm(columns, content.rows, LETTERING.body) > widthMm) return LETTERING.small
+  const growth = tableHeightMm(layoutTable(large!, widthMm)) / tableHeightMm(layoutTable(small!, widthMm))
+  return growth <= MOST_GROWTH ? LETTERING.body : LETTERING.small
+}
+
 /** Settles widths and line breaks of a table that is `widthMm` wide. Columns without a value are left out. */
 export function layoutTable(content: TableContent, widthMm: number): TableLayout {
-  const heightMm = content.heightMm ?? LETTERING.small
+  const heightMm = content.heightMm ?? suitingHeightMm(content, widthMm)
   const columns = filledColumns(content.columns, content.rows)
   const widthsMm = columnWidthsMm(columns, content.rows, heightMm, widthMm)
   const rows = content.rows.flatMap((row) => layoutRow(row, columns, widthsMm, heightMm))

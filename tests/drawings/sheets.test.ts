@@ -7,6 +7,8 @@ import type { SpecificationDocument } from '#shared/engine/specification'
 import { blankSpecification } from '../support/blank-specification'
 import { evaluate } from '#shared/engine/index'
 import { buoySupply, coupledInductor, mainsFlyback, sampleLibrary } from '../support/sample-specification'
+import { lineOverlaps, textOverlaps } from '../support/overlaps'
+import { fullSpecification } from '../support/full-specification'
 import { stressPart } from '../support/stress-specification'
 
 const RELEASE = { revision: 'B', issuedOn: '2026-09-02', createdBy: 'E. Halloran', checkedBy: 'M. Okafor', approvedBy: 'J. Lindqvist' }
@@ -31,25 +33,17 @@ const contents = (sheet: Sheet): LabelShape[] => labels({ ...sheet, blocks: shee
 
 const textOf = (sheets: readonly Sheet[]): string => sheets.flatMap((sheet) => labels(sheet).map(({ text }) => text)).join(' ').replace(/[\u00a0\u202f]/g, ' ')
 
-/** Lettering that touches counts: boxes reach from the descenders to the capitals. */
-function overlaps(sheet: Sheet): string[] {
-  const boxes = labels(sheet).map((label) => ({ text: label.text, ...labelBox(label) }))
-  return boxes.flatMap((a, index) =>
-    boxes.slice(index + 1).flatMap((b) => {
-      const width = Math.min(a.rightMm, b.rightMm) - Math.max(a.leftMm, b.leftMm)
-      const height = Math.min(a.topMm, b.topMm) - Math.max(a.bottomMm, b.bottomMm)
-      return width > 0.05 && height > 0.05 ? [`sheet ${sheet.number}: "${a.text}" and "${b.text}"`] : []
-    }),
-  )
-}
-
-const parts = { mainsFlyback, buoySupply, coupledInductor, stressPart }
+const parts = { mainsFlyback, buoySupply, coupledInductor, fullSpecification, stressPart }
 
 describe.each(Object.entries(parts))('the sheets of %s', (_, make) => {
   const sheets = drawSheets(inputFor(make()))
 
   it('have no two texts that overlap', () => {
-    expect(sheets.flatMap(overlaps)).toEqual([])
+    expect(sheets.flatMap(textOverlaps)).toEqual([])
+  })
+
+  it('have no line through a text', () => {
+    expect(sheets.flatMap(lineOverlaps)).toEqual([])
   })
 
   it('keep all text inside the frame', () => {
@@ -96,7 +90,7 @@ describe('what nobody has filled', () => {
   it('does not stop an empty specification from being drawn', () => {
     const specification = blankSpecification()
     const sheets = drawSheets({ ...inputFor(mainsFlyback()), specification, evaluation: null, release: null, status: 'draft', revision: 'P1' })
-    expect(sheets.flatMap(overlaps)).toEqual([])
+    expect(sheets.flatMap(textOverlaps)).toEqual([])
   })
 })
 

@@ -1,6 +1,6 @@
 import type { Block, Picture } from '../model'
 import { box, label, labelLines, LETTERING, linesHeightMm, moved } from '../shapes'
-import { drawTablePart, layoutTable, tableHeightMm, type TableContent, type TableLayout } from '../table'
+import { drawTablePart, layoutTable, suitingHeightMm, tableHeightMm, type TableContent, type TableLayout } from '../table'
 import { wrapText } from '../text-metrics'
 import { SPACE } from './frame'
 import { TITLE_BLOCK } from './title-block'
@@ -72,10 +72,18 @@ export const FIGURE_TITLE_MM = 6
 /** A table over the width of the sheet, going on to further sheets with its header. */
 export function addTable(flow: Flow, content: TableContent): void {
   if (content.rows.length === 0) return
-  const layout = layoutTable(content, BODY_WIDTH_MM)
+  const layout = layoutFor(content, roomMm(flow))
   if (readsBetterWhole(flow, tableHeightMm(layout))) continuePage(flow)
   let row = 0
   while (row < layout.rows.length) row = placePart(flow, layout, row)
+}
+
+/** In the small lettering where only that keeps the table on the sheet. */
+function layoutFor(content: TableContent, heightMm: number): TableLayout {
+  const layout = layoutTable(content, BODY_WIDTH_MM)
+  if (tableHeightMm(layout) <= heightMm || content.heightMm !== undefined) return layout
+  const small = layoutTable({ ...content, heightMm: LETTERING.small }, BODY_WIDTH_MM)
+  return tableHeightMm(small) <= heightMm ? small : layout
 }
 
 /** A short table that would be cut near its head goes to the next sheet in one piece. */
@@ -103,13 +111,21 @@ interface Pending {
 /** Tables beside each other in columns of equal width, filled evenly, going on to further sheets. */
 export function addColumns(flow: Flow, contents: readonly TableContent[], count: number, leftMm: number = SPACE.leftMm, widthMm = BODY_WIDTH_MM): void {
   const columnMm = (widthMm - (count - 1) * GAP_MM) / count
-  const queue: Pending[] = contents
-    .filter(({ rows }) => rows.length > 0)
-    .map((content) => ({ layout: layoutTable(content, columnMm), nextRow: 0 }))
+  const filled = contents.filter(({ rows }) => rows.length > 0)
+  const queue = pendingTables(filled, columnMm, count * roomMm(flow))
   while (queue.length > 0) {
     if (!fillColumns(flow, queue, count, columnMm, leftMm)) continuePage(flow)
     else if (queue.length > 0) continuePage(flow)
   }
+}
+
+/** Tables beside each other share one lettering, the small one where only that keeps them on the sheet. */
+function pendingTables(contents: readonly TableContent[], columnMm: number, heightMm: number): Pending[] {
+  const inLettering = (lettering: number): Pending[] => contents.map((content) => ({ layout: layoutTable({ heightMm: lettering, ...content }, columnMm), nextRow: 0 }))
+  const suiting = inLettering(Math.min(...contents.map((content) => suitingHeightMm(content, columnMm))))
+  if (remainingMm(suiting) <= heightMm) return suiting
+  const small = inLettering(LETTERING.small)
+  return remainingMm(small) <= heightMm ? small : suiting
 }
 
 function fillColumns(flow: Flow, queue: Pending[], count: number, columnMm: number, leftMm: number): boolean {

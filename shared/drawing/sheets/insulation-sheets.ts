@@ -17,7 +17,7 @@ export function dataSheets(flow: Flow, input: DrawingInput): void {
 }
 
 /** Insulation boundaries, tests, cautions, notes, revisions and what is not stated. */
-export function insulationSheets(flow: Flow, input: DrawingInput): void {
+export function insulationSheets(flow: Flow, input: DrawingInput, withRevisions: boolean): void {
   const { specification } = input
   newPage(flow, 'Insulation, tests and notes')
   const { boundaries, withstand, sources } = insulationSection(input)
@@ -28,6 +28,6 @@ export function insulationSheets(flow: Flow, input: DrawingInput): void {
   addTable(flow, testTable(specification))
   addParagraphs(flow, 'CAUTION', cautionLines(input))
   addParagraphs(flow, 'Notes', noteLines(specification))
-  addTable(flow, revisionTable(specification))
+  if (withRevisions) addTable(flow, revisionTable(specification))
   addParagraphs(flow, 'Not stated', notStated(input), LETTERING.small)
 }

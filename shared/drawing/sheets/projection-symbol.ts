@@ -20,7 +20,7 @@ export function projectionSymbol([x, y]: PointMm, method: 'first-angle' | 'third
     line([left - 1, y], [right + 1, y], 'centre'),
     circle(view, LARGE_MM / 2, { layer: 'symbol' }),
     circle(view, SMALL_MM / 2, { layer: 'symbol' }),
-    line([view[0] - LARGE_MM / 2 - 0.8, y], [view[0] + LARGE_MM / 2 + 0.8, y], 'centre'),
-    line([view[0], y - LARGE_MM / 2 - 0.8], [view[0], y + LARGE_MM / 2 + 0.8], 'centre'),
+    line([view[0] - LARGE_MM / 2 - 0.6, y], [view[0] + LARGE_MM / 2 + 0.6, y], 'centre'),
+    line([view[0], y - LARGE_MM / 2 - 0.6], [view[0], y + LARGE_MM / 2 + 0.6], 'centre'),
   ]
 }

@@ -74,7 +74,7 @@ function bands(input: DrawingInput, place: SheetPlace): Band[] {
       ],
     },
     {
-      heightMm: 15,
+      heightMm: 14.5,
       fields: [
         { caption: 'Title, supplementary title', text: titleText(input), widthMm: 87, heights: [LETTERING.heading, ...VALUE_HEIGHTS] },
         { caption: 'Identification number', text: identification(input), widthMm: 52, font: 'mono', heights: [LETTERING.number, LETTERING.heading, ...VALUE_HEIGHTS] },
@@ -83,7 +83,7 @@ function bands(input: DrawingInput, place: SheetPlace): Band[] {
       ],
     },
     {
-      heightMm: 8.5,
+      heightMm: 9,
       fields: [
         { caption: 'Sheet content', text: place.content, widthMm: 64 },
         { caption: 'Scale', text: place.scale === '' ? 'not to scale' : place.scale, widthMm: 22 },
@@ -144,7 +144,7 @@ function fieldShapes(field: Field, area: BoxMm): Shape[] {
 
 function projection({ specification }: DrawingInput): Shape[] {
   const method = specification.title.projection.value
-  const field = { left: TITLE_BLOCK.leftMm + 126, bottom: TITLE_BLOCK.bottomMm + 31 }
+  const field = { left: TITLE_BLOCK.leftMm + 126, bottom: TITLE_BLOCK.bottomMm + 30.5 }
   if (method === null) return [label([field.left + 1, field.bottom + 2.2], NOT_STATED, { heightMm: LETTERING.small })]
-  return projectionSymbol([field.left + 11, field.bottom + 3.2], method)
+  return projectionSymbol([field.left + 11, field.bottom + 3.25], method)
 }
