@@ -14,6 +14,10 @@ export interface Evaluation {
   magnetics: MagneticsResult
   windings: WindingResult[]
   leakages: LeakageResult[]
+  capacitances: CapacitanceResult[]
+  commonModeCapacitances: CommonModeCapacitance[]
+  boundaryCapacitances: BoundaryCapacitance[]
+  selfResonance: SelfResonanceResult[]
   layout: Layout
   losses: LossResult
   thermal: ThermalResult
@@ -133,6 +137,36 @@ export interface LeakageResult {
   windingId: string
   shortedWindingIds: string[]
   inductanceH: number | null
+  model: string
+}
+
+export interface CapacitanceResult {
+  /** One winding: across its own terminals. Two: between them, each shorted on itself. All others open and floating. */
+  windingIds: string[]
+  capacitanceF: number | null
+  model: string
+}
+
+/** Charge that a volt across one winding drives into another, with one end of both at rest; negative in the other sense. */
+export interface CommonModeCapacitance {
+  windingId: string
+  ontoWindingId: string
+  startsRestingF: number | null
+  finishesRestingF: number | null
+  model: string
+}
+
+/** Between everything on one side of a boundary and everything on the other, as an electric-strength test sees it. */
+export interface BoundaryCapacitance {
+  boundaryId: string
+  capacitanceF: number | null
+  model: string
+}
+
+export interface SelfResonanceResult {
+  windingId: string
+  /** With all other windings open. */
+  frequencyHz: number | null
   model: string
 }
 

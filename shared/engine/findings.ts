@@ -31,6 +31,7 @@ export type CompositionFindingCode =
   | 'former-belongs-to-another-core'
   | 'wire-overall-diameter-unknown'
   | 'generic-row-used'
+  | 'capacitance-not-calculable'
   | 'no-saturation-data'
   // the duty
   | 'no-primary-winding'

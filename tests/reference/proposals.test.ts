@@ -99,7 +99,7 @@ describe.each(proposals)('the proposal for the $name', ({ proposal, evaluation, 
 
 /** Dotted paths of all figures that a screen or the drawing shows. */
 function figures(evaluation: Evaluation): string[] {
-  const { corners, magnetics, windings, leakages, layout, losses, thermal, boundaries, mass } = evaluation
+  const { corners, magnetics, windings, leakages, capacitances, commonModeCapacitances, boundaryCapacitances, selfResonance, layout, losses, thermal, boundaries, mass } = evaluation
   const hidden = /currentWaveform|layout\.items|\.layers$|turnsPerLayer/
   const paths: string[] = []
   const walk = (value: unknown, path: string) => {
@@ -107,7 +107,7 @@ function figures(evaluation: Evaluation): string[] {
     if (typeof value === 'number') paths.push(path.replace(/\.value$/, ''))
     else if (value !== null && typeof value === 'object') for (const [key, entry] of Object.entries(value)) walk(entry, path === '' ? key : `${path}.${key}`)
   }
-  walk({ corners, magnetics, windings, leakages, layout, losses, thermal, boundaries, mass }, '')
+  walk({ corners, magnetics, windings, leakages, capacitances, commonModeCapacitances, boundaryCapacitances, selfResonance, layout, losses, thermal, boundaries, mass }, '')
   return paths
 }
 

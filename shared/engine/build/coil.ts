@@ -3,6 +3,7 @@ import type { CoreTapeStep, MarginStep, ShieldStep, SleeveStep, TapeStep, Varnis
 import { finding } from './progress'
 import type { Progress, Section } from './progress'
 import { summary } from './summary'
+import { turnLengthMm } from './tube'
 import type { Coil, CoilInput } from './types'
 import { layWinding } from './wind'
 
@@ -21,6 +22,7 @@ export function layOutCoil(input: CoilInput): Coil {
     placements: [],
     tapes: [],
     margins: [],
+    shields: [],
     findings: [],
     laidTurns: new Map(),
     copperAreaMm2: 0,
@@ -116,6 +118,18 @@ function layShield(progress: Progress, step: ShieldStep, index: number): void {
     const widthMm = Math.min(step.widthMm, section.widthMm)
     // Where the insulated ends overlap the foil lies double; the build takes the thick place.
     progress.items.push({ kind: 'foil', stepId: step.id, windingId: winding?.id ?? step.windingId, turn: 1, xMm: section.xMm + (section.widthMm - widthMm) / 2, yMm: section.yMm, widthMm, thicknessMm: step.thicknessMm })
+    const leftMm = (section.widthMm - widthMm) / 2
+    progress.shields.push({
+      stepId: step.id,
+      index,
+      windingId: winding?.id ?? step.windingId,
+      section: section.number,
+      bottomMm: section.yMm,
+      topMm: section.yMm + step.thicknessMm,
+      leftMm,
+      rightMm: leftMm + widthMm,
+      turnLengthMm: turnLengthMm(progress.input.former.tube, section.yMm + step.thicknessMm / 2),
+    })
     section.yMm += step.thicknessMm * (step.overlapMm > 0 ? 2 : 1)
     if (step.widthMm > section.widthMm + 1e-9) {
       progress.findings.push(finding('foil-wider-than-former', 'error', `sequence.${index}.widthMm`, { step: index + 1, overMm: step.widthMm - section.widthMm }))

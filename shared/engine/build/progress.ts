@@ -1,7 +1,7 @@
 import type { LayoutItem } from '../evaluation'
 import type { Finding } from '../findings'
 import type { MarginStep } from '../specification'
-import type { CoilInput, MarginPlacement, StepPlacement, TapePlacement } from './types'
+import type { CoilInput, MarginPlacement, ShieldPlacement, StepPlacement, TapePlacement } from './types'
 
 /** One winding space between two flanges, filled from the tube outward. */
 export interface Section {
@@ -20,6 +20,7 @@ export interface Progress {
   placements: StepPlacement[]
   tapes: TapePlacement[]
   margins: MarginPlacement[]
+  shields: ShieldPlacement[]
   findings: Finding[]
   laidTurns: Map<string, number>
   copperAreaMm2: number

@@ -27,6 +27,7 @@ export function summary(progress: Progress): Coil {
     placements: progress.placements,
     tapes: progress.tapes,
     margins: progress.margins,
+    shields: progress.shields,
     windings: new Map(windings.flatMap(({ id }) => windingBuild(id, progress.placements))),
     plainBuildMm,
     bulge,

@@ -1,4 +1,4 @@
-import type { FormerRow } from '../library'
+import type { CoreRow, FormerRow } from '../library'
 import { requireNotNegative } from '../require'
 
 /**
@@ -32,3 +32,9 @@ export const BULGE_ROUND_TUBE = 1.1
 export const BULGE_RECTANGULAR_TUBE = 1 / 0.85
 
 export const bulgeFactor = (tube: FormerRow['tube']): number => (tube.shape === 'round' ? BULGE_ROUND_TUBE : BULGE_RECTANGULAR_TUBE)
+
+/** Distance of the former's tube from the centre leg, mm; none where the library's figures leave none. */
+export function tubeClearanceMm({ tube, tubeWallMm }: FormerRow, leg: NonNullable<CoreRow['centreLeg']>): number {
+  const insideMm = (tube.shape === 'round' ? tube.diameterMm : tube.widthMm) - 2 * tubeWallMm
+  return Math.max(0, (insideMm - (leg.shape === 'round' ? leg.diameterMm : leg.widthMm)) / 2)
+}

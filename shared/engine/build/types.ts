@@ -24,6 +24,25 @@ export interface CoilInput {
   tapeOf: (reference: LibraryReference) => TapeRow | null
 }
 
+/** One layer of a winding step: wire side by side, or one turn of foil. */
+export interface LayerPlacement {
+  /** Turns laid in it; 1 for foil. */
+  turns: number
+  /** Turns of the same winding laid before it, over all steps. */
+  turnsBefore: number
+  bottomMm: number
+  topMm: number
+  /** Wires between these, from the inside of the left flange of the section. */
+  leftMm: number
+  rightMm: number
+  /** From the centre of one turn to that of the next; the width of a single turn. */
+  pitchMm: number
+  /** Wound from the left to the right. */
+  rightward: boolean
+  /** Length of a turn. */
+  turnLengthMm: number
+}
+
 /** One winding step as it lies in the window. */
 export interface StepPlacement {
   stepId: string
@@ -47,6 +66,8 @@ export interface StepPlacement {
   availableMm: number
   /** Height of one layer of wire without its interlayer tape. */
   layerHeightMm: number
+  /** Layer by layer, from the tube outward. */
+  layers: LayerPlacement[]
 }
 
 /** One tape step as it lies in the window; the same in every section. */
@@ -60,6 +81,20 @@ export interface TapePlacement {
   leftMm: number
   rightMm: number
   fullWidth: boolean
+}
+
+/** One turn of shielding foil as it lies in the window. */
+export interface ShieldPlacement {
+  stepId: string
+  index: number
+  windingId: string
+  section: number
+  bottomMm: number
+  /** Top of the foil where it lies once; its overlap stands above. */
+  topMm: number
+  leftMm: number
+  rightMm: number
+  turnLengthMm: number
 }
 
 export interface MarginPlacement {
@@ -90,6 +125,7 @@ export interface Coil {
   placements: StepPlacement[]
   tapes: TapePlacement[]
   margins: MarginPlacement[]
+  shields: ShieldPlacement[]
   windings: ReadonlyMap<string, WindingBuild>
   /** Geometric build without bulge. */
   plainBuildMm: number

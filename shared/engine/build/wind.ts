@@ -1,9 +1,10 @@
 import type { Winding, WindingStep } from '../specification'
 import { mostTurnsPerLayer, planLayers } from './layers'
+import type { LayerPlan } from './layers'
 import { finding } from './progress'
 import type { Progress, Section } from './progress'
 import { turnLengthMm } from './tube'
-import type { BuildWire, StepPlacement } from './types'
+import type { BuildWire, LayerPlacement, StepPlacement } from './types'
 
 /** Beyond this the single turns are not listed: a part of this kind has a few thousand at most. */
 const MOST_ITEMS = 40_000
@@ -48,7 +49,8 @@ function layWire(progress: Progress, lay: WindingLay): void {
   const listed = progress.items.length + step.turns * parallel <= MOST_ITEMS
   const bottomMm = section.yMm
   const leftEdgeMm = section.xMm + step.marginLeftMm
-  let turn = progress.laidTurns.get(winding.id) ?? 0
+  const laidBefore = progress.laidTurns.get(winding.id) ?? 0
+  let turn = laidBefore
   plan.forEach(({ centresMm }, layer) => {
     const yMm = bottomMm + layer * (wire.overallMm + tapeMm) + wire.overallMm / 2
     for (const centreMm of centresMm) {
@@ -68,20 +70,55 @@ function layWire(progress: Progress, lay: WindingLay): void {
   const layers = step.turns > MOST_ITEMS ? Math.ceil(step.turns / Math.max(1, most)) : plan.length
   const topMm = bottomMm + layers * wire.overallMm + (layers - 1) * tapeMm
   const centres = plan.flatMap(({ centresMm }) => centresMm)
+  const turnLengthsMm = plan.map((_, layer) => turnLengthMm(progress.input.former.tube, bottomMm + layer * (wire.overallMm + tapeMm) + wire.overallMm / 2))
   place(progress, lay, {
     bottomMm,
     topMm,
     leftMm: step.marginLeftMm + extreme(centres, Math.min) - bundleWidthMm / 2,
     rightMm: step.marginLeftMm + extreme(centres, Math.max) + bundleWidthMm / 2,
     turnsPerLayer: plan.map(({ turns }) => turns),
-    turnLengthsMm: plan.map((_, layer) => turnLengthMm(progress.input.former.tube, bottomMm + layer * (wire.overallMm + tapeMm) + wire.overallMm / 2)),
+    turnLengthsMm,
     mostTurnsPerLayer: most,
     bundleWidthMm,
     availableMm,
     layerHeightMm: wire.overallMm,
+    layers: wireLayers(plan, { bottomMm, heightMm: wire.overallMm, stepMm: wire.overallMm + tapeMm, marginLeftMm: step.marginLeftMm, bundleWidthMm, turnLengthsMm, laidBefore }),
   })
   progress.copperAreaMm2 += step.turns * parallel * wire.copperAreaMm2
   progress.squaresAreaMm2 += step.turns * parallel * wire.overallMm ** 2
+}
+
+interface LayersFrame {
+  bottomMm: number
+  heightMm: number
+  /** From the bottom of one layer to that of the next. */
+  stepMm: number
+  marginLeftMm: number
+  bundleWidthMm: number
+  turnLengthsMm: readonly number[]
+  laidBefore: number
+}
+
+function wireLayers(plan: readonly LayerPlan[], frame: LayersFrame): LayerPlacement[] {
+  let turnsBefore = frame.laidBefore
+  return plan.map(({ turns, centresMm }, layer) => {
+    const [first, last] = [centresMm[0]!, centresMm[centresMm.length - 1]!]
+    const bottomMm = frame.bottomMm + layer * frame.stepMm
+    const laid: LayerPlacement = {
+      turns,
+      turnsBefore,
+      bottomMm,
+      topMm: bottomMm + frame.heightMm,
+      leftMm: frame.marginLeftMm + Math.min(first, last) - frame.bundleWidthMm / 2,
+      rightMm: frame.marginLeftMm + Math.max(first, last) + frame.bundleWidthMm / 2,
+      pitchMm: turns > 1 ? Math.abs(last - first) / (turns - 1) : frame.bundleWidthMm,
+      // A single turn has no sense of its own: odd layers run to the right.
+      rightward: turns > 1 ? last > first : layer % 2 === 0,
+      turnLengthMm: frame.turnLengthsMm[layer]!,
+    }
+    turnsBefore += turns
+    return laid
+  })
 }
 
 const extreme = (values: readonly number[], pick: (a: number, b: number) => number): number => values.reduce((a, b) => pick(a, b), values[0] ?? 0)
@@ -116,17 +153,29 @@ function layFoil(progress: Progress, lay: WindingLay): void {
     progress.findings.push(finding('foil-wider-than-former', 'error', `sequence.${index}`, { step: index + 1, overMm: (wire.widthMm ?? 0) - availableMm }))
   }
   progress.laidTurns.set(winding.id, before + turns)
+  const turnLengthsMm = Array.from({ length: turns }, (_, turn) => turnLengthMm(progress.input.former.tube, bottomMm + turn * (heightMm + tapeMm) + heightMm / 2))
   place(progress, lay, {
     bottomMm,
     topMm: bottomMm + turns * heightMm + (turns - 1) * tapeMm,
     leftMm: xMm,
     rightMm: xMm + widthMm,
     turnsPerLayer: new Array<number>(turns).fill(1),
-    turnLengthsMm: Array.from({ length: turns }, (_, turn) => turnLengthMm(progress.input.former.tube, bottomMm + turn * (heightMm + tapeMm) + heightMm / 2)),
+    turnLengthsMm,
     mostTurnsPerLayer: 1,
     bundleWidthMm: widthMm,
     availableMm,
     layerHeightMm: heightMm,
+    layers: turnLengthsMm.map((turnLength, turn) => ({
+      turns: 1,
+      turnsBefore: before + turn,
+      bottomMm: bottomMm + turn * (heightMm + tapeMm),
+      topMm: bottomMm + turn * (heightMm + tapeMm) + heightMm,
+      leftMm: xMm,
+      rightMm: xMm + widthMm,
+      pitchMm: widthMm,
+      rightward: true,
+      turnLengthMm: turnLength,
+    })),
   })
   progress.copperAreaMm2 += turns * parallel * (wire.widthMm === null ? wire.conductorMm * widthMm : wire.copperAreaMm2)
   progress.squaresAreaMm2 += turns * heightMm * widthMm

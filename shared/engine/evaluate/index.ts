@@ -7,6 +7,7 @@ import type { Library } from '../library'
 import type { SpecificationDocument } from '../specification'
 import { ENGINE_VERSION } from '../version'
 import { boundaryResults } from './boundaries'
+import { capacitanceResults } from './capacitances'
 import { coreHeat, reportCoreLoss } from './core-loss'
 import { createContext, report } from './context'
 import type { Context } from './context'
@@ -59,6 +60,7 @@ export function evaluate(document: SpecificationDocument, library: Library, opti
     magnetics: magneticsResult(context, { basis, corners, temperatureC: hotC }),
     windings: windingResults(context, { coppers, coil, corners, hottest: heat.hottest, hotC }),
     leakages: leakages(context, coil),
+    ...capacitanceResults(context, coil, basis),
     layout: coil?.layout ?? EMPTY_LAYOUT,
     losses: heat.losses,
     thermal: heat.thermal,

@@ -1,5 +1,6 @@
 import { limitsAround, toDigits } from '../digits'
 import type { BoundaryEnd, SpecificationDocument, TestRow, Winding, WindingSpecification } from '../specification'
+import { interwindingRows, resonanceRows } from './capacitance-rows'
 import { testRow } from './rows'
 import { terminalsAt, terminalsBut, terminalsOf } from './terminals'
 
@@ -8,7 +9,7 @@ const BRIDGE_METHOD = 'IEC 62044-2, low level'
 
 /**
  * The test table that the limits of a document ask for: inductance, leakage, resistance, ratio, polarity, inductance at bias,
- * withstand and insulation resistance, and the height. Rows of `kept` that a person entered stay as they are, and no row
+ * interwinding capacitance, self-resonance, withstand and insulation resistance, and the height. Rows of `kept` that a person entered stay as they are, and no row
  * with their symbol is proposed. Limits come from the document, so that a figure stands in one place.
  */
 export function proposeTests(document: SpecificationDocument, kept: readonly TestRow[] = []): TestRow[] {
@@ -22,6 +23,8 @@ export function proposeTests(document: SpecificationDocument, kept: readonly Tes
     ...ratioRows(specification),
     ...polarityRows(specification),
     ...biasRows(specification),
+    ...interwindingRows(specification),
+    ...resonanceRows(specification),
     ...withstandRows(specification),
     ...insulationRows(specification),
     ...dimensionRows(specification),

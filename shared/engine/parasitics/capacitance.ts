@@ -26,3 +26,16 @@ export function apparentInductanceRatio(input: { frequencyHz: number; selfResona
   if (!(input.selfResonanceHz > input.frequencyHz)) throw new RangeError(`selfResonanceHz must exceed frequencyHz ${input.frequencyHz}: ${input.selfResonanceHz}`)
   return 1 / (1 - (input.frequencyHz / input.selfResonanceHz) ** 2)
 }
+
+/**
+ * Self-resonant frequency of a winding, 1/(2π·√(L·C)), in Hz.
+ *
+ * Source: parallel resonance without loss.
+ *
+ * @throws RangeError unless both are positive
+ */
+export function selfResonanceHz(input: { inductanceH: number; capacitanceF: number }): number {
+  requirePositive('inductanceH', input.inductanceH)
+  requirePositive('capacitanceF', input.capacitanceF)
+  return 1 / (2 * Math.PI * Math.sqrt(input.inductanceH * input.capacitanceF))
+}

@@ -1,0 +1,137 @@
+import type { Coil, LayerPlacement, StepPlacement } from '../build'
+import { tubeClearanceMm } from '../build'
+import { CORE_BODY } from '../parasitics/electrodes'
+import type { Dielectric, Electrode } from '../parasitics/electrodes'
+import { permittivityOf, wirePermittivity } from '../parasitics/permittivity'
+import type { LibraryReference } from '../specification'
+import type { Context } from './context'
+import { buildWire } from './lookup'
+
+/** Everything of one coil that the capacitances are made of. */
+export interface CoilElectrodes {
+  electrodes: Electrode[]
+  dielectrics: Dielectric[]
+}
+
+/**
+ * The laid coil as electrodes and insulation, from the centre leg to the outer legs. The core counts as one conductor
+ * (manganese-zinc ferrite conducts well enough at these frequencies); its backs over the ends of the layers and the flanks of
+ * sections are left out.
+ */
+export function coilElectrodes(context: Context, coil: Coil): CoilElectrodes {
+  const electrodes = [...coil.placements.flatMap((placement) => layerElectrodes(context, coil, placement)), ...shieldElectrodes(coil)]
+  return { electrodes: [...electrodes, ...coreElectrodes(context, coil)], dielectrics: dielectricsOf(context, coil) }
+}
+
+function layerElectrodes(context: Context, coil: Coil, placement: StepPlacement): Electrode[] {
+  const winding = context.specification.windings.find(({ id }) => id === placement.windingId)
+  const wire = winding && buildWire(context.index, winding)
+  const row = winding && context.index.find('wire', winding.wire.wire)
+  if (!winding || !wire || !row) return []
+  const parallel = Math.max(1, Math.floor(winding.wire.parallel))
+  const sectionMm = sectionLeftMm(context, placement.section)
+  return placement.layers.map((layer): Electrode => {
+    const shared = {
+      body: winding.id,
+      bottomMm: layer.bottomMm,
+      topMm: layer.topMm,
+      leftMm: sectionMm + layer.leftMm,
+      rightMm: sectionMm + layer.rightMm,
+      turnLengthMm: layer.turnLengthMm,
+    }
+    if (wire.form === 'foil') {
+      const turns = layer.turnsBefore + 0.5
+      return { ...shared, kind: 'plane', turnsAtLeft: turns, turnsAtRight: turns, cover: 1 }
+    }
+    return {
+      ...shared,
+      ...turnsAcross(layer),
+      kind: 'wire',
+      conductorMm: wire.overallMm - insulationMm(context, winding.id, wire.overallMm),
+      overallMm: wire.overallMm,
+      pitchMm: wirePitchMm(layer, parallel),
+      turns: layer.turns,
+      turnPitchMm: layer.pitchMm,
+      parallel,
+      permittivity: wirePermittivity(winding.wire.insulation).value,
+    }
+  })
+}
+
+const sectionLeftMm = ({ former }: Context, section: number) => (section - 1) * ((former?.windingWidthMm ?? 0) + (former?.flangeThicknessMm ?? 0))
+
+const turnsAcross = ({ turns, turnsBefore, rightward }: LayerPlacement) =>
+  rightward ? { turnsAtLeft: turnsBefore, turnsAtRight: turnsBefore + turns } : { turnsAtLeft: turnsBefore + turns, turnsAtRight: turnsBefore }
+
+/** All wires spread evenly over the width that the layer takes. */
+const wirePitchMm = ({ turns, leftMm, rightMm }: LayerPlacement, parallel: number) => (rightMm - leftMm) / (turns * parallel)
+
+/** Insulation on both sides of a wire, mm; of litz that of one strand, by the round wire of its diameter. */
+function insulationMm(context: Context, windingId: string, overallMm: number): number {
+  const winding = context.specification.windings.find(({ id }) => id === windingId)!
+  const row = context.index.find('wire', winding.wire.wire)!
+  if (row.form !== 'litz') return Math.min(overallMm * 0.99, overallMm - row.conductorMm)
+  const strand = context.index.library.wires.find(({ form, conductorMm, overallMm: overall }) => form === 'round' && Math.abs(conductorMm - row.conductorMm) < 1e-3 && overall[winding.wire.insulation] !== null)
+  const strandOverallMm = strand?.overallMm[winding.wire.insulation] ?? 1.15 * row.conductorMm
+  return Math.min(overallMm * 0.5, strandOverallMm - row.conductorMm)
+}
+
+const shieldElectrodes = (coil: Coil): Electrode[] =>
+  coil.shields.map((shield) => ({
+    kind: 'plane',
+    body: shield.windingId,
+    bottomMm: shield.bottomMm,
+    topMm: shield.topMm,
+    leftMm: shield.leftMm,
+    rightMm: shield.rightMm,
+    turnsAtLeft: 0.5,
+    turnsAtRight: 0.5,
+    turnLengthMm: shield.turnLengthMm,
+    cover: 1,
+  }))
+
+/** The centre leg below the tube and the outer legs over the coil. */
+function coreElectrodes({ core, former }: Context, coil: Coil): Electrode[] {
+  const { c, d, e, f } = core?.dimensionsMm ?? { c: null, d: null, e: null, f: null }
+  if (!core?.centreLeg || !former || d === null || e === null || f === null) return []
+  const middleMm = coil.layout.windowWidthMm / 2
+  const legMm = -(former.tubeWallMm + tubeClearanceMm(former, core.centreLeg))
+  const outerMm = legMm + (e - f) / 2
+  const shared = { kind: 'plane' as const, body: CORE_BODY, leftMm: Math.min(0, middleMm - d), rightMm: Math.max(coil.layout.windowWidthMm, middleMm + d), turnsAtLeft: 0, turnsAtRight: 0 }
+  const lengths = coil.placements.flatMap(({ turnLengthsMm }) => turnLengthsMm)
+  const [inner, outer] = [Math.min(...lengths, Infinity), Math.max(...lengths, 0)]
+  if (!(outer > 0) || outerMm <= coil.plainBuildMm) return [{ ...shared, bottomMm: legMm - 1, topMm: legMm, turnLengthMm: inner, cover: 1 }]
+  return [
+    { ...shared, bottomMm: legMm - 1, topMm: legMm, turnLengthMm: inner, cover: 1 },
+    { ...shared, bottomMm: outerMm, topMm: outerMm + 1, turnLengthMm: outer, cover: Math.min(1, (2 * (c ?? f)) / outer) },
+  ]
+}
+
+// ---------------------------------------------------------------------------------------------
+
+function dielectricsOf(context: Context, coil: Coil): Dielectric[] {
+  const { former } = context
+  const wall: Dielectric[] = former ? [{ bottomMm: -former.tubeWallMm, topMm: 0, leftMm: -Infinity, rightMm: Infinity, permittivity: permittivityOf(former.material).value }] : []
+  const materials = new Map<string, number>()
+  const permittivity = (stepId: string): number => {
+    const known = materials.get(stepId)
+    if (known !== undefined) return known
+    const value = permittivityOf(tapeMaterial(context, stepId)).value
+    materials.set(stepId, value)
+    return value
+  }
+  return [
+    ...wall,
+    ...coil.layout.items.flatMap((item): Dielectric[] => {
+      if (item.kind !== 'tape' && item.kind !== 'margin') return []
+      const heightMm = item.kind === 'tape' ? item.thicknessMm : item.heightMm
+      return [{ bottomMm: item.yMm, topMm: item.yMm + heightMm, leftMm: item.xMm, rightMm: item.xMm + item.widthMm, permittivity: permittivity(item.stepId) }]
+    }),
+  ]
+}
+
+function tapeMaterial({ specification, index }: Context, stepId: string): string {
+  const step = specification.sequence.find(({ id }) => id === stepId)
+  const reference: LibraryReference | null = step?.kind === 'tape' || step?.kind === 'margin' ? step.tape : step?.kind === 'winding' ? step.interlayerTape : null
+  return index.find('tape', reference)?.material ?? ''
+}
