@@ -6,18 +6,14 @@
 import { z } from 'zod'
 import type { RequirementSheet, SpecificationDocument, WindingSpecification } from '#shared/engine/specification'
 import { SPECIFICATION_SCHEMA } from '#shared/engine/specification'
+import { dutySchema } from './duties'
+import { finite, name, notNegative, positive, rowId, share, side } from './duties/fields'
 
 const MAXIMUM_ROWS = 200
 
 const text = z.string().max(500, 'Use at most 500 characters.')
 const longText = z.string().max(4000, 'Use at most 4000 characters.')
-const name = z.string().trim().min(1, 'Give a name.').max(60, 'Use at most 60 characters.')
 const terminal = z.string().trim().max(12, 'A terminal name has at most 12 characters.')
-const rowId = z.string().regex(/^[A-Za-z0-9._-]{1,40}$/, 'A row id has letters, digits, dot, dash or underscore.')
-const finite = z.number().refine((value) => Math.abs(value) < 1e15, 'The number is out of range.')
-const positive = finite.positive('Enter a number above zero.')
-const notNegative = finite.nonnegative('Enter zero or more.')
-const share = z.number().min(0, 'Enter a share from 0 to 1.').max(1, 'Enter a share from 0 to 1.')
 const celsius = z.number().min(-100, 'Temperatures start at −100 °C.').max(500, 'Temperatures end at 500 °C.')
 const count = z.int('Enter a whole number.').nonnegative().max(100_000)
 
@@ -44,71 +40,8 @@ const rows = <T extends z.ZodType>(row: T, maximum = MAXIMUM_ROWS) => z.array(ro
 
 // --- requirement sheet ---------------------------------------------------------------------------
 
-const side = z.enum(['primary', 'secondary', 'secondary-2', 'secondary-3', 'floating'])
-
-const dcSupply = z.strictObject({ kind: z.literal('dc'), minimumV: positive, nominalV: positive, maximumV: positive })
-const mainsSupply = z.strictObject({
-  kind: z.literal('mains'),
-  minimumV: positive,
-  nominalV: positive,
-  maximumV: positive,
-  lineFrequencyHz: positive,
-  bulkCapacitanceF: positive,
-  conductionTimeS: notNegative,
-})
-
-const inOrder = (supply: { minimumV: number; nominalV: number; maximumV: number }) =>
-  supply.minimumV <= supply.nominalV && supply.nominalV <= supply.maximumV
-const IN_ORDER = { error: 'Minimum, nominal and maximum voltage must rise in this order.', path: ['minimumV'] }
-
-const currentLimit = z.strictObject({ nominalA: positive, tolerance: share, delayS: notNegative })
-
-const converterOutput = z.strictObject({
-  id: rowId,
-  name,
-  role: z.enum(['main', 'auxiliary']),
-  voltageV: finite.refine((value) => value !== 0, 'An output needs a voltage other than zero.'),
-  rectifierDropV: notNegative,
-  fullLoadCurrentA: positive,
-  lightLoadCurrentA: notNegative,
-  side,
-})
-
-const flybackDuty = z.strictObject({
-  topology: z.literal('flyback'),
-  supply: z.discriminatedUnion('kind', [dcSupply, mainsSupply]).refine(inOrder, IN_ORDER),
-  outputs: z.array(converterOutput).min(1, 'Add at least one output.').max(12, 'At most 12 outputs.'),
-  switchingFrequencyHz: positive,
-  conduction: z.discriminatedUnion('kind', [
-    z.strictObject({ kind: z.literal('discontinuous'), idleShare: z.number().min(0).max(0.9) }),
-    z.strictObject({ kind: z.literal('boundary') }),
-    z.strictObject({ kind: z.literal('continuous'), rippleRatio: z.number().gt(0).max(2) }),
-  ]),
-  efficiency: z.number().gt(0.05, 'Enter the efficiency as a share above 0.05.').max(1, 'Enter the efficiency as a share up to 1.'),
-  maximumDutyRatio: z.number().gt(0.02).lt(0.98),
-  reflectedVoltageV: positive.nullable(),
-  switchDropV: notNegative,
-  currentLimit: currentLimit.nullable(),
-  clampSpikeV: notNegative.nullable(),
-  switchRatingV: positive.nullable(),
-})
-
-const coupledInductorDuty = z.strictObject({
-  topology: z.literal('coupled-inductor'),
-  supply: dcSupply.refine(inOrder, IN_ORDER),
-  outputVoltageV: positive,
-  outputDropV: notNegative,
-  outputCurrentA: positive,
-  ratio: positive,
-  switchingFrequencyHz: positive,
-  rippleRatio: z.number().gt(0).max(2),
-  efficiency: z.number().gt(0.05).max(1),
-  switchDropV: notNegative,
-  currentLimit: currentLimit.nullable(),
-})
-
 export const requirementSheetSchema = z.strictObject({
-  duty: z.discriminatedUnion('topology', [flybackDuty, coupledInductorDuty]),
+  duty: dutySchema,
   ambientC: celsius,
   permittedRiseK: positive.nullable(),
   fluxUtilisation: z.number().gt(0.05).max(1),

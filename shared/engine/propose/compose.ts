@@ -6,7 +6,8 @@ import { referenceTo } from '../evaluate/lookup'
 import type { LibraryIndex } from '../evaluate/lookup'
 import { clean, toDigits } from '../digits'
 import type { Library, TapeRow } from '../library'
-import type { MainsSupply, RequirementSheet, SpecificationDocument, Winding, WindingSpecification } from '../specification'
+import { dutyTraits } from '../topologies'
+import type { Duty, MainsSupply, RequirementSheet, SpecificationDocument, Winding, WindingSpecification } from '../specification'
 import { blankSpecification } from './blank'
 import { planBoundaries } from './boundaries'
 import type { Design } from './design'
@@ -59,15 +60,24 @@ function windingOf({ id, name, role, side, outputId, turns, wire }: Design['wind
   return { id, status: 'mandatory', origin: PROPOSED, name, role, side, outputId, startTerminal: start, finishTerminal: finish, turns, wire, rmsCurrentA: null, peakCurrentA: null, dcCurrentA: null, dcResistance: null }
 }
 
-function fillTitle({ title }: WindingSpecification, { duty }: RequirementSheet): void {
-  const powerW = duty.topology === 'flyback' ? duty.outputs.reduce((sum, { voltageV, fullLoadCurrentA }) => sum + Math.abs(voltageV) * fullLoadCurrentA, 0) : duty.outputVoltageV * duty.outputCurrentA
-  title.title = proposed(duty.topology === 'flyback' ? 'Transformer, flyback' : 'Inductor, coupled')
-  title.supplementaryTitle = proposed(`${toDigits(powerW, 2)} W, ${toDigits(duty.switchingFrequencyHz / 1000, 3)} kHz`, 'reference')
+/** Titles as ISO 7200 asks: the kind of part, then what it is for. */
+const TITLES: Readonly<Record<Duty['topology'], string>> = {
+  'flyback': 'Transformer, flyback',
+  'coupled-inductor': 'Inductor, coupled',
 }
 
-function fillElectrical({ electrical }: WindingSpecification, { duty }: RequirementSheet): void {
+function fillTitle({ title }: WindingSpecification, { duty }: RequirementSheet): void {
+  const { inputPowerW, efficiency, frequencyHz } = dutyTraits(duty)
+  title.title = proposed(TITLES[duty.topology])
+  const powerW = (inputPowerW ?? 0) * (efficiency ?? 1)
+  const power = powerW > 0 ? `${toDigits(powerW, 2)} W, ` : ''
+  title.supplementaryTitle = proposed(`${power}${toDigits(frequencyHz.minimum / 1000, 3)} kHz`, 'reference')
+}
+
+/** What the drawing takes over from the duty. */
+export function fillElectrical({ electrical }: WindingSpecification, { duty }: RequirementSheet): void {
   electrical.topology = proposed(duty.topology, 'reference')
-  electrical.switchingFrequencyHz = proposed({ minimum: duty.switchingFrequencyHz, maximum: duty.switchingFrequencyHz }, 'reference')
+  electrical.switchingFrequencyHz = proposed({ ...dutyTraits(duty).frequencyHz }, 'reference')
 }
 
 function fillCore({ core }: WindingSpecification, design: Design): void {
@@ -102,7 +112,8 @@ function fillInsulation({ insulation }: WindingSpecification, { design, requirem
   insulation.productStandard = proposed(preferences.productStandard)
   insulation.standardEdition = proposed(preferences.standardEdition)
   fillSurroundings(insulation, preferences)
-  if (duty.topology === 'flyback' && duty.supply.kind === 'mains') insulation.mainsVoltageV = proposed(ratedMainsV(duty.supply))
+  const { supply } = dutyTraits(duty)
+  if (supply?.kind === 'mains') insulation.mainsVoltageV = proposed(ratedMainsV(supply))
   insulation.materialGroup = fromLibrary(design.former.materialGroup, referenceTo(design.former))
   insulation.maximumAmbientC = proposed(requirement.ambientC)
   insulation.boundaries = planBoundaries(design)

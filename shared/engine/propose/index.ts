@@ -5,6 +5,7 @@ import type { Library } from '../library'
 import { proposeTests } from '../limits'
 import type { RequirementSheet, SpecificationDocument } from '../specification'
 import { blankSpecification } from './blank'
+import { fillElectrical } from './compose'
 import { derive } from './derive'
 import { chooseMaterial } from './material'
 import { planOf } from './plan'
@@ -52,6 +53,7 @@ function withoutSolution(requirement: RequirementSheet, work: () => Proposal): P
 
 function proposed(requirement: RequirementSheet, library: Library, wishes: ProposalPreferences): Proposal {
   const plan = planOf(requirement)
+  if (!plan) return unplannedProposal(requirement)
   const choice = chooseMaterial(library, plan.frequencyHz, wishes.materialId)
   const findings = [...plan.findings, ...protectionFindings(requirement, plan.onMains), ...choice.findings]
   if (!choice.material || library.tapes.length === 0) return blankProposal(requirement, findings)
@@ -74,6 +76,13 @@ const protectionFindings = ({ insulationMethod }: RequirementSheet, onMains: boo
   onMains && insulationMethod === 'functional' ? [{ code: 'mains-without-protection', severity: 'error', path: 'requirement.insulationMethod', values: {} }] : []
 
 const blankProposal = (requirement: RequirementSheet, findings: Finding[]): Proposal => ({ document: { specification: blankSpecification(), requirement }, findings, reasons: [] })
+
+/** The requirement is kept, and what it says of the drawing, so that a person can enter the part. */
+function unplannedProposal(requirement: RequirementSheet): Proposal {
+  const proposal = blankProposal(requirement, [{ code: 'duty-without-proposal', severity: 'warning', path: 'requirement.duty', values: { topology: requirement.duty.topology } }])
+  fillElectrical(proposal.document.specification, requirement)
+  return proposal
+}
 
 /** Twice: the second time distances and certificates follow from the voltages as they now stand, rounded up, in the document. */
 const completed = (document: SpecificationDocument, library: Library): SpecificationDocument => {

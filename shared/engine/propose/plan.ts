@@ -1,4 +1,4 @@
-import type { RequirementSheet, Side } from '../specification'
+import type { Duty, DutyOf, RequirementSheet, Side } from '../specification'
 import { planCoupled } from './plan-coupled'
 import { planFlyback } from './plan-flyback'
 import type { Finding } from '../findings'
@@ -34,5 +34,11 @@ export interface Plan {
   reasons: ProposalReason[]
 }
 
-/** @throws RangeError when the duty cannot be solved */
-export const planOf = ({ duty }: RequirementSheet): Plan => (duty.topology === 'flyback' ? planFlyback(duty) : planCoupled(duty))
+/** How the part of each topology is planned; one that is not here is entered by a person. */
+const PLANS: { readonly [T in Duty['topology']]?: (duty: DutyOf<T>) => Plan } = {
+  'flyback': planFlyback,
+  'coupled-inductor': planCoupled,
+}
+
+/** Null where no plan is made for the topology. @throws RangeError when the duty cannot be solved */
+export const planOf = ({ duty }: RequirementSheet): Plan | null => (PLANS[duty.topology] as ((duty: Duty) => Plan) | undefined)?.(duty) ?? null

@@ -1,14 +1,11 @@
 import { isWithin } from './document-paths'
 import type { FieldSpec, SectionPart } from './field-types'
-import { converterFields, newRequirement, supplyFields, surroundingFields } from './duty/duty-fields'
+import { allDutyFields } from './duty/duty-fields'
 import { SECTIONS, sectionOf } from './sections'
 
-const { duty: flyback } = newRequirement('flyback')
-const { duty: coupled } = newRequirement('coupled-inductor')
-const DUTY_FIELDS = [...supplyFields(flyback), ...converterFields(flyback), ...converterFields(coupled), ...surroundingFields]
 
 const fieldsOf = (part: SectionPart): readonly FieldSpec[] => (part.kind === 'stated' || part.kind === 'plain' ? part.fields : [])
-const FIELDS = [...SECTIONS.flatMap(({ parts }) => parts.flatMap(fieldsOf)), ...DUTY_FIELDS]
+const FIELDS = [...SECTIONS.flatMap(({ parts }) => parts.flatMap(fieldsOf)), ...allDutyFields()]
 const TABLES = SECTIONS.flatMap(({ parts }) => parts.flatMap((part) => (part.kind === 'rows' ? [part.rows] : [])))
 
 /** Where a place lies, in the words of the form: `Windings › winding 2`. */

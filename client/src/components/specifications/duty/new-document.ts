@@ -1,14 +1,15 @@
 import { blankSpecification, DEFAULT_PREFERENCES, type ProposalPreferences } from '#shared/engine/index'
-import type { RequirementSheet, SpecificationDocument, Stated } from '#shared/engine/specification'
+import type { Duty, RequirementSheet, SpecificationDocument, Stated } from '#shared/engine/specification'
 import { newRequirement } from './duty-fields'
+import { DUTY_TOPOLOGIES } from './forms'
 
 /** What is typed before there is a document. */
 export interface NewSpecification {
   partNumber: string
   title: string
-  way: 'flyback' | 'coupled-inductor' | 'direct'
-  flyback: RequirementSheet
-  coupled: RequirementSheet
+  way: Duty['topology'] | 'direct'
+  /** One sheet per topology, so that looking at another one loses nothing. */
+  sheets: Record<Duty['topology'], RequirementSheet>
   productStandard: ProposalPreferences['productStandard']
   standardEdition: string
   wireSystem: ProposalPreferences['wireSystem']
@@ -19,15 +20,15 @@ export const newSpecification = (): NewSpecification => ({
   partNumber: '',
   title: '',
   way: 'flyback',
-  flyback: newRequirement('flyback'),
-  coupled: newRequirement('coupled-inductor'),
+  sheets: Object.fromEntries(DUTY_TOPOLOGIES.map((topology) => [topology, newRequirement(topology)])) as NewSpecification['sheets'],
   productStandard: DEFAULT_PREFERENCES.productStandard,
   standardEdition: DEFAULT_PREFERENCES.standardEdition,
   wireSystem: DEFAULT_PREFERENCES.wireSystem,
   surroundings: { overvoltageCategory: 'II', pollutionDegree: 2, altitudeM: 2000 },
 })
 
-export const requirementOf = ({ way, flyback, coupled }: NewSpecification): RequirementSheet | null => (way === 'direct' ? null : way === 'flyback' ? flyback : coupled)
+/** The sheet of the way chosen; a draft kept from before a topology existed has none of it yet. */
+export const requirementOf = ({ way, sheets }: NewSpecification): RequirementSheet | null => (way === 'direct' ? null : (sheets?.[way] ?? newRequirement(way)))
 
 export const preferencesOf = ({ productStandard, standardEdition, wireSystem, surroundings }: NewSpecification): Partial<ProposalPreferences> => ({ productStandard, standardEdition, wireSystem, surroundings })
 

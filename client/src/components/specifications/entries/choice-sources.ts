@@ -99,7 +99,7 @@ export function choicesOf(field: FieldSpec, current: string, source: ChoiceSourc
     case 'boundary':
       return plain((specification?.insulation.boundaries ?? []).map(({ id, name }) => ({ value: id, label: name })))
     case 'output':
-      return plain(requirement?.duty.topology === 'flyback' ? requirement.duty.outputs.map(({ id, name }) => ({ value: id, label: name })) : [])
+      return plain(requirement && 'outputs' in requirement.duty ? requirement.duty.outputs.map(({ id, name }) => ({ value: id, label: name })) : [])
     case 'end':
       return ends(source)
     default:

@@ -1,0 +1,38 @@
+import type { FlybackDuty } from '#shared/engine/specification'
+import { figure, type FieldSpec } from '../../field-types'
+import { clampSpike, currentLimit, D, dcSupply, efficiency, frequency, newOutput, outputColumns, switchDrop, switchRating, type DutyForm } from './fields'
+
+const MODES = [{ value: 'discontinuous', label: 'discontinuous' }, { value: 'boundary', label: 'boundary' }, { value: 'continuous', label: 'continuous' }]
+const NEW_MODES = { discontinuous: { kind: 'discontinuous', idleShare: 0.2 }, boundary: { kind: 'boundary' }, continuous: { kind: 'continuous', rippleRatio: 0.5 } } as const
+
+function conductionFields(kind: FlybackDuty['conduction']['kind']): FieldSpec[] {
+  if (kind === 'boundary') return []
+  if (kind === 'discontinuous') return [figure(`${D}.conduction.idleShare`, 'Share of the period without current', '%', { min: 0, max: 0.9 })]
+  return [figure(`${D}.conduction.rippleRatio`, 'Ripple over mean on-time current', '%', { min: 0.01, max: 2 })]
+}
+
+export const FLYBACK_FORM: DutyForm<FlybackDuty> = {
+  title: 'flyback',
+  text: 'The program proposes ratio, inductance, core, turns, wire, sequence and tests.',
+  supplies: ['dc', 'mains'],
+  outputs: { columns: outputColumns, make: newOutput },
+  kinds: ({ conduction }) => [
+    { label: 'Conduction at minimum input, full load', place: `${D}.conduction`, choices: MODES, value: conduction.kind, write: (kind) => ({ [`${D}.conduction`]: NEW_MODES[kind as keyof typeof NEW_MODES] }) },
+  ],
+  fields: ({ conduction }) => [
+    frequency,
+    ...conductionFields(conduction.kind),
+    efficiency,
+    figure(`${D}.maximumDutyRatio`, 'Largest duty ratio', '%', { min: 0.03, max: 0.97, help: 'At minimum input; gives the ratio unless the reflected voltage is stated.' }),
+    figure(`${D}.reflectedVoltageV`, 'Reflected voltage', 'V', { optional: true }),
+    switchDrop,
+    clampSpike,
+    switchRating,
+    currentLimit,
+  ],
+  start: {
+    topology: 'flyback', supply: dcSupply, outputs: [{ id: 'o1', name: 'S1', role: 'main', voltageV: 5, rectifierDropV: 0.5, fullLoadCurrentA: 1, lightLoadCurrentA: 0.1, side: 'secondary' }],
+    switchingFrequencyHz: 100e3, conduction: { kind: 'continuous', rippleRatio: 0.5 }, efficiency: 0.85, maximumDutyRatio: 0.45, reflectedVoltageV: null, switchDropV: 0.2,
+    currentLimit: null, clampSpikeV: null, switchRatingV: null,
+  },
+}

@@ -1,0 +1,15 @@
+import type { Duty, DutyOf } from '#shared/engine/specification'
+import { COUPLED_INDUCTOR_FORM } from './coupled-inductor'
+import type { DutyForm } from './fields'
+import { FLYBACK_FORM } from './flyback'
+
+/** How each duty is entered: a new topology is one file and one line. Their order is that of the ways in. */
+export const DUTY_FORMS: { readonly [T in Duty['topology']]: DutyForm<DutyOf<T>> } = {
+  'flyback': FLYBACK_FORM,
+  'coupled-inductor': COUPLED_INDUCTOR_FORM,
+}
+
+/** The form of a duty. The table's key and the duty's own agree, which the type of an index cannot say. */
+export const formOf = <D extends Duty>(duty: D): DutyForm<D> => DUTY_FORMS[duty.topology] as unknown as DutyForm<D>
+
+export const DUTY_TOPOLOGIES = Object.keys(DUTY_FORMS) as Duty['topology'][]

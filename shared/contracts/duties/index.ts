@@ -1,0 +1,6 @@
+import { z } from 'zod'
+import { coupledInductorDuty } from './coupled-inductor'
+import { flybackDuty } from './flyback'
+
+/** One schema per topology: a new one is one file and one line. */
+export const dutySchema = z.discriminatedUnion('topology', [flybackDuty, coupledInductorDuty])
