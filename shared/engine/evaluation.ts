@@ -136,7 +136,10 @@ export interface WindingResult {
 export interface LeakageResult {
   windingId: string
   shortedWindingIds: string[]
+  /** From the two-dimensional field of the window. */
   inductanceH: number | null
+  /** By the field along the axis alone, for comparison. */
+  oneDimensionalH: number | null
   model: string
 }
 

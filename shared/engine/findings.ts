@@ -24,6 +24,7 @@ export type CompositionFindingCode =
   | 'turn-wider-than-layer'
   | 'layers-too-few'
   | 'too-many-turns-to-draw'
+  | 'leakage-wound-together'
   // the library
   | 'core-not-in-library'
   | 'former-not-in-library'

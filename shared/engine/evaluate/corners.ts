@@ -31,11 +31,12 @@ export function circuitOf(context: Context, { inductanceH, coil }: { inductanceH
   return circuit && { duty, circuit, primary, areaMm2: core ? core.effectiveAreaMm2 * sets : null }
 }
 
-function leakageIn({ specification }: Context, coil: Coil | null): CircuitInput<Duty>['leakageH'] {
+function leakageIn(context: Context, coil: Coil | null): CircuitInput<Duty>['leakageH'] {
+  const { specification } = context
   return (windingId, shortedIds) => {
     const driven = specification.windings.find(({ id }) => id === windingId)
     const shorted = specification.windings.filter(({ id }) => shortedIds.includes(id))
-    return coil && driven && shorted.length > 0 ? leakageBetweenH(coil, driven, shorted) : null
+    return coil && driven && shorted.length > 0 ? leakageBetweenH(context, coil, driven, shorted) : null
   }
 }
 

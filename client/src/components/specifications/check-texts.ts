@@ -121,6 +121,7 @@ export const FINDING_TEXTS: Readonly<Record<FindingCode, (values: Values) => str
   'turn-wider-than-layer': () => 'One turn is wider than the layer.',
   'layers-too-few': () => 'The turns need more layers than are asked for.',
   'too-many-turns-to-draw': () => 'There are too many turns to draw each of them.',
+  'leakage-wound-together': (v) => `${named(v, 'winding', 'A winding')} and ${named(v, 'shorted', 'another')} are wound together, turn beside turn: their leakage lies outside the model; state a measured value.`,
   'core-not-in-library': (v) => `The core ${named(v, 'id')} is not in the library.`,
   'former-not-in-library': (v) => `The coil former ${named(v, 'id')} is not in the library.`,
   'material-not-in-library': (v) => `The material ${named(v, 'id')} is not in the library.`,

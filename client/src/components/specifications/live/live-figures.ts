@@ -89,13 +89,19 @@ function leakage({ leakages, magnetics: { inductanceH } }: Evaluation, { winding
   const name = (id: string) => windings.find((winding) => winding.id === id)?.name ?? id
   return {
     title: 'Leakage inductance',
-    figures: leakages.map(({ windingId, shortedWindingIds, inductanceH: leakageH, model }, index) => ({
+    figures: leakages.map(({ windingId, shortedWindingIds, inductanceH: leakageH, oneDimensionalH, model }, index) => ({
       label: `${name(windingId)}, ${shortedWindingIds.map(name).join(', ')} shorted`,
       text: si(leakageH, 'H'),
-      note: leakageH !== null && inductanceH ? `${percent(leakageH / inductanceH)} of the inductance` : model,
+      note: leakageNote({ leakageH, oneDimensionalH, inductanceH }) ?? model,
       why: `leakages.${index}.inductanceH`,
     })),
   }
+}
+
+function leakageNote({ leakageH, oneDimensionalH, inductanceH }: { leakageH: number | null; oneDimensionalH: number | null; inductanceH: number | null }): string | null {
+  if (leakageH === null || !inductanceH) return null
+  const share = `${percent(leakageH / inductanceH)} of the inductance`
+  return oneDimensionalH ? `${share}; one-dimensional ${si(oneDimensionalH, 'H')}` : share
 }
 
 /** The figures beside the form, in groups; `–` where nothing can be told. */

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest'
-import { concentricLeakageH } from '../parasitics/leakage'
-import { stackLeakageH } from './leakage'
+import { concentricLeakageH } from './leakage'
+import { stackLeakageH } from './stack-leakage'
 
 // Own calculation with the closed form: MLT 52 mm, breadth 9.3 mm, N 60, builds 0.6 and 0.5 mm, 0.18 mm at each interface.
 const coil = { turns: 60, meanTurnLengthMm: 52, breadthMm: 9.3 }
