@@ -20,12 +20,12 @@ export default defineConfig({
       {
         extends: true,
         root: folder('.'),
-        test: { name: 'unit', include: ['shared/**/*.test.ts', 'server/**/*.test.ts', 'fake-services/**/*.test.ts', 'tests/support/**/*.test.ts', 'tests/reference/**/*.test.ts'], environment: 'node' },
+        test: { name: 'unit', include: ['shared/**/*.test.ts', 'server/**/*.test.ts', 'fake-services/**/*.test.ts', 'tests/support/**/*.test.ts', 'tests/reference/**/*.test.ts'], environment: 'node', testTimeout: 30_000 },
       },
       {
         extends: true,
         root: folder('.'),
-        test: { name: 'client', include: ['client/src/**/*.test.ts'], environment: 'happy-dom' },
+        test: { name: 'client', include: ['client/src/**/*.test.ts'], environment: 'happy-dom', testTimeout: 30_000 },
       },
       {
         extends: true,

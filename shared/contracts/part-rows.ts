@@ -121,6 +121,7 @@ export const materialDraftSchema = z.strictObject({
   initialPermeability: positive,
   permeabilityTolerance: share,
   saturation: z.array(saturationPoint).min(1, 'Enter at least one point of saturation.').max(50),
+  biasPoints: z.array(z.strictObject({ fieldAPerM: notNegative, permeabilityShare: share })).max(60).optional(),
   remanenceT: notNegative.nullable(),
   curieC: celsius.nullable(),
   lossFits: z.array(lossFit).max(20),

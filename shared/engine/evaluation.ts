@@ -104,6 +104,9 @@ export interface MagneticsResult {
   /** fluxWorstT / saturationT. */
   fluxUtilisation: number | null
   boundaryInductanceH: number | null
+  /** Core with a distributed gap: field at the full-load peak, A/m, and the inductance left there; null for other cores. */
+  biasFieldAPerM: number | null
+  inductanceUnderBiasH: number | null
   /** Volt-seconds at the primary that swing the flux from one end to the other, greatest of the corners. */
   voltSecondsVs: number | null
   /** Greatest swing of the corners at full load, on the least area. */

@@ -34,6 +34,7 @@ export type CompositionFindingCode =
   | 'generic-row-used'
   | 'capacitance-not-calculable'
   | 'no-saturation-data'
+  | 'no-bias-data'
   // the duty
   | 'no-primary-winding'
   | 'several-primary-windings'

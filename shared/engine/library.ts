@@ -93,6 +93,8 @@ export interface MaterialRow extends LibraryRow {
   permeabilityTolerance: number
   /** Points of saturation flux density over temperature, ascending. */
   saturation: readonly { temperatureC: number; fluxDensityT: number }[]
+  /** Powder: share of the initial permeability left under a static field, ascending; left out where nothing is known. */
+  biasPoints?: readonly { fieldAPerM: number; permeabilityShare: number }[] | undefined
   remanenceT: number | null
   curieC: number | null
   lossFits: readonly LossFit[]

@@ -1,3 +1,6 @@
+import { shippedLibrary } from '#server/db/seed/parts/library'
+import { COUPLED_INDUCTOR } from '#server/db/seed/specifications/requirements'
+import { evaluate, propose } from '#shared/engine/index'
 import type { CoreShape } from '#shared/engine/library'
 import { biasFieldAPerM, genericPowderBias, permeabilityShare, turnsUnderBias } from '#shared/engine/magnetics/bias'
 import { effectiveParametersOfShape } from '#shared/engine/magnetics/core-shapes'
@@ -109,5 +112,30 @@ describe('powder cores under bias', () => {
     expect(idle).toBe(Math.ceil(Math.sqrt(100e-6 / 60e-9)))
     expect(loaded).toBeGreaterThan(idle)
     expect(turnsUnderBias({ ...input, currentA: 50 })).toBeNull()
+  })
+})
+
+describe('a specification on a powder core', () => {
+  const library = shippedLibrary()
+  const ferrite = propose(COUPLED_INDUCTOR, library).document
+  const powder = structuredClone(ferrite)
+  powder.specification.core.material.value = { kind: 'material', id: 'powder-fesial-60', version: 1 }
+
+  it('has less inductance at its peak current than without current, by the bias curve', () => {
+    const { magnetics, windings } = evaluate(powder, library, { working: true })
+    const turns = powder.specification.windings[0]!.turns
+    const core = library.cores.find(({ id }) => id === powder.specification.core.core.value!.id)!
+    expectWithin(magnetics.biasFieldAPerM!, (turns * windings[0]!.peakA!) / (core.effectiveLengthMm * 1e-3), 1e-9)
+    const share = permeabilityShare(genericPowderBias({ saturationT: 1.05, permeability: 60 }), magnetics.biasFieldAPerM!)
+    if (share.state !== 'known') throw new Error('the example lies beyond the curve')
+    expectWithin(magnetics.inductanceUnderBiasH!, magnetics.inductanceH! * share.value, 1e-9)
+  })
+
+  it('says so where the curve is not known, and says nothing of a ferrite core with its gap in one place', () => {
+    const blind = { ...library, materials: library.materials.map(({ biasPoints: _, ...row }) => row) }
+    const answer = evaluate(powder, blind)
+    expect(answer.magnetics.inductanceUnderBiasH).toBeNull()
+    expect(answer.findings).toContainEqual(expect.objectContaining({ code: 'no-bias-data', path: 'core.material' }))
+    expect(evaluate(ferrite, library).magnetics.biasFieldAPerM).toBeNull()
   })
 })

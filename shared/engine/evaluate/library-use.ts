@@ -45,7 +45,7 @@ function formerFields({ former, insulation }: WindingSpecification): string[] {
 
 function materialFields({ core: { gap } }: WindingSpecification): string[] {
   const spread = gap.control.value === 'none' && gap.alTolerance.value === null ? ['permeabilityTolerance'] : []
-  return ['saturation', 'lossFits', 'initialPermeability', ...spread]
+  return ['saturation', 'lossFits', 'initialPermeability', 'biasPoints', ...spread]
 }
 
 const wireUses = ({ specification, index }: Context): RowUse[] =>

@@ -1,6 +1,7 @@
 import type { MagneticsResult } from '../evaluation'
 import { saturationFluxDensityT } from '../magnetics/flux'
 import { topologyOf } from '../topologies'
+import { biasResult } from './bias'
 import { attempt, explain, positive, report } from './context'
 import type { Context } from './context'
 import type { CornerState } from './corner-result'
@@ -41,6 +42,7 @@ export function magneticsResult(context: Context, { basis, corners, temperatureC
     fluxUtilisation,
     boundaryInductanceH: boundaryInductance(corners),
     ...swingOf(context, corners),
+    ...biasResult(context, basis, corners),
     fluxTransientT: isBipolar(context) ? (worst?.fluxT ?? null) : null,
   }
 }

@@ -141,6 +141,6 @@ function shieldPlacement(input: { step: Extract<SequenceStep, { kind: 'shield' }
   return {
     stepId: step.id, index, windingId: step.windingId, section, bottomMm, topMm, leftMm, rightMm: leftMm + widthMm,
     marginLeftMm: Math.max(0, leftMm), marginRightMm: Math.max(0, former.windingWidthMm - leftMm - widthMm),
-    turns: 1, turnsPerLayer: [1], turnLengthsMm: [], mostTurnsPerLayer: 1, bundleWidthMm: widthMm, availableMm: former.windingWidthMm, layerHeightMm: thicknessMm,
+    turns: 1, layers: [], turnsPerLayer: [1], turnLengthsMm: [], mostTurnsPerLayer: 1, bundleWidthMm: widthMm, availableMm: former.windingWidthMm, layerHeightMm: thicknessMm,
   }
 }

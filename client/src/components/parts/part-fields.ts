@@ -169,6 +169,13 @@ const MATERIAL: readonly PartSection[] = [
         line: 'point',
         columns: [figure('temperatureC', 'Temperature', '°C'), figure('fluxDensityT', 'Bs', 'mT')],
       },
+      {
+        type: 'list',
+        path: 'biasPoints',
+        label: 'Powder: permeability left under a static field',
+        line: 'point',
+        columns: [figure('fieldAPerM', 'Field', 'A/m'), figure('permeabilityShare', 'Left of µi', '%')],
+      },
     ],
   },
   {

@@ -129,6 +129,7 @@ export const FINDING_TEXTS: Readonly<Record<FindingCode, (values: Values) => str
   'wire-overall-diameter-unknown': (v) => `The library does not say the overall diameter of ${named(v, 'wire', 'this wire')} with this insulation.`,
   'generic-row-used': (v) => `${named(v, 'row', 'A row')} ${v.unverified ? `has figures that nobody has verified: ${named(v, 'unverified')}` : 'is generic and unverified: replace it by the maker’s figures before release'}.`,
   'capacitance-not-calculable': (v) => `The capacitance of the coil is not calculated: ${named(v, 'reason', 'its geometry has no solution')}`,
+  'no-bias-data': (v) => `How ${named(v, 'material', 'the material')} behaves under its direct field is not known: the inductance at full load is not told.`,
   'no-saturation-data': (v) => `The saturation of ${named(v, 'material', 'the material')} is not known at this temperature.`,
   'no-primary-winding': () => 'There is no primary winding.',
   'several-primary-windings': (v) => `Several windings are primary: ${named(v, 'windings')}. The one of the inductance counts.`,

@@ -1,3 +1,4 @@
+import { genericPowderBias } from '#shared/engine/magnetics/bias'
 import type { LossFit, MaterialRow } from '#shared/engine/library'
 
 /**
@@ -206,12 +207,13 @@ const powder = (id: string, name: string, initialPermeability: number, saturatio
   source: read === 'read' ? 'Maker’s catalogue, saturation flux density of the alloy' : 'Handbook value of the alloy, recalled',
   edition: 'Not stated',
   confidence: read === 'read' ? 'medium' : 'low',
-  unverified: ['densityKgPerM3', 'permeabilityTolerance', 'lossFits'],
-  note: `${note} Neither bias curve nor loss data are shipped: name the grade and its maker’s values before release.`,
+  unverified: ['densityKgPerM3', 'permeabilityTolerance', 'lossFits', 'biasPoints'],
+  note: `${note} The bias curve is a generic one, reckoned from saturation and permeability; loss data are not shipped: name the grade and its maker’s values before release.`,
   use: 'powder',
   initialPermeability,
   permeabilityTolerance: 0.08,
   saturation: saturation([25, saturationMT]),
+  biasPoints: genericPowderBias({ saturationT: saturationMT / 1e3, permeability: initialPermeability }),
   remanenceT: null,
   curieC: null,
   lossFits: [],
