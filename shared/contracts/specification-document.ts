@@ -414,6 +414,10 @@ const insulation = z.strictObject({
   maximumAmbientC: stated(celsius),
   maximumWindingC: stated(z.strictObject({ temperatureC: celsius, method: z.enum(['resistance', 'thermocouple']) })),
   polymers: rows(z.strictObject({ ...statedRow, use: text, material: text, flammability: text, fileNumber: text })),
+  // No default: an older document keeps its bytes, and so its hash, when it is read and written again.
+  criticalMaterials: rows(
+    z.strictObject({ ...statedRow, part: text, maker: text, type: text, rating: text, standard: text, certificate: text, expiresOn: z.iso.date().nullable() }),
+  ).optional(),
   partialDischarge: stated(
     z.strictObject({ required: z.boolean(), extinctionVPeak: positive.nullable(), limitC: positive.nullable(), method: text }),
   ),

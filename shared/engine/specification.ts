@@ -654,6 +654,8 @@ export interface InsulationSpecification {
   maximumAmbientC: Stated<number>
   maximumWindingC: Stated<{ temperatureC: number; method: 'resistance' | 'thermocouple' }>
   polymers: PolymerRow[]
+  /** For the safety laboratory. Absent in documents from before there was such a list, whose bytes stay what they are. */
+  criticalMaterials?: CriticalMaterial[]
   partialDischarge: Stated<{ required: boolean; extinctionVPeak: number | null; limitC: number | null; method: string }>
   impulse: Stated<{ voltageV: number; shots: number; polarity: 'both' | 'positive' | 'negative'; where: string }>
   cautions: Stated<string[]>
@@ -687,6 +689,20 @@ export interface WithstandTest {
   /** Shorter dwell used on every part. */
   routineDwellS: number
   routineVoltageV: number
+}
+
+/** A part or material on which safety depends, as the report of a safety laboratory lists it. */
+export interface CriticalMaterial extends StatedRow {
+  /** What it is in this part, e.g. `Coil former`, `Interwinding tape`. */
+  part: string
+  maker: string
+  type: string
+  /** E.g. `155 °C, V-0, CTI 175`. */
+  rating: string
+  standard: string
+  certificate: string
+  /** ISO 8601 date; null where the certificate has no end. */
+  expiresOn: string | null
 }
 
 export interface PolymerRow extends StatedRow {

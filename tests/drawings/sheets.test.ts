@@ -33,6 +33,8 @@ const contents = (sheet: Sheet): LabelShape[] => labels({ ...sheet, blocks: shee
 
 const textOf = (sheets: readonly Sheet[]): string => sheets.flatMap((sheet) => labels(sheet).map(({ text }) => text)).join(' ').replace(/[\u00a0\u202f]/g, ' ')
 
+const sheets = (document: SpecificationDocument) => drawSheets(inputFor(document, { release: null, revision: 'P3', status: 'draft' }))
+
 const parts = { mainsFlyback, buoySupply, coupledInductor, fullSpecification, stressPart }
 
 describe.each(Object.entries(parts))('the sheets of %s', (_, make) => {
@@ -102,7 +104,34 @@ describe('a contradictory draft', () => {
     specification.windings[2]!.finishTerminal = '99'
     const text = textOf(drawSheets(inputFor(document, { release: null, revision: 'P3', status: 'draft' })))
     expect(text).toContain('Winding P has 47 turns, the winding sequence lays 46.')
-    expect(text).toContain('Winding AUX: there is no terminal 99.')
+    expect(text).toContain('Winding AUX: there is no terminal 99 among the pins and flying leads.')
+  })
+
+  it('names both places of each contradiction', () => {
+    const document = mainsFlyback()
+    const { former, windings, core, tests, insulation, sequence } = document.specification
+    windings[1]!.startTerminal = windings[0]!.startTerminal
+    former.pins.push({ ...former.pins[3]!, xMm: 0, yMm: 0 })
+    Object.assign(core.gap.alH, { value: 310e-9, status: 'mandatory' })
+    Object.assign(core.gap.lengthMm, { value: 0.3, status: 'mandatory' })
+    tests[0]!.drivenTerminals = ['14']
+    tests[1]!.boundaryId = 'b9'
+    insulation.boundaries[0]!.between = [{ kind: 'side', side: 'secondary-3' }, { kind: 'core' }]
+    former.pinPitchMm.value = 3.3
+    sequence.splice(sequence.findIndex((step) => step.kind === 'winding' && step.windingId === 'w3'), 1)
+    const text = textOf(drawSheets(inputFor(document, { release: null, revision: 'P3', status: 'draft' })))
+    const expected = [
+      'Pin 1 is used twice: by P (primary) and by S1 (secondary).',
+      'Pins: 4 is there twice',
+      'AL and length are both mandatory',
+      'Test 1: pin 14 is marked as missing among the pins.',
+      'Test 2: there is no boundary b9.',
+      'ends at the secondary 3 side, where no winding lies.',
+      'Pin pitch 3.3 mm is stated, but no two pins lie that far apart.',
+      'Winding AUX is not in the winding sequence.',
+    ]
+    expect(expected.filter((each) => !text.includes(each))).toEqual([])
+    expect(sheets(document).flatMap((sheet) => [...textOverlaps(sheet), ...lineOverlaps(sheet)])).toEqual([])
   })
 
   it('is drawn when the library lacks every row', () => {

@@ -35,6 +35,9 @@ export function fullSpecification(): SpecificationDocument {
     partialDischarge: stated({ required: true, extinctionVPeak: 765, limitC: 1.05e-11, method: 'IEC 60270' }),
     impulse: stated({ voltageV: 4250, shots: 5, polarity: 'both' as const, where: 'P to S' }),
   })
+  specification.insulation.criticalMaterials = [
+    row('k1', { part: 'Interwinding tape', maker: 'Larkfell Films', type: 'LF-25 polyester', rating: '130 °C', standard: 'IEC 60454-3-1', certificate: 'VB-20418', expiresOn: '2029-04-30' }),
+  ]
   const bare = specification.insulation.boundaries[1]!
   Object.assign(bare, { distanceThroughInsulationMm: 0.45, insulationLayers: 2 })
   Object.assign(specification.marking, { safetyMark: stated('none'), legibleAfter: stated('varnish and wash') })

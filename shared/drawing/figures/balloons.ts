@@ -41,6 +41,7 @@ function spread(wanted: readonly number[]): number[] {
 function balloon({ text, tag }: BalloonTarget, end: PointMm, at: PointMm, hand: number): Balloon {
   const edge: PointMm = [at[0] - hand * RADIUS_MM, at[1]]
   const knee: PointMm = [edge[0] - hand * 2, at[1]]
+  const heightMm = text.length > 2 ? LETTERING.small : LETTERING.body
   return {
     at,
     shapes: [
@@ -48,7 +49,7 @@ function balloon({ text, tag }: BalloonTarget, end: PointMm, at: PointMm, hand: 
       line(knee, end, 'dimension', tag),
       circle(end, 0.35, { layer: 'dimension', fill: 'ink', tag }),
       circle(at, RADIUS_MM, { layer: 'thin', fill: 'paper', tag }),
-      label([at[0], at[1] - LETTERING.body / 2], text, { align: 'middle', tag }),
+      label([at[0], at[1] - heightMm / 2], text, { align: 'middle', heightMm, tag }),
     ],
   }
 }

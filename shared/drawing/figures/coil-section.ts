@@ -2,7 +2,7 @@ import type { Layout, LayoutItem } from '../../engine/evaluation'
 import type { CoreRow, FormerRow, Library } from '../../engine/library'
 import type { WindingSpecification } from '../../engine/specification'
 import type { BoxMm, Picture, PointMm, Shape } from '../model'
-import { box, hatchRectangle, label, LETTERING, line, moved, rectangle } from '../shapes'
+import { box, circle, hatchRectangle, label, LETTERING, line, moved, rectangle } from '../shapes'
 import { findRow } from '../sheets/input'
 import { balloons, type Balloon } from './balloons'
 import { scaleText, standardScale } from './scales'
@@ -23,6 +23,15 @@ export interface CoilSectionInput {
   balloons: boolean
   /** Any scale that fills the room, and no scale bar, for a screen. */
   anyScale?: boolean
+  /** Drawn over the section, with balloons of its own. Room above the window, mm of the part, is kept for it. */
+  overlay?: SectionOverlay
+}
+
+export interface SectionOverlay {
+  aboveMm: number
+  draw(place: (point: PointMm) => PointMm, scale: number): Shape[]
+  /** In the coordinates of the layout. */
+  balloons: readonly { text: string; tag: string; at: PointMm }[]
 }
 
 export interface CoilPicture extends Picture {
@@ -52,15 +61,15 @@ export function coilSection(input: CoilSectionInput): CoilPicture {
   const core = findRow(library, 'core', specification.core.core.value)
   const former = findRow(library, 'former', specification.former.former.value)
   const around = surroundings(input.extent === 'whole' ? core : null, former, layout)
-  const extent = extentOf(around, layout)
-  const frame = { side: input.balloons ? SIDE_MM : 5, foot: input.anyScale ? 1 : FOOT_MM }
+  const extent = extentOf(around, layout, input.overlay?.aboveMm ?? 0)
+  const frame = { side: input.balloons || input.overlay ? SIDE_MM : 5, foot: input.anyScale ? 1 : FOOT_MM }
   const room = { width: input.maximumWidthMm - 2 * frame.side, height: input.maximumHeightMm - frame.foot - 2 }
   const size = { width: extent.rightMm - extent.leftMm, height: extent.topMm - extent.bottomMm }
   const scale = input.anyScale ? Math.min(room.width / size.width, room.height / size.height) : standardScale(size, room)
   const pen: Pen = { input, around, extent, scale, place: ([x, y]) => [(x - extent.leftMm) * scale, (y - extent.bottomMm) * scale] }
-  const marks = input.balloons ? sectionBalloons(pen) : []
+  const marks = input.balloons ? sectionBalloons(pen) : overlayBalloons(pen)
   const bodyMm = Math.max(size.height * scale, ...marks.map(({ at }) => at[1] + 4))
-  const section = [...surroundingShapes(pen), ...layout.items.flatMap((item) => itemShapes(pen, item)), ...marks.flatMap(({ shapes }) => shapes)]
+  const section = [...surroundingShapes(pen), ...layout.items.flatMap((item) => itemShapes(pen, item)), ...overlayShapes(pen), ...marks.flatMap(({ shapes }) => shapes)]
   const low = Math.min(0, ...marks.map(({ at }) => at[1] - 4))
   return {
     widthMm: size.width * scale + 2 * frame.side,
@@ -101,7 +110,7 @@ function coreSection(core: CoreRow | null, tubeMm: number): Surroundings['core']
   return legMm < tubeMm ? { legMm, windowMm: e / 2, outerMm: a / 2, halfLengthMm: b, halfWindowMm: d } : null
 }
 
-function extentOf({ core, flangeMm, tubeMm, tubeWallMm }: Surroundings, layout: Layout): BoxMm {
+function extentOf({ core, flangeMm, tubeMm, tubeWallMm }: Surroundings, layout: Layout, aboveMm: number): BoxMm {
   const middle = layout.windowWidthMm / 2
   const halfLength = Math.max(core?.halfLengthMm ?? 0, middle + flangeMm)
   const build = Math.max(layout.windowHeightMm, layout.buildMm)
@@ -109,7 +118,7 @@ function extentOf({ core, flangeMm, tubeMm, tubeWallMm }: Surroundings, layout: 
     leftMm: middle - halfLength,
     rightMm: middle + halfLength,
     bottomMm: core ? 0 : tubeMm - tubeWallMm,
-    topMm: Math.max(core?.outerMm ?? 0, tubeMm + build),
+    topMm: Math.max(core?.outerMm ?? 0, tubeMm + build + aboveMm),
   }
 }
 
@@ -178,6 +187,7 @@ function itemShapes(pen: Pen, item: LayoutItem): Shape[] {
   switch (item.kind) {
     case 'turn': {
       const index = input.specification.windings.findIndex(({ id }) => id === item.windingId)
+      if (input.overlay) return [circle(at(item.xMm, item.yMm), (item.overallMm / 2) * scale, { layer: 'fine', fill: 'paper', tag: `winding:${item.windingId} step:${item.stepId}` })]
       return turnMark(index, at(item.xMm, item.yMm), (item.overallMm / 2) * scale, (item.conductorMm / 2) * scale, `winding:${item.windingId} step:${item.stepId}`)
     }
     case 'foil': {
@@ -186,15 +196,14 @@ function itemShapes(pen: Pen, item: LayoutItem): Shape[] {
     }
     case 'tape': {
       const [x, y] = at(item.xMm, item.yMm)
-      return [rectangle(box(x, y, item.widthMm * scale, item.thicknessMm * scale), { layer: 'fine', fill: 'dark-tint', tag: `step:${item.stepId}` })]
+      return [rectangle(box(x, y, item.widthMm * scale, item.thicknessMm * scale), { layer: 'fine', fill: input.overlay ? 'tint' : 'dark-tint', tag: `step:${item.stepId}` })]
     }
     case 'margin': {
       const [x, y] = at(item.xMm, item.yMm)
       const part = box(x, y, item.widthMm * scale, item.heightMm * scale)
       return [
-        rectangle(part, { layer: 'fine', fill: 'paper', tag: `step:${item.stepId}` }),
-        ...hatchRectangle(part, 1.2, 1, 'fine'),
-        ...hatchRectangle(part, 1.2, -1, 'fine'),
+        rectangle(part, { layer: 'fine', fill: input.overlay ? 'tint' : 'paper', tag: `step:${item.stepId}` }),
+        ...(input.overlay ? [] : [...hatchRectangle(part, 1.2, 1, 'fine'), ...hatchRectangle(part, 1.2, -1, 'fine')]),
       ]
     }
   }
@@ -213,6 +222,17 @@ function sectionBalloons(pen: Pen): Balloon[] {
     const place = (x: number) => pen.place([x, y + pen.around.tubeMm])
     return [{ text: String(index + 1), tag: `step:${step.id}`, leftEnd: place(Math.min(...boxes.map((each) => each.leftMm))), rightEnd: place(Math.max(...boxes.map((each) => each.rightMm))) }]
   })
+  return balloons(targets, left, right)
+}
+
+const onSection = ({ place, around }: Pen) => ([x, y]: PointMm): PointMm => place([x, y + around.tubeMm])
+
+const overlayShapes = (pen: Pen): Shape[] => pen.input.overlay?.draw(onSection(pen), pen.scale) ?? []
+
+function overlayBalloons(pen: Pen): Balloon[] {
+  const left = pen.place([pen.extent.leftMm, 0])[0] - 5
+  const right = pen.place([pen.extent.rightMm, 0])[0] + 5
+  const targets = (pen.input.overlay?.balloons ?? []).map(({ text, tag, at }) => ({ text, tag, leftEnd: onSection(pen)(at), rightEnd: onSection(pen)(at) }))
   return balloons(targets, left, right)
 }
 

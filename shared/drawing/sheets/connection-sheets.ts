@@ -1,11 +1,11 @@
 import { pinsInWords, pinView } from '../figures/pin-view'
 import { schematic, schematicInWords } from '../figures/schematic'
 import { drawTablePart, layoutTable, tableHeightMm } from '../table'
+import { contradictions } from './contradictions'
 import { electricalTable } from './electrical-table'
 import { add, addParagraphs, addTable, BODY_BOTTOM_MM, FIGURE_TITLE_MM, type Flow, newPage, placeFigure, roomMm, take } from './flow'
 import { SPACE } from './frame'
 import type { DrawingInput } from './input'
-import { contradictions } from './notices'
 import { terminalTable } from './record-tables'
 import { windingTable } from './winding-tables'
 

@@ -103,6 +103,9 @@ function placePart(flow: Flow, layout: TableLayout, firstRow: number): number {
   return part.nextRow
 }
 
+/** Columns lower than this are not begun unless all fits into them. */
+const LEAST_COLUMN_MM = 40
+
 interface Pending {
   layout: TableLayout
   nextRow: number
@@ -113,6 +116,7 @@ export function addColumns(flow: Flow, contents: readonly TableContent[], count:
   const columnMm = (widthMm - (count - 1) * GAP_MM) / count
   const filled = contents.filter(({ rows }) => rows.length > 0)
   const queue = pendingTables(filled, columnMm, count * roomMm(flow))
+  if (roomMm(flow) < LEAST_COLUMN_MM && remainingMm(queue) > count * roomMm(flow)) continuePage(flow)
   while (queue.length > 0) {
     if (!fillColumns(flow, queue, count, columnMm, leftMm)) continuePage(flow)
     else if (queue.length > 0) continuePage(flow)

@@ -4,7 +4,7 @@ import { formatEngineering, formatNumber } from '../../number-format'
 import type { Column, Row, TableContent } from '../table'
 import { duration, joined, plain, PREDICTED, quantity, STATUS_LETTERS } from './figures'
 import type { DrawingInput } from './input'
-import { boundaryEndWords, INSULATION_WORDS } from './words'
+import { boundaryEndWords, INSULATION_WORDS, STATE_WORDS } from './words'
 
 const distance = (key: string, group: string): Column[] => [
   { key: `${key}Specified`, header: 'specified', group, align: 'middle', always: true },
@@ -13,6 +13,7 @@ const distance = (key: string, group: string): Column[] => [
 ]
 
 const COLUMNS: readonly Column[] = [
+  { key: 'number', header: 'No.', align: 'middle', font: 'sans-bold', always: true },
   { key: 'name', header: 'Boundary', font: 'sans-bold', always: true },
   { key: 'between', header: 'Between' },
   { key: 'type', header: 'Insulation', always: true },
@@ -23,6 +24,7 @@ const COLUMNS: readonly Column[] = [
   ...distance('creepage', 'Creepage distance, mm'),
   ...distance('solid', 'Through insulation, mm'),
   ...distance('layers', 'Layers'),
+  { key: 'state', header: 'Judged', align: 'middle' },
   { key: 'status', header: 'M/R/V', align: 'middle' },
 ]
 
@@ -53,7 +55,7 @@ const UNKNOWN = '–'
 export function insulationSection(input: DrawingInput): InsulationSection {
   const { boundaries } = input.specification.insulation
   const sources: string[] = []
-  const rows = boundaries.map((boundary) => boundaryRow(input, boundary, sources))
+  const rows = boundaries.map((boundary, index) => boundaryRow(input, boundary, index + 1, sources))
   const tests = boundaries.map((boundary) => withstandRow(boundary, resultOf(input, boundary), sources))
   return {
     boundaries: { title: 'Insulation boundaries', columns: COLUMNS, rows },
@@ -64,12 +66,13 @@ export function insulationSection(input: DrawingInput): InsulationSection {
 
 const resultOf = ({ evaluation }: DrawingInput, { id }: InsulationBoundary) => evaluation?.boundaries.find(({ boundaryId }) => boundaryId === id)
 
-function boundaryRow(input: DrawingInput, boundary: InsulationBoundary, sources: string[]): Row {
+function boundaryRow(input: DrawingInput, boundary: InsulationBoundary, number: number, sources: string[]): Row {
   const result = resultOf(input, boundary)
   const required = (key: Exclude<keyof BoundaryResult['required'], 'testVoltageVRms'>) => sourced(result?.required[key], sources, predicted)
   return {
     tag: `boundary:${boundary.id}`,
     cells: {
+      number: plain(number),
       name: boundary.name,
       between: boundary.between.map((end) => boundaryEndWords(input.specification, end)).join(' – '),
       type: INSULATION_WORDS[boundary.insulation],
@@ -88,6 +91,7 @@ function boundaryRow(input: DrawingInput, boundary: InsulationBoundary, sources:
       layersSpecified: plain(boundary.insulationLayers) || UNKNOWN,
       layersRequired: required('layers'),
       layersProvided: predicted(result?.provided.layers),
+      state: result ? STATE_WORDS[result.state] : '',
       status: STATUS_LETTERS[boundary.status],
     },
   }

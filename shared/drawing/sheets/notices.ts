@@ -1,4 +1,3 @@
-import { CORE_TERMINAL } from '../../engine/limits/terminals'
 import type { WindingSpecification } from '../../engine/specification'
 import { STATUS_LETTERS } from './figures'
 import type { DrawingInput } from './input'
@@ -31,27 +30,4 @@ export function notStated(input: DrawingInput): string[] {
     const missing = fields.filter(({ text, applies }) => text === null && applies).map(({ label }) => label)
     return missing.length === 0 ? [] : [`${title}: ${missing.join('; ')}.`]
   })
-}
-
-/** What cannot be right in this document, for the face of a draft. */
-export function contradictions({ windings, sequence, former, tests, insulation }: WindingSpecification): string[] {
-  const known = new Set([...former.pins.filter(({ state }) => state !== 'missing').map(({ number }) => number), ...former.flyingLeads.map(({ name }) => name)])
-  const terminal = (where: string, name: string) => (known.has(name) || name === '' || name === CORE_TERMINAL ? [] : [`${where}: there is no terminal ${name}.`])
-  return [
-    ...windings.flatMap((winding) => [
-      ...terminal(`Winding ${winding.name}`, winding.startTerminal),
-      ...(winding.role === 'shield' ? [] : terminal(`Winding ${winding.name}`, winding.finishTerminal)),
-      ...turnsContradiction(winding, sequence),
-    ]),
-    ...tests.flatMap((test) => [...new Set([...test.drivenTerminals, ...test.shortedTerminals.flat(), ...test.openTerminals])].flatMap((name) => terminal(`Test ${test.number}`, name))),
-    ...tests.flatMap((test) => (test.boundaryId === null || insulation.boundaries.some(({ id }) => id === test.boundaryId) ? [] : [`Test ${test.number}: there is no boundary ${test.boundaryId}.`])),
-  ]
-}
-
-function turnsContradiction(winding: WindingSpecification['windings'][number], sequence: WindingSpecification['sequence']): string[] {
-  const steps = sequence.filter((step) => (step.kind === 'winding' || step.kind === 'shield') && step.windingId === winding.id)
-  if (steps.length === 0) return [`Winding ${winding.name} is not in the winding sequence.`]
-  if (winding.role === 'shield') return []
-  const laid = steps.reduce((sum, step) => sum + (step.kind === 'winding' ? step.turns : 0), 0)
-  return laid === winding.turns ? [] : [`Winding ${winding.name} has ${winding.turns} turns, the winding sequence lays ${laid}.`]
 }

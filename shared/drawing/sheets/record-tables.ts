@@ -1,6 +1,6 @@
 import type { WindingSpecification } from '../../engine/specification'
 import type { Column, TableContent } from '../table'
-import { inUnit, millimetres, plain, STATUS_LETTERS, yesNo } from './figures'
+import { millimetres, plain, STATUS_LETTERS, yesNo } from './figures'
 import { terminals } from './terminals'
 import { useText } from '../figures/pin-view'
 import type { FieldGroup } from './stated-fields'
@@ -75,38 +75,6 @@ export const flyingLeadTable = ({ former }: WindingSpecification): TableContent 
       status: STATUS_LETTERS[lead.status],
     },
   })),
-})
-
-/** Polymers with their flammability. */
-export const polymerTable = ({ insulation }: WindingSpecification): TableContent => ({
-  title: 'Polymers',
-  columns: [
-    { key: 'use', header: 'Use' },
-    { key: 'material', header: 'Material' },
-    { key: 'flammability', header: 'Flammability' },
-    { key: 'file', header: 'File number' },
-    { key: 'status', header: 'M/R/V', align: 'middle' },
-  ],
-  rows: insulation.polymers.map((row) => ({
-    cells: { use: row.use, material: row.material, flammability: row.flammability, file: row.fileNumber, status: STATUS_LETTERS[row.status] },
-  })),
-})
-
-/** Certificates of insulated wires. */
-export const certificateTable = ({ windings }: WindingSpecification): TableContent => ({
-  title: 'Wire certificates',
-  columns: [
-    { key: 'name', header: 'Winding', font: 'sans-bold' },
-    { key: 'standard', header: 'Standard' },
-    { key: 'number', header: 'Certificate' },
-    { key: 'peak', header: 'Peak, V', align: 'end' },
-    { key: 'frequency', header: 'Up to, kHz', align: 'end' },
-  ],
-  rows: windings.flatMap(({ name, wire: { certificate } }) =>
-    certificate
-      ? [{ cells: { name, standard: certificate.standard, number: certificate.number, peak: inUnit(certificate.peakVoltageV, 'V'), frequency: inUnit(certificate.maximumFrequencyHz, 'kHz') } }]
-      : [],
-  ),
 })
 
 /** Documents that belong to the drawing. */

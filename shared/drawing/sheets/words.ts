@@ -1,3 +1,4 @@
+import type { CheckState } from '../../engine/evaluation'
 import type { SheetStatus } from './input'
 import type {
   BoundaryEnd,
@@ -137,3 +138,5 @@ export function boundaryEndWords(specification: WindingSpecification, end: Bound
       return 'core'
   }
 }
+
+export const STATE_WORDS: Record<CheckState, string> = { met: 'met', 'not-met': 'NOT MET', 'not-checkable': 'not checkable' }
