@@ -10,7 +10,7 @@ const noPages = { group: ['@/views/*', '@/queries/*', '@/api/*', '@/router'], me
 const noHttp = { group: ['express', '**/routes/*', '**/middleware/*'], message: 'Services and policies do not know HTTP.' }
 const pureShared = { regex: '^(#server/|@/|node:|vue$|express$)', message: 'shared/ runs anywhere.' }
 const engineOnly = { regex: '^(?!\\.{1,2}/|#shared/(engine|units)|vitest$|fast-check$)', message: 'The engine imports itself and units.' }
-const drawingOnly = { regex: '^(?!\\.{1,2}/|#shared/(engine|units|drawing)|qrcode-generator$|vitest$|fast-check$)', message: 'The drawing imports the engine, units and itself, and the module matrix of a code.' }
+const drawingOnly = { regex: '^(?!\\.{1,2}/|#shared/(engine|units|drawing)|qrcode-generator$|jsqr$|vitest$|fast-check$)', message: 'The drawing imports the engine, units and itself, and the module matrix of a code.' }
 const plainOnly = { regex: '^(?!\\.{1,2}/|#shared/(units|shown-units|number-text|number-format|money|workflow|measurement|costing)|decimal\\.js$|vitest$|fast-check$)', message: 'workflow, measurement and costing import units and decimals only.' }
 
 // `regex`, not `group`, where a pattern starts with #: group patterns are gitignore lines.
