@@ -53,15 +53,23 @@ export function windowEnergyH(input: WindowEnergyInput): Float64Array {
   input.rectangles.forEach((rectangle) => requireRectangle(rectangle, window))
   const matrix = new Float64Array(groups * groups)
   const first = Math.PI / window.breadthMm
-  const outerMm = window.heightMm + (window.depth.kind === 'round' ? window.depth.legRadiusMm : 0)
-  const last = Math.min(waves, Math.floor(GREATEST_ARGUMENT / (first * outerMm)))
-  const bands = bandsOf(input.rectangles, THICKEST_IN_WAVES / (first * Math.max(1, last)))
+  const last = lastWave(window, waves)
+  const bands = bandsOf(input.rectangles, first * Math.max(1, last))
   addMean(matrix, input, bands)
   for (let n = 1; n <= last; n++) addWave(matrix, input, bands, n * first)
   // mm of turn length over mm of breadth times mm of height: one mm is left.
   const unit = MU_0_H_PER_M * 1e-3
   return matrix.map((value) => value * unit)
 }
+
+/** Number of the last axial wave whose cylinder functions stay in range. */
+export function lastWave({ breadthMm, heightMm, depth }: FieldWindow, waves: number): number {
+  const outerMm = heightMm + (depth.kind === 'round' ? depth.legRadiusMm : 0)
+  return Math.min(waves, Math.floor((GREATEST_ARGUMENT * breadthMm) / (Math.PI * outerMm)))
+}
+
+/** How one axial wave of wave number q crosses the window. */
+export const radialWave = (q: number, { depth, heightMm }: FieldWindow): RadialWave => (depth.kind === 'round' ? cylinderWave(q, depth.legRadiusMm, heightMm) : planeWave(q, heightMm))
 
 function requireRectangle({ radialFromMm, radialToMm, axialFromMm, axialToMm }: CurrentRectangle, { heightMm, breadthMm }: FieldWindow): void {
   requireNotNegative('radialFromMm', radialFromMm)
@@ -72,13 +80,15 @@ function requireRectangle({ radialFromMm, radialToMm, axialFromMm, axialToMm }: 
 }
 
 /** Radial bands that no edge of a rectangle cuts: two bands are either one and the same or apart. */
-interface Band {
+export interface Band {
   fromMm: number
   toMm: number
   parts: { rectangle: CurrentRectangle; share: number }[]
 }
 
-function bandsOf(rectangles: readonly CurrentRectangle[], thickestMm: number): Band[] {
+/** Bands so thin that the waves up to `lastWave` (per mm) vary little in them. */
+export function bandsOf(rectangles: readonly CurrentRectangle[], lastWave: number): Band[] {
+  const thickestMm = THICKEST_IN_WAVES / lastWave
   const edges = [...new Set(rectangles.flatMap(({ radialFromMm, radialToMm }) => [radialFromMm, radialToMm]))].sort((a, b) => a - b)
   return edges.slice(1).flatMap((toMm, index) => {
     const fromMm = edges[index]!
@@ -122,8 +132,8 @@ function addMean(matrix: Float64Array, { window, groups, rectangles, outerShare 
 }
 
 function addWave(matrix: Float64Array, { window, groups }: WindowEnergyInput, bands: readonly Band[], q: number): void {
-  const { depth, heightMm, breadthMm } = window
-  const wave = depth.kind === 'round' ? cylinderWave(q, depth.legRadiusMm, heightMm) : planeWave(q, heightMm)
+  const { breadthMm } = window
+  const wave = radialWave(q, window)
   const points = bands.map((band) => bandWave(band, window, wave, q))
   const amplitudes = bands.map(({ parts }) => {
     const row = new Float64Array(groups)
@@ -147,22 +157,26 @@ function addWave(matrix: Float64Array, { window, groups }: WindowEnergyInput, ba
 }
 
 /** Mean of cos q·y over a stretch of the axis. */
-const meanCosine = (q: number, from: number, to: number): number => (Math.sin(q * to) - Math.sin(q * from)) / (q * (to - from))
+export const meanCosine = (q: number, from: number, to: number): number => (Math.sin(q * to) - Math.sin(q * from)) / (q * (to - from))
+
+/** Root of the turn length (and for cylinder waves of their weight) that a place contributes to a product of two. */
+export const turnRoot = (point: RadialPoint, { depth }: FieldWindow, radialMm: number): number =>
+  depth.kind === 'round' ? Math.sqrt(2 * Math.PI) * point.weight : Math.sqrt(turnLengthAtMm(depth, radialMm))
 
 /** What a band does in one wave: as source or place of another band, and with itself. */
-interface BandWave {
+export interface BandWave {
   inner: number
   outer: number
   own: number
 }
 
-function bandWave({ fromMm, toMm }: Band, { depth }: FieldWindow, wave: RadialWave, q: number): BandWave {
+export function bandWave({ fromMm, toMm }: Band, window: FieldWindow, wave: RadialWave, q: number): BandWave {
   const middleMm = (fromMm + toMm) / 2
   const point = wave.at(middleMm)
-  const root = depth.kind === 'round' ? Math.sqrt(2 * Math.PI) * point.weight : Math.sqrt(turnLengthAtMm(depth, middleMm))
+  const root = turnRoot(point, window, middleMm)
   const spread = (q * (toMm - fromMm)) / 2
   const mean = spread < 1e-4 ? 1 : Math.sinh(spread) / spread
-  return { inner: root * mean * point.innerA, outer: root * mean * point.outerA, own: ownShare(point, wave.scale, { root, mean, spread, q, lengthMm: turnLengthAtMm(depth, middleMm) }) }
+  return { inner: root * mean * point.innerA, outer: root * mean * point.outerA, own: ownShare(point, wave.scale, { root, mean, spread, q, lengthMm: turnLengthAtMm(window.depth, middleMm) }) }
 }
 
 /**

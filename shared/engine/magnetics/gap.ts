@@ -8,10 +8,13 @@ import { requireNotNegative, requirePositive } from '../require'
  * - `mclyman-gap`: F = 1 + l_g/√A·ln(2G/l_g) on the gap's reluctance only.
  * - `mclyman-path`: the same F on the whole path, L = F·µ0·N²·A_e/(l_g + l_e/µ_r).
  * - `dixon-round-leg`: the gap's area is that of a leg whose diameter is greater by l_g.
+ * - `conformal`: each direction of the leg by the Schwarz–Christoffel map of its edges, F = F(a)·F(b); both are the diameter
+ *   of a round leg.
  *
- * Sources: C. McLyman, Transformer and Inductor Design Handbook, 3rd ed. 2004; L. Dixon, SLUP127.
+ * Sources: C. McLyman, Transformer and Inductor Design Handbook, 3rd ed. 2004; L. Dixon, SLUP127; J. Mühlethaler, J. Kolar,
+ * A. Ecklebe, A Novel Approach for 3D Air Gap Reluctance Calculations, ECCE Asia 2011.
  */
-export type FringingModel = 'none' | 'mclyman-gap' | 'mclyman-path' | 'dixon-round-leg'
+export type FringingModel = 'none' | 'mclyman-gap' | 'mclyman-path' | 'dixon-round-leg' | 'conformal'
 
 export interface GappedCore {
   effectiveAreaMm2: number
@@ -24,6 +27,8 @@ export interface GappedCore {
   windingLengthMm?: number
   /** Diameter of the gapped leg; needed by the model of Dixon. */
   legDiameterMm?: number
+  /** Both sides of the gapped leg's section, its diameter twice where it is round; needed by the conformal model. */
+  legSidesMm?: readonly [number, number]
   fringing: FringingModel
 }
 
@@ -32,7 +37,8 @@ function checkCore(core: GappedCore): void {
   requirePositive('effectiveLengthMm', core.effectiveLengthMm)
   requirePositive('permeability', core.permeability)
   if (core.gapAreaMm2 !== undefined) requirePositive('gapAreaMm2', core.gapAreaMm2)
-  if (core.fringing === 'mclyman-gap' || core.fringing === 'mclyman-path') requirePositive('windingLengthMm', core.windingLengthMm ?? Number.NaN)
+  if (core.fringing !== 'none' && core.fringing !== 'dixon-round-leg') requirePositive('windingLengthMm', core.windingLengthMm ?? Number.NaN)
+  if (core.fringing === 'conformal') for (const side of core.legSidesMm ?? [Number.NaN]) requirePositive('legSidesMm', side)
   if (core.fringing === 'dixon-round-leg') requirePositive('legDiameterMm', core.legDiameterMm ?? Number.NaN)
 }
 
@@ -49,8 +55,21 @@ export function fringingFactor(core: GappedCore, gapMm: number): number {
   requireNotNegative('gapMm', gapMm)
   if (core.fringing === 'none' || gapMm === 0) return 1
   if (core.fringing === 'dixon-round-leg') return (1 + gapMm / core.legDiameterMm!) ** 2
+  if (core.fringing === 'conformal') return core.legSidesMm!.reduce((factor, sideMm) => factor * edgeFactor(gapMm, sideMm, core.windingLengthMm!), 1)
   const areaMm2 = core.gapAreaMm2 ?? core.effectiveAreaMm2
   return 1 + (gapMm / Math.sqrt(areaMm2)) * Math.max(0, Math.log((2 * core.windingLengthMm!) / gapMm))
+}
+
+/**
+ * Fringing in the plane across one side of a leg in the middle of its winding length G:
+ * F = 1 + l_g/a·(2/π)·(1 + ln(π·h/(2·l_g))), h = (G − l_g)/2 the leg on either side of the gap; 1 where the leg is too short for it.
+ *
+ * Source: A. Balakrishnan, W. Joines, T. Wilson, IEEE Trans. Power Electron. 12 (1997) 654; J. Mühlethaler (2011).
+ */
+function edgeFactor(gapMm: number, sideMm: number, windingLengthMm: number): number {
+  const legMm = (windingLengthMm - gapMm) / 2
+  if (!(legMm > 0)) return 1
+  return 1 + (gapMm / sideMm) * (2 / Math.PI) * Math.max(0, 1 + Math.log((Math.PI * legMm) / (2 * gapMm)))
 }
 
 /**

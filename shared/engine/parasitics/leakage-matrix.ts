@@ -51,6 +51,13 @@ export function leakageMatrix(coil: LaidCoil): LeakageMatrix {
   }
 }
 
+/** The layers of one winding as rectangles of its ampere-turns, placed in the window. */
+export function windingRectangles(coil: LaidCoil, windingId: string): CurrentRectangle[] {
+  const layers = currentLayers(coil).filter((layer) => layer.windingId === windingId)
+  const turns = layers.reduce((sum, layer) => sum + layer.turns, 0)
+  return layers.map((layer) => ({ group: 0, share: layer.turns / turns, ...placedRectangle(layer, coil.placed) }))
+}
+
 /** Thinnest band that a layer moved to the edge of the window is left. */
 const THINNEST_MM = 1e-3
 

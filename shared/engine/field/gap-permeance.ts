@@ -1,0 +1,160 @@
+import { MU_0_H_PER_M } from '../constants'
+import { requirePositive } from '../require'
+import { bandWave, bandsOf, lastWave, meanCosine, radialWave, turnRoot, windowEnergyH } from './window-energy'
+import type { CurrentRectangle } from './window-energy'
+import { gapMmf, requireWindow, turnLengthAtMm } from './window'
+import type { FieldWindow, GapPlace, WallMmf } from './window'
+
+export const GAP_FIELD_MODEL = 'field of the window with the gap as its magnetomotive force (Roth 1928; round legs Rabins 1956), coil as it lies'
+
+export interface GapFieldInput {
+  window: FieldWindow
+  /** The winding as rectangles whose shares sum to 1. */
+  rectangles: readonly CurrentRectangle[]
+  /** Of the gapped centre leg; outer legs together have the same. */
+  legAreaMm2: number
+  position: 'centre-leg' | 'all-legs-spacer'
+  grinding: GapPlace['grinding']
+}
+
+export interface GapPermeance {
+  /** Of gap and window together per turn squared, without the core, H. */
+  permeanceH: number
+  /** Over that of straight lines across the gap. */
+  fringingFactor: number
+}
+
+/** Waves in which the coil meets the gap; shorter ones die away between leg and coil. */
+const COIL_WAVES = 48
+
+/** Half a gap in radians of the shortest wave that is summed: what is left out of the fringing field is below ½ %. */
+const GAP_RESOLUTION = 8
+
+/**
+ * Permeance of an air gap with its fringing field and the coil's own field in the window, as a function of the gap's length
+ * in mm: µ0·A/l_g across the gap, and the energy of the window with the gap as an even sheet of magnetomotive force on the leg.
+ * What depends on the coil alone is calculated once.
+ *
+ * Source: as `windowEnergyH`; energy of unit magnetomotive force.
+ *
+ * @throws RangeError on a window or an area out of range; the returned function unless the gap is positive and shorter than the window
+ */
+export function gapFieldPermeance(input: GapFieldInput): (gapMm: number) => GapPermeance {
+  const { window, rectangles, legAreaMm2, position, grinding } = input
+  requireWindow(window)
+  requirePositive('legAreaMm2', legAreaMm2)
+  const spacer = position === 'all-legs-spacer'
+  const unit = MU_0_H_PER_M * 1e-3
+  const coil = windowEnergyH({ window, groups: 1, rectangles: rectangles.map((one) => ({ ...one, group: 0 })), outerShare: spacer ? 0.5 : 0 })[0]! / unit
+  const waves = coilWaves(input)
+  return (gapMm) => {
+    requirePositive('gapMm', gapMm)
+    if (gapMm >= window.breadthMm) throw new RangeError(`gapMm must be shorter than the window of ${window.breadthMm} mm: ${gapMm}`)
+    const gap = gapMmf(window, { position, lengthMm: gapMm, grinding })
+    const strips = gap.kind === 'walls' ? gap.strips : []
+    const straight = legAreaMm2 / (gapMm * (spacer ? 2 : 1))
+    const total = straight + coil + stripEnergy(window, strips, waves, gapMm)
+    return { permeanceH: total * unit, fringingFactor: total / straight }
+  }
+}
+
+/** What the coil has at both walls in one axial wave, and the walls with themselves and each other. */
+interface WallWave {
+  coilLeg: number
+  coilOuter: number
+  leg: number
+  outer: number
+  across: number
+}
+
+function coilWaves({ window, rectangles }: GapFieldInput): WallWave[] {
+  const first = Math.PI / window.breadthMm
+  const last = lastWave(window, COIL_WAVES)
+  const bands = bandsOf(rectangles, first * last)
+  return Array.from({ length: last }, (_, index) => {
+    const q = (index + 1) * first
+    const wave = radialWave(q, window)
+    const [atLeg, atOuter] = [wave.at(0), wave.at(window.heightMm)]
+    const leg = turnRoot(atLeg, window, 0)
+    const outer = turnRoot(atOuter, window, window.heightMm)
+    let coilLeg = 0
+    let coilOuter = 0
+    for (const band of bands) {
+      const { inner, outer: outward } = bandWave(band, window, wave, q)
+      const amplitude = band.parts.reduce((sum, { rectangle, share }) => sum + share * meanCosine(q, rectangle.axialFromMm, rectangle.axialToMm), 0)
+      coilLeg += wave.scale * leg * atLeg.innerA * outward * amplitude
+      coilOuter += wave.scale * outer * atOuter.outerA * inner * amplitude
+    }
+    return {
+      coilLeg, coilOuter,
+      leg: wave.scale * leg ** 2 * atLeg.innerA * atLeg.outerA,
+      outer: wave.scale * outer ** 2 * atOuter.innerA * atOuter.outerA,
+      across: wave.scale * leg * outer * atLeg.innerA * atOuter.outerA,
+    }
+  })
+}
+
+/** Energy of the gaps' magnetomotive force with itself and against the coil, mm. */
+function stripEnergy(window: FieldWindow, strips: readonly WallMmf[], coil: readonly WallWave[], gapMm: number): number {
+  const { breadthMm } = window
+  const first = Math.PI / breadthMm
+  const last = Math.max(coil.length, Math.ceil((2 * GAP_RESOLUTION) / (first * gapMm)))
+  let sum = 0
+  for (let n = 1; n <= last; n++) {
+    const q = n * first
+    const wall = coil[n - 1] ?? shortWave(window, q)
+    let leg = 0
+    let outer = 0
+    for (const { wall: side, share, fromMm, toMm } of strips) {
+      const amplitude = share * meanCosine(q, fromMm, toMm)
+      if (side === 'leg') leg += amplitude
+      else outer += amplitude
+    }
+    sum += leg ** 2 * wall.leg + outer ** 2 * wall.outer + 2 * leg * outer * wall.across - 2 * (leg * wall.coilLeg + outer * wall.coilOuter)
+  }
+  return (2 / breadthMm) * sum
+}
+
+/**
+ * Waves much shorter than the window: each wall by itself, 1/q times the turn length; at a round leg times K1/K0 ≈ 1 + 1/(2qr).
+ *
+ * Source: M. Abramowitz, I. Stegun, 9.7.2.
+ */
+function shortWave({ depth, heightMm }: FieldWindow, q: number): WallWave {
+  const [leg, outer] = [turnLengthAtMm(depth, 0), turnLengthAtMm(depth, heightMm)]
+  const round = depth.kind === 'round'
+  const bend = (lengthMm: number) => (round ? Math.PI / (q * lengthMm) : 0)
+  return { coilLeg: 0, coilOuter: 0, leg: (leg / q) * (1 + bend(leg)), outer: (outer / q) * (1 - bend(outer)), across: 0 }
+}
+
+/**
+ * Gap that gives an inductance factor in series with a core, mm; null when no gap of up to `longestMm` does.
+ *
+ * Source: reluctances in series, 1/A_L = l_e/(µ0·µ_r·A_e) + 1/P(l_g).
+ *
+ * @throws RangeError unless both are positive
+ */
+export function gapByFieldMm(permeance: (gapMm: number) => GapPermeance, { inductanceFactorH, corePermeanceH, longestMm }: { inductanceFactorH: number; corePermeanceH: number; longestMm: number }): number | null {
+  requirePositive('inductanceFactorH', inductanceFactorH)
+  requirePositive('corePermeanceH', corePermeanceH)
+  const wanted = 1 / inductanceFactorH - 1 / corePermeanceH
+  if (!(wanted > 0)) return null
+  // Both sides as logarithms are nearly straight, so the rule of false position (Illinois) takes some six steps.
+  const excess = (logMm: number) => -Math.log(permeance(Math.exp(logMm)).permeanceH * wanted)
+  let [low, high] = [Math.log(longestMm * 1e-4), Math.log(longestMm)]
+  let [atLow, atHigh] = [excess(low), excess(high)]
+  if (atLow > 0 || atHigh < 0) return null
+  for (let step = 0; step < 60 && high - low > 1e-9; step++) {
+    const middle = (low * atHigh - high * atLow) / (atHigh - atLow)
+    const atMiddle = excess(middle)
+    if (Math.abs(atMiddle) < 1e-9) return Math.exp(middle)
+    if (atMiddle < 0) {
+      ;[low, atLow] = [middle, atMiddle]
+      atHigh /= 2
+    } else {
+      ;[high, atHigh] = [middle, atMiddle]
+      atLow /= 2
+    }
+  }
+  return Math.exp((low + high) / 2)
+}
