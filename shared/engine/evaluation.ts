@@ -94,6 +94,8 @@ export interface MagneticsResult {
   gapMm: number | null
   fringingFactor: number | null
   gapModel: string
+  /** The same by the field of the window, with the coil as it lies; null where the window or the coil is not known. */
+  gapFieldMm: number | null
   /** At full load and minimum input, nominal inductance. */
   fluxPeakT: number | null
   /** Largest inductance, current limit at its upper tolerance with delay, on the minimum area. */

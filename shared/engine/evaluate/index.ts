@@ -57,7 +57,7 @@ export function evaluate(document: SpecificationDocument, library: Library, opti
   const body: Omit<Evaluation, 'checks'> = {
     engine: ENGINE_VERSION,
     corners: corners.map(({ result }) => result),
-    magnetics: magneticsResult(context, { basis, corners, temperatureC: hotC }),
+    magnetics: magneticsResult(context, { coil, basis, corners, temperatureC: hotC }),
     windings: windingResults(context, { coppers, coil, corners, hottest: heat.hottest, hotC }),
     leakages: leakages(context, coil),
     ...capacitanceResults(context, coil, basis),

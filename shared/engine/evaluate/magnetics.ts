@@ -1,3 +1,4 @@
+import type { Coil } from '../build'
 import type { MagneticsResult } from '../evaluation'
 import { saturationFluxDensityT } from '../magnetics/flux'
 import { topologyOf } from '../topologies'
@@ -5,6 +6,7 @@ import { biasResult } from './bias'
 import { attempt, explain, positive, report } from './context'
 import type { Context } from './context'
 import type { CornerState } from './corner-result'
+import { gapByWindowField } from './gap-field'
 import { gapOf, originOf } from './inductance'
 import type { InductanceBasis } from './inductance'
 import { worstFlux } from './worst-flux'
@@ -15,12 +17,13 @@ export { fullLoadPeakA } from './worst-flux'
 const LEAST_SATURATION_TEMPERATURE_C = 100
 
 interface MagneticsInput {
+  coil: Coil | null
   basis: InductanceBasis | null
   corners: readonly CornerState[]
   temperatureC: number | null
 }
 
-export function magneticsResult(context: Context, { basis, corners, temperatureC }: MagneticsInput): MagneticsResult {
+export function magneticsResult(context: Context, { coil, basis, corners, temperatureC }: MagneticsInput): MagneticsResult {
   const gap = gapOf(context, basis)
   const worst = basis ? worstFlux(context, basis, corners) : null
   const hotC = Math.max(LEAST_SATURATION_TEMPERATURE_C, temperatureC ?? 0)
@@ -34,6 +37,7 @@ export function magneticsResult(context: Context, { basis, corners, temperatureC
     gapMm: gap.gapMm,
     fringingFactor: gap.fringingFactor,
     gapModel: gap.model,
+    gapFieldMm: gap.gapMm ? gapByWindowField(context, coil, basis) : null,
     fluxPeakT: peakFlux(context, corners),
     fluxWorstT: worst?.fluxT ?? null,
     worstCurrentA: worst?.currentA ?? null,

@@ -48,6 +48,7 @@ function magnetics({ magnetics: m }: Evaluation): FigureGroup {
       { label: 'Inductance', text: si(m.inductanceH, 'H'), note: `${si(m.inductanceMinimumH, 'H')} to ${si(m.inductanceMaximumH, 'H')}`, why: 'magnetics.inductanceH' },
       { label: 'AL', text: si(m.alH, 'H') },
       { label: 'Gap', text: mm(m.gapMm), note: m.fringingFactor === null ? m.gapModel : `fringing factor ${plain(m.fringingFactor)}`, why: 'magnetics.gapMm' },
+      ...(m.gapFieldMm === null ? [] : [{ label: 'Gap by the field of the window', text: mm(m.gapFieldMm), why: 'magnetics.gapFieldMm' }]),
       { label: 'Boundary of continuous conduction', text: si(m.boundaryInductanceH, 'H') },
       { label: 'Peak flux density, full load', text: si(m.fluxPeakT, 'T'), why: 'magnetics.fluxPeakT' },
       { label: 'Worst flux density', text: si(m.fluxWorstT, 'T'), note: m.worstCurrentA === null ? undefined : `at ${si(m.worstCurrentA, 'A')}, on the least area`, why: 'magnetics.fluxWorstT' },
