@@ -22,6 +22,8 @@ export interface SearchInput {
   library: Library
   index: LibraryIndex
   preferences: ProposalPreferences
+  /** Turns to try, as shares of the least that flux asks for; a usual set unless said. */
+  turnShares?: readonly number[]
 }
 
 export interface Candidate {

@@ -56,7 +56,7 @@ function trySizes(input: SearchInput, sizes: ReturnType<typeof candidateCores>):
 }
 
 /** A centre leg with a hole for a tuning screw, which a gapped power part has no use for. */
-const isHollow = ({ shape, centreLeg, minimumAreaMm2 }: CoreRow) => shape === 'RM' && centreLeg?.shape === 'round' && minimumAreaMm2 < 0.85 * (Math.PI / 4) * centreLeg.diameterMm ** 2
+export const isHollow = ({ shape, centreLeg, minimumAreaMm2 }: CoreRow) => shape === 'RM' && centreLeg?.shape === 'round' && minimumAreaMm2 < 0.85 * (Math.PI / 4) * centreLeg.diameterMm ** 2
 
 function candidateCores({ library, preferences, requirement }: SearchInput): { core: CoreRow; former: FormerRow }[] {
   const { shapes, coreId } = preferences

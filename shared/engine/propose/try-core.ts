@@ -89,7 +89,7 @@ interface CoreInput {
 
 function overTurns(input: SearchInput, { leastTurns, ...on }: CoreInput & { leastTurns: number }): Tried {
   let last: Tried = hopeless('window')
-  for (const share of TURN_SHARES) {
+  for (const share of input.turnShares ?? TURN_SHARES) {
     const tried = tryDesign(input, { ...on, needs: input.plan.windings(leastTurns * share) })
     // More turns help against a hot core and nothing else.
     const hot = tried.state === 'built' && (tried.candidate.rejection === 'temperature' || tried.candidate.rejection === 'flux')
@@ -99,7 +99,8 @@ function overTurns(input: SearchInput, { leastTurns, ...on }: CoreInput & { leas
   return last
 }
 
-function turnsByFlux({ plan, material, requirement, preferences }: SearchInput, core: CoreRow): number | null {
+/** Least primary turns that flux allows on a core; null where the saturation of the material is not known. */
+export function turnsByFlux({ plan, material, requirement, preferences }: SearchInput, core: CoreRow): number | null {
   const saturation = saturationFluxDensityT(material.saturation, FIRST_TEMPERATURE_C)
   if (saturation.state !== 'known') return null
   const inductanceH = plan.inductanceH * (1 + preferences.inductanceTolerance)
