@@ -2,6 +2,7 @@ import type { Context } from '#server/context'
 import { asActor } from '#server/db/as-actor'
 import { overrideCheck, returnDraft, submitDraft, withdrawRevision } from '#server/services/specifications/check-draft'
 import { listReleases, listSpecifications, readSpecification } from '#server/services/specifications/list-specifications'
+import { readOutline } from '#server/services/specifications/read-outline'
 import { readRevision } from '#server/services/specifications/read-revision'
 import { downloadReleasedDocument, downloadSheets, readReleasedResults } from '#server/services/specifications/read-sheets'
 import { releaseRevision } from '#server/services/specifications/release-revision'
@@ -29,6 +30,7 @@ export function specificationRoutes(ctx: Context): Router {
   handle(router, contract.releaseRevision, ({ actor, params, body }) => releaseRevision(ctx, actor, params, body.version))
   handle(router, contract.withdrawRevision, ({ actor, params, body }) => asActor(ctx, actor, (tx) => withdrawRevision(tx, actor, params, body.reason)))
   handle(router, contract.draftPdf, ({ actor, params }) => downloadSheets(ctx, actor, params))
+  handle(router, contract.outlineDxf, ({ actor, params }) => asActor(ctx, actor, (tx) => readOutline(tx, actor, params)))
   handle(router, contract.releasedDocument, ({ actor, params }) => downloadReleasedDocument(ctx, actor, params))
   handle(router, contract.releasedResults, ({ actor, params }) => asActor(ctx, actor, (tx) => readReleasedResults(tx, actor, params)))
   handle(router, contract.listReleases, ({ actor }) => asActor(ctx, actor, (tx) => listReleases(tx, actor)))

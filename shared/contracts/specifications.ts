@@ -205,6 +205,15 @@ export const draftPdf = defineEndpoint({
   download: ['application/pdf'],
 })
 
+export const outlineDxf = defineEndpoint({
+  method: 'GET',
+  path: '/api/specifications/:specificationId/revisions/:revisionId/outline.dxf',
+  summary: 'Outline and pin-out for the layout of a board: DXF, 1:1 in mm, seen from the component side',
+  access: readers,
+  params: revisionParams,
+  download: ['image/vnd.dxf'],
+})
+
 export const releasedDocument = defineEndpoint({
   method: 'GET',
   path: '/api/specifications/:specificationId/revisions/:revisionId/specification.json',

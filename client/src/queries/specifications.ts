@@ -82,6 +82,7 @@ export function useRevisionActions(params: () => RevisionKey) {
 }
 
 export const useSheetsDownload = () => useMutation({ mutation: (params: RevisionKey) => download(contract.draftPdf, { params }) })
+export const useOutlineDownload = () => useMutation({ mutation: (params: RevisionKey) => download(contract.outlineDxf, { params }) })
 export const useDocumentDownload = () => useMutation({ mutation: (params: RevisionKey) => download(contract.releasedDocument, { params }) })
 
 /** Leaving the workbench shows the revision as it is stored. */

@@ -60,6 +60,7 @@ export const specifications: FeatureExpectations = {
   // An engineer withdraws a draft; a checker only what was released.
   withdrawRevision: { ...about(draft, () => ({ body: { reason } })), status: { checker: 409 } },
   draftPdf: about(draft),
+  outlineDxf: about(draft),
   releasedDocument: aboutReleased,
   releasedResults: aboutReleased,
   listReleases: {
