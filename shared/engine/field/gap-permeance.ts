@@ -24,11 +24,8 @@ export interface GapPermeance {
   fringingFactor: number
 }
 
-/** Waves in which the coil meets the gap; shorter ones die away between leg and coil. */
+/** Waves in which coil, gap and walls feel each other; shorter ones die away between leg and coil. */
 const COIL_WAVES = 48
-
-/** Half a gap in radians of the shortest wave that is summed: what is left out of the fringing field is below ½ %. */
-const GAP_RESOLUTION = 8
 
 /**
  * Permeance of an air gap with its fringing field and the coil's own field in the window, as a function of the gap's length
@@ -95,36 +92,36 @@ function coilWaves({ window, rectangles }: GapFieldInput): WallWave[] {
 }
 
 /** Energy of the gaps' magnetomotive force with itself and against the coil, mm. */
-function stripEnergy(window: FieldWindow, strips: readonly WallMmf[], coil: readonly WallWave[], gapMm: number): number {
-  const { breadthMm } = window
+function stripEnergy(window: FieldWindow, strips: readonly WallMmf[], waves: readonly WallWave[], gapMm: number): number {
+  const { breadthMm, heightMm, depth } = window
   const first = Math.PI / breadthMm
-  const last = Math.max(coil.length, Math.ceil((2 * GAP_RESOLUTION) / (first * gapMm)))
   let sum = 0
-  for (let n = 1; n <= last; n++) {
-    const q = n * first
-    const wall = coil[n - 1] ?? shortWave(window, q)
+  waves.forEach((wall, index) => {
     let leg = 0
     let outer = 0
     for (const { wall: side, share, fromMm, toMm } of strips) {
-      const amplitude = share * meanCosine(q, fromMm, toMm)
+      const amplitude = share * meanCosine((index + 1) * first, fromMm, toMm)
       if (side === 'leg') leg += amplitude
       else outer += amplitude
     }
     sum += leg ** 2 * wall.leg + outer ** 2 * wall.outer + 2 * leg * outer * wall.across - 2 * (leg * wall.coilLeg + outer * wall.coilOuter)
-  }
+  })
+  const rest = shortWaves(gapMm / breadthMm, waves.length) / first
+  for (const { wall, share } of strips) sum += share ** 2 * turnLengthAtMm(depth, wall === 'leg' ? 0 : heightMm) * rest
   return (2 / breadthMm) * sum
 }
 
 /**
- * Waves much shorter than the window: each wall by itself, 1/q times the turn length; at a round leg times K1/K0 ≈ 1 + 1/(2qr).
+ * Σ sin²(n·x/2)/(n·x/2)²/n over the even n beyond `last`, x = π·l_g/b: the waves too short to feel the other walls or a round
+ * leg's curvature, for a gap in the middle. The whole sum is (3/2 − ln 2x + x²/36 + x⁴/2700)/2.
  *
- * Source: M. Abramowitz, I. Stegun, 9.7.2.
+ * Source: Σ cos(n·x)/n³ by its expansion about 0; M. Abramowitz, I. Stegun, 27.8.
  */
-function shortWave({ depth, heightMm }: FieldWindow, q: number): WallWave {
-  const [leg, outer] = [turnLengthAtMm(depth, 0), turnLengthAtMm(depth, heightMm)]
-  const round = depth.kind === 'round'
-  const bend = (lengthMm: number) => (round ? Math.PI / (q * lengthMm) : 0)
-  return { coilLeg: 0, coilOuter: 0, leg: (leg / q) * (1 + bend(leg)), outer: (outer / q) * (1 - bend(outer)), across: 0 }
+function shortWaves(gapShare: number, last: number): number {
+  const x = Math.PI * gapShare
+  let sum = (1.5 - Math.log(2 * x) + x ** 2 / 36 + x ** 4 / 2700) / 2
+  for (let n = 2; n <= last; n += 2) sum -= Math.sin((n * x) / 2) ** 2 / (((n * x) / 2) ** 2 * n)
+  return sum
 }
 
 /**

@@ -1,6 +1,6 @@
 export { turnFieldInput } from './layout-turns'
 export type { LaidCoil } from './layout-turns'
-export { TURN_FIELD_MODEL, turnFields } from './turn-fields'
+export { TURN_FIELD_MODEL, fieldsAt, turnFields } from './turn-fields'
 export type { FieldTurn, TurnFieldInput, TurnFields } from './turn-fields'
 export { gapMmf, placedWindow, turnLengthAtMm } from './window'
 export type { FieldWindow, GapMmf, GapPlace, PlacedWindow, WallMmf, WindowDepth } from './window'

@@ -1,6 +1,6 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
-import { turnFields } from './turn-fields'
+import { fieldsAt, turnFields } from './turn-fields'
 import type { FieldTurn, TurnFieldInput } from './turn-fields'
 import { gapMmf } from './window'
 import type { FieldWindow } from './window'
@@ -9,7 +9,7 @@ const plane: FieldWindow = { breadthMm: 20, heightMm: 7, depth: { kind: 'straigh
 
 const wire = (axialMm: number, radialMm: number, share = 1, winding = 0): FieldTurn => ({ winding, turn: 1, strand: 1, share, foilBreadthMm: null, axialMm, radialMm })
 
-/** A place that carries no current only feels the field. */
+/** A turn that carries no current only feels the field. */
 const probe = (axialMm: number, radialMm: number) => wire(axialMm, radialMm, 0)
 
 const uniformLeg = { kind: 'walls' as const, strips: [{ wall: 'leg' as const, fromMm: 0, toMm: 20, share: 1 }] }
@@ -24,9 +24,9 @@ function circulation(input: TurnFieldInput, box: { left: number; right: number; 
     ...along(box.left, box.right).map((axial) => ({ at: probe(axial, box.low), axis: 'hx' as const, length: (box.right - box.left) / steps, sign: 1 })),
     ...along(box.left, box.right).map((axial) => ({ at: probe(axial, box.high), axis: 'hx' as const, length: (box.right - box.left) / steps, sign: -1 })),
   ]
-  const fields = turnFields({ ...input, turns: [...input.turns, ...sides.map(({ at }) => at)] })
+  const fields = fieldsAt(input, sides.map(({ at }) => at))
   // Axial, radial and the turn make a left-handed set, hence the sign.
-  return -sides.reduce((sum, { axis, length, sign }, side) => sum + sign * length * 1e-3 * fields[axis][input.turns.length + side]!, 0)
+  return -sides.reduce((sum, { axis, length, sign }, side) => sum + sign * length * 1e-3 * fields[axis][side]!, 0)
 }
 
 describe('turnFields', () => {

@@ -58,17 +58,8 @@ const PER_MM_TO_PER_M = 1000
  * @throws RangeError on a window or a turn out of range
  */
 export function turnFields(input: TurnFieldInput): TurnFields {
-  requireWindow(input.window)
   const { windingIds, turns } = input
-  const count = windingIds.length
-  requireTurns(input)
-  const { sources, ownPoint } = sourcesOf(input)
-  const smoothMm = smoothingMm(input.window, turns.length)
-  const fields = smoothFields(sources, turns, smoothMm)
-  addNearFields(fields, sources, turns, ownPoint, smoothMm)
-  addCurvature(fields, sources, turns)
-  if (input.gap.kind === 'all-round') addAllRound(fields, input, count + 1)
-  const { hx, hy } = withGap(fields, input)
+  const { hx, hy } = fieldsOf(input, turns, ownPoints(turns))
   return {
     windingIds,
     turns: turns.map(({ winding, turn, strand }) => ({ windingId: windingIds[winding]!, turn, strand })),
@@ -78,6 +69,37 @@ export function turnFields(input: TurnFieldInput): TurnFields {
     model: TURN_FIELD_MODEL,
   }
 }
+
+/**
+ * The field at any places of the window per ampere of each winding, A/m: axial `hx[place · W + w]`, outward `hy[…]`.
+ *
+ * Source: as `turnFields`.
+ *
+ * @throws RangeError on a window or a turn out of range
+ */
+export function fieldsAt(input: TurnFieldInput, places: readonly FieldPlace[]): Pick<TurnFields, 'hx' | 'hy'> {
+  return fieldsOf(input, places, new Int32Array(places.length).fill(-1))
+}
+
+function fieldsOf(input: TurnFieldInput, places: readonly FieldPlace[], ownPoint: Int32Array): Pick<TurnFields, 'hx' | 'hy'> {
+  requireWindow(input.window)
+  requireTurns(input)
+  const sources = sourcesOf(input)
+  const smoothMm = smoothingMm(input.window, input.turns.length)
+  const fields = smoothFields(sources, places, smoothMm)
+  addNearFields(fields, sources, places, ownPoint, smoothMm)
+  addCurvature(fields, sources, places)
+  if (input.gap.kind === 'all-round') addAllRound(fields, input, places)
+  return withGap(fields, input, places.length)
+}
+
+/** Turns are the first points of the sources, in their order, foils and those without current left out. */
+function ownPoints(turns: readonly FieldTurn[]): Int32Array {
+  let next = 0
+  return Int32Array.from(turns, (turn) => (isPoint(turn) ? next++ : -1))
+}
+
+const isPoint = ({ share, foilBreadthMm }: FieldTurn): boolean => share !== 0 && !(foilBreadthMm !== null && foilBreadthMm > 0)
 
 function requireTurns({ window, windingIds, turns }: TurnFieldInput): void {
   for (const { winding, radialMm, axialMm, foilBreadthMm } of turns) {
@@ -97,22 +119,17 @@ function smoothingMm({ breadthMm, heightMm }: FieldWindow, turns: number): numbe
 }
 
 /** All currents of the window: a channel for each winding and a last one for one ampere of the gap. */
-function sourcesOf(input: TurnFieldInput): { sources: CurrentSources; ownPoint: Int32Array } {
+function sourcesOf(input: TurnFieldInput): CurrentSources {
   const { window, gap, windingIds, turns } = input
   const points: CurrentPoint[] = []
   const sheets: CurrentSheet[] = []
-  const ownPoint = new Int32Array(turns.length).fill(-1)
-  turns.forEach(({ radialMm, axialMm, winding, share, foilBreadthMm }, index) => {
-    if (share === 0) return
-    if (foilBreadthMm !== null && foilBreadthMm > 0) {
-      sheets.push({ radialMm, fromMm: axialMm - foilBreadthMm / 2, toMm: axialMm + foilBreadthMm / 2, weight: share, channel: winding })
-      return
-    }
-    ownPoint[index] = points.length
-    points.push({ radialMm, axialMm, weight: share, channel: winding })
-  })
+  for (const turn of turns) {
+    const { radialMm, axialMm, winding, share, foilBreadthMm } = turn
+    if (isPoint(turn)) points.push({ radialMm, axialMm, weight: share, channel: winding })
+    else if (share !== 0) sheets.push({ radialMm, fromMm: axialMm - foilBreadthMm! / 2, toMm: axialMm + foilBreadthMm! / 2, weight: share, channel: winding })
+  }
   if (gap.kind === 'walls') addStrips(gap, { window, channel: windingIds.length, points, sheets })
-  return { sources: { window, channels: windingIds.length + 1, points, sheets }, ownPoint }
+  return { window, channels: windingIds.length + 1, points, sheets }
 }
 
 /** Points that a gap is made of: enough that a wire as near as half the gap does not see them singly. */
@@ -134,24 +151,24 @@ function addStrips(gap: Extract<GapMmf, { kind: 'walls' }>, into: { window: Fiel
  * One ampere spread evenly round the walls, with the even counter-current that balances it: fields that fall straight from
  * wall to wall. Source: Ampère's law.
  */
-function addAllRound({ radial, axial }: ChannelFields, { window, turns, windingIds }: TurnFieldInput, channels: number): void {
+function addAllRound({ radial, axial }: ChannelFields, { window, windingIds }: TurnFieldInput, places: readonly FieldPlace[]): void {
   const { breadthMm, heightMm } = window
   const wall = 1 / (2 * (breadthMm + heightMm))
-  turns.forEach(({ radialMm, axialMm }, place) => {
-    const index = place * channels + windingIds.length
+  places.forEach(({ radialMm, axialMm }, place) => {
+    const index = place * (windingIds.length + 1) + windingIds.length
     axial[index] = wall * (1 - (2 * radialMm) / heightMm)
     radial[index] = -wall * (1 - (2 * axialMm) / breadthMm)
   })
 }
 
 /** Field of each winding with the gap that carries its ampere-turns back, in A/m. */
-function withGap({ radial, axial }: ChannelFields, { windingIds, turns }: TurnFieldInput): { hx: Float64Array; hy: Float64Array } {
+function withGap({ radial, axial }: ChannelFields, { windingIds, turns }: TurnFieldInput, places: number): Pick<TurnFields, 'hx' | 'hy'> {
   const count = windingIds.length
   const net = new Float64Array(count)
   for (const { winding, share } of turns) net[winding]! += share
-  const hx = new Float64Array(turns.length * count)
-  const hy = new Float64Array(turns.length * count)
-  for (let place = 0; place < turns.length; place++) {
+  const hx = new Float64Array(places * count)
+  const hy = new Float64Array(places * count)
+  for (let place = 0; place < places; place++) {
     const from = place * (count + 1)
     for (let winding = 0; winding < count; winding++) {
       hx[place * count + winding] = PER_MM_TO_PER_M * (axial[from + winding]! - net[winding]! * axial[from + count]!)
