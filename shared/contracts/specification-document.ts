@@ -398,6 +398,8 @@ const insulation = z.strictObject({
       name,
       between: z.tuple([boundaryEnd, boundaryEnd]),
       insulation: z.enum(['functional', 'basic', 'supplementary', 'double', 'reinforced']),
+      // Optional: documents stored before it was asked keep their bytes.
+      meansOfProtection: z.enum(['MOOP', 'MOPP']).nullable().optional(),
       workingVoltageVRms: notNegative.nullable(),
       recurringPeakV: notNegative.nullable(),
       frequencyHz: notNegative.nullable(),

@@ -272,6 +272,8 @@ export interface SourcedValue {
   source: string
   /** From memory or a secondary copy: the standard in force decides. */
   fromMemory: boolean
+  /** Which of the two; absent for common practice. */
+  basis?: 'secondary-copy' | 'memory'
   reason: string | null
 }
 

@@ -635,6 +635,8 @@ export type MaterialGroup = 'I' | 'II' | 'IIIa' | 'IIIb'
 export type OvervoltageCategory = 'I' | 'II' | 'III' | 'IV'
 export type PollutionDegree = 1 | 2 | 3
 export type InsulationType = 'functional' | 'basic' | 'supplementary' | 'double' | 'reinforced'
+/** Means of operator protection, means of patient protection: IEC 60601-1. */
+export type MeansOfProtection = 'MOOP' | 'MOPP'
 export type ProductStandard = 'IEC 62368-1' | 'IEC 61558-1' | 'IEC 60335-1' | 'IEC 60601-1' | 'IEC 60664-1'
 
 export interface InsulationSpecification {
@@ -668,6 +670,8 @@ export interface InsulationBoundary extends StatedRow {
   name: string
   between: [BoundaryEnd, BoundaryEnd]
   insulation: InsulationType
+  /** IEC 60601-1 only: whether the boundary protects operators or patients. Absent in documents that never asked. */
+  meansOfProtection?: MeansOfProtection | null
   workingVoltageVRms: number | null
   recurringPeakV: number | null
   frequencyHz: number | null

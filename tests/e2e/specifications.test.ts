@@ -191,7 +191,7 @@ describe('checking', () => {
     await page.getByLabel('Why I01 may pass').fill('The edition is agreed with the laboratory.')
     await page.getByRole('button', { name: 'Let pass', exact: true }).click()
     await page.getByRole('heading', { name: 'Checks let pass' }).waitFor()
-    await page.getByText('Release is stopped by L01:').waitFor()
+    await page.getByText(/Release is stopped by P21, L01/).waitFor()
     await look(page, 'revision-let-pass')
 
     await page.getByRole('button', { name: 'Send back' }).click()

@@ -20,6 +20,13 @@ const BY_PEOPLE = new Set(['title.legalOwner', 'title.partNumber'])
 /** Stopping checks that are neither met nor left to people. */
 const stoppingChecks = ({ checks }: Evaluation) => checks.filter(({ severity, state, path }) => severity === 'S' && state !== 'met' && !BY_PEOPLE.has(path))
 
+/**
+ * Questions that a proposal leaves to people: self-resonance (E23, Q06), the date of the list of substances (D10), keying of the
+ * pins (P15); of insulated wire its certificate, system, stripped ends and bath (I11, I12, T13, P10); impulse on the mains (I25);
+ * ends on one pin that a former with so few pins asks for (P04, P07); how leakage of low impedance is measured (Q07, Q08).
+ */
+const MUST_BE_ANSWERED = new Set(['D10', 'E23', 'I11', 'I12', 'I25', 'P04', 'P07', 'P10', 'P15', 'Q06', 'Q07', 'Q08', 'T13'])
+
 describe.each(proposals)('the proposal for the $name', ({ proposal, evaluation, sheet }) => {
   const { specification } = proposal.document
 
@@ -27,13 +34,14 @@ describe.each(proposals)('the proposal for the $name', ({ proposal, evaluation, 
     const stopping = stoppingChecks(evaluation)
     expect(stopping.filter(({ state }) => state === 'not-met')).toEqual([])
     // Creepage above 30 kHz rests on a table of IEC 60664-4 that is not held; across protective boundaries a person answers.
-    // L01: former, tape, sleeve and insulated wire have figures that nobody's data sheet stands behind; how far pins lie from the core is not held.
-    expect(new Set(stopping.map(({ code }) => code))).toEqual(new Set(sheet.insulationMethod === 'functional' ? ['L01'] : ['I06', 'I15', 'L01']))
+    // L01: former, tape, sleeve and insulated wire have figures that nobody's data sheet stands behind; how far pins lie from the core
+    // and how wide the former's slots are is not held; the footprint (P21) a person lays beside the pin-out.
+    expect(new Set(stopping.map(({ code }) => code))).toEqual(new Set(sheet.insulationMethod === 'functional' ? ['L01', 'P21', 'W17'] : ['I06', 'I15', 'L01', 'P21', 'W17']))
   })
 
-  it('leaves only the self-resonance and the number of the wire’s certificate open among the checks that must be answered', () => {
+  it('leaves open among the checks that must be answered only what no sheet says and what few pins allow', () => {
     const asked = evaluation.checks.filter(({ severity, state }) => severity === 'M' && state !== 'met')
-    expect(new Set(asked.map(({ code }) => code))).toEqual(new Set(sheet.insulationMethod === 'triple-insulated-wire' ? ['I11', 'Q06'] : ['Q06']))
+    expect(asked.map(({ code }) => code).filter((code) => !MUST_BE_ANSWERED.has(code))).toEqual([])
   })
 
   it('is an admitted document in which nobody has entered anything', () => {
@@ -186,7 +194,7 @@ describe('other sheets', () => {
     expect(document.specification.sequence.some(({ kind }) => kind === 'margin')).toBe(true)
     expect(boundary.provided.creepageMm!).toBeGreaterThanOrEqual(boundary.required.creepageMm.value!)
     expect(boundary.provided.layers).toBe(3)
-    expect(new Set(stoppingChecks(evaluation).map(({ code, state }) => `${code} ${state}`))).toEqual(new Set(['I06 not-checkable', 'I13 not-checkable', 'I15 not-checkable', 'L01 not-checkable']))
+    expect(new Set(stoppingChecks(evaluation).map(({ code, state }) => `${code} ${state}`))).toEqual(new Set(['I06 not-checkable', 'I13 not-checkable', 'I15 not-checkable', 'L01 not-checkable', 'P21 not-checkable', 'W17 not-checkable']))
   })
 
   it('says why a sheet cannot be solved instead of proposing', () => {

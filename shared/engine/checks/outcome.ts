@@ -29,6 +29,8 @@ export interface Outcome {
 export interface Check {
   severity: CheckResult['severity']
   source: string
+  /** A person looks where no data of the document or the library can tell: such a check never says more than what to look at. */
+  decidedBy?: 'person'
   run: (input: CheckInput) => readonly Outcome[]
 }
 

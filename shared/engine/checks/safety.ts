@@ -102,7 +102,7 @@ function flammability({ document }: CheckInput): Outcome[] {
 
 export const SAFETY_CHECKS: Readonly<Record<string, Check>> = {
   I14: { severity: 'S', source: 'ferrite is treated as conductive: practice of certification bodies', run: coreAssigned },
-  I15: { severity: 'S', source: 'IEC 60664-1:2020; ferrite is treated as conductive', run: pinsToCore },
+  I15: { severity: 'S', source: 'IEC 60664-1:2020; ferrite is treated as conductive', decidedBy: 'person', run: pinsToCore },
   I27: { severity: 'M', source: 'IEC 60695-11-10, UL 94', run: flammability },
   I28: { severity: 'S', source: 'IEC 60664-1:2020, material groups; IEC 60112', run: materialGroup },
   I31: { severity: 'S', source: 'IEC 62368-1, 5.3; IEC 61558-2-16: accessible output against mains', run: mainsBoundaries },

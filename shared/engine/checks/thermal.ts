@@ -52,16 +52,20 @@ const unlessDirect = (input: CheckInput) => (outcome: Outcome): Outcome => {
   return { ...outcome, state: 'met', values: { ...outcome.values, acLossShare: acLossShare(input, windingIndex(outcome))! } }
 }
 
-function skinDepth(input: CheckInput): Outcome[] {
+/** Conductors of one form against a multiple of the skin depth. */
+function againstSkinDepth(input: CheckInput, form: 'round' | 'litz', multiple: number): Outcome[] {
   const { windings } = input.document.specification
   return input.evaluation.windings.flatMap((result, index) => {
     const winding = windings[index]!
     const wire = input.context.index.find('wire', winding.wire.wire)
-    if (winding.role === 'shield' || !wire || wire.form === 'foil') return []
-    const limit = result.skinDepthMm === null ? null : result.skinDepthMm * (wire.form === 'litz' ? 1 / 3 : 2)
+    if (winding.role === 'shield' || wire?.form !== form) return []
+    const limit = result.skinDepthMm === null ? null : result.skinDepthMm * multiple
     return [atMost({ value: wire.conductorMm, limit, unit: 'mm', path: `windings.${index}.wire`, values: { winding: winding.name } })]
   }).map(unlessDirect(input))
 }
+
+const skinDepth = (input: CheckInput) => againstSkinDepth(input, 'round', 2)
+const litzStrand = (input: CheckInput) => againstSkinDepth(input, 'litz', 1 / 3)
 
 const resistanceFactor = (input: CheckInput) =>
   byWinding(input, ({ acFactor }) => acFactor, { steps: [{ above: 4, severity: 'S' }, { above: 2.5, severity: 'M' }, { above: 1.5, severity: 'N' }], unit: '1', field: 'wire' })
@@ -109,8 +113,9 @@ const ambientStated = ({ document }: CheckInput): Outcome[] => [yesNo(document.r
 
 export const THERMAL_CHECKS: Readonly<Record<string, Check>> = {
   T01: { severity: 'M', source: 'natural convection: common practice', run: currentDensity },
-  T02: { severity: 'M', source: 'diameter up to two skin depths, litz strands to a third: Snelling; Sullivan 1999', run: skinDepth },
+  T02: { severity: 'M', source: 'diameter up to two skin depths: Snelling', run: skinDepth },
   T03: { severity: 'M', source: 'P. Dowell, Proc. IEE 113 (1966) 1387', run: resistanceFactor },
+  T04: { severity: 'M', source: 'strands up to a third of the skin depth: Sullivan 1999', run: litzStrand },
   T07: { severity: 'M', source: 'K. Venkatachalam et al., IEEE COMPEL 2002; 300 kW/m³ under natural convection: common practice', run: lossDensity },
   T08: { severity: 'S', source: 'heat balance; loss curve of the material, 20 K beyond its least', run: runaway },
   T11: { severity: 'S', source: 'IEC 62368-1 G.5.3, IEC 61558-1: winding limits by class, 5 K margin', run: classMargin },

@@ -1,9 +1,9 @@
-import type { Coil, StepPlacement } from '../build'
+import type { Coil } from '../build'
 import type { InsulationPath } from '../evaluation'
 import type { FormerRow } from '../library'
 import type { BoundaryEnd, InsulationBoundary, SequenceStep, Winding, WindingSpecification } from '../specification'
-import { acrossTape, overFlange, shieldPlacements, shorter, toOuterLeg, viaConductor } from './path-geometry'
-import type { Path } from './path-geometry'
+import { acrossTape, overFlange, shieldParts, shorter, toOuterLeg, viaConductor } from './path-geometry'
+import type { CoilPart, Path } from './path-geometry'
 
 /** What the build puts between the two ends of a boundary; null where it cannot be told. */
 export interface ProvidedInsulation {
@@ -72,7 +72,7 @@ export interface PathInput {
 export function providedInsulation({ specification, former, coil: laidOut, boundary }: PathInput): ProvidedInsulation {
   const functional = boundary.insulation === 'functional'
   const coil = functional ? laidOut : withTapedMargins(laidOut, specification.sequence)
-  const shields = shieldPlacements(coil, former, specification.sequence)
+  const shields = shieldParts(coil, former)
   const laid: LaidCoil = { coil, former, shields, placements: [...coil.placements, ...shields], functional }
   const [first, second] = boundary.between
   const one = windingsAt(specification, first)
@@ -89,9 +89,9 @@ const wireText = (functional: boolean) => (functional ? 'enamelled or insulated 
 interface LaidCoil {
   coil: Coil
   former: FormerRow
-  shields: readonly StepPlacement[]
+  shields: readonly CoilPart[]
   /** Windings and shields. */
-  placements: readonly StepPlacement[]
+  placements: readonly CoilPart[]
   functional: boolean
 }
 
@@ -138,7 +138,7 @@ function lengths(nearest: Path | null, crossing: readonly Path[]): Pick<Provided
 const coilPaths = (laid: LaidCoil, a: Winding, b: Winding): Path[] =>
   placementsOf(laid, a.id).flatMap((one) => placementsOf(laid, b.id).map((other) => along(laid, one, other)))
 
-const along = ({ coil, former }: LaidCoil, one: StepPlacement, other: StepPlacement): Path =>
+const along = ({ coil, former }: LaidCoil, one: CoilPart, other: CoilPart): Path =>
   one.section === other.section ? acrossTape(coil, former, one, other) : overFlange(former, one, other)
 
 /** By way of the core, and of any shield that is neither of the two. */

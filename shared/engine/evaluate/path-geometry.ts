@@ -1,7 +1,6 @@
 import type { Coil, StepPlacement } from '../build'
 import type { PathPoint } from '../evaluation'
 import type { FormerRow, LibraryRow } from '../library'
-import type { SequenceStep } from '../specification'
 
 /** One way along surfaces or through air from one conductor to another, in mm. */
 export interface Path {
@@ -17,6 +16,9 @@ export interface Path {
   through: readonly PathPoint[]
 }
 
+/** What of a winding step or a shield a path begins or ends at. */
+export type CoilPart = Pick<StepPlacement, 'index' | 'windingId' | 'section' | 'bottomMm' | 'topMm' | 'marginLeftMm' | 'marginRightMm'>
+
 export type FormerShape = Pick<FormerRow, Exclude<keyof FormerRow, keyof LibraryRow>>
 
 /** Inside of the left flange of a section, in window coordinates. */
@@ -25,10 +27,10 @@ const sectionLeftMm = ({ windingWidthMm, flangeThicknessMm }: FormerShape, secti
 /** The shorter of two ways; the first where they are equal. */
 export const shorter = (one: Path, other: Path): Path => (other.lengthMm < one.lengthMm ? other : one)
 
-const between = (one: StepPlacement, other: StepPlacement) => (one.index < other.index ? ([one, other] as const) : ([other, one] as const))
+const between = (one: CoilPart, other: CoilPart) => (one.index < other.index ? ([one, other] as const) : ([other, one] as const))
 
 /** Round the end of the tapes between two parts of one section: along one margin to the flange, and back along the other. */
-export function acrossTape(coil: Coil, former: FormerShape, one: StepPlacement, other: StepPlacement): Path {
+export function acrossTape(coil: Coil, former: FormerShape, one: CoilPart, other: CoilPart): Path {
   const [inner, outer] = between(one, other)
   const tapes = coil.tapes.filter(({ section, index }) => section === inner.section && index > inner.index && index < outer.index)
   const covering = tapes.filter(({ fullWidth }) => fullWidth)
@@ -51,7 +53,7 @@ interface TapeEnds {
   thicknessMm: number
 }
 
-function roundEnds(former: FormerShape, inner: StepPlacement, outer: StepPlacement, { leftMm, rightMm, thicknessMm }: TapeEnds): Pick<Path, 'lengthMm' | 'plane' | 'points' | 'through'> {
+function roundEnds(former: FormerShape, inner: CoilPart, outer: CoilPart, { leftMm, rightMm, thicknessMm }: TapeEnds): Pick<Path, 'lengthMm' | 'plane' | 'points' | 'through'> {
   const left = sectionLeftMm(former, inner.section)
   const right = left + former.windingWidthMm
   const ways = [
@@ -72,9 +74,9 @@ function roundEnds(former: FormerShape, inner: StepPlacement, outer: StepPlaceme
 const withoutRepeats = (points: readonly PathPoint[]) => points.filter(([x, y], index) => index === 0 || x !== points[index - 1]![0] || y !== points[index - 1]![1])
 
 /** Up the flange between two sections, over its edge, and down to the other section's wire. */
-export function overFlange(former: FormerShape, one: StepPlacement, other: StepPlacement): Path {
+export function overFlange(former: FormerShape, one: CoilPart, other: CoilPart): Path {
   const { windingHeightMm, flangeThicknessMm } = former
-  const climbMm = (placement: StepPlacement) => Math.max(0, windingHeightMm - placement.topMm)
+  const climbMm = (placement: CoilPart) => Math.max(0, windingHeightMm - placement.topMm)
   const [left, right] = one.section < other.section ? [one, other] : [other, one]
   const faceMm = sectionLeftMm(former, left.section) + former.windingWidthMm
   const farFaceMm = sectionLeftMm(former, right.section)
@@ -89,10 +91,10 @@ export function overFlange(former: FormerShape, one: StepPlacement, other: StepP
   }
 }
 
-const isOutermost = (coil: Coil, placement: StepPlacement) => !coil.placements.some(({ section, index }) => section === placement.section && index > placement.index)
+const isOutermost = (coil: Coil, placement: CoilPart) => !coil.placements.some(({ section, index }) => section === placement.section && index > placement.index)
 
 /** Along the margin to the flange and up it, where the outer leg begins. */
-export function toOuterLeg(coil: Coil, former: FormerShape, placement: StepPlacement): Path {
+export function toOuterLeg(coil: Coil, former: FormerShape, placement: CoilPart): Path {
   const { windingHeightMm, tubeWallMm, flangeThicknessMm, windingWidthMm } = former
   const left = sectionLeftMm(former, placement.section)
   const isLeft = placement.marginLeftMm <= placement.marginRightMm
@@ -123,24 +125,5 @@ export function viaConductor(one: Path, other: Path, how: string): Path {
 }
 
 /** Shields as they lie in the window; their margins are those that their own width leaves. */
-export function shieldPlacements({ layout }: Pick<Coil, 'layout'>, former: FormerShape, sequence: readonly SequenceStep[]): StepPlacement[] {
-  return sequence.flatMap((step, index) => {
-    if (step.kind !== 'shield') return []
-    return layout.items.flatMap((item) => {
-      if (item.kind !== 'foil' || item.stepId !== step.id) return []
-      const section = 1 + Math.max(0, Math.round((item.xMm + item.widthMm / 2 - former.windingWidthMm / 2) / (former.windingWidthMm + former.flangeThicknessMm)))
-      const leftMm = item.xMm - sectionLeftMm(former, section)
-      return [shieldPlacement({ step, index, section, leftMm, bottomMm: item.yMm, widthMm: item.widthMm, thicknessMm: item.thicknessMm, former })]
-    })
-  })
-}
-
-function shieldPlacement(input: { step: Extract<SequenceStep, { kind: 'shield' }>; index: number; section: number; leftMm: number; bottomMm: number; widthMm: number; thicknessMm: number; former: FormerShape }): StepPlacement {
-  const { step, index, section, leftMm, bottomMm, widthMm, thicknessMm, former } = input
-  const topMm = bottomMm + thicknessMm * (step.overlapMm > 0 ? 2 : 1)
-  return {
-    stepId: step.id, index, windingId: step.windingId, section, bottomMm, topMm, leftMm, rightMm: leftMm + widthMm,
-    marginLeftMm: Math.max(0, leftMm), marginRightMm: Math.max(0, former.windingWidthMm - leftMm - widthMm),
-    turns: 1, layers: [], turnsPerLayer: [1], turnLengthsMm: [], mostTurnsPerLayer: 1, bundleWidthMm: widthMm, availableMm: former.windingWidthMm, layerHeightMm: thicknessMm,
-  }
-}
+export const shieldParts = ({ shields }: Pick<Coil, 'shields'>, { windingWidthMm }: FormerShape): CoilPart[] =>
+  shields.map(({ index, windingId, section, bottomMm, topMm, leftMm, rightMm }) => ({ index, windingId, section, bottomMm, topMm, marginLeftMm: Math.max(0, leftMm), marginRightMm: Math.max(0, windingWidthMm - rightMm) }))

@@ -1,3 +1,4 @@
+/** How a value was come by: read in a copy that is not the publisher's, there and in a second one, or recalled. None was read in the standard itself. */
 export type Basis = 'read' | 'cross-checked' | 'memory'
 export type Confidence = 'high' | 'medium' | 'low'
 
@@ -34,6 +35,7 @@ export const CITATIONS = {
   transformerTest: { standard: 'IEC 61558-1', edition: '2005', place: 'Table 8a', basis: 'memory', confidence: 'medium' },
   transformerTestLowest: { standard: 'IEC 61558-1', edition: '2005', place: 'Table 8a, first row', basis: 'memory', confidence: 'low' },
   householdTest: { standard: 'IEC 60335-1', edition: '2010', place: 'Table 4', basis: 'memory', confidence: 'medium' },
+  householdDistances: { standard: 'IEC 60335-1', edition: '2010', place: '29.1 and 29.2', basis: 'memory', confidence: 'medium' },
   householdSolidLayers: { standard: 'IEC 60335-1', edition: '2010', place: '29.3', basis: 'memory', confidence: 'medium' },
   medicalMeans: { standard: 'IEC 60601-1', edition: '2005+A1+A2', place: 'Tables 6 and 12 to 16, row of 250 V rms', basis: 'read', confidence: 'high' },
   medicalSolid: { standard: 'IEC 60601-1', edition: '2005+A1+A2', place: '8.8.2', basis: 'memory', confidence: 'medium' },

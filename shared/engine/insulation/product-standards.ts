@@ -44,8 +44,8 @@ export interface BoundaryRequirements {
 
 /**
  * What the chosen product standard asks of one boundary: clearance, creepage, distance through insulation and test voltage,
- * each with its citation. Distances follow IEC 60664-1 but for IEC 60601-1, which has rows of its own; the own distance
- * tables of IEC 61558-1 are not held and that is said.
+ * each with its citation. Distances follow IEC 60664-1 but for IEC 60601-1, which has rows of its own; that IEC 60335-1
+ * agrees with it is recalled, and the own distance tables of IEC 61558-1 are not held: both are said.
  *
  * Source: see `CITATIONS`. The edition in force and the certification body decide.
  *
@@ -64,7 +64,9 @@ function coordinatedDistances(duty: BoundaryDuty): Pick<BoundaryRequirements, 'c
 }
 
 function withOwnTable({ standard }: BoundaryDuty, distance: Answer<RequiredDistance>): Answer<RequiredDistance> {
-  if (standard !== 'IEC 61558-1' || distance.state !== 'known') return distance
+  if (distance.state !== 'known') return distance
+  if (standard === 'IEC 60335-1') return known({ ...distance.value, contributions: distance.value.contributions.map((one) => ({ ...one, citation: CITATIONS.householdDistances })) })
+  if (standard !== 'IEC 61558-1') return distance
   return known({ ...distance.value, unchecked: [...distance.value.unchecked, notCheckable('table-not-held')] })
 }
 
@@ -131,7 +133,7 @@ function solidInsulation({ standard, insulation, recurringPeakV }: BoundaryDuty)
         citation: CITATIONS.householdSolidLayers,
       })
     case 'IEC 60601-1':
-      if (!reinforced || recurringPeakV <= SOLID_INSULATION_THRESHOLD_PEAK_V) return { state: 'not-required' }
+      if (!protects(insulation) || recurringPeakV <= SOLID_INSULATION_THRESHOLD_PEAK_V) return { state: 'not-required' }
       return known({ minimumThicknessMm: 0.4, sheetAlternatives: TWO_OR_THREE_SHEETS, citation: CITATIONS.medicalSolid })
   }
 }

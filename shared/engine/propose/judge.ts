@@ -7,7 +7,7 @@ import type { Rejection } from './reasons'
 const COOL_SHARE = 0.5
 
 /** Checks that an engineer would rather not have to answer, where a slightly larger core meets them. */
-const AVOIDED = new Set(['T01', 'T02', 'T03', 'W04', 'W06', 'W08', 'P03', 'P04', 'E12', 'E15'])
+const AVOIDED = new Set(['T01', 'T02', 'T03', 'T04', 'W04', 'W06', 'W08', 'P03', 'P04', 'E12', 'E15'])
 
 const broken = ({ state, severity }: CheckResult) => state === 'not-met' && severity !== 'N'
 

@@ -4,95 +4,7 @@ import type { ProposalReason, ReasonCode } from '#shared/engine/index'
 import type { Rejection } from '#shared/engine/propose/reasons'
 import { formatEngineering, formatNumber, formatQuantity } from '#shared/number-format'
 import { shownUnit } from '#shared/shown-units'
-
-/** What each release check asks, as a sentence about a part that meets it. */
-export const CHECK_TEXTS: Readonly<Record<string, string>> = {
-  E01: 'Worst-case flux density stays below the permitted share of saturation.',
-  E02: 'Saturation is known at the temperature of use, not only cold.',
-  E07: 'Inductance, turns and AL agree.',
-  E08: 'Gap length and AL agree with fringing, and exactly one of them controls.',
-  E09: 'The tolerance of the inductance is no tighter than that of the core and 1 % of winding.',
-  E10: 'An ungapped part has a lower limit only, or at least ±25 %.',
-  E11: 'A gap below 0.10 mm is not asked for with an AL tolerance of ±5 % or less.',
-  E12: 'The gap is small against the centre leg, so that its fringing spares the winding.',
-  E14: 'Turns are whole numbers.',
-  E15: 'Whole turns give each output’s voltage within 1 %.',
-  E16: 'The switch keeps below 80 % of its rated voltage.',
-  E17: 'Rms, peak and direct current of each winding are stated, and the rms is no lower than calculated.',
-  E18: 'A part that stores energy has its inductance at bias specified: hot at the worst current, cold at that of full load.',
-  E20: 'The leakage limit can be kept: 30 % above the estimate.',
-  E31: 'The switching frequency lies within the material’s range.',
-  E33: 'The least area of the core is used for the flux.',
-  E35: 'The current limit, at its lower tolerance, lets full load through.',
-  T01: 'Current density of the winding.',
-  T02: 'The wire is thin enough for the skin depth.',
-  T03: 'AC resistance factor of the winding.',
-  T07: 'Core loss density suits natural convection.',
-  T08: 'The core settles thermally: more heat does not feed itself.',
-  T11: 'The winding stays 5 K below the limit of its class, and within the permitted rise.',
-  T12: 'The class of the insulation system is no higher than that of its weakest member.',
-  T16: 'The ambient temperature is stated.',
-  I01: 'Product standard and edition are named.',
-  I02: 'Every pair of windings, and each winding with the core, has a boundary.',
-  I03: 'Rms and recurring peak working voltage are known for each boundary, and none is stated below the calculated one.',
-  I04: 'Creepage distance.',
-  I05: 'Clearance.',
-  I06: 'Above 30 kHz the high-frequency tables are applied.',
-  I07: 'The altitude is taken into account by a factor on the clearances.',
-  I08: 'Margins of margin tape give the creepage distance.',
-  I09: 'Solid insulation is thick enough, or has enough layers.',
-  I10: 'Tape between reinforced windings has three layers.',
-  I11: 'The wire’s certificate covers the voltage and the frequency.',
-  I13: 'Leads that cross a margin run in a sleeve from inside the winding, with a wall thick enough.',
-  I14: 'The core is assigned to a side, and tied to a terminal of that side where it is tied.',
-  I15: 'Pins and stripped ends keep their distance from the core; somebody measures it on the part.',
-  I16: 'The test voltage is no lower than the standard’s.',
-  I17: 'The hipot row tests every part between all terminals of both ends, high and long enough.',
-  I18: 'The trip current of the hipot test is 5 mA at most.',
-  I26: 'A shield covers its winding, is tied to a terminal, and its ends overlap insulated.',
-  I27: 'Former and polymers are of flammability class V-0.',
-  I28: 'The material group is no better than the former’s, or its evidence is named.',
-  I31: 'On the mains, double or reinforced insulation parts every other side from the primary’s.',
-  I32: 'The mains voltage is stated, and no lower than that of the duty.',
-  I33: 'Pollution degree 1 and overvoltage category I have their reason.',
-  W01: 'The turns of a layer fit between the margins.',
-  W02: 'The overall diameter of the wire is known.',
-  W03: 'The coil, its bulge included, fits the height of the window.',
-  W04: 'The copper fill can be wound by machine.',
-  W05: 'The lead of an odd number of layers returns in a sleeve, or leaves at the far end.',
-  W06: 'A partly filled last layer says how it lies.',
-  W07: 'Layers are filled to at least 85 %.',
-  W08: 'One to four wires are wound in parallel.',
-  W16: 'Margin tape is built up to the height of its winding.',
-  W25: 'The part is no higher than its place.',
-  L01: 'Every figure in use of the library has a source.',
-  L02: 'The sources of the library rows in use are sure.',
-  P01: 'There are enough terminals.',
-  P02: 'Every start and finish ends on a terminal that exists.',
-  P03: 'The pins carry their current.',
-  P11: 'Pins of protected sides lie in opposite rows.',
-  P22: 'Each winding is one conductor from start to finish, and no two are joined into a loop.',
-  P14: 'Dots, start terminals and winding directions agree.',
-  D01: 'The mandatory fields of the title block are filled.',
-  D02: 'Who made the revision neither checks nor approves it.',
-  D03: 'Projection and general tolerances are stated, and none is withdrawn.',
-  D04: 'Each row says whether it is mandatory, reference or the vendor’s choice, and no winding is for reference only.',
-  D05: 'A rule says what counts as an equivalent material.',
-  D07: 'Schematic, winding table, sequence, pins, tests and duty name the same things.',
-  D08: 'No value stands without a tolerance.',
-  D11: 'Label, packing and pack quantity are filled.',
-  D14: 'The calculation finds no error in the document.',
-  Q01: 'Every electrical requirement has a test row.',
-  Q02: 'Every winding has rows for resistance and ratio, and polarity is tested.',
-  Q03: 'The ratio limit finds one turn too many or too few.',
-  Q05: 'Every boundary has a hipot row.',
-  Q06: 'The test frequency lies far below self-resonance.',
-  Q11: 'The resistance limit is 10 to 25 % above the calculated nominal.',
-  Q12: 'The limits of the test rows are in order, and no looser than those of the drawing.',
-  Q13: 'Resistance and inductance rows state their temperature.',
-  Q14: 'Inductance, resistance or ratio, polarity and hipot are tested on every part.',
-  Q16: 'A part that stores energy has a row for inductance at bias.',
-}
+import { CHECK_TEXTS } from './check-sentences'
 
 type Values = Finding['values']
 const named = (values: Values, key: string, otherwise = '') => String(values[key] ?? otherwise)
@@ -205,7 +117,7 @@ export const reasonText = ({ code, values }: ProposalReason): string => REASON_T
 export const checkText = ({ code }: Pick<CheckResult, 'code'>): string => CHECK_TEXTS[code] ?? code
 
 /** Shares that people read in per cent. */
-const IN_PERCENT = new Set(['E07', 'E08', 'E09', 'E11', 'E15', 'W03', 'W04', 'W07', 'Q03', 'Q06'])
+const IN_PERCENT = new Set(['E05', 'E07', 'E08', 'E09', 'E11', 'E15', 'E25', 'E34', 'T05', 'T14', 'Q08', 'W03', 'W04', 'W07', 'Q03', 'Q06'])
 
 /** A check's value or limit with its unit. */
 export function checkFigure({ code, unit }: Pick<CheckResult, 'code' | 'unit'>, value: number | null): string {

@@ -21,6 +21,7 @@ const REASONS: Readonly<Record<string, string>> = {
   I06: 'Creepage above 30 kHz looked up by hand in the copy of IEC 60664-4 in force; the 60664-1 distance governs here.',
   I15: 'Distance of the secondary’s pins and stripped ends to the core measured on a sample; it exceeds the creepage asked for.',
   L01: 'Compared with the part on the bench; its figures hold.',
+  P21: 'The board’s footprint laid beside the pin-out: both are seen from the side that the drawing names.',
 }
 
 interface DemoPart {
@@ -99,6 +100,7 @@ async function create(ctx: Context, engineer: Actor, { requirement, ...wanted }:
   const library = await asActor(ctx, engineer, (tx) => currentLibrary(tx, engineer))
   const { document } = propose(requirement, library)
   nameIt(document, wanted)
+  complete(document)
   return asActor(ctx, engineer, (tx) => createSpecification(tx, engineer, { partNumber: wanted.partNumber, title: wanted.title, document }))
 }
 
@@ -109,6 +111,13 @@ function nameIt(document: SpecificationDocument, { partNumber, title: name, owne
   enter(title.title, name)
   enter(title.responsibleDepartment, 'Magnetics')
   enter(title.technicalReference, 'Power design office')
+}
+
+/** What an engineer reads off the former's drawing and knows of the place of use, and no requirement sheet says. */
+function complete({ specification: { former, compliance, insulation } }: SpecificationDocument): void {
+  enter(former.leadSlotWidthMm, 3.5)
+  enter(compliance.reachListDate, '2025-06-25')
+  if (insulation.mainsVoltageV.value !== null) enter(insulation.impulse, { voltageV: 4000, shots: 5, polarity: 'both', where: 'Primary pins joined against secondary pins joined' })
 }
 
 async function ensureNextDraft(ctx: Context, engineer: Actor, released: Revision, change: (document: SpecificationDocument) => void): Promise<Revision> {

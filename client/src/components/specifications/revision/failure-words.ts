@@ -1,4 +1,4 @@
-import { CHECK_TEXTS } from '../check-texts'
+import { CHECK_TEXTS } from '../check-sentences'
 import { placeWords } from '../place-words'
 
 interface Failure {
