@@ -108,10 +108,10 @@ describe.each(proposals)('the proposal for the $name', ({ proposal, evaluation, 
 /** Dotted paths of all figures that a screen or the drawing shows. */
 function figures(evaluation: Evaluation): string[] {
   const { corners, magnetics, windings, leakages, capacitances, commonModeCapacitances, boundaryCapacitances, selfResonance, layout, losses, thermal, boundaries, mass } = evaluation
-  const hidden = /currentWaveform|layout\.items|\.layers$|turnsPerLayer/
+  const hidden = /currentWaveform|layout\.items|\.layers$|turnsPerLayer|paths\.\d+\.points/
   const paths: string[] = []
   const walk = (value: unknown, path: string) => {
-    if (hidden.test(path) && !path.includes('boundaries')) return
+    if (hidden.test(path) && !/boundaries.*layers$/.test(path)) return
     if (typeof value === 'number') paths.push(path.replace(/\.value$/, ''))
     else if (value !== null && typeof value === 'object') for (const [key, entry] of Object.entries(value)) walk(entry, path === '' ? key : `${path}.${key}`)
   }

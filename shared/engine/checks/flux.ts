@@ -13,9 +13,9 @@ const BRIDGE_STEADY_T = 0.2
 export const isTopology = ({ document }: CheckInput, ...wanted: Topology[]): boolean =>
   [document.specification.electrical.topology.value, document.requirement?.duty.topology].some((topology) => topology != null && wanted.includes(topology))
 
-/** The greatest of a corner's figures, carried from the effective to the least area; null without any. */
-function greatestOnLeastArea({ evaluation, context }: CheckInput, of: 'fluxSwingT' | 'fluxPeakT'): number | null {
-  const values = evaluation.corners.flatMap((corner) => (corner[of] === null ? [] : [Math.abs(corner[of])]))
+/** Greatest flux density of the corners, carried from the effective to the least area; null without any. */
+function steadyPeakT({ evaluation, context }: CheckInput): number | null {
+  const values = evaluation.corners.flatMap(({ fluxPeakT }) => (fluxPeakT === null ? [] : [fluxPeakT]))
   if (values.length === 0 || !context.core || !(context.core.minimumAreaMm2 > 0)) return null
   return (Math.max(...values) * context.core.effectiveAreaMm2) / context.core.minimumAreaMm2
 }
@@ -26,17 +26,16 @@ function forwardSwing(input: CheckInput): Outcome[] {
   const { saturationT } = input.evaluation.magnetics
   const remanenceT = input.context.material?.remanenceT ?? null
   const limit = saturationT === null || remanenceT === null ? null : FLUX_SHARE * (saturationT - remanenceT)
-  return [atMost({ value: greatestOnLeastArea(input, 'fluxSwingT'), limit, unit: 'T', path: 'core.material', values: remanenceT === null ? { missing: 'remanence' } : { remanenceT } })]
+  return [atMost({ value: input.evaluation.magnetics.fluxSwingT, limit, unit: 'T', path: 'core.material', values: remanenceT === null ? { missing: 'remanence' } : { remanenceT } })]
 }
 
 /** In a bridge the flux swings both ways; at start and at a step of load it may reach twice its steady peak. */
 function bridgeFlux(input: CheckInput): Outcome[] {
   if (!isTopology(input, 'half-bridge', 'full-bridge', 'push-pull')) return []
-  const peakT = greatestOnLeastArea(input, 'fluxPeakT')
-  const { saturationT } = input.evaluation.magnetics
+  const { saturationT, fluxTransientT } = input.evaluation.magnetics
   return [
-    atMost({ value: peakT === null ? null : 2 * peakT, limit: saturationT === null ? null : FLUX_SHARE * saturationT, unit: 'T', path: 'core.material', values: { missing: peakT === null ? 'flux' : '' } }),
-    { ...atMost({ value: peakT, limit: BRIDGE_STEADY_T, unit: 'T', path: 'core.core' }), severity: 'M' },
+    atMost({ value: fluxTransientT, limit: saturationT === null ? null : FLUX_SHARE * saturationT, unit: 'T', path: 'core.material', values: { missing: fluxTransientT === null ? 'flux' : '' } }),
+    { ...atMost({ value: steadyPeakT(input), limit: BRIDGE_STEADY_T, unit: 'T', path: 'core.core' }), severity: 'M' },
   ]
 }
 
@@ -66,17 +65,17 @@ function magnetisingPeakA({ document, context }: CheckInput, windings: CheckInpu
   return Math.max(...sums.map(Math.abs)) / primary.turns
 }
 
-/** Volt-seconds that the part is rated for against the greatest that are applied, N·A·ΔB. */
+/** Volt-seconds that the part is rated for against the greatest that are applied, both at the winding of the rating. */
 function voltSeconds(input: CheckInput): Outcome[] {
   if (!isTopology(input, 'gate-drive', 'current-sense')) return []
   const { context, evaluation, document } = input
   const path = 'electrical.voltSecondProduct'
   const rated = document.specification.electrical.voltSecondProduct.value
-  const swings = evaluation.corners.flatMap(({ fluxSwingT }) => (fluxSwingT === null ? [] : [fluxSwingT]))
-  const turns = document.specification.windings.find(({ id }) => id === rated?.windingId)?.turns ?? null
-  if (!rated || swings.length === 0 || turns === null || !context.core) return [notCheckable(path, { missing: rated ? 'applied volt-seconds' : 'volt-second product' })]
-  const appliedVs = turns * context.core.effectiveAreaMm2 * context.sets * 1e-6 * Math.max(...swings)
-  return [atLeast({ value: rated.minimumVs, limit: 1.2 * appliedVs, unit: 'Vs', path, values: { appliedVs } })]
+  const winding = document.specification.windings.find(({ id }) => id === rated?.windingId)
+  const atPrimaryVs = evaluation.magnetics.voltSecondsVs
+  if (!rated || !winding || atPrimaryVs === null || !context.primary || context.primary.turns <= 0) return [notCheckable(path, { missing: rated ? 'applied volt-seconds' : 'volt-second product' })]
+  const appliedVs = (atPrimaryVs * winding.turns) / context.primary.turns
+  return [atLeast({ value: rated.minimumVs, limit: 1.2 * appliedVs, unit: 'Vs', path, values: { winding: winding.name } })]
 }
 
 /** Share of saturation up to which the gap alone decides the inductance. Source: common practice. */

@@ -1,4 +1,5 @@
 import type { CapacitanceLimit, LeakageLimit } from '../specification'
+import { dutyTraits } from '../topologies'
 import { isTopology } from './flux'
 import { atLeast, atMost, notCheckable, yesNo } from './outcome'
 import type { Check, CheckInput, Outcome } from './outcome'
@@ -11,11 +12,9 @@ const sameSet = (one: readonly string[], other: readonly string[]) => one.length
 const estimateOf = ({ evaluation }: CheckInput, { windingId, shortedWindingIds }: Pick<LeakageLimit, 'windingId' | 'shortedWindingIds'>): number | null =>
   evaluation.leakages.find((one) => one.windingId === windingId && sameSet(one.shortedWindingIds, shortedWindingIds))?.inductanceH ?? null
 
-/** Capacitance that the build has between two windings, as far as the evaluation says it, F. */
-function capacitanceOf({ evaluation }: CheckInput, windingIds: readonly string[]): number | null {
-  const { capacitances } = evaluation as { capacitances?: readonly { windingIds: readonly string[]; capacitanceF: number | null }[] }
-  return capacitances?.find((one) => sameSet(one.windingIds, windingIds))?.capacitanceF ?? null
-}
+/** Capacitance that the laid coil has between windings, F. */
+const capacitanceOf = ({ evaluation }: CheckInput, windingIds: readonly string[]): number | null =>
+  evaluation.capacitances.find((one) => sameSet(one.windingIds, windingIds))?.capacitanceF ?? null
 
 /** Little leakage asks for interleaving, which doubles the capacitance: where both are limited, both limits must hold at once. */
 function leakageAgainstCapacitance(input: CheckInput): Outcome[] {
@@ -58,8 +57,8 @@ const RESONANCE_FACTOR = 5
 function resonanceAbove(input: CheckInput): Outcome[] {
   const { selfResonance, switchingFrequencyHz } = input.document.specification.electrical
   const frequencyHz = switchingFrequencyHz.value?.maximum ?? null
-  const { selfResonanceHz } = input.evaluation as { selfResonanceHz?: number | null }
-  const resonanceHz = selfResonance.value?.minimumHz ?? selfResonanceHz ?? null
+  const predicted = input.evaluation.selfResonance.find(({ windingId }) => windingId === input.context.primary?.id)?.frequencyHz
+  const resonanceHz = selfResonance.value?.minimumHz ?? predicted ?? null
   if (frequencyHz === null) return []
   return [atLeast({ value: resonanceHz, limit: RESONANCE_FACTOR * frequencyHz, unit: 'Hz', path: 'electrical.selfResonance', values: resonanceHz === null ? { missing: 'self-resonance' } : {} })]
 }
@@ -86,9 +85,8 @@ const DROP_SHARE = 0.02
 
 /** Outputs that the converter does not regulate follow the others but for the drop in their own copper. */
 function outputDrops(input: CheckInput): Outcome[] {
-  const duty = input.document.requirement?.duty
-  if (duty?.topology !== 'flyback') return []
-  const slaves = duty.outputs.filter(({ role }) => role === 'main').slice(1)
+  const { requirement } = input.document
+  const slaves = (requirement ? dutyTraits(requirement.duty).outputs : []).filter(({ role }) => role === 'main').slice(1)
   return slaves.flatMap((output) => {
     const index = input.document.specification.windings.findIndex(({ outputId }) => outputId === output.id)
     if (index < 0) return []

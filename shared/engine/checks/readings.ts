@@ -1,4 +1,5 @@
 import type { TestRow, WindingSpecification } from '../specification'
+import { dutyTraits } from '../topologies'
 import { atLeast, atMost, notCheckable, yesNo } from './outcome'
 import type { Check, CheckInput, Outcome } from './outcome'
 
@@ -104,7 +105,7 @@ const criticalReadings = ({ document: { specification } }: CheckInput): Outcome[
 
 /** The bias at which the part is tested is that which the converter's limit lets through. */
 function biasMatchesLimit({ document: { specification, requirement }, context }: CheckInput): Outcome[] {
-  const limit = requirement?.duty.currentLimit
+  const limit = requirement && dutyTraits(requirement.duty).currentLimit
   if (!limit) return []
   const own = specification.electrical.saturation.map((row, index) => ({ row, index })).filter(({ row }) => row.windingId === context.primary?.id)
   const greatestA = limit.nominalA * (1 + limit.tolerance)

@@ -39,10 +39,10 @@ function ratioFindsTurn({ document: { specification } }: CheckInput): Outcome[] 
   return [...stated, ...tested]
 }
 
-/** Error of an inductance reading below self-resonance, (f/f₀)²/(1 − (f/f₀)²), at most 2 %. */
-function testFrequency({ document: { specification } }: CheckInput): Outcome[] {
+/** Error of an inductance reading below self-resonance, (f/f₀)²/(1 − (f/f₀)²), at most 2 %; the resonance as specified, else as predicted. */
+function testFrequency({ document: { specification }, evaluation, context }: CheckInput): Outcome[] {
   const { inductance, selfResonance } = specification.electrical
-  const resonanceHz = selfResonance.value?.minimumHz ?? null
+  const resonanceHz = selfResonance.value?.minimumHz ?? evaluation.selfResonance.find(({ windingId }) => windingId === context.primary?.id)?.frequencyHz ?? null
   const frequencies = [
     ...(inductance.value ? [{ frequencyHz: inductance.value.frequencyHz, path: 'electrical.inductance' }] : []),
     ...rowsOf(specification, 'inductance').flatMap(({ row, index }) => (row.frequencyHz === null ? [] : [{ frequencyHz: row.frequencyHz, path: `tests.${index}.frequencyHz` }])),

@@ -75,8 +75,19 @@ const withstandRows = (input: CheckInput): Outcome[] => boundaries(input).flatMa
 /** A breakdown must trip the tester: the capacitive current of a wound part is far below this. */
 const GREATEST_TRIP_A = 5e-3
 
-const tripCurrents = (input: CheckInput): Outcome[] =>
-  boundaries(input).flatMap(({ boundary, path }) => (boundary.test ? [atMost({ value: boundary.test.tripA, limit: GREATEST_TRIP_A, unit: 'A', path: `${path}.test.tripA`, values: { boundary: boundary.name } })] : []))
+/** Times the capacitive current that a good part may draw without tripping. Source: common practice, 3 to 10. */
+const TRIP_FACTOR = 3
+
+function tripCurrents(input: CheckInput): Outcome[] {
+  return boundaries(input).flatMap(({ boundary, path }) => {
+    const { test } = boundary
+    if (!test) return []
+    const at = { unit: 'A', path: `${path}.test.tripA`, values: { boundary: boundary.name } }
+    const capacitanceF = input.evaluation.boundaryCapacitances.find(({ boundaryId }) => boundaryId === boundary.id)?.capacitanceF ?? null
+    const drawnA = test.kind === 'dc' || capacitanceF === null ? null : 2 * Math.PI * test.frequencyHz * capacitanceF * test.voltageV
+    return [atMost({ ...at, value: test.tripA, limit: GREATEST_TRIP_A }), ...(drawnA === null ? [] : [{ ...atLeast({ ...at, value: test.tripA, limit: TRIP_FACTOR * drawnA }), severity: 'N' as const }])]
+  })
+}
 
 export const WITHSTAND_CHECKS: Readonly<Record<string, Check>> = {
   I16: { severity: 'S', source: 'product standard', run: testVoltages },

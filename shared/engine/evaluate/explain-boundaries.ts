@@ -84,12 +84,15 @@ function explainRequired(context: Context, { index, boundary, stress, needs, req
 }
 
 function explainProvided(context: Context, { index, provided }: ExplainedBoundary): void {
-  if (!provided) return
-  for (const [field, symbol] of [['clearanceMm', 'd_cl'], ['creepageMm', 'd_cr'], ['distanceThroughInsulationMm', 'd_ti']] as const) {
-    const value = provided[field]
-    if (value === null) continue
-    const along = provided.paths.find(({ kind }) => `${kind}Mm` === field || (kind === 'through-insulation' && field === 'distanceThroughInsulationMm'))
-    const points = along?.points.map(([x, y]) => `${x.toFixed(2)}, ${y.toFixed(2)}`).join(' → ') ?? ''
-    explain(context, place(index, `provided.${field}`), () => ({ symbol, value, unit: 'mm', formula: 'shortest way through the coil as laid out', inputs: [{ name: 'way', value: along?.how ?? provided.how, unit: '', origin: 'layout' }, { name: 'points', value: points, unit: 'mm', origin: 'layout' }], source: 'geometry of the build' }))
-  }
+  provided?.paths.forEach((path, position) => {
+    const points = path.points.map(([x, y]) => `${x.toFixed(2)}, ${y.toFixed(2)}`).join(' → ')
+    const inputs = [
+      { name: 'way', value: path.how, unit: '', origin: 'layout' },
+      { name: 'points', value: points, unit: 'mm', origin: path.plane === 'window' ? 'layout, from the left flange and the tube' : 'pins, from the middle of the former' },
+    ]
+    const working = () => ({ symbol: SYMBOLS[path.kind], value: path.lengthMm, unit: 'mm', formula: 'shortest way through the coil as laid out', inputs, source: 'geometry of the build' })
+    explain(context, place(index, `provided.paths.${position}.lengthMm`), working)
+  })
 }
+
+const SYMBOLS = { clearance: 'd_cl', creepage: 'd_cr', 'through-insulation': 'd_ti' } as const
