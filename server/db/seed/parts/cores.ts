@@ -1,5 +1,6 @@
 import type { CoreRow } from '#shared/engine/library'
 import { CORE_TABLES, type CoreTable } from './core-tables'
+import { powderRings } from './rings'
 import { figure, readTable, rounded, rowId } from './table'
 
 const DIMENSIONS = ['a', 'b', 'c', 'd', 'e', 'f'] as const
@@ -9,7 +10,7 @@ type Cells = Record<string, number | null>
 
 /** Every core whose effective parameters are published and agree with one another. */
 export function shippedCores(): CoreRow[] {
-  return [...CORE_TABLES.flatMap(catalogueCores), ...smallECores()].map(withKnownDoubts)
+  return [...[...CORE_TABLES.flatMap(catalogueCores), ...smallECores()].map(withKnownDoubts), ...powderRings()]
 }
 
 function catalogueCores(table: CoreTable): CoreRow[] {

@@ -86,6 +86,14 @@ describe('cores', () => {
   })
 })
 
+describe('rings', () => {
+  it('ships ferrite and powder sizes with a hole, an outside and a height', () => {
+    const rings = library.cores.filter(({ shape }) => shape === 'toroid')
+    expect(rings.length).toBeGreaterThanOrEqual(75)
+    expect(rings.filter(({ dimensionsMm: { a, b, c } }) => !(a! > b! && b! > 0 && c! > 0)).map(({ name }) => name)).toEqual([])
+  })
+})
+
 describe('formers', () => {
   it('ships at least 40 for at least six shapes', () => {
     const shapes = new Set(library.formers.map((former) => byId(library.cores, former.coreId).shape))
@@ -155,6 +163,18 @@ describe('wires', () => {
       return given.some((size, index) => index > 0 && size <= given[index - 1]!)
     })
     expect(shrinking.map((wire) => wire.name)).toEqual([])
+  })
+
+  // IEC 60317-11: 1.28 · √60 · 0.117 mm of bunched strands, and a serving of 0.035 mm on the radius.
+  it('holds litz of 60 strands, as three or more of each strand do', () => {
+    expect(byId(library.wires, 'litz-60x0.100').overallMm['enamel-grade-1']).toBeCloseTo(1.28 * Math.sqrt(60) * 0.117 + 0.07, 2)
+    for (const strandMm of [0.05, 0.071, 0.1, 0.2]) expect(library.wires.filter(({ form, conductorMm }) => form === 'litz' && conductorMm === strandMm).length).toBeGreaterThanOrEqual(8)
+  })
+
+  it('holds foil from 0.025 to 0.3 mm in a dozen widths', () => {
+    const foils = library.wires.filter(({ form }) => form === 'foil')
+    expect(new Set(foils.map(({ conductorMm }) => conductorMm)).size).toBe(6)
+    expect(foils.filter(({ conductorMm }) => conductorMm === 0.1)).toHaveLength(12)
   })
 
   it('gives copper the resistance of its area: 1/58 to 1/58.5 Ω·mm²/m, litz 2 % more', () => {

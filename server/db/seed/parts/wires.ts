@@ -1,13 +1,16 @@
 import type { WireRow } from '#shared/engine/library'
+import { shippedFoils } from './foils'
+import { shippedLitz } from './litz'
 import { figure, readTable, rounded } from './table'
 import { AWG_TABLE, METRIC_TABLE } from './wire-tables'
 
 const AWG_COLUMNS = ['bare', 'area', 'resistance', 'single', 'heavy', 'triple', 'insulated'] as const
 const METRIC_COLUMNS = ['tolerance', 'area', 'nominal', 'least', 'greatest', 'grade1', 'grade2', 'grade3'] as const
 
-/** Round wire by gauge and by metric size, and litz wire by geometry. */
+/** Round wire by gauge and by metric size; litz and foil by geometry. */
 export function shippedWires(): WireRow[] {
-  return [...gaugeWires(), ...metricWires(), ...LITZ.map(litzWire)]
+  const metric = metricWires()
+  return [...gaugeWires(), ...metric, ...shippedLitz(metric), ...shippedFoils()]
 }
 
 function gaugeWires(): WireRow[] {
@@ -85,58 +88,4 @@ function metricWires(): WireRow[] {
       widthMm: null,
     }
   })
-}
-
-const LITZ = [
-  { strands: 10, strandMm: '0.100' },
-  { strands: 20, strandMm: '0.100' },
-  { strands: 30, strandMm: '0.100' },
-  { strands: 60, strandMm: '0.100' },
-  { strands: 100, strandMm: '0.100' },
-  { strands: 40, strandMm: '0.071' },
-  { strands: 60, strandMm: '0.071' },
-  { strands: 100, strandMm: '0.071' },
-  { strands: 180, strandMm: '0.071' },
-  { strands: 100, strandMm: '0.050' },
-  { strands: 225, strandMm: '0.050' },
-] as const
-
-/** Overall diameter over √n · strand overall diameter, for closely packed round bundles. */
-const LITZ_PACKING = 1.155
-
-/** Lengthening of the strands by the lay, as published tables of fine litz have it. */
-const LITZ_LAY = 1.02
-
-function litzWire({ strands, strandMm }: (typeof LITZ)[number]): WireRow {
-  const strand = metricWires().find((row) => row.id === `iec-${strandMm}`)!
-  const overall = (strandOverallMm: number | null) => (strandOverallMm === null ? null : rounded(LITZ_PACKING * Math.sqrt(strands) * strandOverallMm))
-  const size = `${strands} × ${strandMm} mm`
-  return {
-    ...strand,
-    id: `litz-${strands}x${strandMm}`,
-    name: `Litz ${size}`,
-    source: 'Geometry: overall diameter 1.155 · √n · strand overall diameter; resistance of the strand (IEC 60317-0-1) over n, times 1.02 for the lay',
-    edition: 'Formula as given in winding handbooks',
-    confidence: 'generic',
-    unverified: ['overallMm.enamel-grade-1', 'overallMm.enamel-grade-2', 'overallMm.enamel-grade-3', 'resistance20.nominalOhmPerM'],
-    note: 'Generic, unverified, replace before release. Without serving; made litz runs to 1.35 · √n · strand overall diameter. Grade is that of the strand.',
-    form: 'litz',
-    standard: 'IEC 60317-11',
-    size,
-    strands,
-    copperAreaMm2: rounded(strands * strand.copperAreaMm2, 6),
-    resistance20: {
-      nominalOhmPerM: rounded((LITZ_LAY * strand.resistance20.nominalOhmPerM) / strands, 7),
-      minimumOhmPerM: null,
-      maximumOhmPerM: null,
-    },
-    overallMm: {
-      'enamel-grade-1': overall(strand.overallMm['enamel-grade-1']),
-      'enamel-grade-2': overall(strand.overallMm['enamel-grade-2']),
-      'enamel-grade-3': overall(strand.overallMm['enamel-grade-3']),
-      'triple-insulated': null,
-      'fully-insulated': null,
-      bare: null,
-    },
-  }
 }
