@@ -56,6 +56,7 @@ export const coreDraftSchema = z.strictObject({
   shape: z.enum(CORE_SHAPES),
   standard: optionalText('The standard'),
   dimensionsMm: z.strictObject({ a: dimension, b: dimension, c: dimension, d: dimension, e: dimension, f: dimension }),
+  coatedMm: z.strictObject({ outside: lengthMm, inside: lengthMm, height: lengthMm }).nullable().optional(),
   effectiveAreaMm2: positive,
   minimumAreaMm2: positive,
   effectiveLengthMm: lengthMm.refine((value) => value > 0),

@@ -186,6 +186,10 @@ export interface SelfResonanceResult {
  * the left flange (pin-1 end), y outward from the winding tube.
  */
 export interface Layout {
+  /** Absent in evaluations made before rings were laid out: a window. */
+  form?: 'window' | 'ring'
+  /** The ring and its wires as seen along the axis; `items` is empty then, and width and height are those of the hole unrolled. */
+  ring?: RingLayout
   windowWidthMm: number
   windowHeightMm: number
   items: LayoutItem[]
@@ -196,6 +200,39 @@ export interface Layout {
   copperFill: number
   /** Sum of squares of overall diameters over window area. */
   windowFill: number
+}
+
+/** Seen along the axis of a ring core, origin in its middle, in mm; angles counter-clockwise from the right. */
+export interface RingLayout {
+  /** Core with its coating and core tape, before any winding. */
+  outsideMm: number
+  holeMm: number
+  heightMm: number
+  passes: RingPass[]
+  sectors: { stepId: string; windingId: string; section: number; fromRad: number; toRad: number }[]
+  /** Tape round the ring: radial thickness before the next winding. */
+  tapes: { stepId: string; holeMm: number; outsideMm: number; thicknessMm: number }[]
+  /** Free diameter of the hole, and the size over all, when everything is wound. */
+  remainingHoleMm: number
+  overallOutsideMm: number
+  overallHeightMm: number
+  /** Least clear distance of two windings in different sectors, along the hole; null with a single sector. */
+  sectorGapMm: number | null
+}
+
+/** One wire of one turn: where it runs through the hole, and where outside. */
+export interface RingPass {
+  stepId: string
+  windingId: string
+  turn: number
+  strand: number
+  layer: number
+  overallMm: number
+  conductorMm: number
+  innerXMm: number
+  innerYMm: number
+  outerXMm: number
+  outerYMm: number
 }
 
 export type LayoutItem =

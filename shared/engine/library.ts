@@ -32,6 +32,8 @@ export interface CoreRow extends LibraryRow {
   standard: string
   /** A…F of the shape's dimension drawing (full width, half height, depth, half window height, window outer width, centre leg). Ring core: A outside, B inside diameter, C height, uncoated. Null where not published. */
   dimensionsMm: { a: number | null; b: number | null; c: number | null; d: number | null; e: number | null; f: number | null }
+  /** Ring cores: greatest outside, least inside diameter and greatest height over the coating; absent where not published. */
+  coatedMm?: { outside: number; inside: number; height: number } | null
   /** Set of two halves. IEC 60205. */
   effectiveAreaMm2: number
   minimumAreaMm2: number

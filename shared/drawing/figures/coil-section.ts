@@ -5,6 +5,7 @@ import type { BoxMm, Picture, PointMm, Shape } from '../model'
 import { box, circle, hatchRectangle, label, LETTERING, line, moved, rectangle } from '../shapes'
 import { findRow } from '../sheets/input'
 import { balloons, type Balloon } from './balloons'
+import { ringSection } from './ring-section'
 import { scaleText, standardScale } from './scales'
 import { scaleBar, scaleBarWidthMm } from './scale-bar'
 import { turnMark } from './turn-marks'
@@ -54,10 +55,11 @@ const FOOT_MM = 9
 
 /**
  * Section through one side of the coil, to scale: turns by winding, tapes, margins, the former's tube and flanges, the
- * core with its gap. The axis of the centre leg lies at the lower edge, the pin-1 end at the left.
+ * core with its gap. The axis of the centre leg lies at the lower edge, the pin-1 end at the left. A ring core is drawn along its axis.
  */
 export function coilSection(input: CoilSectionInput): CoilPicture {
   const { layout, specification, library } = input
+  if (layout.ring) return ringSection({ ...input, ring: layout.ring })
   const core = findRow(library, 'core', specification.core.core.value)
   const former = findRow(library, 'former', specification.former.former.value)
   const around = surroundings(input.extent === 'whole' ? core : null, former, layout)

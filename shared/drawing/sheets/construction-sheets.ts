@@ -1,7 +1,7 @@
 import { coilSection, type CoilPicture } from '../figures/coil-section'
 import { scaleText } from '../figures/scales'
 import { turnMark } from '../figures/turn-marks'
-import type { Evaluation } from '../../engine/evaluation'
+import type { Evaluation, Layout } from '../../engine/evaluation'
 import { formatNumber } from '../../number-format'
 import type { Picture, Shape } from '../model'
 import { box, label, labelLines, LETTERING, linesHeightMm, moved } from '../shapes'
@@ -23,9 +23,11 @@ const LEAST_MM = 62
 export function constructionSheets(flow: Flow, input: DrawingInput): void {
   newPage(flow, 'Construction')
   addTable(flow, sequenceTable(input))
-  if (input.evaluation && input.evaluation.layout.items.length > 0) coilFigures(flow, input, input.evaluation)
+  if (input.evaluation && drawnItems(input.evaluation.layout) > 0) coilFigures(flow, input, input.evaluation)
   addTable(flow, materialsTable(input))
 }
+
+const drawnItems = ({ items, ring }: Layout) => items.length + (ring?.passes.length ?? 0)
 
 function coilFigures(flow: Flow, input: DrawingInput, evaluation: Evaluation): void {
   const side = sideColumn(input, evaluation)
@@ -37,8 +39,8 @@ function coilFigures(flow: Flow, input: DrawingInput, evaluation: Evaluation): v
   }
   const top = take(flow, Math.min(needMm(), roomMm(flow)))
   setScale(flow, `coil ${scaleText(picture.scale)}`)
-  const words = `Turns, tapes and margins by step of the winding sequence; ${evaluation.layout.items.length} items`
-  placeFigure(flow, `Coil section, winding window, scale ${scaleText(picture.scale)}`, words, picture, SPACE.leftMm, top, WINDOW_MM)
+  const words = `Turns, tapes and margins by step of the winding sequence; ${drawnItems(evaluation.layout)} items`
+  placeFigure(flow, `${evaluation.layout.ring ? 'Ring core along its axis' : 'Coil section, winding window'}, scale ${scaleText(picture.scale)}`, words, picture, SPACE.leftMm, top, WINDOW_MM)
   drawSideColumn(flow, side, top)
 }
 

@@ -15,7 +15,9 @@ export function summary(progress: Progress): Coil {
     progress.findings.push(finding('window-overfilled', 'error', 'sequence', { buildMm, windowHeightMm: former.windingHeightMm, overMm: buildMm - former.windingHeightMm, fillRatio: buildMm / former.windingHeightMm }))
   }
   return {
+    sectionLeftsMm: sections.map(({ xMm }) => xMm),
     layout: {
+      form: 'window',
       windowWidthMm: sections.length * former.windingWidthMm + (sections.length - 1) * former.flangeThicknessMm,
       windowHeightMm: former.windingHeightMm,
       items: progress.items,
@@ -35,7 +37,7 @@ export function summary(progress: Progress): Coil {
   }
 }
 
-function windingBuild(windingId: string, all: readonly StepPlacement[]): [string, WindingBuild][] {
+export function windingBuild(windingId: string, all: readonly StepPlacement[]): [string, WindingBuild][] {
   const placements = all.filter((placement) => placement.windingId === windingId)
   if (placements.length === 0) return []
   const turnsPerLayer = placements.flatMap((placement) => placement.turnsPerLayer)

@@ -122,6 +122,8 @@ export interface WindingBuild {
 
 export interface Coil {
   layout: Layout
+  /** Left end of each section from the left end of the window. */
+  sectionLeftsMm: number[]
   placements: StepPlacement[]
   tapes: TapePlacement[]
   margins: MarginPlacement[]

@@ -3,6 +3,7 @@ import { tubeClearanceMm } from '../build'
 import { CORE_BODY } from '../parasitics/electrodes'
 import type { Dielectric, Electrode } from '../parasitics/electrodes'
 import { permittivityOf, wirePermittivity } from '../parasitics/permittivity'
+import type { CoreRow } from '../library'
 import type { LibraryReference } from '../specification'
 import type { Context } from './context'
 import { buildWire } from './lookup'
@@ -29,7 +30,7 @@ function layerElectrodes(context: Context, coil: Coil, placement: StepPlacement)
   const row = winding && context.index.find('wire', winding.wire.wire)
   if (!winding || !wire || !row) return []
   const parallel = Math.max(1, Math.floor(winding.wire.parallel))
-  const sectionMm = sectionLeftMm(context, placement.section)
+  const sectionMm = coil.sectionLeftsMm[placement.section - 1] ?? 0
   return placement.layers.map((layer): Electrode => {
     const shared = {
       body: winding.id,
@@ -58,8 +59,6 @@ function layerElectrodes(context: Context, coil: Coil, placement: StepPlacement)
   })
 }
 
-const sectionLeftMm = ({ former }: Context, section: number) => (section - 1) * ((former?.windingWidthMm ?? 0) + (former?.flangeThicknessMm ?? 0))
-
 const turnsAcross = ({ turns, turnsBefore, rightward }: LayerPlacement) =>
   rightward ? { turnsAtLeft: turnsBefore, turnsAtRight: turnsBefore + turns } : { turnsAtLeft: turnsBefore + turns, turnsAtRight: turnsBefore }
 
@@ -82,8 +81,8 @@ const shieldElectrodes = (coil: Coil): Electrode[] =>
     body: shield.windingId,
     bottomMm: shield.bottomMm,
     topMm: shield.topMm,
-    leftMm: shield.leftMm,
-    rightMm: shield.rightMm,
+    leftMm: (coil.sectionLeftsMm[shield.section - 1] ?? 0) + shield.leftMm,
+    rightMm: (coil.sectionLeftsMm[shield.section - 1] ?? 0) + shield.rightMm,
     turnsAtLeft: 0.5,
     turnsAtRight: 0.5,
     turnLengthMm: shield.turnLengthMm,
@@ -91,7 +90,21 @@ const shieldElectrodes = (coil: Coil): Electrode[] =>
   }))
 
 /** The centre leg below the tube and the outer legs over the coil. */
-function coreElectrodes({ core, former }: Context, coil: Coil): Electrode[] {
+function coreElectrodes(context: Context, coil: Coil): Electrode[] {
+  return coil.layout.ring ? ringElectrodes(context, coil) : legElectrodes(context, coil)
+}
+
+/** The ring under its coating, all along the inner circumference. */
+function ringElectrodes({ core }: Context, coil: Coil): Electrode[] {
+  const lengths = coil.placements.flatMap(({ turnLengthsMm }) => turnLengthsMm)
+  if (lengths.length === 0) return []
+  const topMm = -coatingMm(core)
+  return [{ kind: 'plane', body: CORE_BODY, bottomMm: topMm - 1, topMm, leftMm: 0, rightMm: coil.layout.windowWidthMm, turnsAtLeft: 0, turnsAtRight: 0, turnLengthMm: Math.min(...lengths), cover: 1 }]
+}
+
+const coatingMm = (core: CoreRow | null) => (core?.coatedMm && core.dimensionsMm.b !== null ? Math.max(0, (core.dimensionsMm.b - core.coatedMm.inside) / 2) : 0)
+
+function legElectrodes({ core, former }: Context, coil: Coil): Electrode[] {
   const { c, d, e, f } = core?.dimensionsMm ?? { c: null, d: null, e: null, f: null }
   if (!core?.centreLeg || !former || d === null || e === null || f === null) return []
   const middleMm = coil.layout.windowWidthMm / 2
@@ -111,7 +124,10 @@ function coreElectrodes({ core, former }: Context, coil: Coil): Electrode[] {
 
 function dielectricsOf(context: Context, coil: Coil): Dielectric[] {
   const { former } = context
-  const wall: Dielectric[] = former ? [{ bottomMm: -former.tubeWallMm, topMm: 0, leftMm: -Infinity, rightMm: Infinity, permittivity: permittivityOf(former.material).value }] : []
+  const everywhere = { leftMm: -Infinity, rightMm: Infinity }
+  const wall: Dielectric = former
+    ? { ...everywhere, bottomMm: -former.tubeWallMm, topMm: 0, permittivity: permittivityOf(former.material).value }
+    : { ...everywhere, bottomMm: -coatingMm(context.core), topMm: 0, permittivity: permittivityOf('epoxy').value }
   const materials = new Map<string, number>()
   const permittivity = (stepId: string): number => {
     const known = materials.get(stepId)
@@ -120,8 +136,14 @@ function dielectricsOf(context: Context, coil: Coil): Dielectric[] {
     materials.set(stepId, value)
     return value
   }
+  const ring = coil.layout.ring
+  const ringTapes = (ring?.tapes ?? []).map((tape): Dielectric => {
+    const topMm = (ring!.holeMm - tape.holeMm) / 2
+    return { ...everywhere, bottomMm: topMm - tape.thicknessMm, topMm, permittivity: permittivity(tape.stepId) }
+  })
   return [
-    ...wall,
+    wall,
+    ...ringTapes,
     ...coil.layout.items.flatMap((item): Dielectric[] => {
       if (item.kind !== 'tape' && item.kind !== 'margin') return []
       const heightMm = item.kind === 'tape' ? item.thicknessMm : item.heightMm
@@ -132,6 +154,6 @@ function dielectricsOf(context: Context, coil: Coil): Dielectric[] {
 
 function tapeMaterial({ specification, index }: Context, stepId: string): string {
   const step = specification.sequence.find(({ id }) => id === stepId)
-  const reference: LibraryReference | null = step?.kind === 'tape' || step?.kind === 'margin' ? step.tape : step?.kind === 'winding' ? step.interlayerTape : null
+  const reference: LibraryReference | null = step?.kind === 'tape' || step?.kind === 'core-tape' || step?.kind === 'margin' ? step.tape : step?.kind === 'winding' ? step.interlayerTape : null
   return index.find('tape', reference)?.material ?? ''
 }

@@ -1,10 +1,10 @@
-import { layOutCoil } from '../build'
+import { layOutCoil, layOutRing } from '../build'
 import type { Coil } from '../build'
 import { runChecks } from '../checks'
 import type { Evaluation, Layout, MassResult } from '../evaluation'
 import type { Finding } from '../findings'
 import type { Library } from '../library'
-import type { SpecificationDocument } from '../specification'
+import type { LibraryReference, SpecificationDocument, Winding } from '../specification'
 import { ENGINE_VERSION } from '../version'
 import { boundaryResults } from './boundaries'
 import { capacitanceResults } from './capacitances'
@@ -84,15 +84,15 @@ function reportPrimary(context: Context): void {
 }
 
 function layOut(context: Context): Coil | null {
-  const { former, specification, index } = context
-  if (!former) return null
-  const coil = layOutCoil({
-    former,
+  const { core, former, specification, index } = context
+  const shared = {
     windings: specification.windings,
     sequence: specification.sequence,
-    wireOf: (winding) => buildWire(index, winding),
-    tapeOf: (reference) => index.find('tape', reference),
-  })
+    wireOf: (winding: Winding) => buildWire(index, winding),
+    tapeOf: (reference: LibraryReference) => index.find('tape', reference),
+  }
+  const coil = former ? layOutCoil({ ...shared, former }) : core?.shape === 'toroid' ? layOutRing({ ...shared, core }) : null
+  if (!coil) return null
   context.findings.push(...coil.findings)
   return coil
 }

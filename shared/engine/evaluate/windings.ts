@@ -25,6 +25,8 @@ export interface WindingCopper {
   wire: WireRow
   copperAreaMm2: number
   wireLengthM: number
+  /** Both free ends together. */
+  leadsMm: number
   meanTurnLengthMm: number
   resistance20Ohm: number
   massG: number
@@ -42,10 +44,15 @@ export function leadLengthMm(former: FormerRow): number {
   return 2 * (former.windingWidthMm / 2 + former.flangeThicknessMm + former.standoffMm + wraps)
 }
 
+/** Free ends of a winding on a ring, each. Source: common practice. */
+const RING_LEAD_MM = 20
+
+const leadsMm = ({ former }: Pick<Context, 'former'>, coil: Coil | null): number => (former ? leadLengthMm(former) : coil?.layout.ring ? 2 * RING_LEAD_MM : 0)
+
 /** Copper of every winding that is laid and whose wire is known. */
 export function windingCoppers(context: Context, coil: Coil | null): WindingCopper[] {
-  const { specification, former } = context
-  if (!coil || !former) return []
+  const { specification } = context
+  if (!coil) return []
   return specification.windings.flatMap((winding, index) => {
     const build = coil.windings.get(winding.id)
     const wire = context.index.find('wire', winding.wire.wire)
@@ -53,13 +60,14 @@ export function windingCoppers(context: Context, coil: Coil | null): WindingCopp
     const placements = coil.placements.filter(({ windingId }) => windingId === winding.id)
     const parallel = Math.max(1, winding.wire.parallel)
     const areaMm2 = wire.form === 'foil' && wire.widthMm === null ? wire.conductorMm * (placements[0]!.rightMm - placements[0]!.leftMm) : wire.copperAreaMm2
-    const wireLengthM = build.turnsLengthM + leadLengthMm(former) / 1000
+    const wireLengthM = build.turnsLengthM + leadsMm(context, coil) / 1000
     const copper: WindingCopper = {
       winding,
       index,
       wire,
       copperAreaMm2: areaMm2 * parallel,
       wireLengthM,
+      leadsMm: leadsMm(context, coil),
       meanTurnLengthMm: build.meanTurnLengthMm,
       resistance20Ohm: (wire.resistance20.nominalOhmPerM * wireLengthM) / parallel,
       massG: areaMm2 * 1e-6 * parallel * wireLengthM * COPPER_DENSITY_KG_PER_M3 * 1000,
@@ -193,7 +201,7 @@ function explainWinding(context: Context, { index, copper, result, hotC }: { ind
   const rowOrigin = `${wire.name}: ${wire.source}${wire.edition ? `, ${wire.edition}` : ''} (${wire.confidence})`
   explain(context, path('wireLengthM'), () => ({
     symbol: 'l', value: copper.wireLengthM, unit: 'm', formula: 'N·MLT + l_leads', source: 'geometry of the coil layout',
-    inputs: [{ name: 'N', value: winding.turns, unit: '', origin: `windings.${index}.turns` }, { name: 'MLT', value: copper.meanTurnLengthMm, unit: 'mm', origin: 'coil layout' }, { name: 'l_leads', value: context.former ? leadLengthMm(context.former) : 0, unit: 'mm', origin: 'coil former' }],
+    inputs: [{ name: 'N', value: winding.turns, unit: '', origin: `windings.${index}.turns` }, { name: 'MLT', value: copper.meanTurnLengthMm, unit: 'mm', origin: 'coil layout' }, { name: 'l_leads', value: copper.leadsMm, unit: 'mm', origin: context.former ? 'coil former' : 'free ends of a ring' }],
   }))
   explain(context, path('dcResistance20Ohm'), () => ({
     symbol: 'R_20', value: copper.resistance20Ohm, unit: 'Ω', formula: "R'·l/n", source: 'IEC 60317-0-1, nominal resistance',

@@ -28,6 +28,7 @@ function catalogueCores(table: CoreTable): CoreRow[] {
     shape: table.shape,
     standard: table.standard,
     dimensionsMm: { a: cells.a!, b: cells.b!, c: cells.c!, d: cells.d!, e: cells.e!, f: cells.f! },
+    ...(cells.coatedA != null ? { coatedMm: { outside: cells.coatedA, inside: figure(label, cells.coatedB), height: figure(label, cells.coatedC) } } : {}),
     effectiveAreaMm2: figure(label, cells.area),
     minimumAreaMm2: figure(label, cells.leastArea),
     effectiveLengthMm: figure(label, cells.length),
