@@ -33,6 +33,10 @@ export const canWriteRfq = (actor: Actor, row: Pick<RfqRow, 'companyId'>): boole
 export const canReadQuotes = (actor: Actor, row: Pick<RfqRow, 'companyId' | 'openedAt'>): boolean =>
   isOwn(actor, row.companyId) && holds(actor, PRICE_READERS) && row.openedAt !== null
 
+/** The same rule as a restriction, for queries that join the enquiry. */
+export const readableQuotes = (actor: Actor): SQL =>
+  actor.companyKind === 'buying' && holds(actor, PRICE_READERS) ? and(eq(rfqs.companyId, actor.companyId), isNotNull(rfqs.openedAt))! : sql`false`
+
 /** The second of the two persons who open: another one than asked, with another role than buyer. */
 export const canOpen = (actor: Actor, row: RfqRow): boolean =>
   isOwn(actor, row.companyId) && holds(actor, SECOND_OPENERS) && row.openingAskedBy !== null && row.openingAskedBy !== actor.personId

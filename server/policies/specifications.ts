@@ -34,6 +34,11 @@ export function canEditDraft(actor: Actor, row: RevisionRow): boolean {
   return canReadSpecification(actor, row) && holds(actor, 'engineer') && row.state === 'draft'
 }
 
+/** The technical side says what is to be changed; purchasing reads it. */
+export function canComment(actor: Actor, row: OwnedRow): boolean {
+  return canReadSpecification(actor, row) && holds(actor, 'engineer', 'checker', 'quality')
+}
+
 /** Nobody checks what they worked on, whatever roles they hold. */
 export function isSecondPerson(actor: Actor, row: RevisionRow): boolean {
   return canReadSpecification(actor, row) && !row.editorIds.includes(actor.personId)

@@ -32,6 +32,8 @@ export const auditEventSchema = z.discriminatedUnion('type', [
   z.object({ type: z.literal('draft-returned'), specificationId: idSchema, revisionId: idSchema }),
   z.object({ type: z.literal('check-overridden'), specificationId: idSchema, revisionId: idSchema, code: z.string(), path: z.string().optional() }),
   z.object({ type: z.literal('revision-withdrawn'), specificationId: idSchema, revisionId: idSchema }),
+  z.object({ type: z.literal('comment-written'), specificationId: idSchema, revisionId: idSchema, commentId: idSchema }),
+  z.object({ type: z.literal('comment-settled'), specificationId: idSchema, revisionId: idSchema, commentId: idSchema, settled: z.boolean() }),
   z.object({
     type: z.literal('revision-released'),
     specificationId: idSchema,
@@ -102,6 +104,8 @@ export const AUDIT_AREA: Record<AuditType, AuditArea> = {
   'draft-returned': 'engineering',
   'check-overridden': 'engineering',
   'revision-withdrawn': 'engineering',
+  'comment-written': 'engineering',
+  'comment-settled': 'engineering',
   'revision-released': 'engineering',
   'rfq-created': 'purchasing',
   'rfq-issued': 'purchasing',

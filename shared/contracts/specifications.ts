@@ -6,6 +6,17 @@ import { specificationDocumentSchema } from './specification-document'
 export const REVISION_STATES = ['draft', 'in-check', 'released', 'superseded', 'withdrawn'] as const
 export const revisionStateSchema = z.enum(REVISION_STATES)
 
+/** What a list shows of a document; what nobody has filled is left out. */
+export const keyFiguresSchema = z.object({
+  core: z.string().optional(),
+  inductanceH: z.number().optional(),
+  /** Of the first winding. */
+  turns: z.number().optional(),
+  windings: z.number().optional(),
+  frequencyHz: z.number().optional(),
+})
+export type KeyFigures = z.infer<typeof keyFiguresSchema>
+
 const personNameSchema = z.object({ id: idSchema, name: z.string() })
 
 /** A released revision: what every later document points at. */
@@ -69,6 +80,8 @@ export const revisionSchema = z.object({
   overrides: z.array(overrideSchema),
   /** Why the checker sent it back; null when never. */
   returnedReason: z.string().nullable(),
+  /** Why it was withdrawn; null when it was not. */
+  withdrawnReason: z.string().nullable(),
   /** Persons who changed this draft: none of them may release it. */
   editors: z.array(personNameSchema),
 })
@@ -76,6 +89,29 @@ export const revisionSchema = z.object({
 /** What one answer of a second person covers: one check at one place. The same check elsewhere stays open. */
 export const placeOfCheck = ({ code, path }: { code: string; path: string }): string => `${code} ${path}`
 
+/** What rests on the releases of one part, each with the revision that it names. */
+export const specificationUseSchema = z.object({
+  enquiries: z.array(z.object({ id: idSchema, number: z.string(), title: z.string(), state: z.string(), dueAt: momentSchema, revision: z.string() })),
+  /** Submitted and neither superseded nor withdrawn; only after the opening and for who reads prices. */
+  quotes: z.array(z.object({ rfqId: idSchema, rfqNumber: z.string(), vendorName: z.string(), revision: z.string() })),
+  samples: z.array(z.object({ id: idSchema, number: z.string(), vendorName: z.string(), dueOn: z.iso.date(), cancelled: z.boolean(), revision: z.string() })),
+  orders: z.array(z.object({ id: idSchema, number: z.string(), vendorName: z.string(), answer: z.string().nullable(), revision: z.string() })),
+})
+
+/** A comment pinned to one place of a revision. */
+export const specificationCommentSchema = z.object({
+  id: idSchema,
+  /** Place by the identity of its rows: `windings.[w1].turns`; empty for the revision as a whole. */
+  place: z.string(),
+  text: z.string(),
+  by: personNameSchema,
+  at: momentSchema,
+  /** Null while it is open. */
+  settled: z.object({ by: personNameSchema, at: momentSchema }).nullable(),
+})
+
+export type SpecificationComment = z.infer<typeof specificationCommentSchema>
+export type SpecificationUse = z.infer<typeof specificationUseSchema>
 export type RevisionSummary = z.infer<typeof revisionSummarySchema>
 export type ReleaseSummary = z.infer<typeof releaseSummarySchema>
 export type Specification = z.infer<typeof specificationSchema>
@@ -116,6 +152,15 @@ export const getSpecification = defineEndpoint({
   access: readers,
   params: specificationParams,
   response: specificationSchema,
+})
+
+export const specificationUse = defineEndpoint({
+  method: 'GET',
+  path: '/api/specifications/:specificationId/use',
+  summary: 'Enquiries, quotations, samples and orders that rest on a release of the part: what a new revision touches',
+  access: readers,
+  params: specificationParams,
+  response: specificationUseSchema,
 })
 
 export const getRevision = defineEndpoint({
@@ -196,6 +241,37 @@ export const withdrawRevision = defineEndpoint({
   response: revisionSchema,
 })
 
+const commentPlace = z.string().regex(/^[A-Za-z0-9._[\]/ -]{0,200}$/, 'A place is a dotted path of the document, with rows by their id in brackets.')
+
+export const listComments = defineEndpoint({
+  method: 'GET',
+  path: '/api/specifications/:specificationId/revisions/:revisionId/comments',
+  summary: 'The comments on one revision, oldest first',
+  access: readers,
+  params: revisionParams,
+  response: z.array(specificationCommentSchema),
+})
+
+export const writeComment = defineEndpoint({
+  method: 'POST',
+  path: '/api/specifications/:specificationId/revisions/:revisionId/comments',
+  summary: 'Say something about one place of a revision',
+  access: ['engineer', 'checker', 'quality'],
+  params: revisionParams,
+  body: z.strictObject({ place: commentPlace, text: requiredText('The comment', TEXT_LIMITS.note) }),
+  response: z.array(specificationCommentSchema),
+})
+
+export const settleComment = defineEndpoint({
+  method: 'POST',
+  path: '/api/specifications/:specificationId/revisions/:revisionId/comments/:commentId/settlement',
+  summary: 'Settle a comment, or open it again',
+  access: ['engineer', 'checker', 'quality'],
+  params: revisionParams.extend({ commentId: idSchema }),
+  body: z.strictObject({ settled: z.boolean() }),
+  response: z.array(specificationCommentSchema),
+})
+
 export const draftPdf = defineEndpoint({
   method: 'GET',
   path: '/api/specifications/:specificationId/revisions/:revisionId/sheets.pdf',
@@ -242,7 +318,7 @@ export const listReleases = defineEndpoint({
   path: '/api/releases',
   summary: 'Released revisions that an RFQ can be made from',
   access: readers,
-  response: z.array(z.object({ ...releaseSummarySchema.shape, specificationId: idSchema, current: z.boolean() })),
+  response: z.array(z.object({ ...releaseSummarySchema.shape, specificationId: idSchema, revisionId: idSchema, current: z.boolean() })),
 })
 
 export const specificationJsonSchema = defineEndpoint({

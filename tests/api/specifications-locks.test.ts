@@ -26,7 +26,7 @@ afterAll(() => test.stop())
 const run = (actor: Actor, statement: SQL) => asActor(test.ctx, actor, async (tx: Transaction) => (await tx.execute(statement)).rows)
 const changed = (actor: Actor, statement: SQL) => asActor(test.ctx, actor, async (tx: Transaction) => (await tx.execute(statement)).rowCount)
 const refused = (actor: Actor, statement: SQL, code: string) => expect(run(actor, statement)).rejects.toMatchObject({ cause: { code } })
-const TABLES = ['specifications', 'specification_revisions', 'specification_releases', 'specification_overrides'] as const
+const TABLES = ['specifications', 'specification_revisions', 'specification_releases', 'specification_overrides', 'specification_comments'] as const
 
 describe('row security with the policies in code bypassed', () => {
   it.each(['engineer', 'checker', 'quality', 'buyer', 'approver'] as const)('shows a stranger’s %s no row', async (role) => {

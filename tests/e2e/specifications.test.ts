@@ -97,24 +97,41 @@ describe('from a duty to a released drawing', () => {
 })
 
 describe('the workbench', () => {
-  it('tells two engineers in one draft of each other and loses neither’s work', async () => {
+  it('brings the work of two engineers in one draft together, and asks only where both changed one field', async () => {
     const draft = await buildDraft(test, world.engineer)
     const page = await enter(world.engineer)
     await openWorkbench(page, revisionParams(draft))
     const theirs = structuredClone(draft.document)
     theirs.specification.title.classification.value = 'theirs'
-    await request(test.app, contract.saveDraft, { as: colleague.cookie, params: revisionParams(draft), body: { version: draft.version, document: theirs } }).expect(200)
+    const store = (version: number) => request(test.app, contract.saveDraft, { as: colleague.cookie, params: revisionParams(draft), body: { version, document: theirs } }).expect(200)
+    await store(draft.version)
 
-    await page.getByLabel('Technical reference', { exact: true }).fill('mine')
-    await page.getByText('Somebody else stored a change of this draft').waitFor()
-    await look(page, 'workbench-conflict')
-    expect(await page.getByLabel('Technical reference', { exact: true }).inputValue()).toBe('mine')
-    const copy = page.waitForEvent('download')
-    await page.getByRole('button', { name: 'Save a copy of mine' }).click()
-    expect((await copy).suggestedFilename()).toMatch(/my-copy\.json$/)
-    await page.getByRole('button', { name: 'Load theirs' }).click()
+    const reference = page.getByLabel('Technical reference', { exact: true })
+    await reference.fill('mine')
+    const taken = page.getByRole('status', { name: 'Taken over from a colleague' })
+    await taken.getByText('Classification').waitFor()
     await stored(page)
+    await look(page, 'workbench-brought-together')
     expect(await page.getByLabel('Classification', { exact: true }).inputValue()).toBe('theirs')
+    const together = (await request(test.app, contract.getRevision, { as: colleague.cookie, params: revisionParams(draft) }).expect(200)).body
+    expect([together.document.specification.title.classification.value, together.document.specification.title.technicalReference.value]).toEqual(['theirs', 'mine'])
+
+    theirs.specification.title.technicalReference.value = 'their reference'
+    theirs.specification.title.responsibleDepartment.value = 'their department'
+    await store(together.version)
+    await reference.fill('mine again')
+    const asked = page.getByRole('alert', { name: 'Changes of two people' })
+    await asked.getByText('One field was changed by both').waitFor()
+    await look(page, 'workbench-conflict')
+    expect(await asked.getByRole('button', { name: 'Store this' }).isDisabled()).toBe(true)
+    const copy = page.waitForEvent('download')
+    await asked.getByRole('button', { name: 'Save a copy of mine' }).click()
+    expect((await copy).suggestedFilename()).toMatch(/my-copy\.json$/)
+    await asked.getByRole('radio', { name: /theirs, their reference/ }).check()
+    await asked.getByRole('button', { name: 'Store this' }).click()
+    await stored(page)
+    expect(await reference.inputValue()).toBe('their reference')
+    expect(await page.getByLabel('Responsible department', { exact: true }).inputValue()).toBe('their department')
   })
 
   it('keeps what cannot be read as typed, asks what is meant, and brings back after a reload what was not stored', async () => {

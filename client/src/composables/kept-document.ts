@@ -5,6 +5,8 @@ import { specificationDocumentSchema } from '#shared/contracts/specification-doc
 export interface KeptDocument {
   /** The stored version that it was made from. */
   version: number
+  /** What was stored in that version: with it, what others store meanwhile can be brought together with this. */
+  base: SpecificationDocument
   document: SpecificationDocument
 }
 
@@ -13,7 +15,7 @@ const keyOf = (personId: string, revisionId: string) => `draft:${personId}:speci
 export function readKept(personId: string, revisionId: string): KeptDocument | null {
   try {
     const kept = JSON.parse(sessionStorage.getItem(keyOf(personId, revisionId)) ?? 'null') as KeptDocument | null
-    if (kept === null || typeof kept.version !== 'number') return null
+    if (kept === null || typeof kept.version !== 'number' || !kept.base) return null
     // A shape of an earlier program cannot be worked on; one that merely does not fit the limits can.
     const parsed = specificationDocumentSchema.safeParse(kept.document)
     const foreign = !parsed.success && parsed.error.issues.some(({ code }) => code === 'unrecognized_keys' || code === 'invalid_type')

@@ -18,6 +18,10 @@ export interface DocumentEntry {
   target: Readonly<Ref<{ path: string; turn: number } | null>>
   /** The row under the pointer or the focus, such as `step:s3`, to be marked in the coil. */
   marked: Ref<string | null>
+  /** Writes the revision block from a comparison with the release in force. */
+  writeBlock?: () => Promise<void>
+  /** Place → number of open comments there. */
+  comments?: Readonly<Ref<ReadonlyMap<string, number>>>
 }
 
 const DOCUMENT_ENTRY: InjectionKey<DocumentEntry> = Symbol('document entry')

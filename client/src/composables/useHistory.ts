@@ -46,5 +46,13 @@ export function useHistory<T>(initial: T, now: () => number = () => performance.
     last.value = null
   }
 
-  return { current, commit, undo, redo, restart, canUndo: computed(() => past.value.length > 0), canRedo: computed(() => future.value.length > 0) }
+  /** Carries a change from outside into every state, so that going back does not take it away. */
+  function rebase(change: (value: T) => T) {
+    current.value = change(current.value)
+    past.value = past.value.map(change)
+    future.value = future.value.map(change)
+    last.value = null
+  }
+
+  return { current, commit, rebase, undo, redo, restart, canUndo: computed(() => past.value.length > 0), canRedo: computed(() => future.value.length > 0) }
 }

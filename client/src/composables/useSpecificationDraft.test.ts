@@ -8,7 +8,7 @@ import { useSpecificationDraft } from './useSpecificationDraft'
 
 const revision = (version: number, document: SpecificationDocument): Revision => ({
   id: 'r1', specificationId: 's1', label: 'P1', state: 'draft', createdBy: { id: 'p1', name: 'Eve' }, checkedBy: null, updatedAt: '2026-01-01T00:00:00.000Z', release: null,
-  version, document, overrides: [], returnedReason: null, editors: [],
+  version, document, overrides: [], returnedReason: null, withdrawnReason: null, editors: [],
 })
 
 /** A server that keeps one document and refuses what was made from an older version. */
@@ -103,17 +103,41 @@ describe('useSpecificationDraft', () => {
       expect(server.save).toHaveBeenCalledTimes(1)
     })
 
-    it('takes theirs when told to', async () => {
+    it('goes on with theirs or with mine, as chosen for the field', async () => {
       const { server, draft } = await conflict()
-      await draft.resolve('theirs')
+      draft.merge.choose('specification.title.title', 'theirs')
+      await draft.resolve()
       expect([draft.state.value, titleOf(draft.document.value), draft.version.value]).toEqual(['stored', 'theirs', 2])
-      expect(titleOf(server.held.document)).toBe('theirs')
+
+      const second = await conflict()
+      second.draft.merge.chooseAll('mine')
+      await second.draft.resolve()
+      expect([second.draft.state.value, titleOf(second.server.held.document), second.server.held.version]).toEqual(['stored', 'mine', 3])
+      expect(server.save).toHaveBeenCalledTimes(1)
     })
 
-    it('stores mine over theirs when told to', async () => {
-      const { server, draft } = await conflict()
-      await draft.resolve('mine')
-      expect([draft.state.value, titleOf(server.held.document), server.held.version]).toEqual(['stored', 'mine', 3])
+    it('takes over what only the other one changed, by itself, and undo does not take it away', async () => {
+      const server = serverWith(mainsFlyback())
+      const draft = open(server)
+      retitle(draft, 'before')
+      await pause()
+      const theirs = structuredClone(server.held.document)
+      theirs.specification.windings[0]!.turns = 77
+      Object.assign(server.held, { version: 3, document: theirs })
+      retitle(draft, 'mine')
+      await pause()
+      await pause()
+      const kept = (document: SpecificationDocument) => [titleOf(document), document.specification.windings[0]!.turns]
+      expect([draft.state.value, kept(server.held.document), server.held.version]).toEqual(['stored', ['mine', 77], 4])
+      draft.undo()
+      expect(kept(draft.document.value)).toEqual(['before', 77])
+    })
+
+    it('brings together after a reload too, from what was stored when it was typed', async () => {
+      const { server } = await conflict()
+      const again = open(server, revision(2, server.held.document))
+      await pause()
+      expect(again.merge.conflicts.value.map(({ key }) => key)).toEqual(['specification.title.title'])
     })
   })
 

@@ -1,4 +1,4 @@
-import { computed, nextTick, onMounted, ref, type Ref } from 'vue'
+import { computed, nextTick, onMounted, onScopeDispose, ref, type Ref } from 'vue'
 import { useRoute, useRouter } from 'vue-router'
 import type { Library } from '#shared/engine/library'
 import type { SpecificationDocument } from '#shared/engine/specification'
@@ -13,6 +13,8 @@ interface Sources {
   flags: Readonly<Ref<ReadonlyMap<string, readonly string[]>>>
   readonly: Readonly<Ref<boolean>>
   write: (changes: Readonly<Record<string, unknown>>) => void
+  writeBlock: () => Promise<void>
+  comments: Readonly<Ref<ReadonlyMap<string, number>>>
 }
 
 const ENTRY = 'input, select, textarea, button.switch-button, .group-entry button'
@@ -27,11 +29,13 @@ function elementOf(place: string): HTMLElement | null {
 }
 
 /** The form's side of the workbench: which section is open, where a check leads, what is pointed at. */
-export function useWorkbench({ document: source, library, problems, flags, readonly, write }: Sources) {
+export function useWorkbench({ document: source, library, problems, flags, readonly, write, writeBlock, comments }: Sources) {
   const route = useRoute()
   const router = useRouter()
   const target = ref<{ path: string; turn: number } | null>(null)
   const marked = ref<string | null>(null)
+  /** The place that was last under the focus or the pointer's press, for a comment on it. */
+  const place = ref('')
   const known = SECTIONS.some(({ key }) => key === route.query.section)
   const open = ref(known ? String(route.query.section) : 'title')
 
@@ -58,11 +62,19 @@ export function useWorkbench({ document: source, library, problems, flags, reado
     setTimeout(() => element.classList.remove('led-to'), 1600)
   }
 
+  /** Remembers the innermost place that an event of the form comes from. */
+  function notice(event: Event) {
+    const element = event.target instanceof Element ? event.target.closest<HTMLElement>('.form-pane [data-place]') : null
+    if (element) place.value = element.dataset.place!.replace(/\.value(\..*)?$/, '')
+  }
+  onMounted(() => ['focusin', 'click'].forEach((kind) => document.addEventListener(kind, notice)))
+  onScopeDispose(() => ['focusin', 'click'].forEach((kind) => document.removeEventListener(kind, notice)))
+
   // A check on another sheet leads here by its place.
   onMounted(() => {
     if (typeof route.query.go === 'string') void go(route.query.go)
   })
 
-  provideDocumentEntry({ read: (path) => valueAt(source.value, documentPath(path)), write, document: source, library, readonly, problems, flags, target, marked })
-  return { section, go, marked }
+  provideDocumentEntry({ read: (path) => valueAt(source.value, documentPath(path)), write, document: source, library, readonly, problems, flags, target, marked, writeBlock, comments })
+  return { section, go, marked, place }
 }

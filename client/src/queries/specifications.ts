@@ -17,6 +17,10 @@ const KEYS = {
   list: (search: string, state: string | undefined) => ['specifications', 'list', search, state ?? ''] as const,
   one: (specificationId: string) => ['specifications', 'one', specificationId] as const,
   revision: ({ specificationId, revisionId }: RevisionKey) => ['specifications', 'revision', specificationId, revisionId] as const,
+  comments: ({ revisionId }: RevisionKey) => ['specifications', 'comments', revisionId] as const,
+  use: (specificationId: string) => ['specifications', 'use', specificationId] as const,
+  compared: (ids: readonly string[]) => ['specifications', 'compared', ...ids] as const,
+  releases: ['specifications', 'releases'] as const,
   // Apart from the rest: nothing that happens to a part makes it old.
   results: ({ revisionId }: RevisionKey) => ['released-results', revisionId] as const,
 }
@@ -33,6 +37,12 @@ export const specificationListQuery = defineQueryOptions((filter: SpecificationF
   placeholderData: (previous: contract.SpecificationSummary[] | undefined) => previous,
 }))
 
+/** Released revisions, to copy from or to enquire about. */
+export const releasesQuery = defineQueryOptions(() => ({
+  key: KEYS.releases,
+  query: () => call(contract.listReleases),
+}))
+
 export const specificationQuery = defineQueryOptions((specificationId: string) => ({
   key: KEYS.one(specificationId),
   query: () => call(contract.getSpecification, { params: { specificationId } }),
@@ -42,6 +52,26 @@ export const revisionQuery = defineQueryOptions((key: RevisionKey) => ({
   key: KEYS.revision(key),
   query: () => call(contract.getRevision, { params: key }),
   // A draft is worked on here and by others: what was seen before is never taken for the present.
+  staleTime: 0,
+}))
+
+/** What rests on the releases of a part. */
+export const specificationUseQuery = defineQueryOptions((specificationId: string) => ({
+  key: KEYS.use(specificationId),
+  query: () => call(contract.specificationUse, { params: { specificationId } }),
+  staleTime: 0,
+}))
+
+/** Two revisions with the evaluations that were sealed with them. */
+export const comparedQuery = defineQueryOptions(({ specificationId, summaries }: { specificationId: string; summaries: readonly contract.RevisionSummary[] }) => ({
+  key: KEYS.compared(summaries.map(({ id }) => id)),
+  query: async () => {
+    const keys = summaries.map(({ id }) => ({ specificationId, revisionId: id }))
+    const revisions = await Promise.all(keys.map(loadRevision))
+    const released = keys.filter((_, index) => summaries[index]!.release !== null)
+    const results = await Promise.all(released.map(async (key) => [key.revisionId, (await call(contract.releasedResults, { params: key })).evaluation as unknown as Evaluation] as const))
+    return { revisions, sealed: new Map(results) }
+  },
   staleTime: 0,
 }))
 
@@ -67,6 +97,8 @@ export function useCreateSpecification() {
 export const saveDraft = (params: RevisionKey, body: BodyOf<typeof contract.saveDraft>): Promise<Revision> => call(contract.saveDraft, { params, body })
 export const loadRevision = (params: RevisionKey): Promise<Revision> => call(contract.getRevision, { params })
 
+export const loadSpecification = (specificationId: string): Promise<contract.Specification> => call(contract.getSpecification, { params: { specificationId } })
+
 /** What moves a revision on; everything about it is fetched again afterwards, a refusal included. */
 export function useRevisionActions(params: () => RevisionKey) {
   const cache = useQueryCache()
@@ -89,4 +121,20 @@ export const useDocumentDownload = () => useMutation({ mutation: (params: Revisi
 export function useForgetRevisions() {
   const cache = useQueryCache()
   return () => cache.invalidateQueries({ key: KEYS.root })
+}
+
+export const commentsQuery = defineQueryOptions((key: RevisionKey) => ({
+  key: KEYS.comments(key),
+  query: () => call(contract.listComments, { params: key }),
+  staleTime: 0,
+}))
+
+/** Both answer the whole list, which takes the place of the one fetched before. */
+export function useCommentActions(key: RevisionKey) {
+  const cache = useQueryCache()
+  const onSuccess = (comments: contract.SpecificationComment[]) => cache.setQueryData(KEYS.comments(key), comments)
+  return {
+    write: useMutation({ mutation: (body: BodyOf<typeof contract.writeComment>) => call(contract.writeComment, { params: key, body }), onSuccess }),
+    settle: useMutation({ mutation: ({ commentId, settled }: { commentId: string; settled: boolean }) => call(contract.settleComment, { params: { ...key, commentId }, body: { settled } }), onSuccess }),
+  }
 }

@@ -17,11 +17,30 @@ export const specificationRoutes: RouteRecordRaw[] = [
     meta: { access: ['engineer'], title: 'New specification' },
   },
   {
+    path: '/specifications/copy',
+    name: 'copy-specification',
+    component: () => import('@/views/specifications/CopySpecificationView.vue'),
+    meta: { access: ['engineer'], title: 'Copy a proven part' },
+  },
+  {
+    path: '/specifications/import',
+    name: 'import-specification',
+    component: () => import('@/views/specifications/ImportSpecificationView.vue'),
+    meta: { access: ['engineer'], title: 'Import a specification' },
+  },
+  {
     path: '/specifications/:specificationId',
     name: 'specification',
     props: true,
     component: () => import('@/views/specifications/SpecificationView.vue'),
     meta: { access: SPECIFICATION_READERS, title: 'Winding specification' },
+  },
+  {
+    path: '/specifications/:specificationId/compare',
+    name: 'compare-revisions',
+    props: true,
+    component: () => import('@/views/specifications/CompareView.vue'),
+    meta: { access: SPECIFICATION_READERS, title: 'Compare revisions' },
   },
   {
     path: '/specifications/:specificationId/revisions/:revisionId',

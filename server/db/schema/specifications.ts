@@ -1,6 +1,6 @@
-import type { REVISION_STATES } from '#shared/contracts/specifications'
+import type { KeyFigures, REVISION_STATES } from '#shared/contracts/specifications'
 import { sql } from 'drizzle-orm'
-import { check, date, foreignKey, index, integer, pgTable, text, unique, uniqueIndex, uuid } from 'drizzle-orm/pg-core'
+import { check, date, foreignKey, index, integer, jsonb, pgTable, text, unique, uniqueIndex, uuid } from 'drizzle-orm/pg-core'
 import { bytea, createdAt, id, timestamptz } from './columns'
 import { files } from './files'
 import { companies, people } from './people'
@@ -52,6 +52,10 @@ export const specificationRevisions = pgTable(
     /** Canonical JSON (RFC 8785) of the document with its requirement sheet. */
     document: bytea('document').notNull(),
     topology: text('topology'),
+    /** What a list shows of the document. */
+    figures: jsonb('figures').$type<KeyFigures>().notNull().default({}),
+    /** What a search finds it by: words of the document, without the circuit behind it. */
+    searchText: text('search_text').notNull().default(''),
     /** Canonical JSON of the evaluation at release. */
     evaluation: bytea('evaluation'),
     returnedReason: text('returned_reason'),
@@ -74,6 +78,8 @@ export const specificationRevisions = pgTable(
     index('specification_revisions_based_on_id_idx').on(t.basedOnId),
     index('specification_revisions_created_by_idx').on(t.createdBy),
     index('specification_revisions_checked_by_idx').on(t.checkedBy),
+    index('specification_revisions_search_idx').using('gin', sql`to_tsvector('simple', ${t.searchText})`),
+    index('specification_revisions_company_updated_idx').on(t.companyId, t.updatedAt),
     check('specification_revisions_state_known', sql`${t.state} in ('draft', 'in-check', 'released', 'superseded', 'withdrawn')`),
     check('specification_revisions_released_by_checker', sql`${t.state} not in ('released', 'superseded') or ${t.checkedBy} is not null`),
     check('specification_revisions_second_person', sql`${t.checkedBy} is null or not (${t.checkedBy} = any (${t.editorIds}))`),

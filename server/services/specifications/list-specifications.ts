@@ -21,6 +21,8 @@ const REVISION_COLUMNS = {
   state: specificationRevisions.state,
   version: specificationRevisions.version,
   topology: specificationRevisions.topology,
+  figures: specificationRevisions.figures,
+  searchText: sql<string>`''`,
   returnedReason: specificationRevisions.returnedReason,
   withdrawnReason: specificationRevisions.withdrawnReason,
   submittedAt: specificationRevisions.submittedAt,
@@ -102,5 +104,5 @@ export async function listReleases(tx: Transaction, actor: Actor) {
     .innerJoin(specifications, eq(specifications.id, specificationReleases.specificationId))
     .where(readableSpecifications(actor))
     .orderBy(desc(specificationReleases.createdAt))
-  return rows.map((row) => ({ ...releaseSummary(row), specificationId: row.specificationId, current: row.state === 'released' }))
+  return rows.map((row) => ({ ...releaseSummary(row), specificationId: row.specificationId, revisionId: row.revisionId, current: row.state === 'released' }))
 }

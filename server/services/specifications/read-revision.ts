@@ -70,6 +70,7 @@ export async function presentRevision(tx: Transaction, row: RevisionRow): Promis
     document: readDocument(row.document),
     overrides: overrides.map(({ code, path, reason, byId, at }) => ({ code, path, reason, by: personOf(names, byId), at: at.toISOString() })),
     returnedReason: row.returnedReason,
+    withdrawnReason: row.withdrawnReason,
     editors: row.editorIds.map((id) => personOf(names, id)),
   }
 }

@@ -7,6 +7,7 @@ import { canonicalJson } from '#shared/canonical-json'
 import type { Revision } from '#shared/contracts/specifications'
 import type { SpecificationDocument } from '#shared/engine/specification'
 import { desc, eq, max } from 'drizzle-orm'
+import { keyFigures, searchText } from './list-columns'
 import { lockRevision, presentRevision, type RevisionRow } from './read-revision'
 
 interface NewSpecification {
@@ -16,12 +17,20 @@ interface NewSpecification {
 }
 
 const bytesOf = (document: SpecificationDocument) => Buffer.from(canonicalJson(document), 'utf8')
-const topologyOf = (document: SpecificationDocument) => document.specification.electrical.topology.value
+
+/** The columns of a revision that follow from its document. */
+const documentColumns = (document: SpecificationDocument) => ({
+  document: bytesOf(document),
+  topology: document.specification.electrical.topology.value,
+  figures: keyFigures(document),
+  searchText: searchText(document),
+})
+type DocumentColumns = Pick<RevisionRow, 'document' | 'topology' | 'figures' | 'searchText'>
 
 /** A part with its first draft, P1. */
 export async function createSpecification(tx: Transaction, actor: Actor, input: NewSpecification): Promise<Revision> {
   const [specification] = await insertSpecification(tx, actor, input)
-  const row = await insertDraft(tx, actor, specification!.id, 1, bytesOf(input.document), topologyOf(input.document), null)
+  const row = await insertDraft(tx, actor, specification!.id, 1, documentColumns(input.document), null)
   await recordAudit(tx, actor, { type: 'specification-created', specificationId: specification!.id, revisionId: row.id })
   return presentRevision(tx, row)
 }
@@ -42,8 +51,7 @@ async function insertDraft(
   actor: Actor,
   specificationId: string,
   draftNumber: number,
-  document: Buffer,
-  topology: string | null,
+  columns: DocumentColumns,
   basedOnId: string | null,
 ): Promise<RevisionRow> {
   const [row] = await tx
@@ -54,8 +62,7 @@ async function insertDraft(
       createdBy: actor.personId,
       editorIds: [actor.personId],
       draftNumber,
-      document,
-      topology,
+      ...columns,
       basedOnId,
       updatedAt: await appNow(tx),
     })
@@ -69,7 +76,7 @@ export async function createNextDraft(tx: Transaction, actor: Actor, specificati
   if (!specification || !canReadSpecification(actor, specification)) throw notFound('specification')
 
   const [based] = await tx
-    .select({ document: specificationRevisions.document, topology: specificationRevisions.topology, releaseId: specificationReleases.id })
+    .select({ columns: { document: specificationRevisions.document, topology: specificationRevisions.topology, figures: specificationRevisions.figures, searchText: specificationRevisions.searchText }, releaseId: specificationReleases.id })
     .from(specificationReleases)
     .innerJoin(specificationRevisions, eq(specificationRevisions.id, specificationReleases.revisionId))
     .where(eq(specificationReleases.specificationId, specificationId))
@@ -82,7 +89,7 @@ export async function createNextDraft(tx: Transaction, actor: Actor, specificati
     .from(specificationRevisions)
     .where(eq(specificationRevisions.specificationId, specificationId))
   try {
-    const row = await insertDraft(tx, actor, specificationId, (last?.draftNumber ?? 0) + 1, based.document, based.topology, based.releaseId)
+    const row = await insertDraft(tx, actor, specificationId, (last?.draftNumber ?? 0) + 1, based.columns, based.releaseId)
     await recordAudit(tx, actor, { type: 'draft-created', specificationId, revisionId: row.id })
     return await presentRevision(tx, row)
   } catch (error) {
@@ -102,7 +109,7 @@ export async function saveDraft(tx: Transaction, actor: Actor, key: DraftKey, ve
   const editorIds = row.editorIds.includes(actor.personId) ? row.editorIds : [...row.editorIds, actor.personId]
   const [saved] = await tx
     .update(specificationRevisions)
-    .set({ document: bytesOf(document), topology: topologyOf(document), editorIds, version: row.version + 1, updatedAt: await appNow(tx) })
+    .set({ ...documentColumns(document), editorIds, version: row.version + 1, updatedAt: await appNow(tx) })
     .where(eq(specificationRevisions.id, row.id))
     .returning()
   await keepTitle(tx, row.specificationId, document)

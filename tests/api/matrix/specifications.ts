@@ -1,7 +1,8 @@
 import type { Revision } from '#shared/contracts/specifications'
 import { buildRelease } from '../../support/build-release'
 import { buildChecked, buildDraft, buildInCheck, newPartNumber, releasableDocument, revisionParams } from '../../support/build-specification'
-import type { CallParts } from '../../support/test-app'
+import * as contract from '#shared/contracts/specifications'
+import { request, type CallParts } from '../../support/test-app'
 import type { Expectation, FeatureExpectations } from './expectation'
 import type { MatrixWorld, World } from './world'
 
@@ -28,6 +29,18 @@ const aboutReleased: Expectation = {
 }
 const paramsOf = ({ specificationId, revisionId }: { specificationId: string; revisionId: string }) => ({ specificationId, revisionId })
 
+/** A draft that somebody said something about; what was said carries the mark too. */
+const commented: Make = async (world, of, title) => {
+  const made = await draft(world, of, title)
+  await request(world.test.app, contract.writeComment, { as: of.engineer.cookie, params: revisionParams(made), body: { place: 'core.core', text: title ?? 'Is there a second source?' } }).expect(200)
+  return made
+}
+async function commentCall(world: MatrixWorld, of: World, title?: string): Promise<CallParts> {
+  const made = await commented(world, of, title)
+  const { body } = await request(world.test.app, contract.listComments, { as: of.engineer.cookie, params: revisionParams(made) }).expect(200)
+  return { params: { ...revisionParams(made), commentId: body[0]!.id }, body: { settled: true } }
+}
+
 const reason = 'Looked at with the author.'
 
 export const specifications: FeatureExpectations = {
@@ -47,6 +60,10 @@ export const specifications: FeatureExpectations = {
     own: async (world) => ({ params: { specificationId: (await draft(world, world.own)).specificationId } }),
     foreign: async (world) => ({ params: { specificationId: (await draft(world, world.foreign, world.foreignMark)).specificationId } }),
   },
+  specificationUse: {
+    own: async (world) => ({ params: { specificationId: (await draft(world, world.own)).specificationId } }),
+    foreign: async (world) => ({ params: { specificationId: (await draft(world, world.foreign, world.foreignMark)).specificationId } }),
+  },
   getRevision: about(draft),
   createDraft: {
     own: async (world) => ({ params: { specificationId: (await released(world, world.own)).specificationId } }),
@@ -59,6 +76,12 @@ export const specifications: FeatureExpectations = {
   releaseRevision: about(checked, ({ version }) => ({ body: { version } })),
   // An engineer withdraws a draft; a checker only what was released.
   withdrawRevision: { ...about(draft, () => ({ body: { reason } })), status: { checker: 409 } },
+  listComments: about(commented),
+  writeComment: about(draft, () => ({ body: { place: 'core.core', text: 'Is there a second source?' } })),
+  settleComment: {
+    own: async (world) => commentCall(world, world.own),
+    foreign: async (world) => commentCall(world, world.foreign, world.foreignMark),
+  },
   draftPdf: about(draft),
   outlineDxf: about(draft),
   releasedDocument: aboutReleased,

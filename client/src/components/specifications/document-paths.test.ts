@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest'
-import { documentPath, freeId, isWithin, moved, placeOf, valueAt, withValue } from './document-paths'
+import { documentPath, freeId, isWithin, movedTo, placeOf, valueAt, withValue } from './document-paths'
 
 const tree = { windings: [{ id: 'w1', turns: 20 }, { id: 'w2', turns: 5 }], core: { gap: { lengthMm: { value: 0.4 } } } }
 
@@ -45,7 +45,7 @@ describe('rows', () => {
   })
 
   it('move by one place and stay at the ends', () => {
-    expect(moved(['a', 'b', 'c'], 1, -1)).toEqual(['b', 'a', 'c'])
-    expect(moved(['a', 'b', 'c'], 2, 1)).toEqual(['a', 'b', 'c'])
+    expect(movedTo(['a', 'b', 'c'], 1, 0)).toEqual(['b', 'a', 'c'])
+    expect(movedTo(['a', 'b', 'c'], 2, 3)).toEqual(['a', 'b', 'c'])
   })
 })

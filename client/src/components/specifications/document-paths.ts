@@ -42,11 +42,10 @@ export function freeId(rows: readonly { id: string }[], prefix: string): string 
   return `${prefix}${number}`
 }
 
-/** The rows with one of them moved by one place; unchanged at the ends. */
-export function moved<T>(rows: readonly T[], index: number, by: -1 | 1): T[] {
-  const target = index + by
-  if (target < 0 || target >= rows.length) return [...rows]
-  const next = [...rows]
-  ;[next[index], next[target]] = [next[target]!, next[index]!]
-  return next
+/** The rows with one of them taken out and put in at another position; unchanged when that lies outside. */
+export function movedTo<T>(rows: readonly T[], from: number, to: number): T[] {
+  const row = rows[from]
+  if (row === undefined || to < 0 || to >= rows.length) return [...rows]
+  const rest = rows.filter((_, position) => position !== from)
+  return [...rest.slice(0, to), row, ...rest.slice(to)]
 }

@@ -73,6 +73,8 @@ export interface RowsSpec {
   stated: boolean
   empty: string
   ordered?: boolean
+  /** Folded away while it has no row. */
+  rare?: boolean
 }
 
 export type Row = Readonly<Record<string, unknown>>
@@ -87,7 +89,8 @@ export interface KnownToRows {
 }
 
 export type SectionPart =
-  | { kind: 'stated'; title: string; fields: readonly FieldSpec[] }
+  /** `rare`: folded away while nothing in it is stated. */
+  | { kind: 'stated'; title: string; fields: readonly FieldSpec[]; rare?: boolean }
   /** Without status and origin: the requirement sheet. */
   | { kind: 'plain'; title: string; fields: readonly FieldSpec[] }
   | { kind: 'rows'; rows: RowsSpec }

@@ -1,5 +1,14 @@
 import type { FormerRow } from '#shared/engine/library'
 import type { LibraryReference, Origin, Pin } from '#shared/engine/specification'
+import { choice, figure, text } from '../field-types'
+
+/** What a pin says. */
+export const PIN_FIELDS = [
+  text('number', 'Number', { maximum: 12 }),
+  figure('xMm', 'x', 'mm'),
+  figure('yMm', 'y', 'mm'),
+  choice('state', 'State', [{ value: 'fitted', label: 'fitted' }, { value: 'no-connection', label: 'no connection' }, { value: 'missing', label: 'missing (keying)' }]),
+]
 
 /** What a coil former's row says about the part, as changes of the document; pins keep their state by number. */
 export function changesFromFormer(row: FormerRow, before: readonly Pin[]): Record<string, unknown> {

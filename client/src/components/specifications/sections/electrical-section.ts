@@ -23,6 +23,7 @@ const capacitance = (path: string, title: string) => ({
     title,
     one: 'capacitance limit',
     stated: true,
+    rare: true,
     empty: 'No limit.',
     columns: [
       { header: 'Windings', field: () => windings('windingIds', 'Windings'), wide: true },
@@ -127,6 +128,7 @@ export const electricalSection: SectionSpec = {
     {
       kind: 'stated',
       title: 'Kinds of part',
+      rare: true,
       fields: [
         group('electrical.currentSense', 'Current sense', [figure('burdenOhm', 'burden', 'Ω'), figure('ratioError', 'ratio error', '%', { min: 0, max: 1 }), figure('droop', 'droop', '%', { min: 0, max: 1 }), figure('bandwidthHz.minimum', 'bandwidth from', 'Hz'), figure('bandwidthHz.maximum', 'bandwidth to', 'kHz'), figure('maximumPrimaryCurrentA', 'primary current, maximum', 'A'), figure('maximumDcA', 'd.c., maximum', 'A', { min: 0 })], () => ({ burdenOhm: 10, ratioError: 0.02, droop: 0.02, bandwidthHz: { minimum: 100, maximum: 500e3 }, maximumPrimaryCurrentA: 10, maximumDcA: 0 })),
         group('electrical.commonMode', 'Common-mode choke', [figure('ratedCurrentA', 'rated current', 'A'), figure('ratedVoltageV', 'rated voltage', 'V'), figure('ratedTemperatureC', 'at', '°C'), figure('differentialLeakageH', 'differential leakage', 'µH', { optional: true }), { type: 'impedance', path: 'impedance', label: 'impedance, at least', help: 'One point per line: 150 kHz: 1000 Ω.' }], () => ({ impedance: [{ frequencyHz: 150e3, minimumOhm: 1000 }, { frequencyHz: 1e6, minimumOhm: 5000 }], differentialLeakageH: null, ratedCurrentA: 1, ratedVoltageV: 250, ratedTemperatureC: 40 })),

@@ -55,6 +55,7 @@ export const formerSection: SectionSpec = {
         title: 'Flying leads',
         one: 'flying lead',
         stated: true,
+        rare: true,
         empty: 'None.',
         columns: [
           { header: 'Name', field: () => text('name', 'Name', { maximum: 12 }) },

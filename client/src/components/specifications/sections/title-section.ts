@@ -47,6 +47,7 @@ export const titleSection: SectionSpec = {
         title: 'Related documents',
         one: 'related document',
         stated: true,
+        rare: true,
         empty: 'None named: footprint, safety report, test fixture.',
         columns: [
           { header: 'Kind', field: () => choice('kind', 'Kind', plainly('footprint', 'safety-report', 'test-fixture', 'other')) },
