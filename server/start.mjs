@@ -2,7 +2,7 @@
 /**
  * The start command, on a clone that may have nothing installed yet:
  *
- *     node server/start.mjs [start | dev | test | bench | backup [file] | restore file [--replace] | verify-audit]
+ *     node server/start.mjs [start | dev | test | test-office | bench | backup [file] | restore file [--replace] | verify-audit]
  *
  * Plain JavaScript with Node's own modules only, since Node 20 reads no TypeScript: it installs the packages
  * when they are missing or the lockfile changed, and hands over to `server/start/main.ts`.

@@ -21,6 +21,12 @@ export async function test(settings: Settings): Promise<number> {
   })
 }
 
+/** `npm run test:office`: what office and drawing programs of other people make of our files; not part of `npm test`. */
+export async function testOffice(): Promise<number> {
+  await ensureDebian('librecad', 'poppler-utils')
+  return runShown('tests/office/librecad.ts', [], process.env)
+}
+
 /** `npm run bench`: each measurement is a program that prints its table. */
 export async function bench(): Promise<number> {
   const folder = path.join(ROOT, 'tests/bench')

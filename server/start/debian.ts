@@ -38,6 +38,7 @@ const PACKAGES = {
   postgresql: { name: `PostgreSQL ${OLDEST_POSTGRESQL} or later`, find: () => findPostgresql() },
   'postgresql-client': { name: 'pg_dump and pg_restore', find: () => findProgram('pg_dump', 'pg_restore') },
   chromium: { name: 'Chromium', find: findChromium },
+  librecad: { name: 'LibreCAD', find: () => findProgram('librecad') },
   qpdf: { name: 'qpdf', find: () => findProgram('qpdf') },
   'poppler-utils': { name: 'poppler-utils (pdftotext, pdffonts, pdftoppm)', find: () => findProgram('pdftotext', 'pdffonts', 'pdftoppm') },
 }

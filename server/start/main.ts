@@ -1,4 +1,4 @@
-import { bench, test } from './check'
+import { bench, test, testOffice } from './check'
 import { finish, isStopping } from './programs'
 import { Refusal } from './report'
 import { backup, restore, verifyAudit } from './safekeeping'
@@ -10,6 +10,7 @@ const COMMANDS: Record<string, (args: string[]) => Promise<number | void>> = {
   start: () => start(readSettings()),
   dev: () => dev(readSettings()),
   test: () => test(testSettings()),
+  'test-office': testOffice,
   bench,
   backup: (args) => backup(readSettings(), args),
   restore: (args) => restore(readSettings(), args),
