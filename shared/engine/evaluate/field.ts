@@ -1,6 +1,6 @@
 import type { Coil } from '../build'
 import type { LaidCoil } from '../field'
-import { placedWindow } from '../field'
+import { isConductor, placedWindow } from '../field'
 import type { GapPlace } from '../field'
 import { leakageMatrix } from '../parasitics/leakage-matrix'
 import type { LeakageMatrix } from '../parasitics/leakage-matrix'
@@ -14,10 +14,13 @@ export function gapPlace({ specification }: Context, calculatedMm: number | null
   return { position: stated, lengthMm: lengthMm.value ?? calculatedMm, grinding: grinding.value }
 }
 
+/** Beyond this number of conductors the field would take longer than anybody types. */
+const MOST_CONDUCTORS = 20_000
+
 /** The laid coil in its window for the stages that rest on the field; null without a rectangular window. `gapMm`: as calculated, where none is stated. */
 export function laidCoil(context: Context, coil: Coil, gapMm: number | null = null): LaidCoil | null {
   const { core, former, specification } = context
-  if (!former || coil.layout.items.length === 0) return null
+  if (!former || coil.layout.items.length === 0 || coil.layout.items.filter(isConductor).length > MOST_CONDUCTORS) return null
   const placed = placedWindow({ core, former, layout: coil.layout })
   return placed && { layout: coil.layout, windings: specification.windings, placed, gap: gapPlace(context, gapMm) }
 }

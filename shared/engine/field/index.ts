@@ -1,4 +1,4 @@
-export { turnFieldInput } from './layout-turns'
+export { isConductor, turnFieldInput } from './layout-turns'
 export type { LaidCoil } from './layout-turns'
 export { TURN_FIELD_MODEL, fieldsAt, turnFields } from './turn-fields'
 export type { FieldTurn, TurnFieldInput, TurnFields } from './turn-fields'

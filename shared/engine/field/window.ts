@@ -86,12 +86,15 @@ export interface PlacedWindow {
   fromCore: boolean
 }
 
+/** A build beyond this many window heights is no coil whose field could be told. */
+const GREATEST_OVERFILL = 3
+
 /** Between flange and yoke, or tube and leg, where the core's dimensions are not known. */
 const CLEARANCE_MM = 0.2
 
 /**
  * Window of a core with the coil former in it; null for shapes without a rectangular window (ring cores, pot cores with
- * unknown window). Where the core's dimensions are not published the former with its walls stands for the window.
+ * unknown window) and for a layout that overfills it threefold; one that overfills it less stretches it. Where the core's dimensions are not published the former with its walls stands for the window.
  *
  * Source: geometry; dimensions D (half window) and E, F of IEC 63093.
  */
@@ -103,7 +106,9 @@ export function placedWindow({ core, former, layout }: { core: CoreRow | null; f
   const aroundMm = former.flangeThicknessMm + CLEARANCE_MM
   const breadthMm = Math.max(outline?.breadthMm ?? 0, outline ? layout.windowWidthMm : layout.windowWidthMm + 2 * aroundMm)
   const builtMm = layout.items.reduce((top, item) => Math.max(top, topOf(item)), 0)
-  const heightMm = Math.max(outline?.heightMm ?? former.windingHeightMm + radialOffsetMm + CLEARANCE_MM, radialOffsetMm + builtMm)
+  const windowMm = outline?.heightMm ?? former.windingHeightMm + radialOffsetMm + CLEARANCE_MM
+  const heightMm = Math.max(windowMm, radialOffsetMm + builtMm)
+  if (heightMm > GREATEST_OVERFILL * windowMm) return null
   return {
     window: { breadthMm, heightMm, depth: depthOf(former, radialOffsetMm) },
     axialOffsetMm: (breadthMm - layout.windowWidthMm) / 2,
