@@ -52,6 +52,35 @@ describe('SheetView', () => {
   })
 })
 
+describe('the search on the sheets', () => {
+  const find = async (text: string) => {
+    const wrapper = mount(SheetView, { props: { sheets } })
+    await wrapper.get('input[type="search"]').setValue(text)
+    return wrapper
+  }
+
+  it('turns to the sheet of a step, marks its place and goes on with Enter', async () => {
+    const wrapper = await find('step 5')
+    expect(wrapper.get('.message').text()).toMatch(/^1 of \d+: sheet \d+, winding step – /)
+    const first = wrapper.get('.mark rect').attributes()
+    await wrapper.get('input[type="search"]').trigger('keydown', { key: 'Enter' })
+    expect(wrapper.get('.message').text()).toMatch(/^2 of /)
+    expect(wrapper.get('.mark rect').attributes()).not.toEqual(first)
+  })
+
+  it('enlarges what it found so that it can be read', async () => {
+    const wrapper = await find('pin 9')
+    expect(wrapper.get('.message').text()).toContain('pin 9')
+    expect(wrapper.get('.drawing').attributes('style')).toContain('200%')
+  })
+
+  it('says when nothing answers, and marks nothing', async () => {
+    const wrapper = await find('pin 99')
+    expect(wrapper.get('.message').text()).toBe('Not on these sheets')
+    expect(wrapper.find('.mark').exists()).toBe(false)
+  })
+})
+
 describe('SchematicView and PinView', () => {
   it('say the same pins in words', () => {
     const circuit = mount(SchematicView, { props: { specification, library: sampleLibrary } })
