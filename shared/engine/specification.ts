@@ -6,6 +6,8 @@
  * ones with the sample data. A value in this document is what the drawing *specifies*.
  */
 
+import type { FullBridgeDuty, HalfBridgeDuty, PushPullDuty } from './duties/bridges'
+import type { ForwardDuty } from './duties/forward'
 import type { LibraryKind } from './library'
 
 /** Written into every stored document; a change of shape is a new number with a reader for the old one. */
@@ -109,7 +111,7 @@ export interface RequirementSheet {
 
 export type InsulationMethod = 'margin-tape' | 'triple-insulated-wire' | 'functional'
 
-export type Duty = FlybackDuty | CoupledInductorDuty
+export type Duty = FlybackDuty | CoupledInductorDuty | ForwardDuty | HalfBridgeDuty | FullBridgeDuty | PushPullDuty
 
 /** The duty of one topology. */
 export type DutyOf<T extends Duty['topology']> = Extract<Duty, { topology: T }>

@@ -2,6 +2,7 @@ import type { Coil } from '../build'
 import type { CurrentLimit, Duty } from '../specification'
 import { dutyTraits, topologyOf } from '../topologies'
 import type { Circuit, CircuitInput, CircuitWinding, NamedPoint, OperatingPoint } from '../topologies/topology'
+import { UnreachablePoint } from '../topologies/unreachable'
 import { attempt, positive, report } from './context'
 import type { Context } from './context'
 import { cornerState } from './corner-result'
@@ -53,10 +54,23 @@ export function cornersOf(context: Context, basis: InductanceBasis, coil: Coil |
 }
 
 function cornerOf(context: Context, { circuit, primary, areaMm2 }: SolvedCircuit, point: NamedPoint): CornerState | null {
-  return attempt(context, 'requirement.duty', () => {
+  return reached(context, 'requirement.duty', () => {
     const state = circuit.solve!(point)
     context.findings.push(...state.findings)
     return cornerState(state, { ...point, primary, areaMm2 })
+  })
+}
+
+/** A point that the circuit cannot reach is told with the numbers it knows. */
+function reached<T>(context: Context, path: string, solve: () => T): T | null {
+  return attempt(context, path, () => {
+    try {
+      return solve()
+    } catch (error) {
+      if (!(error instanceof UnreachablePoint)) throw error
+      context.findings.push(error.finding)
+      return null
+    }
   })
 }
 
@@ -104,7 +118,7 @@ function limitPoint(context: Context, { duty, circuit }: SolvedCircuit, points: 
   const limit = dutyTraits(duty).currentLimit
   const least = points.find(({ load }) => load === 'full')
   if (!limit || !least) return null
-  const loadFactor = attempt(context, 'requirement.duty.currentLimit', () => factorAtLimit(limit, (factor) => excessA(circuit, limit, { ...least, loadFactor: factor })))
+  const loadFactor = reached(context, 'requirement.duty.currentLimit', () => factorAtLimit(limit, (factor) => excessA(circuit, limit, { ...least, loadFactor: factor })))
   if (loadFactor === null) return null
   if (!positive(loadFactor)) {
     report(context, 'current-limit-not-reached', 'warning', 'requirement.duty.currentLimit', { limitA: limit.nominalA })

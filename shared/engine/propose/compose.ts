@@ -64,6 +64,10 @@ function windingOf({ id, name, role, side, outputId, turns, wire }: Design['wind
 const TITLES: Readonly<Record<Duty['topology'], string>> = {
   'flyback': 'Transformer, flyback',
   'coupled-inductor': 'Inductor, coupled',
+  'forward': 'Transformer, forward',
+  'half-bridge': 'Transformer, half-bridge',
+  'full-bridge': 'Transformer, full-bridge',
+  'push-pull': 'Transformer, push-pull',
 }
 
 function fillTitle({ title }: WindingSpecification, { duty }: RequirementSheet): void {

@@ -1,12 +1,18 @@
 import type { Duty, DutyOf } from '../specification'
+import { FULL_BRIDGE, HALF_BRIDGE, PUSH_PULL } from './bridge-circuits'
 import { COUPLED_INDUCTOR } from './coupled-circuit'
 import { FLYBACK } from './flyback-circuit'
+import { FORWARD } from './forward-circuit'
 import type { DutyTraits, Topology } from './topology'
 
 /** Every topology that the engine turns into waveforms: a new one is one file and one line. */
 const TOPOLOGIES: { readonly [T in Duty['topology']]: Topology<DutyOf<T>> } = {
   'flyback': FLYBACK,
   'coupled-inductor': COUPLED_INDUCTOR,
+  'forward': FORWARD,
+  'half-bridge': HALF_BRIDGE,
+  'full-bridge': FULL_BRIDGE,
+  'push-pull': PUSH_PULL,
 }
 
 /** The topology of a duty. The table's key and the duty's own agree, which the type of an index cannot say. */

@@ -2,10 +2,15 @@ import type { Duty, DutyOf } from '#shared/engine/specification'
 import { COUPLED_INDUCTOR_FORM } from './coupled-inductor'
 import type { DutyForm } from './fields'
 import { FLYBACK_FORM } from './flyback'
+import { FORWARD_FORM, FULL_BRIDGE_FORM, HALF_BRIDGE_FORM, PUSH_PULL_FORM } from './forced'
 
 /** How each duty is entered: a new topology is one file and one line. Their order is that of the ways in. */
 export const DUTY_FORMS: { readonly [T in Duty['topology']]: DutyForm<DutyOf<T>> } = {
   'flyback': FLYBACK_FORM,
+  'forward': FORWARD_FORM,
+  'half-bridge': HALF_BRIDGE_FORM,
+  'full-bridge': FULL_BRIDGE_FORM,
+  'push-pull': PUSH_PULL_FORM,
   'coupled-inductor': COUPLED_INDUCTOR_FORM,
 }
 
