@@ -8,6 +8,7 @@
 
 import type { FullBridgeDuty, HalfBridgeDuty, PushPullDuty } from './duties/bridges'
 import type { ForwardDuty } from './duties/forward'
+import type { LlcDuty } from './duties/llc'
 import type { LibraryKind } from './library'
 
 /** Written into every stored document; a change of shape is a new number with a reader for the old one. */
@@ -111,7 +112,7 @@ export interface RequirementSheet {
 
 export type InsulationMethod = 'margin-tape' | 'triple-insulated-wire' | 'functional'
 
-export type Duty = FlybackDuty | CoupledInductorDuty | ForwardDuty | HalfBridgeDuty | FullBridgeDuty | PushPullDuty
+export type Duty = FlybackDuty | CoupledInductorDuty | ForwardDuty | HalfBridgeDuty | FullBridgeDuty | PushPullDuty | LlcDuty
 
 /** The duty of one topology. */
 export type DutyOf<T extends Duty['topology']> = Extract<Duty, { topology: T }>

@@ -7,6 +7,7 @@ import type { BoundaryRequirements } from '../insulation/product-standards'
 import type { Citation } from '../insulation/citation'
 import type { RequiredDistance } from '../insulation/distances'
 import type { BoundaryEnd, InsulationBoundary, Side } from '../specification'
+import { dutyTraits } from '../topologies'
 import { attempt, report } from './context'
 import type { Context } from './context'
 import { explainBoundary } from './explain-boundaries'
@@ -81,7 +82,7 @@ export function crossesMains(context: Pick<Context, 'specification'>, { between 
 
 /** The highest frequency that stresses a boundary, Hz: one stated at the boundary never lies below the switching frequency. */
 export function boundaryFrequencyHz({ specification, requirement }: Pick<Context, 'specification' | 'requirement'>, { frequencyHz }: InsulationBoundary): number {
-  return Math.max(frequencyHz ?? 0, specification.electrical.switchingFrequencyHz.value?.maximum ?? 0, requirement?.duty.switchingFrequencyHz ?? 0)
+  return Math.max(frequencyHz ?? 0, specification.electrical.switchingFrequencyHz.value?.maximum ?? 0, requirement ? dutyTraits(requirement.duty).frequencyHz.maximum : 0)
 }
 
 function requirements(context: Context, boundary: InsulationBoundary, { rmsV, peakV }: Stress, path: string): BoundaryRequirements | { reason: string } | null {

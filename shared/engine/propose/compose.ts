@@ -68,6 +68,7 @@ const TITLES: Readonly<Record<Duty['topology'], string>> = {
   'half-bridge': 'Transformer, half-bridge',
   'full-bridge': 'Transformer, full-bridge',
   'push-pull': 'Transformer, push-pull',
+  'llc': 'Transformer, resonant half-bridge',
 }
 
 function fillTitle({ title }: WindingSpecification, { duty }: RequirementSheet): void {

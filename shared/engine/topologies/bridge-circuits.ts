@@ -8,6 +8,7 @@ import { commutationTimeS, dutyFindings, filteredState, forcedTraits, greatestV,
 import type { DriveInput } from './forced-outputs'
 import { fedOutputs } from './outputs'
 import type { FedOutput } from './outputs'
+import { rectifierEnds } from './rectifier-ends'
 import type { Circuit, CircuitFinding, CircuitInput, CircuitState, CircuitWinding, CircuitWords, OperatingPoint, Topology, WindingEnds, WindingWaveforms } from './topology'
 
 type BridgeDuty = HalfBridgeDuty | FullBridgeDuty | PushPullDuty
@@ -104,7 +105,7 @@ function endsOf(duty: BridgeDuty, { fed, primaries }: Parts, state: BridgeState,
   fed.forEach(({ windings }, position) =>
     windings.forEach(({ id }, half) => {
       const { voltageV } = state.secondaries[position]![half]!
-      ends.set(id, secondaryEnds(voltageV, windings.length > 1 ? (half === 0 ? 'first-half' : 'second-half') : 'whole'))
+      ends.set(id, rectifierEnds(voltageV, windings.length > 1 ? (half === 0 ? 'first-half' : 'second-half') : 'whole'))
     }))
   return ends
 }
@@ -135,15 +136,6 @@ function railEnds({ periodS, points }: Waveform, inputV: number): WindingEnds {
   })
   const finish = points.map(([tS, value], index) => [tS, value > 0 ? 0 : value < 0 ? inputV : start[index]![1]] as const)
   return { start: { periodS, points: start }, finish: { periodS, points: finish }, ...plain }
-}
-
-/** The tap lies on the return: the first half ends there and the second begins there; a whole winding lies between its bridge's rectifiers. */
-function secondaryEnds(voltageV: Waveform, part: 'first-half' | 'second-half' | 'whole'): WindingEnds {
-  const none = steadyLike(voltageV, 0)
-  if (part === 'first-half') return { start: voltageV, finish: none, ...plain }
-  if (part === 'second-half') return { start: none, finish: scaleWaveform(voltageV, -1), ...plain }
-  const positive = (sign: number) => ({ periodS: voltageV.periodS, points: voltageV.points.map(([tS, value]) => [tS, Math.max(0, sign * value)] as const) })
-  return { start: positive(1), finish: positive(-1), ...plain }
 }
 
 const words = (drive: string, switchPeakV: string): CircuitWords => ({

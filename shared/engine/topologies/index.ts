@@ -3,6 +3,7 @@ import { FULL_BRIDGE, HALF_BRIDGE, PUSH_PULL } from './bridge-circuits'
 import { COUPLED_INDUCTOR } from './coupled-circuit'
 import { FLYBACK } from './flyback-circuit'
 import { FORWARD } from './forward-circuit'
+import { LLC } from './llc-circuit'
 import type { DutyTraits, Topology } from './topology'
 
 /** Every topology that the engine turns into waveforms: a new one is one file and one line. */
@@ -13,6 +14,7 @@ const TOPOLOGIES: { readonly [T in Duty['topology']]: Topology<DutyOf<T>> } = {
   'half-bridge': HALF_BRIDGE,
   'full-bridge': FULL_BRIDGE,
   'push-pull': PUSH_PULL,
+  'llc': LLC,
 }
 
 /** The topology of a duty. The table's key and the duty's own agree, which the type of an index cannot say. */

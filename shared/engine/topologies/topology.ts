@@ -163,9 +163,10 @@ export interface NamedPoint extends OperatingPoint {
 export interface Topology<D extends Duty> {
   /**
    * `stores-energy`: the flux follows the current, saturation is that of the current limit.
-   * `unipolar` and `bipolar`: the flux follows the volt-seconds, from remanence or about zero.
+   * `unipolar`, `bipolar` and `resonant`: the flux follows the volt-seconds, from remanence or about zero; a bipolar core takes double
+   * flux at start, a resonant one does not.
    */
-  core: 'stores-energy' | 'unipolar' | 'bipolar'
+  core: 'stores-energy' | 'unipolar' | 'bipolar' | 'resonant'
   traits: (duty: D) => DutyTraits
   circuit: (input: CircuitInput<D>) => Circuit
   /** Operating points asked; the input range with full and light load where left out. */

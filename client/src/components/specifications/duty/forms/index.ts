@@ -3,6 +3,7 @@ import { COUPLED_INDUCTOR_FORM } from './coupled-inductor'
 import type { DutyForm } from './fields'
 import { FLYBACK_FORM } from './flyback'
 import { FORWARD_FORM, FULL_BRIDGE_FORM, HALF_BRIDGE_FORM, PUSH_PULL_FORM } from './forced'
+import { LLC_FORM } from './llc'
 
 /** How each duty is entered: a new topology is one file and one line. Their order is that of the ways in. */
 export const DUTY_FORMS: { readonly [T in Duty['topology']]: DutyForm<DutyOf<T>> } = {
@@ -11,6 +12,7 @@ export const DUTY_FORMS: { readonly [T in Duty['topology']]: DutyForm<DutyOf<T>>
   'half-bridge': HALF_BRIDGE_FORM,
   'full-bridge': FULL_BRIDGE_FORM,
   'push-pull': PUSH_PULL_FORM,
+  'llc': LLC_FORM,
   'coupled-inductor': COUPLED_INDUCTOR_FORM,
 }
 
