@@ -1,6 +1,6 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
-import { dutyTraits, topologyOf } from '.'
+import { dutyTraits, topologyOf } from './index'
 import type { BridgeOutput, FullBridgeDuty, HalfBridgeDuty, PushPullDuty } from '../duties/bridges'
 import type { ForwardDuty } from '../duties/forward'
 import type { Duty } from '../specification'

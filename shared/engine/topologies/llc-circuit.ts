@@ -1,5 +1,5 @@
 import type { LlcDuty, ResonantOutput } from '../duties/llc'
-import { offsetWaveform, steadyLike, sumWaveforms } from '../waveforms/combine'
+import { offsetWaveform, sumWaveforms } from '../waveforms/combine'
 import { maximum, mean } from '../waveforms/statistics'
 import type { Waveform } from '../waveforms/waveform'
 import { windingsNeeded } from './bridge-circuits'
