@@ -8,10 +8,10 @@ import { attempt } from './context'
 import type { Context } from './context'
 
 /** Where the gap lies and how long it is: as stated, else as calculated from the inductance. Without a stated place it is in the centre leg. */
-export function gapPlace({ specification }: Context, calculatedMm: number | null): GapPlace {
+export function gapPlace({ specification, core }: Context, calculatedMm: number | null): GapPlace {
   const { position, lengthMm, grinding, alH } = specification.core.gap
   const stated = position.value ?? (lengthMm.value !== null || alH.value !== null || calculatedMm !== null ? 'centre-leg' : null)
-  return { position: stated, lengthMm: lengthMm.value ?? calculatedMm, grinding: grinding.value }
+  return { position: stated, lengthMm: lengthMm.value ?? calculatedMm, grinding: grinding.value, joint: core?.shape === 'EI' ? 'end' : 'middle' }
 }
 
 /** Beyond this number of conductors the field would take longer than anybody types. */

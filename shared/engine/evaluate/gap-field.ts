@@ -30,7 +30,7 @@ function solvedGap(context: Context, coil: Coil | null, basis: InductanceBasis |
   if (!core || !basis || !laid || !context.primary || (position !== 'centre-leg' && position !== 'all-legs-spacer')) return null
   const rectangles = windingRectangles(laid, context.primary.id)
   if (rectangles.length === 0) return null
-  const permeance = gapFieldPermeance({ window: laid.placed.window, rectangles, legAreaMm2: core.gapAreaMm2 ?? core.effectiveAreaMm2, position, grinding: laid.gap.grinding })
+  const permeance = gapFieldPermeance({ window: laid.placed.window, rectangles, legAreaMm2: core.gapAreaMm2 ?? core.effectiveAreaMm2, position, grinding: laid.gap.grinding, joint: laid.gap.joint })
   return gapByFieldMm(permeance, {
     inductanceFactorH: basis.nominalH / basis.turns ** 2,
     corePermeanceH: (MU_0_H_PER_M * 1e-3 * core.permeability * core.effectiveAreaMm2) / core.effectiveLengthMm,

@@ -15,6 +15,7 @@ export interface GapFieldInput {
   legAreaMm2: number
   position: 'centre-leg' | 'all-legs-spacer'
   grinding: GapPlace['grinding']
+  joint: GapPlace['joint']
 }
 
 export interface GapPermeance {
@@ -37,7 +38,7 @@ const COIL_WAVES = 48
  * @throws RangeError on a window or an area out of range; the returned function unless the gap is positive and shorter than the window
  */
 export function gapFieldPermeance(input: GapFieldInput): (gapMm: number) => GapPermeance {
-  const { window, rectangles, legAreaMm2, position, grinding } = input
+  const { window, rectangles, legAreaMm2, position, grinding, joint } = input
   requireWindow(window)
   requirePositive('legAreaMm2', legAreaMm2)
   const spacer = position === 'all-legs-spacer'
@@ -47,10 +48,10 @@ export function gapFieldPermeance(input: GapFieldInput): (gapMm: number) => GapP
   return (gapMm) => {
     requirePositive('gapMm', gapMm)
     if (gapMm >= window.breadthMm) throw new RangeError(`gapMm must be shorter than the window of ${window.breadthMm} mm: ${gapMm}`)
-    const gap = gapMmf(window, { position, lengthMm: gapMm, grinding })
+    const gap = gapMmf(window, { position, lengthMm: gapMm, grinding, joint })
     const strips = gap.kind === 'walls' ? gap.strips : []
     const straight = legAreaMm2 / (gapMm * (spacer ? 2 : 1))
-    const total = straight + coil + stripEnergy(window, strips, waves, gapMm)
+    const total = straight + coil + stripEnergy(window, strips, waves, shortWaves(gapMm / window.breadthMm, waves.length, joint))
     return { permeanceH: total * unit, fringingFactor: total / straight }
   }
 }
@@ -91,8 +92,8 @@ function coilWaves({ window, rectangles }: GapFieldInput): WallWave[] {
   })
 }
 
-/** Energy of the gaps' magnetomotive force with itself and against the coil, mm. */
-function stripEnergy(window: FieldWindow, strips: readonly WallMmf[], waves: readonly WallWave[], gapMm: number): number {
+/** Energy of the gaps' magnetomotive force with itself and against the coil, mm; `rest` is of the waves beyond those listed. */
+function stripEnergy(window: FieldWindow, strips: readonly WallMmf[], waves: readonly WallWave[], rest: number): number {
   const { breadthMm, heightMm, depth } = window
   const first = Math.PI / breadthMm
   let sum = 0
@@ -106,18 +107,19 @@ function stripEnergy(window: FieldWindow, strips: readonly WallMmf[], waves: rea
     }
     sum += leg ** 2 * wall.leg + outer ** 2 * wall.outer + 2 * leg * outer * wall.across - 2 * (leg * wall.coilLeg + outer * wall.coilOuter)
   })
-  const rest = shortWaves(gapMm / breadthMm, waves.length) / first
-  for (const { wall, share } of strips) sum += share ** 2 * turnLengthAtMm(depth, wall === 'leg' ? 0 : heightMm) * rest
+  for (const { wall, share } of strips) sum += (share ** 2 * turnLengthAtMm(depth, wall === 'leg' ? 0 : heightMm) * rest) / first
   return (2 / breadthMm) * sum
 }
 
 /**
  * Σ sin²(n·x/2)/(n·x/2)²/n over the even n beyond `last`, x = π·l_g/b: the waves too short to feel the other walls or a round
- * leg's curvature, for a gap in the middle. The whole sum is (3/2 − ln 2x + x²/36 + x⁴/2700)/2.
+ * leg's curvature, for a gap in the middle. The whole sum is (3/2 − ln 2x + x²/36 + x⁴/2700)/2. A gap beside a yoke has every n, with twice
+ * the sum of the even ones.
  *
  * Source: Σ cos(n·x)/n³ by its expansion about 0; M. Abramowitz, I. Stegun, 27.8.
  */
-function shortWaves(gapShare: number, last: number): number {
+function shortWaves(gapShare: number, last: number, joint: GapPlace['joint']): number {
+  if (joint === 'end') return 2 * shortWaves(gapShare, 2 * last, 'middle')
   const x = Math.PI * gapShare
   let sum = (1.5 - Math.log(2 * x) + x ** 2 / 36 + x ** 4 / 2700) / 2
   for (let n = 2; n <= last; n += 2) sum -= Math.sin((n * x) / 2) ** 2 / (((n * x) / 2) ** 2 * n)

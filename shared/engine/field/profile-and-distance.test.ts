@@ -8,7 +8,7 @@ const row = (winding: string, turns: number, yMm: number, from = 0, to = 16): La
 
 const foil = (winding: string, turn: number, yMm: number): LayoutItem => ({ kind: 'foil', stepId: 'f', windingId: winding, turn, xMm: 1, yMm, widthMm: 14, thicknessMm: 0.1 })
 
-const centre: GapPlace = { position: 'centre-leg', lengthMm: 0.5, grinding: 'both-halves' }
+const centre: GapPlace = { position: 'centre-leg', lengthMm: 0.5, grinding: 'both-halves', joint: 'middle' }
 
 const coilOf = (items: LayoutItem[], gap: GapPlace = centre): LaidCoil => ({
   layout: { windowWidthMm: 16, windowHeightMm: 5, items, buildMm: 0, buildRatio: 0, copperFill: 0, windowFill: 0 },
@@ -83,7 +83,7 @@ describe('gapByFieldMm', () => {
   const permeance = gapFieldPermeance({
     window: { breadthMm: 20, heightMm: 6, depth: { kind: 'round', legRadiusMm: 5 } },
     rectangles: [{ group: 0, share: 1, radialFromMm: 1.5, radialToMm: 5, axialFromMm: 2, axialToMm: 18 }],
-    legAreaMm2: 78.5, position: 'centre-leg', grinding: 'one-half',
+    legAreaMm2: 78.5, position: 'centre-leg', grinding: 'one-half', joint: 'middle',
   })
 
   it('gives the gap back whose permeance it is told', () => {
@@ -91,6 +91,16 @@ describe('gapByFieldMm', () => {
       const inductanceFactorH = 1 / (1 / 3e-6 + 1 / permeance(gapMm).permeanceH)
       expect(gapByFieldMm(permeance, { inductanceFactorH, corePermeanceH: 3e-6, longestMm: 10 })! / gapMm).toBeCloseTo(1, 6)
     }
+  })
+
+  it('takes a gap beside a yoke for half of one of twice the length in the middle of twice the window', () => {
+    const window = { breadthMm: 20, heightMm: 6, depth: { kind: 'straight' as const, turnAtLegMm: 30, growthPerMm: 0 } }
+    const rectangles = [{ group: 0, share: 1, radialFromMm: 0.5, radialToMm: 5, axialFromMm: 0, axialToMm: 20 }]
+    const fringing = (joint: 'middle' | 'end', gapMm: number) => gapFieldPermeance({ window, rectangles, legAreaMm2: 50, position: 'centre-leg', grinding: null, joint })(gapMm).fringingFactor - 1
+    // Two gaps of half the length in mirrored halves of a window of twice the breadth are one gap in its middle.
+    const wide = gapFieldPermeance({ window: { ...window, breadthMm: 40 }, rectangles: [{ ...rectangles[0]!, axialToMm: 40 }], legAreaMm2: 50, position: 'centre-leg', grinding: null, joint: 'middle' })(0.8)
+    expect(fringing('end', 0.4)).toBeCloseTo(wide.fringingFactor - 1, 5)
+    expect(fringing('end', 0.4)).toBeGreaterThan(fringing('middle', 0.4))
   })
 
   it('gives none above the core without gap', () => {

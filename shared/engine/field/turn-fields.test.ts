@@ -34,7 +34,7 @@ describe('turnFields', () => {
     const place = fc.record({ axial: fc.double({ min: 7, max: 12, noNaN: true }), radial: fc.double({ min: 2.5, max: 4.5, noNaN: true }), share: fc.double({ min: 0.1, max: 2, noNaN: true }) })
     fc.assert(fc.property(fc.array(place, { minLength: 1, maxLength: 12 }), fc.boolean(), (places, gapped) => {
       const turns = [...places.map(({ axial, radial, share }) => wire(axial, radial, share)), wire(15, 3, 0.7)]
-      const input: TurnFieldInput = { window: plane, gap: gapMmf(plane, { position: gapped ? 'centre-leg' : 'distributed', lengthMm: 0.8, grinding: 'both-halves' }), windingIds: ['w'], turns }
+      const input: TurnFieldInput = { window: plane, gap: gapMmf(plane, { position: gapped ? 'centre-leg' : 'distributed', lengthMm: 0.8, grinding: 'both-halves', joint: 'middle' }), windingIds: ['w'], turns }
       const enclosed = places.reduce((sum, { share }) => sum + share, 0)
       expect(Math.abs(circulation(input, { left: 5, right: 13.5, low: 1, high: 6 }) / enclosed - 1)).toBeLessThan(0.01)
     }), { numRuns: 30 })
@@ -60,7 +60,7 @@ describe('turnFields', () => {
 
   it('agrees with itself however the field is split between waves and near wires', () => {
     const turns = [wire(9, 2), wire(9.4, 2.3), wire(12, 4), probe(9.2, 2.6), probe(11, 3)]
-    const gap = gapMmf(plane, { position: 'centre-leg', lengthMm: 0.5, grinding: 'both-halves' })
+    const gap = gapMmf(plane, { position: 'centre-leg', lengthMm: 0.5, grinding: 'both-halves', joint: 'middle' })
     const coarse = turnFields({ window: plane, gap, windingIds: ['w'], turns })
     // Places without current shift the split to narrower Gaussians.
     const fine = turnFields({ window: plane, gap, windingIds: ['w'], turns: [...turns, ...Array.from({ length: 400 }, (_, n) => probe(n / 20, 6))] })
@@ -72,7 +72,7 @@ describe('turnFields', () => {
 
   it('lies near the plane field where the leg is wide', () => {
     const turns = [wire(9, 2), wire(9.6, 2), wire(12, 4, -1), probe(10, 3)]
-    const gap = gapMmf(plane, { position: 'centre-leg', lengthMm: 0.5, grinding: 'both-halves' })
+    const gap = gapMmf(plane, { position: 'centre-leg', lengthMm: 0.5, grinding: 'both-halves', joint: 'middle' })
     const flat = turnFields({ window: plane, gap, windingIds: ['w'], turns })
     const round = turnFields({ window: { ...plane, depth: { kind: 'round', legRadiusMm: 2000 } }, gap, windingIds: ['w'], turns })
     for (const turn of turns.keys()) expect(round.hx[turn]! / flat.hx[turn]!).toBeCloseTo(1, 2)

@@ -59,21 +59,23 @@ export interface GapPlace {
   /** Of the centre leg, or the thickness of the spacer; null or 0: none. */
   lengthMm: number | null
   grinding: 'one-half' | 'both-halves' | null
+  /** Where the halves of the core meet: in the middle of the window, or at its end (EI). */
+  joint: 'middle' | 'end'
 }
 
 /**
  * The air gap as its magnetomotive force on the walls. A spacer lies in the centre leg and in the outer ones, half of the
- * force in each; a gap ground into one half lies beside the middle.
+ * force in each; a gap ground into one half lies beside the middle (in the half at the start of the axis).
  *
  * Source: Ampère's law; equal areas of centre leg and outer legs together (IEC 63093 cores).
  */
-export function gapMmf({ breadthMm }: FieldWindow, { position, lengthMm, grinding }: GapPlace): GapMmf {
+export function gapMmf({ breadthMm }: FieldWindow, { position, lengthMm, grinding, joint }: GapPlace): GapMmf {
   const length = lengthMm ?? 0
   if (!(length > 0) || length >= breadthMm || position === 'distributed' || position === 'none') return { kind: 'all-round' }
-  const middle = breadthMm / 2
+  const middle = joint === 'end' ? breadthMm - length / 2 : breadthMm / 2
   const strip = (wall: WallMmf['wall'], centre: number, share: number): WallMmf => ({ wall, fromMm: centre - length / 2, toMm: centre + length / 2, share })
   if (position === 'all-legs-spacer') return { kind: 'walls', strips: [strip('leg', middle, 0.5), strip('outer', middle, 0.5)] }
-  const centre = grinding === 'one-half' ? Math.max(length / 2, middle - length / 2) : middle
+  const centre = grinding === 'one-half' && joint === 'middle' ? Math.max(length / 2, middle - length / 2) : middle
   return { kind: 'walls', strips: [strip('leg', centre, 1)] }
 }
 
@@ -128,7 +130,8 @@ function coreOutline(core: CoreRow | null, tubeHalfMm: number): { legHalfMm: num
   if (!leg || !(d !== null && d > 0) || e === null) return null
   const legHalfMm = (leg.shape === 'round' ? leg.diameterMm : leg.widthMm) / 2
   const heightMm = e / 2 - legHalfMm
-  return legHalfMm < tubeHalfMm && heightMm > 0 ? { legHalfMm, breadthMm: 2 * d, heightMm } : null
+  // An EI has its whole window in the E.
+  return legHalfMm < tubeHalfMm && heightMm > 0 ? { legHalfMm, breadthMm: core?.shape === 'EI' ? d : 2 * d, heightMm } : null
 }
 
 /** Turns grow by 2π per millimetre on either tube; at the leg they are shorter than on the tube by 2π times the offset. */

@@ -25,7 +25,7 @@ function coilOf(rows: readonly Row[], round = true): LaidCoil {
     layout: { windowWidthMm: BREADTH_MM, windowHeightMm: 5, items: rows.flatMap(rowItems), buildMm: 0, buildRatio: 0, copperFill: 0, windowFill: 0 },
     windings: [...new Set(rows.map(({ winding }) => winding))].map((id) => ({ id, wire: { parallel: 1 } })),
     placed: { window: { breadthMm: 18, heightMm: 6.4, depth: round ? { kind: 'round', legRadiusMm: 5 } : { kind: 'straight', turnAtLegMm: 36, growthPerMm: 2 * Math.PI } }, axialOffsetMm: 1, radialOffsetMm: 1.2, fromCore: true },
-    gap: { position: 'centre-leg', lengthMm: 0.5, grinding: null },
+    gap: { position: 'centre-leg', lengthMm: 0.5, grinding: null, joint: 'middle' },
   }
 }
 
