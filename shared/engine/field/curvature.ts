@@ -1,3 +1,5 @@
+import { erf } from './error-function'
+import { NEAR_REACH, mirrored } from './near'
 import { GREATEST_ARGUMENT, cylinderWave, planeWave } from './radial-wave'
 import type { RadialPoint } from './radial-wave'
 import { curvatureRoot } from './series'
@@ -13,7 +15,7 @@ const MOST_WAVES = 40
  *
  * Source: L. Rabins, Trans. AIEE 75 III (1956) 261.
  */
-export function addCurvature(fields: ChannelFields, sources: CurrentSources, places: readonly FieldPlace[]): void {
+export function addCurvature(fields: ChannelFields, sources: CurrentSources, places: readonly FieldPlace[], smoothMm: number): void {
   const { window, channels } = sources
   if (window.depth.kind !== 'round') return
   const { legRadiusMm } = window.depth
@@ -30,6 +32,32 @@ export function addCurvature(fields: ChannelFields, sources: CurrentSources, pla
     const flat = response(levels, amplitudes, channels, (x) => scaled(plane.at(x), root(x)), plane.scale)
     addWave(fields, places, levels, { q, channels, curved, flat, amount: 2 / window.breadthMm })
   }
+  addMean(fields, sources, places, levels, smoothMm)
+}
+
+/**
+ * The mean over the axis does not bend with the radius (H is N·I/b at any), but the near fields carry 1/√r in their mean too:
+ * half the ampere-turns per breadth times erfc(|d|/√2·s) on either side of each layer. That is taken back here.
+ */
+function addMean(fields: ChannelFields, sources: CurrentSources, places: readonly FieldPlace[], levels: Levels, smoothMm: number): void {
+  const { window, channels } = sources
+  const amplitudes = waveAmplitudes(sources, levels, 0)
+  const changes = new Float64Array(amplitudes.length)
+  levels.radialMm.forEach((sourceMm, source) => {
+    const sourceRoot = curvatureRoot(window, sourceMm)
+    for (const [imageMm] of mirrored(sourceMm, window.heightMm, NEAR_REACH * smoothMm)) {
+      levels.radialMm.forEach((placeMm, place) => {
+        const distanceMm = placeMm - imageMm
+        if (Math.abs(distanceMm) > NEAR_REACH * smoothMm || Math.abs(distanceMm) < 1e-9) return
+        const missing = ((1 - sourceRoot / curvatureRoot(window, placeMm)) * Math.sign(distanceMm) * (1 - erf(Math.abs(distanceMm) / (Math.SQRT2 * smoothMm)))) / (2 * window.breadthMm)
+        for (let channel = 0; channel < channels; channel++) changes[place * channels + channel]! += missing * amplitudes[source * channels + channel]!
+      })
+    }
+  })
+  places.forEach(({ radialMm }, place) => {
+    const from = levels.index.get(keyOf(radialMm))! * channels
+    for (let channel = 0; channel < channels; channel++) fields.axial[place * channels + channel]! += changes[from + channel]!
+  })
 }
 
 /** The plane wave with A ~ 1/√r, as the series sums it: source times, place over the root of its radius. */
@@ -54,7 +82,7 @@ function waveAmplitudes({ points, sheets, channels }: CurrentSources, { radialMm
   const sums = new Float64Array(radialMm.length * channels)
   const place = (mm: number, channel: number) => index.get(keyOf(mm))! * channels + channel
   for (const point of points) sums[place(point.radialMm, point.channel)]! += point.weight * Math.cos(q * point.axialMm)
-  for (const { radialMm: mm, fromMm, toMm, weight, channel } of sheets) sums[place(mm, channel)]! += (weight * (Math.sin(q * toMm) - Math.sin(q * fromMm))) / (q * (toMm - fromMm))
+  for (const { radialMm: mm, fromMm, toMm, weight, channel } of sheets) sums[place(mm, channel)]! += q === 0 ? weight : (weight * (Math.sin(q * toMm) - Math.sin(q * fromMm))) / (q * (toMm - fromMm))
   return sums
 }
 

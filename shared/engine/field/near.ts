@@ -3,7 +3,7 @@ import { curvatureRoot } from './series'
 import type { ChannelFields, CurrentSources, FieldPlace } from './series'
 
 /** Beyond this many spreads the smoothed current acts as the point: exp(−4²/2) = 3·10⁻⁴. */
-const REACH = 4
+export const NEAR_REACH = 4
 
 interface NearSource {
   radialMm: number
@@ -23,7 +23,7 @@ interface NearSource {
  * current's own sign.
  */
 export function addNearFields(fields: ChannelFields, sources: CurrentSources, places: readonly FieldPlace[], ownPoint: Int32Array, smoothMm: number): void {
-  const reachMm = REACH * smoothMm
+  const reachMm = NEAR_REACH * smoothMm
   const grid = gridOf(nearSources(sources, reachMm), reachMm)
   const { channels, window } = sources
   const spread = 2 * smoothMm ** 2
@@ -55,7 +55,8 @@ function nearSources({ window, points }: CurrentSources, reachMm: number): NearS
   return list
 }
 
-function mirrored(placeMm: number, lengthMm: number, reachMm: number): [number, boolean][] {
+/** A place and its images in the two walls of a stretch that lie within reach; true for the place itself. */
+export function mirrored(placeMm: number, lengthMm: number, reachMm: number): [number, boolean][] {
   const places: [number, boolean][] = [[placeMm, true]]
   if (placeMm < reachMm) places.push([-placeMm, false])
   if (lengthMm - placeMm < reachMm) places.push([2 * lengthMm - placeMm, false])
@@ -83,13 +84,13 @@ function gridOf(sources: readonly NearSource[], reachMm: number): { visit: (x: n
 function addSheets(fields: ChannelFields, { channels, window, sheets }: CurrentSources, places: readonly FieldPlace[], smoothMm: number): void {
   const scale = Math.SQRT2 * smoothMm
   for (const sheet of sheets) {
-    const density = sheet.weight / (sheet.toMm - sheet.fromMm)
-    for (const [sheetMm] of mirrored(sheet.radialMm, window.heightMm, REACH * smoothMm)) {
+    const density = (sheet.weight * curvatureRoot(window, sheet.radialMm)) / (sheet.toMm - sheet.fromMm)
+    for (const [sheetMm] of mirrored(sheet.radialMm, window.heightMm, NEAR_REACH * smoothMm)) {
       places.forEach(({ radialMm, axialMm }, place) => {
         const distanceMm = radialMm - sheetMm
-        if (Math.abs(distanceMm) > REACH * smoothMm || Math.abs(distanceMm) < 1e-9) return
+        if (Math.abs(distanceMm) > NEAR_REACH * smoothMm || Math.abs(distanceMm) < 1e-9) return
         const beside = (erf((axialMm - sheet.fromMm) / scale) - erf((axialMm - sheet.toMm) / scale)) / 2
-        fields.axial[place * channels + sheet.channel]! += 0.5 * density * beside * Math.sign(distanceMm) * (1 - erf(Math.abs(distanceMm) / scale))
+        fields.axial[place * channels + sheet.channel]! += (0.5 * density * beside * Math.sign(distanceMm) * (1 - erf(Math.abs(distanceMm) / scale))) / curvatureRoot(window, radialMm)
       })
     }
   }

@@ -2,7 +2,9 @@ import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import { fieldsAt, turnFields } from './turn-fields'
 import type { FieldTurn, TurnFieldInput } from './turn-fields'
-import { gapMmf } from './window'
+import { windowEnergyH } from './window-energy'
+import type { CurrentRectangle } from './window-energy'
+import { gapMmf, turnLengthAtMm } from './window'
 import type { FieldWindow } from './window'
 
 const plane: FieldWindow = { breadthMm: 20, heightMm: 7, depth: { kind: 'straight', turnAtLegMm: 40, growthPerMm: 0 } }
@@ -32,9 +34,10 @@ function circulation(input: TurnFieldInput, box: { left: number; right: number; 
 describe('turnFields', () => {
   it('satisfies Ampère’s law round any part of the window', () => {
     const place = fc.record({ axial: fc.double({ min: 7, max: 12, noNaN: true }), radial: fc.double({ min: 2.5, max: 4.5, noNaN: true }), share: fc.double({ min: 0.1, max: 2, noNaN: true }) })
-    fc.assert(fc.property(fc.array(place, { minLength: 1, maxLength: 12 }), fc.boolean(), (places, gapped) => {
+    const depths: FieldWindow['depth'][] = [plane.depth, { kind: 'round', legRadiusMm: 4 }]
+    fc.assert(fc.property(fc.array(place, { minLength: 1, maxLength: 12 }), fc.boolean(), fc.constantFrom(...depths), (places, gapped, depth) => {
       const turns = [...places.map(({ axial, radial, share }) => wire(axial, radial, share)), wire(15, 3, 0.7)]
-      const input: TurnFieldInput = { window: plane, gap: gapMmf(plane, { position: gapped ? 'centre-leg' : 'distributed', lengthMm: 0.8, grinding: 'both-halves', joint: 'middle' }), windingIds: ['w'], turns }
+      const input: TurnFieldInput = { window: { ...plane, depth }, gap: gapMmf(plane, { position: gapped ? 'centre-leg' : 'distributed', lengthMm: 0.8, grinding: 'both-halves', joint: 'middle' }), windingIds: ['w'], turns }
       const enclosed = places.reduce((sum, { share }) => sum + share, 0)
       expect(Math.abs(circulation(input, { left: 5, right: 13.5, low: 1, high: 6 }) / enclosed - 1)).toBeLessThan(0.01)
     }), { numRuns: 30 })
@@ -49,6 +52,31 @@ describe('turnFields', () => {
     expect(Math.abs(hx[82]!)).toBeLessThan(5)
     expect(hx[20]! / (40 / 0.02)).toBeCloseTo(0.5, 2)
     expect(Math.abs(hy[20]!)).toBeLessThan(10)
+  })
+
+  it.each([plane.depth, { kind: 'round' as const, legRadiusMm: 4 }])('gives N·I/b between two foils from yoke to yoke, $kind', (depth) => {
+    const foil = (radialMm: number, share: number): FieldTurn => ({ winding: 0, turn: 1, strand: 1, share, foilBreadthMm: 20, radialMm, axialMm: 10 })
+    const input: TurnFieldInput = { window: { ...plane, depth }, gap: uniformLeg, windingIds: ['w'], turns: [foil(2, 1), foil(2.6, -1), ...Array.from({ length: 100 }, () => wire(5, 5, 0))] }
+    const { hx } = fieldsAt(input, [{ axialMm: 6, radialMm: 2.3 }, { axialMm: 6, radialMm: 1.5 }, { axialMm: 6, radialMm: 4 }])
+    expect(hx[0]! / 50).toBeCloseTo(1, 3)
+    expect(Math.abs(hx[1]!)).toBeLessThan(0.05)
+    expect(Math.abs(hx[2]!)).toBeLessThan(0.05)
+  })
+
+  it.each([plane.depth, { kind: 'round' as const, legRadiusMm: 4 }])('has the energy, summed over the window, that the energy of rectangles gives, $kind', (depth) => {
+    const window = { ...plane, depth }
+    const block = (rows: number, columns: number, at: { axial: number; radial: number }, share: number) =>
+      Array.from({ length: rows * columns }, (_, n) => wire(at.axial + (n % columns) / 10, at.radial + Math.floor(n / columns) / 10, share / (rows * columns)))
+    const turns = [...block(8, 199, { axial: 0.1, radial: 1.5 }, 1), ...block(10, 99, { axial: 1.1, radial: 3 }, -1)]
+    const step = 0.1
+    const places = Array.from({ length: 200 * 70 }, (_, n) => ({ axialMm: ((n % 200) + 0.5) * step, radialMm: (Math.floor(n / 200) + 0.5) * step }))
+    const { hx, hy } = fieldsAt({ window, gap: uniformLeg, windingIds: ['w'], turns }, places)
+    const summed = places.reduce((sum, { radialMm }, index) => sum + (hx[index]! ** 2 + hy[index]! ** 2) * turnLengthAtMm(depth, radialMm), 0) * 4e-7 * Math.PI * step ** 2 * 1e-9
+    const rectangles: CurrentRectangle[] = [
+      { group: 0, share: 1, radialFromMm: 1.45, radialToMm: 2.25, axialFromMm: 0.05, axialToMm: 19.95 },
+      { group: 0, share: -1, radialFromMm: 2.95, radialToMm: 3.95, axialFromMm: 1.05, axialToMm: 10.95 },
+    ]
+    expect(Math.abs(summed / windowEnergyH({ window, groups: 1, rectangles })[0]! - 1)).toBeLessThan(0.01)
   })
 
   it('takes the ampere-turns back through a gap spread over the leg: full field inside the layer, none outside', () => {

@@ -88,7 +88,7 @@ function fieldsOf(input: TurnFieldInput, places: readonly FieldPlace[], ownPoint
   const smoothMm = smoothingMm(input.window, input.turns.length)
   const fields = smoothFields(sources, places, smoothMm)
   addNearFields(fields, sources, places, ownPoint, smoothMm)
-  addCurvature(fields, sources, places)
+  addCurvature(fields, sources, places, smoothMm)
   if (input.gap.kind === 'all-round') addAllRound(fields, input, places)
   return withGap(fields, input, places.length)
 }
