@@ -26,7 +26,8 @@ export function openDocument(info: DocumentInfo): PDFKit.PDFDocument {
     displayTitle: true,
     autoFirstPage: false,
     margin: 0,
-    font: fontBytes('sans') as unknown as string,
+    // No font by default: pdfkit would open the same font again, under its role, at each change of font.
+    font: null as unknown as string,
     info: { Title: info.title, Subject: info.subject, Author: info.author, Creator: 'Dotside', Producer: 'Dotside', CreationDate: info.date, ModDate: info.date },
   } as PDFKit.PDFDocumentOptions)
   for (const role of ROLES) setPlainLetters(doc.registerFont(role, fontBytes(role)).font(role))

@@ -59,9 +59,25 @@ export function textRuns(text: string, font: FontRole, heightMm: number): TextRu
   return runs
 }
 
+/** Advances in thousandths of the em; tables are laid out by measuring the same words again and again. */
+const measured: Record<FontRole, Map<string, number>> = { sans: new Map(), 'sans-bold': new Map(), mono: new Map() }
+const MOST_MEASURED = 20_000
+
+function advance(text: string, font: FontRole): number {
+  const known = measured[font].get(text)
+  if (known !== undefined) return known
+  let sum = 0
+  for (const character of text) {
+    const codePoint = character.codePointAt(0)!
+    sum += widthsOf(fontFor(codePoint, font)).get(codePoint) ?? NO_GLYPH_EM
+  }
+  if (measured[font].size >= MOST_MEASURED) measured[font].clear()
+  measured[font].set(text, sum)
+  return sum
+}
+
 /** Width of one line of text, mm. */
-export const textWidthMm = (text: string, font: FontRole, heightMm: number): number =>
-  textRuns(text, font, heightMm).reduce((sum, run) => sum + run.widthMm, 0)
+export const textWidthMm = (text: string, font: FontRole, heightMm: number): number => (advance(text, font) / 1000) * fontSizeMm(heightMm)
 
 /** Where a label's text starts: its anchor moved by the alignment, mm along the line. */
 export function alignmentShiftMm(label: Pick<LabelShape, 'align' | 'text' | 'font' | 'heightMm'>): number {
