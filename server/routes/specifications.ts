@@ -8,6 +8,7 @@ import { readSpecificationUse } from '#server/services/specifications/read-use'
 import { readRevision } from '#server/services/specifications/read-revision'
 import { downloadReleasedDocument, downloadSheets, readReleasedResults } from '#server/services/specifications/read-sheets'
 import { releaseRevision } from '#server/services/specifications/release-revision'
+import { searchCandidates } from '#server/services/specifications/search-candidates'
 import { createNextDraft, createSpecification, saveDraft } from '#server/services/specifications/write-draft'
 import * as contract from '#shared/contracts/specifications'
 import { windingSpecificationSchema } from '#shared/contracts/specification-document'
@@ -19,6 +20,7 @@ export function specificationRoutes(ctx: Context): Router {
   const router = Router()
 
   handle(router, contract.listSpecifications, ({ actor, query }) => asActor(ctx, actor, (tx) => listSpecifications(tx, actor, query)))
+  handle(router, contract.searchCandidates, ({ actor, body }) => searchCandidates(ctx, actor, body))
   handle(router, contract.createSpecification, ({ actor, body }) => asActor(ctx, actor, (tx) => createSpecification(tx, actor, body)))
   handle(router, contract.getSpecification, ({ actor, params }) => asActor(ctx, actor, (tx) => readSpecification(tx, actor, params.specificationId)))
   handle(router, contract.specificationUse, ({ actor, params }) => asActor(ctx, actor, (tx) => readSpecificationUse(tx, actor, params.specificationId)))

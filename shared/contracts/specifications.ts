@@ -328,3 +328,5 @@ export const specificationJsonSchema = defineEndpoint({
   access: 'public',
   response: z.looseObject({}),
 })
+
+export { searchCandidates } from './specification-search'

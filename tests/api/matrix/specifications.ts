@@ -1,3 +1,4 @@
+import { COUPLED_INDUCTOR } from '#server/db/seed/specifications/requirements'
 import type { Revision } from '#shared/contracts/specifications'
 import { buildRelease } from '../../support/build-release'
 import { buildChecked, buildDraft, buildInCheck, newPartNumber, releasableDocument, revisionParams } from '../../support/build-specification'
@@ -56,6 +57,7 @@ export const specifications: FeatureExpectations = {
       return { body: { partNumber, title: 'Inductor', document: releasableDocument(partNumber) } }
     },
   },
+  searchCandidates: { own: () => ({ body: { requirement: COUPLED_INDUCTOR, preferences: { shapes: ['EP'], finalists: 1 } } }) },
   getSpecification: {
     own: async (world) => ({ params: { specificationId: (await draft(world, world.own)).specificationId } }),
     foreign: async (world) => ({ params: { specificationId: (await draft(world, world.foreign, world.foreignMark)).specificationId } }),
