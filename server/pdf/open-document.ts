@@ -28,7 +28,7 @@ export function openDocument(info: DocumentInfo): PDFKit.PDFDocument {
     margin: 0,
     // No font by default: pdfkit would open the same font again, under its role, at each change of font.
     font: null as unknown as string,
-    info: { Title: info.title, Subject: info.subject, Author: info.author, Creator: 'Dotside', Producer: 'Dotside', CreationDate: info.date, ModDate: info.date },
+    info: { Title: info.title, Subject: info.subject, Author: info.author, Creator: 'Dotside', Producer: 'Dotside', CreationDate: info.date },
   } as PDFKit.PDFDocumentOptions)
   for (const role of ROLES) setPlainLetters(doc.registerFont(role, fontBytes(role)).font(role))
   return doc

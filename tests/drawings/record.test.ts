@@ -1,6 +1,8 @@
 import { describe, expect, it } from 'vitest'
 import { sheetShapes, type Shape, type Sheet } from '#shared/drawing/model'
 import { pinView } from '#shared/drawing/figures/pin-view'
+import { holePattern } from '#shared/drawing/figures/outline/hole-pattern'
+import { outline } from '#shared/drawing/figures/outline/outline'
 import { schematic } from '#shared/drawing/figures/schematic'
 import { drawSheets } from '#shared/drawing/sheets/index'
 import { terminals } from '#shared/drawing/sheets/terminals'
@@ -91,6 +93,13 @@ describe.each(Object.entries({ mainsFlyback, buoySupply, coupledInductor }))('th
     expect(pinsOf(pinView(specification, 'top', 63, 50).shapes)).toEqual(all)
     expect(pinsOf(pinView(specification, 'bottom', 63, 50).shapes)).toEqual(all)
     expect(new Set(terminals(specification).map(({ name }) => name))).toEqual(all)
+  })
+
+  it('that are not missing are those of the outline and of the holes', () => {
+    const present = new Set(specification.former.pins.filter(({ state }) => state !== 'missing').map(({ number }) => number))
+    const views = outline({ specification, library: sampleLibrary, layout: null, widthMm: 228, heightMm: 200 })!
+    expect(pinsOf(views.shapes)).toEqual(present)
+    expect(pinsOf(holePattern(specification, 146, 80)!.shapes)).toEqual(present)
   })
 
   it('that are fitted are those of the schematic and of the windings', () => {
