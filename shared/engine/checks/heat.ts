@@ -1,4 +1,5 @@
 import { COPPER_ALPHA_20C_PER_K } from '../constants'
+import { gapDistance } from '../evaluate/gap-field'
 import { protective } from './boundary-input'
 import { atLeast, atMost, notCheckable, yesNo } from './outcome'
 import type { Check, CheckInput, Outcome } from './outcome'
@@ -83,14 +84,17 @@ const leadHeat = (input: CheckInput): Outcome[] =>
     return rmsA !== null && rmsA > LEAD_CURRENT_A ? [notCheckable(`windings.${index}.startTerminal`, { winding: winding.name, currentA: rmsA })] : []
   })
 
-/** Wire beside the gap is heated by its field: either it keeps away, or the loss is counted. */
-function wireOverGap({ evaluation, context }: CheckInput): Outcome[] {
+/** Gap lengths that wire keeps away from the gap. Source: handbooks, two to three. */
+const KEEP_AWAY_GAPS = 2
+
+/** Wire beside the gap is heated by its field. */
+function wireOverGap({ evaluation, context, coil }: CheckInput): Outcome[] {
   const { gapMm } = evaluation.magnetics
-  if (gapMm === null || !(gapMm > 0) || !context.former) return []
-  const path = 'core.gap.lengthMm'
-  const first = evaluation.layout.items.flatMap((item) => (item.kind === 'turn' ? [item.yMm - item.conductorMm / 2] : item.kind === 'foil' ? [item.yMm] : []))
-  const nearest = first.length > 0 ? Math.min(...first) + context.former.tubeWallMm : null
-  return [atLeast({ value: nearest, limit: 2 * gapMm, unit: 'mm', path, values: { gapMm } })]
+  if (gapMm === null || !(gapMm > 0) || !coil) return []
+  const nearest = gapDistance({ ...context, findings: [] }, coil, gapMm)
+  if (!nearest) return []
+  const winding = context.specification.windings.find(({ id }) => id === nearest.windingId)
+  return [atLeast({ value: nearest.distanceMm, limit: KEEP_AWAY_GAPS * nearest.gapMm, unit: 'mm', path: 'core.gap.lengthMm', values: { winding: winding?.name ?? '', gapMm: nearest.gapMm } })]
 }
 
 export const HEAT_CHECKS: Readonly<Record<string, Check>> = {

@@ -58,7 +58,7 @@ function highFrequency(input: CheckInput): Outcome[] {
     if (frequencyHz <= 30e3) return []
     const { clearanceMm, creepageMm } = result.required
     // The creepage table of IEC 60664-4 is not held: a person looks it up and answers with its value.
-    const open = [clearanceMm, creepageMm].find(({ value, reason }) => value === null || reason === 'high-frequency-table-not-held')
+    const open = [clearanceMm, creepageMm].find(({ value, reason }) => value === null || reason === 'high-frequency-table-not-held' || reason === 'table-not-held')
     return open ? notCheckable(path, { boundary: boundary.name, frequencyHz, reason: open.reason ?? '' }) : yesNo(true, path, { boundary: boundary.name, frequencyHz })
   })
 }

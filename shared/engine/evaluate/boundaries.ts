@@ -121,7 +121,7 @@ function requiredDistance(answer: Answer<RequiredDistance>): SourcedValue {
   if (answer.state !== 'known') return absent(answer.reason)
   const { distanceMm, governedBy, contributions, unchecked } = answer.value
   const citation = contributions.find(({ rule }) => rule === governedBy)!.citation
-  return { value: distanceMm, source: cite(citation), ...standing(citation), reason: unchecked[0]?.reason ?? null }
+  return { value: distanceMm, source: cite(citation), ...standing(citation), reason: (unchecked.find(({ reason }) => reason === 'table-not-held') ?? unchecked[0])?.reason ?? null }
 }
 
 function requiredValues(needs: BoundaryRequirements | { reason: string } | null, { insulation }: InsulationBoundary, peakV: number | null): BoundaryResult['required'] {
