@@ -290,14 +290,14 @@ export interface BoundaryResult {
   state: CheckState
 }
 
-/** In the winding window the coordinates of `Layout`, y above the window's height lying in the core; among the pins those of `Pin`. */
+/** In the winding window the coordinates of `Layout`, y above the window's height lying in the core; among the pins those of `Pin`; on a ring those of `RingLayout`. */
 export type PathPoint = readonly [xMm: number, yMm: number]
 
 /** The shortest way across one boundary, as a line from one conductor to the other. */
 export interface InsulationPath {
   kind: 'clearance' | 'creepage' | 'through-insulation'
-  /** The winding window's cross-section, or the pins seen from above the board. */
-  plane: 'window' | 'pins'
+  /** The winding window's cross-section, the pins seen from above the board, or a ring core seen along its axis. */
+  plane: 'window' | 'pins' | 'ring'
   /** What counts as its length; a part that conducts counts as no distance though the line runs along it. */
   lengthMm: number
   how: string

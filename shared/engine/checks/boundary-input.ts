@@ -1,4 +1,4 @@
-import { providedInsulation } from '../evaluate/insulation-paths'
+import { insulationOf } from '../evaluate/insulation-paths'
 import type { ProvidedInsulation } from '../evaluate/insulation-paths'
 import type { BoundaryResult } from '../evaluation'
 import type { InsulationBoundary } from '../specification'
@@ -17,7 +17,7 @@ export function boundaries({ document, evaluation, context, coil }: CheckInput):
   return document.specification.insulation.boundaries.map((boundary, index) => ({
     boundary,
     result: evaluation.boundaries[index]!,
-    provided: coil && context.former ? providedInsulation({ specification: document.specification, former: context.former, coil, boundary }) : null,
+    provided: insulationOf({ ...context, coil }, boundary),
     path: `insulation.boundaries.${index}`,
   }))
 }

@@ -12,7 +12,7 @@ import { attempt, report } from './context'
 import type { Context } from './context'
 import { explainBoundary } from './explain-boundaries'
 import { ratedMainsV } from './mains'
-import { providedInsulation, windingsAt } from './insulation-paths'
+import { insulationOf, windingsAt } from './insulation-paths'
 import type { ProvidedInsulation } from './insulation-paths'
 import { boundaryVoltage } from './working-voltage'
 import type { VoltageCorners } from './working-voltage'
@@ -36,7 +36,7 @@ function boundaryResult(context: Context, input: { boundary: InsulationBoundary;
   const stress: Stress = { rmsV: larger(calculated?.rmsV, boundary.workingVoltageVRms), peakV: larger(calculated?.recurringPeakV, boundary.recurringPeakV) }
   if (stress.rmsV === null || stress.peakV === null) report(context, 'working-voltage-not-known', 'warning', path, { boundary: boundary.name })
   const needs = requirements(context, boundary, stress, path)
-  const provided = coil && context.former ? providedInsulation({ specification: context.specification, former: context.former, coil, boundary }) : null
+  const provided = insulationOf({ ...context, coil }, boundary)
   const required = requiredValues(needs, boundary, stress.peakV)
   const testVoltageVRms = boundary.test ? (boundary.test.kind === 'dc' ? boundary.test.voltageV / Math.SQRT2 : boundary.test.voltageV) : null
   explainBoundary(context, { index, boundary, stress, needs: needs && 'reason' in needs ? null : needs, required, provided, onMains: corners.onMains })

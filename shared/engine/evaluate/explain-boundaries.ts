@@ -88,11 +88,12 @@ function explainProvided(context: Context, { index, provided }: ExplainedBoundar
     const points = path.points.map(([x, y]) => `${x.toFixed(2)}, ${y.toFixed(2)}`).join(' → ')
     const inputs = [
       { name: 'way', value: path.how, unit: '', origin: 'layout' },
-      { name: 'points', value: points, unit: 'mm', origin: path.plane === 'window' ? 'layout, from the left flange and the tube' : 'pins, from the middle of the former' },
+      { name: 'points', value: points, unit: 'mm', origin: ORIGINS[path.plane] },
     ]
     const working = () => ({ symbol: SYMBOLS[path.kind], value: path.lengthMm, unit: 'mm', formula: 'shortest way through the coil as laid out', inputs, source: 'geometry of the build' })
     explain(context, place(index, `provided.paths.${position}.lengthMm`), working)
   })
 }
 
+const ORIGINS = { window: 'layout, from the left flange and the tube', pins: 'pins, from the middle of the former', ring: 'layout, from the middle of the ring' } as const
 const SYMBOLS = { clearance: 'd_cl', creepage: 'd_cr', 'through-insulation': 'd_ti' } as const

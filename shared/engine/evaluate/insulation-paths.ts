@@ -1,9 +1,10 @@
 import type { Coil } from '../build'
-import type { InsulationPath } from '../evaluation'
+import type { InsulationPath, RingLayout } from '../evaluation'
 import type { FormerRow } from '../library'
 import type { BoundaryEnd, InsulationBoundary, SequenceStep, Winding, WindingSpecification } from '../specification'
 import { acrossTape, overFlange, shieldParts, shorter, toOuterLeg, viaConductor } from './path-geometry'
 import type { CoilPart, Path } from './path-geometry'
+import { alongHole } from './ring-paths'
 
 /** What the build puts between the two ends of a boundary; null where it cannot be told. */
 export interface ProvidedInsulation {
@@ -66,6 +67,25 @@ export interface PathInput {
   former: FormerRow
   coil: Coil
   boundary: InsulationBoundary
+}
+
+/** What the laid coil provides across a boundary, on a former or on a ring core; null where nothing is laid. */
+export function insulationOf({ specification, former, coil }: { specification: WindingSpecification; former: FormerRow | null; coil: Coil | null }, boundary: InsulationBoundary): ProvidedInsulation | null {
+  if (coil?.layout.ring) return onRing(specification, coil.layout.ring, boundary)
+  return coil && former ? providedInsulation({ specification, former, coil, boundary }) : null
+}
+
+/** On a ring windings in sectors of their own are parted along the hole; enamel is no insulation to the core, nor within a sector but functionally. */
+function onRing(specification: WindingSpecification, ring: RingLayout, { between, insulation }: InsulationBoundary): ProvidedInsulation {
+  if (between.some(({ kind }) => kind === 'core')) return { ...NOT_KNOWN, how: 'coating of the ring core' }
+  const functional = insulation === 'functional'
+  const [one, other] = between.map((end) => windingsAt(specification, end))
+  const pairs = one!.flatMap((a) => other!.filter(({ id }) => id !== a.id).map((b) => ({ covered: insulates(a, functional) || insulates(b, functional), path: alongHole(ring, a, b) })))
+  const bare = pairs.filter(({ covered }) => !covered)
+  if (pairs.length === 0 || bare.some(({ path }) => path === null)) return NOT_KNOWN
+  const nearest = nearestOf(pairs.flatMap(({ path }) => path ?? []))
+  const how = [bare.length === 0 ? wireText(functional) : null, nearest?.how ?? null].filter((part) => part !== null).join('; ')
+  return { ...lengths(nearest, []), byInsulatedWire: bare.length === 0, known: true, how }
 }
 
 /** The weakest path of the build across a boundary: along the coil, by way of core or shield, and from pin to pin. */

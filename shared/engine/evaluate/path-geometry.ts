@@ -9,8 +9,8 @@ export interface Path {
   layers: number
   thicknessMm: number
   how: string
-  /** Where it runs, in the winding window or among the pins. */
-  plane: 'window' | 'pins'
+  /** Where it runs: in the winding window, among the pins or on a ring core. */
+  plane: 'window' | 'pins' | 'ring'
   points: readonly PathPoint[]
   /** Straight through the solid insulation; none where the path lies in one plane with no insulation to cross. */
   through: readonly PathPoint[]
