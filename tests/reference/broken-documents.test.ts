@@ -61,9 +61,11 @@ const SAFETY: Break[] = [
   { name: 'margin tape narrower than the margins', base: 'margin', code: 'I08', change: ({ specification }) => specification.sequence.forEach((step) => { if (step.kind === 'margin') Object.assign(step, { leftMm: 1, rightMm: 1 }) }) },
   { name: 'a withstand row of 500 V across the mains', base: 'insulated', code: 'I17', change: (d) => { row(d, 'HV PRI–SEC').levelV = 500 } },
   { name: 'a withstand row on type samples only', base: 'insulated', code: 'I17', change: (d) => { row(d, 'HV PRI–SEC').extent = 'type-test' } },
+  { name: 'a withstand row that nobody has to make', base: 'insulated', code: 'I17', change: (d) => { row(d, 'HV PRI–SEC').extent = 'reference' } },
   { name: 'a withstand row for reference', base: 'insulated', code: 'I17', change: (d) => { row(d, 'HV PRI–SEC').status = 'reference' } },
   { name: 'a withstand row without terminals', base: 'insulated', code: 'I17', change: (d) => { Object.assign(row(d, 'HV PRI–SEC'), { drivenTerminals: [], shortedTerminals: [] }) } },
   { name: 'a routine test of 500 V', base: 'insulated', code: 'I17', change: (d) => { boundary(d, 'PRI–SEC').test!.routineVoltageV = 500 } },
+  { name: 'a routine test that lasts no time', base: 'insulated', code: 'I17', change: (d) => { boundary(d, 'PRI–SEC').test!.routineDwellS = 0 } },
   { name: 'a test that lasts no time', base: 'insulated', code: 'I17', change: (d) => { boundary(d, 'PRI–SEC').test!.dwellS = 0 } },
   { name: 'a clearance called one of 50 Hz', base: 'margin', code: 'I33', change: ({ specification }) => { specification.insulation.overvoltageCategory.value = 'I'; specification.insulation.boundaries.forEach((one) => { one.frequencyHz = 50 }) } },
   { name: 'pollution degree 1 without a reason', base: 'margin', code: 'I33', change: ({ specification }) => { specification.insulation.pollutionDegree.value = 1 } },
@@ -71,6 +73,11 @@ const SAFETY: Break[] = [
   { name: 'an altitude below the sea', base: 'margin', code: 'I07', change: ({ specification }) => { specification.insulation.altitudeM.value = -9999 } },
   { name: 'a working voltage below the calculated one', base: 'margin', code: 'I03', change: (d) => { Object.assign(boundary(d, 'PRI–SEC'), { workingVoltageVRms: 10, recurringPeakV: 10 }) } },
   { name: 'margins without sleeves over the leads', base: 'margin', code: 'I13', state: 'not-checkable', change: ({ specification }) => specification.sequence.forEach((step) => { if (step.kind === 'winding') Object.assign(step, { startSleeve: null, finishSleeve: null }) }) },
+  { name: 'leads that no slot is known to pass', base: 'insulated', code: 'W17', change: ({ specification }) => { specification.former.leadSlotWidthMm.value = 0.1 } },
+  { name: 'a coil over which the core does not close', base: 'insulated', code: 'W18', change: ({ specification }) => { specification.sequence.push({ ...specification.sequence.find((step) => step.kind === 'tape')!, id: 's99', layers: 90 }) } },
+  { name: 'enamel that no bath takes off', base: 'insulated', code: 'P08', change: (d) => { winding(d, 'P').wire.thermalClassC = 220 } },
+  { name: 'wire too thick for a pin', base: 'insulated', code: 'P05', change: (d) => { const thick = library.wires.find(({ form, conductorMm }) => form === 'round' && conductorMm > 1.2)!; winding(d, 'P').wire.wire = { kind: 'wire', id: thick.id, version: thick.version } } },
+  { name: 'a revision without its reason', base: 'insulated', code: 'D06', change: ({ specification }) => { specification.revisions = [{ revision: 'B', date: '2026-03-01', zones: '', changes: [], reason: '', effect: '', by: '', checkedBy: '', approvedBy: '' }] } },
   { name: 'a part higher than its place', base: 'insulated', code: 'W25', change: (d) => { d.requirement!.maximumHeightMm = 20; d.specification.former.envelope.value!.heightMm = 30 } },
   { name: 'a former that burns', base: 'insulated', code: 'I27', change: ({ specification }) => { specification.former.flammability.value = 'UL 94 HB' } },
   { name: 'a secondary among the pins of the primary’s row', base: 'insulated', code: 'P11', change: (d) => wire(d, 'S1', '7', '8') },
@@ -100,6 +107,33 @@ describe('release is stopped by', () => {
 })
 
 describe('insulation', () => {
+  it('of a single mains voltage is rated for that voltage', () => {
+    const supply = { ...flyback(HARBOUR_SUPPLY).supply, minimumV: 230, nominalV: 230, maximumV: 230 } as FlybackDuty['supply']
+    const { document } = propose({ ...HARBOUR_SUPPLY, insulationMethod: 'margin-tape', duty: { ...flyback(HARBOUR_SUPPLY), supply } }, library)
+    expect(document.specification.insulation.mainsVoltageV.value).toBe(230)
+    expect(boundary(document, 'PRI–SEC').workingVoltageVRms!).toBeGreaterThan(280)
+  })
+
+  it('for patients follows the rows of its means of protection, which the boundary names', () => {
+    const document = copyOf('margin')
+    document.requirement = null
+    document.specification.insulation.productStandard.value = 'IEC 60601-1'
+    const asked = Object.assign(boundary(document, 'PRI–SEC'), { workingVoltageVRms: 240, recurringPeakV: 350, frequencyHz: 50 })
+    const required = () => evaluate(document, library).boundaries.find(({ name }) => name === 'PRI–SEC')!.required
+    expect(required().creepageMm).toMatchObject({ value: null, reason: 'means-of-protection-not-stated' })
+    // IEC 60601-1:2005+A1+A2, two means up to 250 V rms: patients 8 mm, 5 mm, 4 kV; operators 5 mm, 4 mm, 3 kV.
+    asked.meansOfProtection = 'MOPP'
+    expect([required().creepageMm.value, required().clearanceMm.value, required().testVoltageVRms.value]).toEqual([8, 5, 4000])
+    asked.meansOfProtection = 'MOOP'
+    expect([required().creepageMm.value, required().clearanceMm.value, required().testVoltageVRms.value]).toEqual([5, 4, 3000])
+  })
+
+  it('says of every value of a standard that it was not read in the standard', () => {
+    const values = evaluate(copyOf('margin'), library).boundaries.flatMap(({ required }) => Object.values(required)).filter(({ value, source }) => value !== null && source.includes('IEC'))
+    expect(values.length).toBeGreaterThan(10)
+    expect(values.filter(({ fromMemory, basis }) => !fromMemory || basis === undefined)).toEqual([])
+  })
+
   it('is dimensioned for the duty’s mains whatever the drawing states', () => {
     const whole = evaluate(copyOf('margin'), library).boundaries[0]!.required
     for (const stated of [null, 12]) {
@@ -175,6 +209,10 @@ const MAGNETICS: Break[] = [
   { name: 'a current limit below full load', base: 'buoy', code: 'E35', change: (d) => { duty(d).currentLimit!.nominalA = 3 } },
   { name: 'a topology that contradicts the duty', base: 'insulated', code: 'D07', change: ({ specification }) => { specification.electrical.topology.value = 'forward' } },
   { name: 'a former of another core', base: 'insulated', code: 'D14', change: ({ specification }) => { specification.former.former.value = { kind: 'former', id: library.formers.find(({ coreId, version }) => coreId !== specification.core.core.value!.id && version === 1)!.id, version: 1 } } },
+  { name: 'a bulk capacitor that runs empty', base: 'insulated', code: 'D14', change: (d) => { Object.assign(duty(d).supply, { bulkCapacitanceF: 1e-6 }) } },
+  { name: 'a sequence that names no winding', base: 'insulated', code: 'D14', change: (d) => { windingStep(d, winding(d, 'AUX').id).windingId = 'w99' } },
+  { name: 'two primary windings', base: 'insulated', code: 'D14', change: (d) => { winding(d, 'AUX').role = 'primary' } },
+  { name: 'a duty that has no solution', base: 'insulated', code: 'D14', change: (d) => { duty(d).switchDropV = 500 } },
   { name: 'an output without a winding', base: 'buoy', code: 'D14', change: (d) => { winding(d, 'S3').outputId = null } },
   { name: 'the second half of a winding on another terminal', base: 'insulated', code: 'P22', change: (d) => { windingStep(d, 'w1', 1).startTerminal = '6' } },
   { name: 'two windings in parallel', base: 'insulated', code: 'P22', change: (d) => wire(d, 'AUX', winding(d, 'P').startTerminal, winding(d, 'P').finishTerminal) },

@@ -39,6 +39,7 @@ export const insulationSection: SectionSpec = {
           { header: 'Creepage', field: () => figure('creepageMm', 'Creepage', 'mm', { optional: true, min: 0 }), figure: true },
         ],
         more: () => [
+          choice('meansOfProtection', 'means of protection', [{ value: 'MOOP', label: 'operator (MOOP)' }, { value: 'MOPP', label: 'patient (MOPP)' }], { optional: true, help: 'IEC 60601-1 only.' }),
           figure('workingVoltageVRms', 'working voltage, rms', 'V', { optional: true, min: 0 }),
           figure('recurringPeakV', 'recurring peak', 'V', { optional: true, min: 0 }),
           figure('frequencyHz', 'frequency', 'kHz', { optional: true, min: 0 }),
