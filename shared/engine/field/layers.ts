@@ -16,7 +16,8 @@ export interface CurrentLayer {
   leftMm: number
   rightMm: number
   axialMm: readonly number[]
-  conductor: 'wire' | 'foil'
+  /** Of round wires; null for a foil. */
+  wire: { conductorMm: number; pitchMm: number } | null
 }
 
 /** Side of the square of a round wire's area. Source: P. Dowell, Proc. IEE 113 (1966) 1387. */
@@ -30,13 +31,14 @@ interface Gathered {
   yMm: number
   heightMm: number
   wireMm: number
+  conductorMm: number
   strandsPerTurn: number
   foilMm: number | null
 }
 
 /**
  * The layers of the laid coil from the winding tube outward. A layer of round wires (litz: of bundles) counts as a band of the
- * height of the equal square, which has the energy of the real wires within a few per cent; every foil is a layer of its own.
+ * height of the equal square, see `wireEnergyShare` for what single wires have beyond; every foil is a layer of its own.
  */
 export function currentLayers({ layout, windings }: Pick<LaidCoil, 'layout' | 'windings'>): CurrentLayer[] {
   const parallel = new Map(windings.map(({ id, wire }) => [id, Math.max(1, Math.floor(wire.parallel))]))
@@ -49,16 +51,16 @@ function gather(gathered: Map<string, Gathered>, item: Extract<Layout['items'][n
   const shared = { windingId: item.windingId, stepId: item.stepId }
   if (item.kind === 'foil') {
     const middle = item.xMm + item.widthMm / 2
-    gathered.set(`${item.stepId} foil ${item.turn} ${item.yMm}`, { ...shared, layer: item.turn, middlesMm: [middle], yMm: item.yMm + item.thicknessMm / 2, heightMm: item.thicknessMm, wireMm: item.widthMm, strandsPerTurn: 1, foilMm: item.widthMm })
+    gathered.set(`${item.stepId} foil ${item.turn} ${item.yMm}`, { ...shared, layer: item.turn, middlesMm: [middle], yMm: item.yMm + item.thicknessMm / 2, heightMm: item.thicknessMm, wireMm: item.widthMm, conductorMm: item.thicknessMm, strandsPerTurn: 1, foilMm: item.widthMm })
     return
   }
   const key = `${item.stepId} ${item.windingId} ${item.layer}`
   const held = gathered.get(key)
   if (held) held.middlesMm.push(item.xMm)
-  else gathered.set(key, { ...shared, layer: item.layer, middlesMm: [item.xMm], yMm: item.yMm, heightMm: item.conductorMm * SQUARE_OF_ROUND, wireMm: item.overallMm, strandsPerTurn, foilMm: null })
+  else gathered.set(key, { ...shared, layer: item.layer, middlesMm: [item.xMm], yMm: item.yMm, heightMm: item.conductorMm * SQUARE_OF_ROUND, wireMm: item.overallMm, conductorMm: item.conductorMm, strandsPerTurn, foilMm: null })
 }
 
-function layerOf({ windingId, stepId, layer, middlesMm, yMm, heightMm, wireMm, strandsPerTurn, foilMm }: Gathered): CurrentLayer {
+function layerOf({ windingId, stepId, layer, middlesMm, yMm, heightMm, wireMm, conductorMm, strandsPerTurn, foilMm }: Gathered): CurrentLayer {
   const first = middlesMm.reduce((least, mm) => Math.min(least, mm), Infinity)
   const last = middlesMm.reduce((most, mm) => Math.max(most, mm), -Infinity)
   const pitchMm = middlesMm.length > 1 ? (last - first) / (middlesMm.length - 1) : wireMm
@@ -66,6 +68,6 @@ function layerOf({ windingId, stepId, layer, middlesMm, yMm, heightMm, wireMm, s
   return {
     windingId, stepId, layer, turns: middlesMm.length / strandsPerTurn,
     fromMm: yMm - heightMm / 2, toMm: yMm + heightMm / 2, leftMm: first - halfMm, rightMm: last + halfMm,
-    axialMm: middlesMm, conductor: foilMm === null ? 'wire' : 'foil',
+    axialMm: middlesMm, wire: foilMm === null ? { conductorMm, pitchMm: 2 * halfMm } : null,
   }
 }

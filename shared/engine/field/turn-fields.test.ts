@@ -40,8 +40,8 @@ describe('turnFields', () => {
       const input: TurnFieldInput = { window: { ...plane, depth }, gap: gapMmf(plane, { position: gapped ? 'centre-leg' : 'distributed', lengthMm: 0.8, grinding: 'both-halves', joint: 'middle' }), windingIds: ['w'], turns }
       const enclosed = places.reduce((sum, { share }) => sum + share, 0)
       expect(Math.abs(circulation(input, { left: 5, right: 13.5, low: 1, high: 6 }) / enclosed - 1)).toBeLessThan(0.01)
-    }), { numRuns: 30 })
-  })
+    }), { numRuns: 15 })
+  }, 20_000)
 
   it('gives N·I/b between two layers that fill the breadth and half of it in each', () => {
     const row = (radial: number, winding: number) => Array.from({ length: 40 }, (_, n) => wire((n + 0.5) / 2, radial, winding === 0 ? 1 : -1))
@@ -77,7 +77,7 @@ describe('turnFields', () => {
       { group: 0, share: -1, radialFromMm: 2.95, radialToMm: 3.95, axialFromMm: 1.05, axialToMm: 10.95 },
     ]
     expect(Math.abs(summed / windowEnergyH({ window, groups: 1, rectangles })[0]! - 1)).toBeLessThan(0.01)
-  })
+  }, 20_000)
 
   it('takes the ampere-turns back through a gap spread over the leg: full field inside the layer, none outside', () => {
     const turns = [...Array.from({ length: 40 }, (_, n) => wire((n + 0.5) / 2, 3)), probe(10.25, 1.5), probe(10.25, 5)]
