@@ -2,7 +2,9 @@ import type { Context } from '#server/context'
 import { asActor } from '#server/db/as-actor'
 import { overrideCheck, returnDraft, submitDraft, withdrawRevision } from '#server/services/specifications/check-draft'
 import { listComments, settleComment, writeComment } from '#server/services/specifications/comments'
-import { listReleases, listSpecifications, readSpecification } from '#server/services/specifications/list-specifications'
+import { listSpecifications } from '#server/services/specifications/list-page'
+import { listReleases, readSpecification } from '#server/services/specifications/list-specifications'
+import { downloadCalculation } from '#server/services/specifications/read-calculation'
 import { readOutline } from '#server/services/specifications/read-outline'
 import { readSpecificationUse } from '#server/services/specifications/read-use'
 import { readRevision } from '#server/services/specifications/read-revision'
@@ -39,6 +41,7 @@ export function specificationRoutes(ctx: Context): Router {
   handle(router, contract.settleComment, ({ actor, params, body }) => asActor(ctx, actor, (tx) => settleComment(tx, actor, params, body.settled)))
   handle(router, contract.draftPdf, ({ actor, params }) => downloadSheets(ctx, actor, params))
   handle(router, contract.outlineDxf, ({ actor, params }) => asActor(ctx, actor, (tx) => readOutline(tx, actor, params)))
+  handle(router, contract.calculationPdf, ({ actor, params }) => downloadCalculation(ctx, actor, params))
   handle(router, contract.releasedDocument, ({ actor, params }) => downloadReleasedDocument(ctx, actor, params))
   handle(router, contract.releasedResults, ({ actor, params }) => asActor(ctx, actor, (tx) => readReleasedResults(tx, actor, params)))
   handle(router, contract.listReleases, ({ actor }) => asActor(ctx, actor, (tx) => listReleases(tx, actor)))

@@ -11,7 +11,7 @@ const COMMANDS: Record<string, (args: string[]) => Promise<number | void>> = {
   dev: () => dev(readSettings()),
   test: () => test(testSettings()),
   'test-office': testOffice,
-  bench,
+  bench: () => bench(testSettings()),
   backup: (args) => backup(readSettings(), args),
   restore: (args) => restore(readSettings(), args),
   'verify-audit': () => verifyAudit(readSettings()),

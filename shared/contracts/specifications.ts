@@ -50,8 +50,18 @@ export const specificationSummarySchema = z.object({
   topology: z.string().nullable(),
   owner: personNameSchema,
   updatedAt: momentSchema,
+  figures: keyFiguresSchema,
   current: revisionSummarySchema,
 })
+
+export const specificationPageSchema = z.object({
+  /** How many fit the search and the filters in all. */
+  total: z.int(),
+  rows: z.array(specificationSummarySchema),
+})
+
+const SORT_COLUMNS = ['partNumber', 'title', 'topology', 'revision', 'state', 'owner', 'core', 'inductance', 'updatedAt'] as const
+export const SPECIFICATION_SORTS = SORT_COLUMNS.flatMap((column) => [column, `-${column}`] as const)
 
 export const specificationSchema = z.object({
   id: idSchema,
@@ -115,6 +125,7 @@ export type SpecificationUse = z.infer<typeof specificationUseSchema>
 export type RevisionSummary = z.infer<typeof revisionSummarySchema>
 export type ReleaseSummary = z.infer<typeof releaseSummarySchema>
 export type Specification = z.infer<typeof specificationSchema>
+export type SpecificationPage = z.infer<typeof specificationPageSchema>
 export type SpecificationSummary = z.infer<typeof specificationSummarySchema>
 export type Revision = z.infer<typeof revisionSchema>
 
@@ -126,10 +137,19 @@ const atVersion = { version: z.int().nonnegative() }
 export const listSpecifications = defineEndpoint({
   method: 'GET',
   path: '/api/specifications',
-  summary: 'The winding specifications of the company, newest change first',
+  summary: 'A page of the winding specifications of the company, searched by number, title and the words of the document',
   access: readers,
-  query: z.strictObject({ search: z.string().max(TEXT_LIMITS.line).default(''), state: revisionStateSchema.optional() }),
-  response: z.array(specificationSummarySchema),
+  query: z.strictObject({
+    search: z.string().max(TEXT_LIMITS.line).default(''),
+    state: revisionStateSchema.optional(),
+    topology: z.string().max(40).optional(),
+    owner: z.enum(['mine']).optional(),
+    /** Column, with a minus for falling order. */
+    sort: z.enum(SPECIFICATION_SORTS).default('-updatedAt'),
+    offset: z.coerce.number().int().min(0).max(1_000_000).default(0),
+    limit: z.coerce.number().int().min(1).max(200).default(50),
+  }),
+  response: specificationPageSchema,
 })
 
 export const createSpecification = defineEndpoint({
@@ -288,6 +308,15 @@ export const outlineDxf = defineEndpoint({
   access: readers,
   params: revisionParams,
   download: ['image/vnd.dxf'],
+})
+
+export const calculationPdf = defineEndpoint({
+  method: 'GET',
+  path: '/api/specifications/:specificationId/revisions/:revisionId/calculation.pdf',
+  summary: 'The whole calculation of a revision with its working; for the company itself, since it holds the requirement sheet',
+  access: readers,
+  params: revisionParams,
+  download: ['application/pdf'],
 })
 
 export const releasedDocument = defineEndpoint({

@@ -44,6 +44,8 @@ export interface CornerResult {
   fluxSwingT: number | null
   /** Greatest magnitude of the flux density on the effective area. */
   fluxPeakT: number | null
+  /** One period of the flux density on the effective area: [time s, T]. Left out without a core, and in evaluations that were sealed before it was kept. */
+  fluxWaveform?: readonly (readonly [number, number])[]
   inputPowerW: number
   /** Clamp spike included; null without a switch. */
   switchPeakV: number | null

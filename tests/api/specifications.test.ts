@@ -106,7 +106,7 @@ describe('storing a draft', () => {
     const { body } = await save(draft, changed(draft.document, ({ specification }) => (specification.title.title.value = 'Renamed part')), draft.version, colleague).expect(200)
     expect(body.editors.map(({ id }: { id: string }) => id)).toEqual([world.engineer.personId, colleague.personId])
     const { body: list } = await request(test.app, contract.listSpecifications, { as: world.buyer.cookie, query: { search: 'renamed' } }).expect(200)
-    expect(list).toHaveLength(1)
+    expect(list).toMatchObject({ total: 1, rows: [{ title: 'Renamed part' }] })
   })
 
   it('is refused while in check and after release', async () => {
@@ -276,13 +276,35 @@ describe('the list', () => {
     const draft = (await request(test.app, contract.createDraft, { as: world.engineer.cookie, params: { specificationId } }).expect(200)).body
     await request(test.app, contract.withdrawRevision, { as: world.engineer.cookie, params: revisionParams(draft), body: { reason: 'Not needed after all.' } }).expect(200)
     const { body } = await request(test.app, contract.listSpecifications, { as: world.engineer.cookie, query: { search: 'Still in force' } }).expect(200)
-    expect(body.map(({ current }: { current: { id: string; state: string } }) => [current.id, current.state])).toEqual([[id, 'released']])
+    expect(body.rows.map(({ current }: { current: { id: string; state: string } }) => [current.id, current.state])).toEqual([[id, 'released']])
   })
 
   it('takes per cent and underscore as typed, not as patterns', async () => {
     await buildDraft(test, world.engineer)
     const { body } = await request(test.app, contract.listSpecifications, { as: world.engineer.cookie, query: { search: '%' } }).expect(200)
-    expect(body).toEqual([])
+    expect(body).toEqual({ total: 0, rows: [] })
+  })
+
+  it('finds a part by the words of its document, by their beginnings, and not by the circuit behind it', async () => {
+    const draft = await buildDraft(test, world.engineer)
+    const words = changed(draft.document, ({ specification }) => (specification.impregnation.resin = { value: 'Polyurethane resin, solventless', status: 'mandatory', origin: { kind: 'entered' } }))
+    await save(draft, words).expect(200)
+    const find = async (search: string) => (await request(test.app, contract.listSpecifications, { as: world.engineer.cookie, query: { search } }).expect(200)).body
+    expect(await find('solventl polyur')).toMatchObject({ total: 1, rows: [{ id: draft.specificationId, figures: { windings: 2, core: expect.any(String), inductanceH: expect.any(Number) } }] })
+    expect((await find('rippleRatio')).total).toBe(0)
+    for (const odd of ["'", "a' | 'b", ':*', '&', '\\', '((']) expect((await find(odd)).total).toBeGreaterThanOrEqual(0)
+  })
+
+  it('pages and sorts on the server, each row once', async () => {
+    const page = async (offset: number, sort: string) => (await request(test.app, contract.listSpecifications, { as: world.engineer.cookie, query: { offset, limit: 3, sort } }).expect(200)).body
+    const first = await page(0, 'partNumber')
+    const numbers: string[] = []
+    for (let offset = 0; offset < first.total; offset += 3) numbers.push(...(await page(offset, 'partNumber')).rows.map(({ partNumber }: { partNumber: string }) => partNumber))
+    expect(numbers).toHaveLength(first.total)
+    expect(new Set(numbers).size).toBe(first.total)
+    expect((await page(0, '-partNumber')).rows[0].partNumber).toBe(numbers.at(-1))
+    for (const sort of contract.SPECIFICATION_SORTS) expect((await page(0, sort)).total).toBe(first.total)
+    await request(test.app, contract.listSpecifications, { as: world.engineer.cookie, query: { sort: 'password' } }).expect(400)
   })
 })
 

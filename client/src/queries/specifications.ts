@@ -1,5 +1,5 @@
 import { defineQueryOptions, useMutation, useQueryCache } from '@pinia/colada'
-import type { BodyOf } from '#shared/contracts/endpoint'
+import type { BodyOf, QueryOf } from '#shared/contracts/endpoint'
 import * as contract from '#shared/contracts/specifications'
 import type { Revision } from '#shared/contracts/specifications'
 import type { Sheet } from '#shared/drawing/model'
@@ -14,7 +14,7 @@ export interface RevisionKey {
 
 const KEYS = {
   root: ['specifications'] as const,
-  list: (search: string, state: string | undefined) => ['specifications', 'list', search, state ?? ''] as const,
+  list: (filter: string) => ['specifications', 'list', filter] as const,
   one: (specificationId: string) => ['specifications', 'one', specificationId] as const,
   revision: ({ specificationId, revisionId }: RevisionKey) => ['specifications', 'revision', specificationId, revisionId] as const,
   comments: ({ revisionId }: RevisionKey) => ['specifications', 'comments', revisionId] as const,
@@ -25,16 +25,13 @@ const KEYS = {
   results: ({ revisionId }: RevisionKey) => ['released-results', revisionId] as const,
 }
 
-export interface SpecificationFilter {
-  search: string
-  state?: contract.RevisionSummary['state']
-}
+export type SpecificationFilter = Partial<QueryOf<typeof contract.listSpecifications>>
 
 export const specificationListQuery = defineQueryOptions((filter: SpecificationFilter) => ({
-  key: KEYS.list(filter.search, filter.state),
+  key: KEYS.list(JSON.stringify(filter)),
   query: () => call(contract.listSpecifications, { query: filter }),
   // The rows found before stay on the sheet while the next search runs.
-  placeholderData: (previous: contract.SpecificationSummary[] | undefined) => previous,
+  placeholderData: (previous: contract.SpecificationPage | undefined) => previous,
 }))
 
 /** Released revisions, to copy from or to enquire about. */
@@ -138,3 +135,6 @@ export function useCommentActions(key: RevisionKey) {
     settle: useMutation({ mutation: ({ commentId, settled }: { commentId: string; settled: boolean }) => call(contract.settleComment, { params: { ...key, commentId }, body: { settled } }), onSuccess }),
   }
 }
+
+/** The whole calculation with its working, as PDF. */
+export const useCalculationDownload = () => useMutation({ mutation: (params: RevisionKey) => download(contract.calculationPdf, { params }) })

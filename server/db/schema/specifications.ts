@@ -54,7 +54,7 @@ export const specificationRevisions = pgTable(
     topology: text('topology'),
     /** What a list shows of the document. */
     figures: jsonb('figures').$type<KeyFigures>().notNull().default({}),
-    /** What a search finds it by: words of the document, without the circuit behind it. */
+    /** What a search finds it by: each word of the document once, small letters, a blank before each; not the circuit behind it. */
     searchText: text('search_text').notNull().default(''),
     /** Canonical JSON of the evaluation at release. */
     evaluation: bytea('evaluation'),
@@ -78,7 +78,6 @@ export const specificationRevisions = pgTable(
     index('specification_revisions_based_on_id_idx').on(t.basedOnId),
     index('specification_revisions_created_by_idx').on(t.createdBy),
     index('specification_revisions_checked_by_idx').on(t.checkedBy),
-    index('specification_revisions_search_idx').using('gin', sql`to_tsvector('simple', ${t.searchText})`),
     index('specification_revisions_company_updated_idx').on(t.companyId, t.updatedAt),
     check('specification_revisions_state_known', sql`${t.state} in ('draft', 'in-check', 'released', 'superseded', 'withdrawn')`),
     check('specification_revisions_released_by_checker', sql`${t.state} not in ('released', 'superseded') or ${t.checkedBy} is not null`),

@@ -18,16 +18,19 @@ export function keyFigures({ specification }: SpecificationDocument): KeyFigures
   }
 }
 
-/** The words of a document, for searching; the requirement sheet is not among them. */
+/** What a person types, as words: small letters and figures, without marks. */
+export const searchWords = (text: string): string[] => text.normalize('NFKC').toLowerCase().match(/[\p{L}\p{N}.]+/gu) ?? []
+
+/** The words of a document, each once with a blank before it, for searching by their beginnings; the requirement sheet is not among them. */
 export function searchText({ specification }: SpecificationDocument): string {
-  const words: string[] = []
+  const words = new Set<string>()
   const visit = (value: unknown, key: string): void => {
-    if (typeof value === 'string') words.push(value)
+    if (typeof value === 'string') searchWords(value).forEach((word) => words.add(word))
     else if (Array.isArray(value)) value.forEach((entry: unknown) => visit(entry, key))
     else if (typeof value === 'object' && value !== null) for (const [name, inner] of Object.entries(value)) if (!SILENT.has(name) || isReference(value)) visit(inner, name)
   }
   visit(specification, '')
-  return words.join(' ').slice(0, MOST_CHARACTERS)
+  return [...words].map((word) => ` ${word}`).join('').slice(0, MOST_CHARACTERS)
 }
 
 /** The id of a library row is what people know a core or wire by. */

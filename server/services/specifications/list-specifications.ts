@@ -2,11 +2,9 @@ import type { Actor, Transaction } from '#server/db/as-actor'
 import { specificationReleases, specificationRevisions, specifications } from '#server/db/schema/index'
 import { notFound } from '#server/errors'
 import { readableSpecifications } from '#server/policies/specifications'
-import type { Specification, SpecificationSummary } from '#shared/contracts/specifications'
-import { and, desc, eq, ilike, inArray, or, sql } from 'drizzle-orm'
-import { namesOf, personOf, RELEASE_COLUMNS, releaseSummary, summaryOf, type ReleaseRow, type RevisionRow } from './read-revision'
-
-const MAXIMUM_ROWS = 500
+import type { Specification } from '#shared/contracts/specifications'
+import { and, desc, eq, inArray, sql } from 'drizzle-orm'
+import { namesOf, personOf, RELEASE_COLUMNS, releaseSummary, summaryOf, type ReleaseRow } from './read-revision'
 
 /** What a list needs of a revision; the documents stay where they are. */
 const REVISION_COLUMNS = {
@@ -30,40 +28,6 @@ const REVISION_COLUMNS = {
   createdAt: specificationRevisions.createdAt,
   document: sql<Buffer>`''::bytea`,
   evaluation: sql<Buffer | null>`null::bytea`,
-}
-
-interface ListQuery {
-  search: string
-  state?: RevisionRow['state']
-}
-
-export async function listSpecifications(tx: Transaction, actor: Actor, query: ListQuery): Promise<SpecificationSummary[]> {
-  const pattern = `%${query.search.replace(/[\\%_]/g, '\\$&')}%`
-  const rows = await tx
-    .select()
-    .from(specifications)
-    .where(and(readableSpecifications(actor), query.search ? or(ilike(specifications.partNumber, pattern), ilike(specifications.title, pattern)) : undefined))
-    .orderBy(desc(specifications.createdAt))
-    .limit(MAXIMUM_ROWS)
-  if (rows.length === 0) return []
-
-  const { revisions, releases } = await revisionsOf(
-    tx,
-    rows.map((row) => row.id),
-  )
-  const names = await namesOf(tx, [...rows.map((row) => row.ownerId), ...revisions.flatMap((row) => [row.createdBy, row.checkedBy])])
-
-  return rows
-    .flatMap((row) => {
-      const own = revisions.filter((revision) => revision.specificationId === row.id)
-      // A draft that was given up does not hide the release that is in force.
-      const current = own.find(({ state }) => state !== 'withdrawn') ?? own[0]
-      if (!current || (query.state && current.state !== query.state)) return []
-      const { id, partNumber, title } = row
-      const summary = summaryOf(current, releases.get(current.id) ?? null, names)
-      return [{ id, partNumber, title, topology: current.topology, owner: personOf(names, row.ownerId), updatedAt: summary.updatedAt, current: summary }]
-    })
-    .sort((a, b) => b.updatedAt.localeCompare(a.updatedAt))
 }
 
 export async function readSpecification(tx: Transaction, actor: Actor, specificationId: string): Promise<Specification> {

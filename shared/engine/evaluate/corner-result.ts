@@ -59,6 +59,7 @@ export function cornerState(state: CircuitState, { name, inputV, primary, areaMm
       voltSecondsVs: peakToPeak(state.fluxWb) * primary.turns,
       fluxSwingT: fluxDensityT && peakToPeak(fluxDensityT),
       fluxPeakT: fluxDensityT && peak(fluxDensityT),
+      ...(fluxDensityT && { fluxWaveform: fluxDensityT.points }),
       inputPowerW: state.inputPowerW,
       switchPeakV: state.switchPeakV,
       rectifiers: state.outputs.flatMap(({ outputId, rectifierPeakV }) => (rectifierPeakV === null ? [] : [{ outputId, reversePeakV: rectifierPeakV }])),

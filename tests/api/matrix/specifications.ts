@@ -85,6 +85,7 @@ export const specifications: FeatureExpectations = {
     foreign: async (world) => commentCall(world, world.foreign, world.foreignMark),
   },
   draftPdf: about(draft),
+  calculationPdf: about(draft),
   outlineDxf: about(draft),
   releasedDocument: aboutReleased,
   releasedResults: aboutReleased,

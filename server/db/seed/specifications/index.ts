@@ -1,8 +1,9 @@
 import type { Context } from '#server/context'
 import { asActor, type Actor } from '#server/db/as-actor'
+import { specifications } from '#server/db/schema/index'
 import { currentLibrary } from '#server/services/parts/library-for'
 import { overrideCheck, returnDraft, submitDraft } from '#server/services/specifications/check-draft'
-import { listSpecifications, readSpecification } from '#server/services/specifications/list-specifications'
+import { readSpecification } from '#server/services/specifications/list-specifications'
 import { readRevision } from '#server/services/specifications/read-revision'
 import { releaseRevision } from '#server/services/specifications/release-revision'
 import { openChecks } from '#server/services/specifications/seal-release'
@@ -10,6 +11,7 @@ import { createNextDraft, createSpecification, saveDraft, type DraftKey } from '
 import { placeOfCheck, type Revision } from '#shared/contracts/specifications'
 import { evaluate, propose } from '#shared/engine/index'
 import type { RequirementSheet, SpecificationDocument, Stated } from '#shared/engine/specification'
+import { and, eq } from 'drizzle-orm'
 import { demoActor } from '../people'
 import { BUOY_SUPPLY, COUPLED_INDUCTOR, HARBOUR_SUPPLY } from './requirements'
 
@@ -89,7 +91,7 @@ function reasonFor(code: string): string {
 
 function findFirst(ctx: Context, engineer: Actor, partNumber: string): Promise<Revision | null> {
   return asActor(ctx, engineer, async (tx) => {
-    const [found] = await listSpecifications(tx, engineer, { search: partNumber })
+    const [found] = await tx.select({ id: specifications.id }).from(specifications).where(and(eq(specifications.companyId, engineer.companyId), eq(specifications.partNumber, partNumber)))
     if (!found) return null
     const { revisions } = await readSpecification(tx, engineer, found.id)
     return readRevision(tx, engineer, found.id, revisions.at(-1)!.id)
