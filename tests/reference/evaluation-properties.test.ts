@@ -6,9 +6,10 @@ import { requirementSheetSchema, specificationDocumentSchema } from '#shared/con
 import { evaluate, propose, refresh } from '#shared/engine/index'
 import type { Evaluation } from '#shared/engine/evaluation'
 import type { RequirementSheet, SpecificationDocument } from '#shared/engine/specification'
+import { TRANSFORMER_SHEETS } from './topology-sheets'
 
 const library = shippedLibrary()
-const samples = [BUOY_SUPPLY, HARBOUR_SUPPLY, COUPLED_INDUCTOR].map((sheet) => propose(sheet, library).document)
+const samples = [BUOY_SUPPLY, HARBOUR_SUPPLY, COUPLED_INDUCTOR, ...TRANSFORMER_SHEETS].map((sheet) => propose(sheet, library).document)
 
 type Json = null | boolean | number | string | Json[] | { [key: string]: Json }
 
@@ -91,7 +92,7 @@ describe('evaluate on whatever a document may hold', () => {
   }, 120_000)
 
   it('proposes for every admitted requirement sheet, or says why not', () => {
-    const sheets = [BUOY_SUPPLY, HARBOUR_SUPPLY, COUPLED_INDUCTOR]
+    const sheets = [BUOY_SUPPLY, HARBOUR_SUPPLY, COUPLED_INDUCTOR, ...TRANSFORMER_SHEETS]
     fc.assert(
       fc.property(edits, ({ sample, steps }) => {
         let sheet = sheets[sample] as unknown as Json

@@ -80,7 +80,9 @@ const EMPTY_LAYOUT: Layout = { windowWidthMm: 0, windowHeightMm: 0, items: [], b
 function reportPrimary(context: Context): void {
   const primaries = context.specification.windings.filter(({ role }) => role === 'primary')
   if (!context.primary) report(context, 'no-primary-winding', 'error', 'windings')
-  if (primaries.length > 1) report(context, 'several-primary-windings', 'warning', 'windings', { windings: primaries.map(({ name }) => name).join(', ') })
+  // A push-pull converter's primary has two halves.
+  const halves = context.requirement?.duty.topology === 'push-pull' ? 2 : 1
+  if (primaries.length > halves) report(context, 'several-primary-windings', 'warning', 'windings', { windings: primaries.map(({ name }) => name).join(', ') })
 }
 
 function layOut(context: Context): Coil | null {

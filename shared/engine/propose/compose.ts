@@ -145,10 +145,22 @@ function roundInductance(inductanceH: number): number {
   return Math.abs(short / inductanceH - 1) <= TWO_DIGITS_SHARE ? short : toDigits(inductanceH, 3)
 }
 
+/** Spread of a core's A_L without gap, and what winding and reading add below it. Source: IEC 62358 practice, ±25 %. */
+const UNGAPPED_SPREAD = 0.25
+const UNGAPPED_TOLERANCE = -0.3
+
+/** Without a gap the inductance has a lower limit only, and nothing controls it but core and turns. */
+function fillUngapped({ core, electrical }: WindingSpecification, design: Design, primary: Design['windings'][number]): void {
+  const nominalH = roundInductance(design.inductanceH)
+  core.gap = { ...core.gap, control: proposed('none'), alH: proposed(toDigits(nominalH / primary.turns ** 2, 3), 'reference'), alTolerance: proposed(UNGAPPED_SPREAD, 'reference'), position: proposed('none') }
+  electrical.inductance = proposed({ windingId: primary.id, nominalH, lowerTolerance: UNGAPPED_TOLERANCE, upperTolerance: null, frequencyHz: nominalH >= 1e-3 ? 10e3 : 100e3, levelV: 0.25, temperatureC: 25, model: 'series' })
+}
+
 /** The inductance to two or three digits; A_L to three, which controls; the gap is for reference. */
 function fillInductance(document: SpecificationDocument, { design, library, preferences }: ComposeInput): void {
   const { core, electrical } = document.specification
   const primary = design.windings.find(({ role }) => role === 'primary')!
+  if (design.ungapped) return fillUngapped(document.specification, design, primary)
   const nominalH = roundInductance(design.inductanceH)
   const alH = toDigits(nominalH / primary.turns ** 2, 3)
   const gapped = gappedCore(createContext(document, library, false))

@@ -4,6 +4,7 @@ import { proposeTests } from '../limits'
 import type { DcResistanceLimit, InsulationBoundary, LeakageLimit, SaturationLimit, SpecificationDocument, TurnsRatio, Winding, WindingSpecification, WithstandTest } from '../specification'
 import { isInsulatedWire, windingsAt } from '../evaluate/insulation-paths'
 import { atFullLoad } from '../evaluate/worst-flux'
+import { topologyOf } from '../topologies'
 import { isProposed, isStatable, PROPOSED, proposed, toStepUp } from './stated'
 
 /**
@@ -13,7 +14,7 @@ import { isProposed, isStatable, PROPOSED, proposed, toStepUp } from './stated'
 export function derive(document: SpecificationDocument, evaluation: Evaluation): SpecificationDocument {
   const specification: WindingSpecification = { ...document.specification }
   specification.windings = specification.windings.map((winding, index) => derivedWinding(winding, evaluation.windings[index], specification, evaluation))
-  specification.electrical = derivedElectrical(specification, evaluation)
+  specification.electrical = derivedElectrical(document.requirement, specification, evaluation)
   specification.core = derivedCore(specification, evaluation)
   specification.former = { ...specification.former, massG: isOpen(specification.former.massG) && isStatable(evaluation.mass.totalG) ? proposed(toDigits(evaluation.mass.totalG, 2), 'reference') : specification.former.massG }
   specification.insulation = { ...specification.insulation, boundaries: specification.insulation.boundaries.map((boundary, index) => derivedBoundary(boundary, evaluation.boundaries[index], specification)) }
@@ -50,14 +51,29 @@ function resistanceLimit(resistanceOhm: number): DcResistanceLimit {
 
 // ---------------------------------------------------------------------------------------------
 
-function derivedElectrical(specification: WindingSpecification, evaluation: Evaluation): WindingSpecification['electrical'] {
+/** Parts whose flux follows the volt-seconds have those limited, not their inductance under bias. */
+const transforms = (requirement: SpecificationDocument['requirement']): requirement is NonNullable<typeof requirement> => requirement !== null && topologyOf(requirement.duty).core !== 'stores-energy'
+
+/** Worst volt-seconds applied over what is rated. Source: common practice, 20 %. */
+const VOLT_SECOND_MARGIN = 1.2
+
+function voltSecondProduct({ duty }: NonNullable<SpecificationDocument['requirement']>, specification: WindingSpecification, { magnetics }: Evaluation): WindingSpecification['electrical']['voltSecondProduct'] {
+  const { worstCurrentA, inductanceMinimumH } = magnetics
+  const primary = primaryOf(specification)
+  const worstVs = worstCurrentA !== null && inductanceMinimumH !== null ? worstCurrentA * inductanceMinimumH : null
+  if (!primary || !isStatable(worstVs)) return specification.electrical.voltSecondProduct
+  return proposed({ windingId: primary.id, minimumVs: toDigits(VOLT_SECOND_MARGIN * worstVs, 2, 'up'), waveform: topologyOf(duty).core === 'unipolar' ? 'unipolar-pulse' : 'bipolar-pulse', temperatureC: 100 })
+}
+
+function derivedElectrical(requirement: SpecificationDocument['requirement'], specification: WindingSpecification, evaluation: Evaluation): WindingSpecification['electrical'] {
   const { electrical } = specification
   const ratios = evaluation.corners.filter(atFullLoad).map(({ dutyRatio }) => dutyRatio)
   return {
     ...electrical,
     dutyRatio: isOpen(electrical.dutyRatio) && ratios.length > 0 ? proposed({ minimum: toDigits(Math.min(...ratios), 2), maximum: toDigits(Math.max(...ratios), 2) }, 'reference') : electrical.dutyRatio,
     leakage: rowsOr(electrical.leakage, () => leakageLimits(specification, evaluation)),
-    saturation: rowsOr(electrical.saturation, () => saturationLimits(specification, evaluation)),
+    saturation: rowsOr(electrical.saturation, () => (transforms(requirement) ? [] : saturationLimits(specification, evaluation))),
+    voltSecondProduct: transforms(requirement) && isOpen(electrical.voltSecondProduct) ? voltSecondProduct(requirement, specification, evaluation) : electrical.voltSecondProduct,
     turnsRatios: rowsOr(electrical.turnsRatios, () => turnsRatios(specification)),
   }
 }

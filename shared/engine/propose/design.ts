@@ -27,6 +27,8 @@ export interface Design {
   material: MaterialRow
   windings: PlannedWinding[]
   inductanceH: number
+  /** The core has no gap: the inductance follows from its permeability and has a lower limit only. */
+  ungapped: boolean
   method: InsulationMethod
   /** Primary and secondaries are kept apart to protect people. */
   protective: boolean

@@ -1,6 +1,8 @@
 import type { Duty, DutyOf, RequirementSheet, Side } from '../specification'
 import { planCoupled } from './plan-coupled'
 import { planFlyback } from './plan-flyback'
+import { planForced } from './plan-forced'
+import { planLlc } from './plan-llc'
 import type { Finding } from '../findings'
 import type { ProposalReason } from './reasons'
 
@@ -8,7 +10,7 @@ import type { ProposalReason } from './reasons'
 export interface WindingNeed {
   id: string
   name: string
-  role: 'primary' | 'secondary' | 'auxiliary'
+  role: 'primary' | 'secondary' | 'auxiliary' | 'reset'
   side: Side
   outputId: string | null
   /** The winding of the equal and opposite output, e.g. of −15 V for +15 V. */
@@ -30,14 +32,32 @@ export interface Plan {
   worstCurrentA: (inductanceH: number) => number
   /** Windings for at least so many primary turns. */
   windings: (leastPrimaryTurns: number) => WindingNeed[]
+  /** Set where the flux follows the volt-seconds and not the current of the switch. */
+  transformer?: TransformerNeed
   findings: Finding[]
   reasons: ProposalReason[]
+}
+
+export interface TransformerNeed {
+  /** Of the worst pulse from zero flux, at the primary. */
+  worstVs: number
+  /** Of the steady swing, and the swing that it begins with, peak to peak. */
+  steadyVs: number
+  steadySwingT: number
+  /** Without a gap the inductance follows from core and turns. */
+  gapped: boolean
+  waveform: 'unipolar-pulse' | 'bipolar-pulse' | 'sine'
 }
 
 /** How the part of each topology is planned; one that is not here is entered by a person. */
 const PLANS: { readonly [T in Duty['topology']]?: (duty: DutyOf<T>) => Plan } = {
   'flyback': planFlyback,
   'coupled-inductor': planCoupled,
+  'forward': planForced,
+  'half-bridge': planForced,
+  'full-bridge': planForced,
+  'push-pull': planForced,
+  'llc': planLlc,
 }
 
 /** Null where no plan is made for the topology. @throws RangeError when the duty cannot be solved */

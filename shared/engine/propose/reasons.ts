@@ -2,6 +2,8 @@
 export type ReasonCode =
   | 'ratio-from-duty'
   | 'ratio-from-reflected-voltage'
+  | 'ratio-from-gain'
+  | 'inductance-from-gain'
   | 'inductance-from-ripple'
   | 'inductance-for-boundary'
   | 'inductance-for-idle-share'

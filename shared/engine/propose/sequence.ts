@@ -45,8 +45,8 @@ export function planSequence(input: SequenceInput): SequenceStep[] {
 
 function groups({ windings, interleaved }: Design): Group[] {
   const primary = windings.find(({ role }) => role === 'primary')!
-  const own = windings.filter(({ side, role }) => side === 'primary' && role !== 'primary')
-  const others = besidePartners(windings.filter(({ side, role }) => side !== 'primary' && role !== 'primary').sort((a, b) => b.powerW - a.powerW))
+  const own = windings.filter(({ side, id }) => side === 'primary' && id !== primary.id)
+  const others = besidePartners(windings.filter(({ side, id }) => side !== 'primary' && id !== primary.id).sort((a, b) => b.powerW - a.powerW))
   const whole = (planned: PlannedWinding) => ({ planned, part: 'whole' as const })
   const secondary: Group[] = others.length > 0 ? [{ side: 'other', windings: others.map(whole) }] : []
   // The primary side's other windings lie beside the strongest secondary, whose voltage they follow.

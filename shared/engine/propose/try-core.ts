@@ -2,6 +2,9 @@ import { overallDiameterMm } from '../evaluate/lookup'
 import type { LibraryIndex } from '../evaluate/lookup'
 import type { CoreRow, FormerRow } from '../library'
 import { saturationFluxDensityT, turnsForFlux } from '../magnetics/flux'
+import { inductanceFactorOfPathH } from '../magnetics/inductance'
+import type { RequirementSheet } from '../specification'
+import { topologyOf } from '../topologies'
 import { buildCandidate, buildRatioOf } from './candidate'
 import type { Candidate, SearchInput } from './candidate'
 import type { Design, PlannedWinding } from './design'
@@ -15,6 +18,8 @@ import type { WireNeed } from './wire'
 
 /** More turns than flux asks for lower the core loss; these shares are tried in turn. */
 const TURN_SHARES = [1, 1.15, 1.35, 1.6]
+/** A transformer's turns are mostly decided by its core loss. */
+const TRANSFORMER_SHARES = [1, 1.25, 1.6, 2, 2.6]
 
 /** Temperature for the first flux limit and the first skin depth, °C. */
 const FIRST_TEMPERATURE_C = 100
@@ -89,7 +94,7 @@ interface CoreInput {
 
 function overTurns(input: SearchInput, { leastTurns, ...on }: CoreInput & { leastTurns: number }): Tried {
   let last: Tried = hopeless('window')
-  for (const share of input.turnShares ?? TURN_SHARES) {
+  for (const share of input.turnShares ?? (input.plan.transformer ? TRANSFORMER_SHARES : TURN_SHARES)) {
     const tried = tryDesign(input, { ...on, needs: input.plan.windings(leastTurns * share) })
     // More turns help against a hot core and nothing else.
     const hot = tried.state === 'built' && (tried.candidate.rejection === 'temperature' || tried.candidate.rejection === 'flux')
@@ -106,7 +111,9 @@ export function turnsByFlux({ plan, material, requirement, preferences }: Search
   const inductanceH = plan.inductanceH * (1 + preferences.inductanceTolerance)
   // The rounding of the inductance to three digits may raise it by half a percent.
   const fluxDensityT = saturation.value * Math.min(0.8, requirement.fluxUtilisation) * 0.99
-  return turnsForFlux({ inductanceH, currentA: plan.worstCurrentA(inductanceH), fluxDensityT, areaMm2: core.minimumAreaMm2 })
+  const worst = turnsForFlux({ inductanceH, currentA: plan.worstCurrentA(inductanceH), fluxDensityT, areaMm2: core.minimumAreaMm2 })
+  if (!plan.transformer) return worst
+  return Math.max(worst, plan.transformer.steadyVs / (plan.transformer.steadySwingT * core.minimumAreaMm2 * 1e-6))
 }
 
 function tryDesign(input: SearchInput, { core, former, needs, wishes }: CoreInput & { needs: WindingNeed[] }): Tried {
@@ -114,10 +121,11 @@ function tryDesign(input: SearchInput, { core, former, needs, wishes }: CoreInpu
   const method = requirement.insulationMethod
   const blank: Omit<Design, 'windings'> = {
     core, former, material, method,
-    inductanceH: plan.inductanceH,
+    inductanceH: plan.transformer?.gapped === false ? ungappedH({ core, material, turns: needs[0]!.turns }) : plan.inductanceH,
+    ungapped: plan.transformer?.gapped === false,
     protective: method !== 'functional',
     onMains: plan.onMains,
-    interleaved: method !== 'margin-tape' && requirement.duty.topology === 'flyback' && plan.powerW >= preferences.interleaveFromW && needs[0]!.turns >= 8,
+    interleaved: method !== 'margin-tape' && isInterleavable(requirement.duty, needs) && plan.powerW >= preferences.interleaveFromW && needs[0]!.turns >= 8,
     marginMm: method === 'margin-tape' ? (plan.onMains ? 3 : 1.5) : 0,
   }
   const windings = needs.map((need) => plannedWinding(input, { need, wishes, design: blank }))
@@ -127,6 +135,13 @@ function tryDesign(input: SearchInput, { core, former, needs, wishes }: CoreInpu
   if (buildRatioOf(input, design) > preferences.buildLimit) return hopeless('build', { design, show: () => buildCandidate(input, design) })
   return { state: 'built', candidate: buildCandidate(input, design) }
 }
+
+/** A primary of one winding that others face may lie on both sides of them. */
+const isInterleavable = (duty: RequirementSheet['duty'], needs: readonly WindingNeed[]): boolean => topologyOf(duty).traits(duty).outputs.length > 0 && needs.filter(({ role }) => role === 'primary').length === 1
+
+/** Inductance of a core without gap. Source: IEC 60205. */
+const ungappedH = ({ core, material, turns }: { core: CoreRow; material: SearchInput['material']; turns: number }): number =>
+  inductanceFactorOfPathH({ areaMm2: core.effectiveAreaMm2, lengthMm: core.effectiveLengthMm, permeability: material.initialPermeability }) * turns ** 2
 
 interface WindingInput {
   need: WindingNeed

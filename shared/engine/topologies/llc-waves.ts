@@ -27,20 +27,20 @@ const clampedV = ({ tank, outputV }: LlcState, mode: LlcMode, { capacitorV }: Ll
 /** The whole period, two instants at each change of mode, fine enough for straight pieces between them. */
 export function llcInstants(state: LlcState): LlcInstant[] {
   const { tank, segments, outputV, frequencyHz } = state
-  const periodS = 1 / frequencyHz
+  const halfS = 1 / (2 * frequencyHz)
   const tankS = Math.sqrt(tank.resonantInductanceH * tank.resonantCapacitanceF)
   const half = segments.flatMap(({ mode, startS, durationS, from }): LlcInstant[] => {
     const pieces = Math.max(1, Math.ceil(durationS / (tankS * CHORD_RAD)))
     return Array.from({ length: pieces + 1 }, (_, index) => {
-      const tS = (durationS * index) / pieces
+      const tS = index === pieces ? durationS : (durationS * index) / pieces
       const point = llcAfter(tank, outputV, { mode, from }, tS)
-      return { ...point, mode, tS: startS + tS, magnetisingV: clampedV(state, mode, point), half: 1 }
+      return { ...point, mode, tS: Math.min(startS + tS, halfS), magnetisingV: clampedV(state, mode, point), half: 1 }
     })
   })
   const last = half[half.length - 1]!
-  last.tS = periodS / 2
+  last.tS = halfS
   const mirrored = half.map((one): LlcInstant => ({
-    tS: one.tS + periodS / 2,
+    tS: one.tS + halfS,
     mode: one.mode === 'O' ? 'O' : one.mode === 'P' ? 'N' : 'P',
     resonantA: -one.resonantA,
     capacitorV: -one.capacitorV,

@@ -100,6 +100,8 @@ const rejectionWord = (reason: unknown) => REJECTION_WORDS[reason as Rejection] 
 export const REASON_TEXTS: Readonly<Record<ReasonCode, (values: ProposalReason['values']) => string>> = {
   'ratio-from-duty': (v) => `The ratio follows from the largest duty ratio${v.ratio === undefined ? '' : `: ${formatNumber(Number(v.ratio), { significant: 3 })}`}.`,
   'ratio-from-reflected-voltage': (v) => `The ratio follows from the reflected voltage${v.ratio === undefined ? '' : `: ${formatNumber(Number(v.ratio), { significant: 3 })}`}.`,
+  'ratio-from-gain': (v) => `The ratio gives the output voltage at nominal input without gain of the tank${v.ratio === undefined ? '' : `: ${formatNumber(Number(v.ratio), { significant: 3 })}`}.`,
+  'inductance-from-gain': (v) => `The magnetising inductance is the greatest with which full load at the least input is reached and the switches close at zero voltage${v.inductanceH === undefined ? '' : `: ${amount(v, 'inductanceH', 'H')}`}.`,
   'inductance-from-ripple': (v) => `The inductance follows from the ripple${v.inductanceH === undefined ? '' : `: ${amount(v, 'inductanceH', 'H')}`}.`,
   'inductance-for-boundary': (v) => `The inductance puts full load at minimum input on the boundary of continuous conduction${v.inductanceH === undefined ? '' : `: ${amount(v, 'inductanceH', 'H')}`}.`,
   'inductance-for-idle-share': (v) => `The inductance leaves the asked share of the period without current${v.inductanceH === undefined ? '' : `: ${amount(v, 'inductanceH', 'H')}`}.`,
