@@ -15,7 +15,7 @@ function figures(value: unknown, path: string): string[] {
   return []
 }
 
-const shownCorners = ({ corners }: Evaluation) => corners.flatMap(({ windings, outputs, rectifiers, figures: _own, name: _name, mode: _mode, ...corner }, index) => [
+const shownCorners = ({ corners }: Evaluation) => corners.flatMap(({ windings: _windings, outputs, rectifiers, figures: _own, name: _name, mode: _mode, ...corner }, index) => [
   ...Object.entries(corner).flatMap(([key, value]) => figures(value, `corners.${index}.${key}`)),
   ...outputs.flatMap(({ outputId: _id, mode: _outputMode, ...output }, position) => Object.keys(output).map((key) => `corners.${index}.outputs.${position}.${key}`)),
   ...rectifiers.map((_, position) => `corners.${index}.rectifiers.${position}.reversePeakV`),
