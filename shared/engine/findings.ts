@@ -27,6 +27,7 @@ export type CompositionFindingCode =
   | 'step-not-for-a-ring'
   | 'too-many-turns-to-draw'
   | 'leakage-wound-together'
+  | 'field-not-calculable'
   // the library
   | 'core-not-in-library'
   | 'former-not-in-library'

@@ -16,6 +16,7 @@ export function leakages(context: Context, coil: Coil | null): LeakageResult[] {
   const others = specification.windings.filter(({ id, role }) => id !== primary.id && role !== 'shield')
   const secondaries = others.filter(({ role }) => role === 'secondary')
   const groups = [...others.map((winding) => [winding]), ...(secondaries.length > 1 ? [secondaries] : [])]
+  if (others.length > 0 && coil.layout.items.length > 0 && coilLeakage(context, coil) === null) report(context, 'field-not-calculable', 'note', 'core.core')
   const pairs = distinctPairs([...groups.map((shorted) => ({ driven: primary, shorted })), ...limitedPairs(context)])
   return pairs.map((pair, index) => leakage(context, coil, { ...pair, index }))
 }

@@ -50,8 +50,9 @@ const PER_MM_TO_PER_M = 1000
  * The field of every winding and of the air gap at the place of every turn.
  *
  * Far wires and walls by a smoothed double series, near wires and their images one by one; both together are exact for
- * line currents to 10⁻³. The air gap takes up the net ampere-turns of each winding. Neighbours in eddy reaction are not
- * in the field. Foils count as sheets of even current.
+ * line currents to 10⁻³ (round legs: 10⁻²). The air gap takes up the net ampere-turns of each winding, evenly over its mouth.
+ * Neighbours in eddy reaction are not in the field. Foils count as sheets of even current. The window is taken to go all round
+ * the leg; where a core leaves part of each turn outside it, that part sees a weaker field at the outer side.
  *
  * Sources: see `smoothFields` and `addNearFields`.
  *

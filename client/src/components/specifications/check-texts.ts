@@ -35,6 +35,7 @@ export const FINDING_TEXTS: Readonly<Record<FindingCode, (values: Values) => str
   'ring-hole-full': (v) => `The hole of the ring is full: ${named(v, 'overTurns')} of ${named(v, 'turns')} turns do not fit.`,
   'step-not-for-a-ring': () => 'Margins, shields and foil are not laid on a ring core.',
   'too-many-turns-to-draw': () => 'There are too many turns to draw each of them.',
+  'field-not-calculable': () => 'The field of the winding window is not calculated, and no leakage is told: the window is no rectangle between core legs, or the coil overfills it by far.',
   'leakage-wound-together': (v) => `${named(v, 'winding', 'A winding')} and ${named(v, 'shorted', 'another')} are wound together, turn beside turn: their leakage lies outside the model; state a measured value.`,
   'core-not-in-library': (v) => `The core ${named(v, 'id')} is not in the library.`,
   'former-not-in-library': (v) => `The coil former ${named(v, 'id')} is not in the library.`,
