@@ -314,6 +314,7 @@ const sequenceStep = z.discriminatedUnion('kind', [
     leadExitFinish: z.enum(['left', 'right']),
     startSleeve: leadSleeve.nullable(),
     finishSleeve: leadSleeve.nullable(),
+    withPrevious: z.boolean().optional(),
   }),
   z.strictObject({
     ...stepBase,

@@ -195,6 +195,8 @@ export interface Layout {
   windowWidthMm: number
   windowHeightMm: number
   items: LayoutItem[]
+  /** What crosses or stands beside the turns: leads on their way out, ends of shields, walls between sections. Absent in older evaluations. */
+  outlines?: LayoutOutline[]
   /** Build in use, bulge of the outer layers included. */
   buildMm: number
   buildRatio: number
@@ -202,6 +204,17 @@ export interface Layout {
   copperFill: number
   /** Sum of squares of overall diameters over window area. */
   windowFill: number
+}
+
+/** A rectangle of the cross-section that is no turn, tape or margin. */
+export interface LayoutOutline {
+  kind: 'lead-crossing' | 'lead-sleeve' | 'shield-overlap' | 'section-wall'
+  /** Null for walls of the former. */
+  stepId: string | null
+  xMm: number
+  yMm: number
+  widthMm: number
+  heightMm: number
 }
 
 /** Seen along the axis of a ring core, origin in its middle, in mm; angles counter-clockwise from the right. */

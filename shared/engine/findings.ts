@@ -23,6 +23,8 @@ export type CompositionFindingCode =
   | 'section-not-on-former'
   | 'turn-wider-than-layer'
   | 'layers-too-few'
+  | 'cannot-be-wound-together'
+  | 'lead-crossing-too-high'
   | 'ring-hole-full'
   | 'step-not-for-a-ring'
   | 'too-many-turns-to-draw'

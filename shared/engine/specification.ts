@@ -558,6 +558,8 @@ export interface WindingStep extends StepBase {
   leadExitFinish: 'left' | 'right'
   startSleeve: LeadSleeve | null
   finishSleeve: LeadSleeve | null
+  /** Wound together with the winding step before it, turn beside turn (bifilar, n-filar). Absent: by itself. */
+  withPrevious?: boolean
 }
 
 export interface LeadSleeve {

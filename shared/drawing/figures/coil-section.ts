@@ -1,4 +1,4 @@
-import type { Layout, LayoutItem } from '../../engine/evaluation'
+import type { Layout, LayoutItem, LayoutOutline } from '../../engine/evaluation'
 import type { CoreRow, FormerRow, Library } from '../../engine/library'
 import type { WindingSpecification } from '../../engine/specification'
 import type { BoxMm, Picture, PointMm, Shape } from '../model'
@@ -71,7 +71,7 @@ export function coilSection(input: CoilSectionInput): CoilPicture {
   const pen: Pen = { input, around, extent, scale, place: ([x, y]) => [(x - extent.leftMm) * scale, (y - extent.bottomMm) * scale] }
   const marks = input.balloons ? sectionBalloons(pen) : overlayBalloons(pen)
   const bodyMm = Math.max(size.height * scale, ...marks.map(({ at }) => at[1] + 4))
-  const section = [...surroundingShapes(pen), ...layout.items.flatMap((item) => itemShapes(pen, item)), ...overlayShapes(pen), ...marks.flatMap(({ shapes }) => shapes)]
+  const section = [...surroundingShapes(pen), ...layout.items.flatMap((item) => itemShapes(pen, item)), ...outlinesIn(input).flatMap((outline) => outlineShapes(pen, outline)), ...overlayShapes(pen), ...marks.flatMap(({ shapes }) => shapes)]
   const low = Math.min(0, ...marks.map(({ at }) => at[1] - 4))
   return {
     widthMm: size.width * scale + 2 * frame.side,
@@ -181,6 +181,18 @@ const axis = (pen: Pen): Shape[] => {
   const [left] = pen.place([pen.extent.leftMm, 0])
   const [right, y] = pen.place([pen.extent.rightMm, 0])
   return [line([left - 3, y], [right + 3, y], 'centre')]
+}
+
+/** Beside insulation paths the leads would be taken for more of them. */
+const outlinesIn = ({ layout, overlay }: CoilSectionInput): LayoutOutline[] => (layout.outlines ?? []).filter(({ kind }) => !overlay || kind === 'section-wall')
+
+/** Walls of the former as its flanges; what crosses the coil elsewhere round the turn as hidden lines. */
+function outlineShapes(pen: Pen, { kind, stepId, xMm, yMm, widthMm, heightMm }: LayoutOutline): Shape[] {
+  const { scale, around } = pen
+  const [x, y] = pen.place([xMm, yMm + around.tubeMm])
+  const part = box(x, y, widthMm * scale, heightMm * scale)
+  if (kind === 'section-wall') return [rectangle(part, { layer: 'thin', fill: 'paper', tag: 'former' }), ...hatchRectangle(part, 1.6, -1)]
+  return [rectangle(part, { layer: kind === 'lead-sleeve' ? 'fine' : 'hidden', fill: 'none', ...(stepId === null ? {} : { tag: `step:${stepId}` }) })]
 }
 
 function itemShapes(pen: Pen, item: LayoutItem): Shape[] {

@@ -104,6 +104,25 @@ describe('layOutCoil', () => {
     ])
   })
 
+  it('lays steps that are wound together turn beside turn in the same layers', () => {
+    const coil = layOut([winding('a'), winding('b')], [turnsOf('a', 30), turnsOf('b', 30, { withPrevious: true }), tapeStep(1)], 0.5)
+    // 20 mm hold 19 turns of two wires side by side.
+    expect(coil.windings.get('a')!.turnsPerLayer).toEqual([19, 11])
+    expect(coil.windings.get('b')!.turnsPerLayer).toEqual([19, 11])
+    expect(coil.placements.map(({ togetherWith }) => togetherWith)).toEqual([['s-b'], ['s-a']])
+    const first = coil.layout.items.flatMap((item) => (item.kind === 'turn' && item.layer === 1 ? [item] : [])).sort((one, other) => one.xMm - other.xMm)
+    expect(first.slice(0, 4).map(({ windingId }) => windingId)).toEqual(['a', 'b', 'a', 'b'])
+    expect(first.slice(1).every((item, index) => Math.abs(item.xMm - first[index]!.xMm - 0.5) < 1e-9)).toBe(true)
+    expect(coil.layout.buildMm).toBeCloseTo((2 * 0.5 + 0.06) * BULGE_ROUND_TUBE, 9)
+    expect(coil.findings).toEqual([])
+  })
+
+  it('lays one after the other what cannot be wound together, and says so', () => {
+    const coil = layOut([winding('a'), winding('b')], [turnsOf('a', 10), turnsOf('b', 12, { withPrevious: true })], 0.5)
+    expect(coil.findings).toMatchObject([{ code: 'cannot-be-wound-together', path: 'sequence.1', values: { turns: 12, otherTurns: 10 } }])
+    expect(coil.placements[1]!.bottomMm).toBeCloseTo(0.5, 9)
+  })
+
   it('says by how much the coil is too high and which step is too wide', () => {
     const coil = layOut([winding('p'), winding('s', 30)], [turnsOf('p', 200), turnsOf('s', 2)], 0.8, { windingHeightMm: 5, tube: { shape: 'rectangular', widthMm: 9, depthMm: 9, cornerRadiusMm: 0.5 } })
     const over = coil.findings.find(({ code }) => code === 'window-overfilled')!
@@ -114,13 +133,15 @@ describe('layOutCoil', () => {
   })
 
   const lay = fc.constantFrom('close-wound' as const, 'spread' as const, 'centred' as const, 'close-wound-left' as const, 'close-wound-right' as const)
-  const step = fc.record({ turns: fc.integer({ min: 1, max: 90 }), parallel: fc.integer({ min: 1, max: 3 }), lay, layers: fc.option(fc.integer({ min: 1, max: 6 })), marginMm: fc.double({ min: 0, max: 4, noNaN: true }), tapes: fc.integer({ min: 0, max: 3 }) })
+  const step = fc.record({ turns: fc.integer({ min: 1, max: 90 }), parallel: fc.integer({ min: 1, max: 3 }), lay, layers: fc.option(fc.integer({ min: 1, max: 6 })), marginMm: fc.double({ min: 0, max: 4, noNaN: true }), tapes: fc.integer({ min: 0, max: 3 }), together: fc.boolean() })
 
   it('lays every turn once, none over another, all inside the window less the margins', () => {
     fc.assert(
-      fc.property(fc.array(step, { minLength: 1, maxLength: 4 }), fc.double({ min: 0.1, max: 1.5, noNaN: true }), (steps, overallMm) => {
+      fc.property(fc.array(step, { minLength: 1, maxLength: 4 }), fc.double({ min: 0.1, max: 1.5, noNaN: true }), (drawn, overallMm) => {
+        // What is wound together has the same turns and lies directly behind the step before.
+        const steps = drawn.map((one, index) => ({ ...one, ...(one.together && index > 0 ? { turns: drawn[index - 1]!.turns, marginMm: drawn[index - 1]!.marginMm, together: !drawn[index - 1]!.together } : { together: false }), tapes: drawn[index + 1]?.together ? 0 : one.tapes }))
         const windings = steps.map(({ parallel }, index) => winding(`w${index}`, parallel))
-        const sequence = steps.flatMap(({ turns, lay, layers, marginMm, tapes }, index) => [turnsOf(`w${index}`, turns, { lay, layers, marginLeftMm: marginMm, marginRightMm: marginMm }), ...(tapes > 0 ? [tapeStep(tapes)] : [])])
+        const sequence = steps.flatMap(({ turns, lay, layers, marginMm, tapes, together }, index) => [turnsOf(`w${index}`, turns, { lay, layers, marginLeftMm: marginMm, marginRightMm: marginMm, withPrevious: together }), ...(tapes > 0 ? [tapeStep(tapes)] : [])])
         const coil = layOut(windings, sequence, overallMm)
         const turns = coil.layout.items.filter((item) => item.kind === 'turn')
         steps.forEach(({ turns: count, parallel }, index) => {

@@ -1,11 +1,11 @@
 import type { FormerRow } from '../library'
-import type { CoreTapeStep, MarginStep, ShieldStep, SleeveStep, TapeStep, VarnishStep, WindingStep } from '../specification'
+import type { CoreTapeStep, MarginStep, SequenceStep, ShieldStep, SleeveStep, TapeStep, VarnishStep } from '../specification'
 import { finding } from './progress'
 import type { Progress, Section } from './progress'
 import { summary } from './summary'
 import { turnLengthMm } from './tube'
 import type { Coil, CoilInput } from './types'
-import { layWinding } from './wind'
+import { layWindings } from './wind'
 
 /**
  * The winding sequence laid into the coil former to scale, from the tube outward: the place of every
@@ -28,7 +28,7 @@ export function layOutCoil(input: CoilInput): Coil {
     copperAreaMm2: 0,
     squaresAreaMm2: 0,
   }
-  input.sequence.forEach((step, index) => layStep(progress, step, index))
+  for (let index = 0; index < input.sequence.length; ) index += layStep(progress, input.sequence, index)
   for (const section of progress.sections) closeMargin(progress, section)
   return summary(progress)
 }
@@ -43,12 +43,23 @@ function sectionsOf({ sections, windingWidthMm, flangeThicknessMm }: FormerRow):
   }))
 }
 
+/** Lays one step, or the winding steps that are wound together; says how many it took. */
+function layStep(progress: Progress, sequence: readonly SequenceStep[], index: number): number {
+  const step = sequence[index]!
+  if (step.kind !== 'winding') {
+    layFlat(progress, step, index)
+    return 1
+  }
+  const together = [step]
+  for (let next = sequence[index + 1]; next?.kind === 'winding' && next.withPrevious; next = sequence[index + together.length]) together.push(next)
+  layWindings(progress, together, index)
+  return together.length
+}
+
 type FlatStep = TapeStep | MarginStep | ShieldStep | SleeveStep | CoreTapeStep | VarnishStep
 
-function layStep(progress: Progress, step: WindingStep | FlatStep, index: number): void {
+function layFlat(progress: Progress, step: FlatStep, index: number): void {
   switch (step.kind) {
-    case 'winding':
-      return layWinding(progress, step, index)
     case 'tape':
       return layTape(progress, step, index)
     case 'shield':

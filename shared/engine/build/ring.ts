@@ -249,6 +249,7 @@ function place(progress: RingProgress, { step, index, winding, wire }: RingLay, 
     mostTurnsPerLayer: Math.floor(ringLayerCapacity({ radiusMm: layers[0]!.radiusMm, overallMm: wire.overallMm, angleRad }) / parallel),
     bundleWidthMm: wire.overallMm * parallel,
     availableMm: angleRad * holeRadiusMm,
+    togetherWith: [],
     layerHeightMm: wire.overallMm,
     layers: laid,
   })

@@ -1,3 +1,4 @@
+import { outlines, reportCrossings } from './outlines'
 import { finding } from './progress'
 import type { Progress } from './progress'
 import { bulgeFactor } from './tube'
@@ -14,6 +15,7 @@ export function summary(progress: Progress): Coil {
   if (buildMm > former.windingHeightMm) {
     progress.findings.push(finding('window-overfilled', 'error', 'sequence', { buildMm, windowHeightMm: former.windingHeightMm, overMm: buildMm - former.windingHeightMm, fillRatio: buildMm / former.windingHeightMm }))
   }
+  reportCrossings(progress, plainBuildMm)
   return {
     sectionLeftsMm: sections.map(({ xMm }) => xMm),
     layout: {
@@ -21,6 +23,7 @@ export function summary(progress: Progress): Coil {
       windowWidthMm: sections.length * former.windingWidthMm + (sections.length - 1) * former.flangeThicknessMm,
       windowHeightMm: former.windingHeightMm,
       items: progress.items,
+      outlines: outlines(progress),
       buildMm,
       buildRatio: former.windingHeightMm > 0 ? buildMm / former.windingHeightMm : 0,
       copperFill: areaMm2 > 0 ? progress.copperAreaMm2 / areaMm2 : 0,

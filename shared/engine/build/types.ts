@@ -1,5 +1,5 @@
 import type { Finding } from '../findings'
-import type { FormerRow, TapeRow } from '../library'
+import type { FormerRow, SleeveRow, TapeRow } from '../library'
 import type { Layout } from '../evaluation'
 import type { LibraryReference, SequenceStep, Winding } from '../specification'
 
@@ -22,6 +22,8 @@ export interface CoilInput {
   /** Null when the library holds no such wire or no overall diameter for its insulation. */
   wireOf: (winding: Winding) => BuildWire | null
   tapeOf: (reference: LibraryReference) => TapeRow | null
+  /** Left out: leads cross in their own insulation. */
+  sleeveOf?: (reference: LibraryReference) => SleeveRow | null
 }
 
 /** One layer of a winding step: wire side by side, or one turn of foil. */
@@ -64,6 +66,8 @@ export interface StepPlacement {
   mostTurnsPerLayer: number
   bundleWidthMm: number
   availableMm: number
+  /** Steps that are wound together with this one, turn beside turn. */
+  togetherWith: string[]
   /** Height of one layer of wire without its interlayer tape. */
   layerHeightMm: number
   /** Layer by layer, from the tube outward. */

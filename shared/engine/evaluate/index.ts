@@ -1,5 +1,5 @@
-import { layOutCoil, layOutRing } from '../build'
-import type { Coil } from '../build'
+import { layOutCoil, layOutRing, nearestFit } from '../build'
+import type { Coil, NearestFit } from '../build'
 import { runChecks } from '../checks'
 import type { Evaluation, Layout, MassResult } from '../evaluation'
 import type { Finding } from '../findings'
@@ -21,7 +21,7 @@ import { inductanceBasis } from './inductance'
 import type { InductanceBasis } from './inductance'
 import { leakages } from './leakage'
 import { reportLibrary } from './library-findings'
-import { buildWire } from './lookup'
+import { buildWire, thinnerWires } from './lookup'
 import { magneticsResult } from './magnetics'
 import { mainsSupply, ratedMainsV } from './mains'
 import { heatBalance } from './thermal'
@@ -92,11 +92,21 @@ function layOut(context: Context): Coil | null {
     sequence: specification.sequence,
     wireOf: (winding: Winding) => buildWire(index, winding),
     tapeOf: (reference: LibraryReference) => index.find('tape', reference),
+    sleeveOf: (reference: LibraryReference) => index.find('sleeve', reference),
   }
   const coil = former ? layOutCoil({ ...shared, former }) : core?.shape === 'toroid' ? layOutRing({ ...shared, core }) : null
   if (!coil) return null
+  const overfilled = former ? coil.findings.findIndex(({ code }) => code === 'window-overfilled') : -1
+  if (former && overfilled >= 0) coil.findings[overfilled] = withNearestFit(context, coil.findings[overfilled]!, nearestFit({ ...shared, former, thinnerWires: (winding) => thinnerWires(index, winding) }, coil))
   context.findings.push(...coil.findings)
   return coil
+}
+
+function withNearestFit({ specification }: Context, overfilled: Finding, fit: NearestFit | null): Finding {
+  if (!fit) return overfilled
+  const winding = specification.windings.find(({ id }) => id === fit.windingId)?.name
+  const { change, index, from, to, buildMm } = fit
+  return { ...overfilled, values: { ...overfilled.values, change, changeStep: index + 1, ...(winding === undefined ? {} : { winding }), from, to, changedBuildMm: buildMm } }
 }
 
 function dutyCorners(context: Context, basis: InductanceBasis | null, coil: Coil | null): CornerState[] {

@@ -1,6 +1,6 @@
 import type { AnyLibraryRow, CoreRow, FormerRow, Library, LibraryKind, MaterialRow, SleeveRow, TapeRow, WireRow } from '../library'
 import type { LibraryReference, Winding, WireUse } from '../specification'
-import type { BuildWire } from '../build'
+import type { BuildWire, ThinnerWire } from '../build'
 
 interface RowOfKind {
   core: CoreRow
@@ -56,4 +56,18 @@ export function buildWire(index: LibraryIndex, winding: Winding): BuildWire | nu
   const overallMm = wire.form === 'foil' ? wire.conductorMm : overallDiameterMm(wire, winding.wire.insulation)
   if (overallMm === null || !(overallMm > 0)) return null
   return { form: wire.form, overallMm, conductorMm: wire.form === 'litz' ? overallMm : wire.conductorMm, copperAreaMm2: wire.copperAreaMm2, widthMm: wire.widthMm }
+}
+
+/** Wires of the same form and standard with less copper, the next size first; litz of the same strand. */
+export function thinnerWires(index: LibraryIndex, winding: Winding): ThinnerWire[] {
+  const present = index.find('wire', winding.wire.wire)
+  if (!present || present.form === 'foil') return []
+  return index.library.wires
+    .filter((row) => row.form === present.form && row.standard === present.standard && row.copperAreaMm2 < present.copperAreaMm2 && (row.form === 'round' || row.conductorMm === present.conductorMm))
+    .sort((a, b) => b.copperAreaMm2 - a.copperAreaMm2)
+    .slice(0, 6)
+    .flatMap((row) => {
+      const wire = buildWire(index, { ...winding, wire: { ...winding.wire, wire: referenceTo(row) } })
+      return wire ? [{ name: row.name, wire }] : []
+    })
 }

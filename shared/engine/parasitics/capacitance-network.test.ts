@@ -2,7 +2,7 @@ import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import { betweenF, capacitanceNetwork, drivenF, joined, perTurnSquaredF } from './capacitance-network'
 import { faces } from './electrodes'
-import type { PlaneElectrode } from './electrodes'
+import type { PlaneElectrode, WireElectrode } from './electrodes'
 import { turnToTurnFPerM } from './turn-to-turn'
 import { EPSILON_0_F_PER_M, wireCellFPerM } from './wire-cell'
 
@@ -41,6 +41,20 @@ describe('capacitanceNetwork of foils', () => {
     // b starts where a finishes, ten turns up: the two foils stand five turns apart.
     const network = joined(networkOf(electrodes), [{ a: { body: 'a', turns: 10 }, b: { body: 'b', turns: 0 } }])
     expect(perTurnSquaredF(network) / PLATE_F).toBeCloseTo(25, 9)
+  })
+})
+
+describe('windings wound together', () => {
+  const wire = (body: string, leftMm: number): WireElectrode => ({
+    kind: 'wire', body, bottomMm: 0, topMm: 0.44, leftMm, rightMm: leftMm + 8, turnsAtLeft: 0, turnsAtRight: 10, turnLengthMm: 50,
+    conductorMm: 0.4, overallMm: 0.44, pitchMm: 0.88, turnPitchMm: 0.88, turns: 10, parallel: 1, permittivity: 3.5,
+  })
+  it('couple turn beside turn, and hold no energy of their own while both rise alike', () => {
+    const electrodes = [wire('a', 0), wire('b', 0.44)]
+    const network = joined(capacitanceNetwork({ electrodes, faces: faces(electrodes, []), fillPermittivity: 1 }), [])
+    const contacts = 19 * 0.05 * turnToTurnFPerM({ conductorMm: 0.4, overallMm: 0.44, insulationPermittivity: 3.5 })
+    expect(betweenF(network, ['a'], ['b'])! / contacts).toBeCloseTo(1, 9)
+    expect(perTurnSquaredF(network) / contacts).toBeLessThan(1e-6)
   })
 })
 

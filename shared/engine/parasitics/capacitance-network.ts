@@ -1,6 +1,6 @@
-import { CORE_BODY } from './electrodes'
+import { besidePairs, CORE_BODY } from './electrodes'
 import type { Body, Electrode, Face } from './electrodes'
-import { facingFPerM2, facingLengthM, withinLayerF } from './layer-capacitance'
+import { besideF, facingFPerM2, facingLengthM, withinLayerF } from './layer-capacitance'
 import type { Alignment } from './layer-capacitance'
 
 /** That two points of the coil are joined: a body `turns` turns from its start. */
@@ -32,9 +32,15 @@ export function capacitanceNetwork(input: { electrodes: readonly Electrode[]; fa
   const e = bodies.length
   const matrix = Array.from({ length: e + 1 }, () => new Array<number>(e + 1).fill(0))
   for (const face of faces) addFace(matrix, face, { i: rows.get(face.lower.body)!, j: rows.get(face.upper.body)!, e }, areaF(face, fill, alignment))
+  const beside = besidePairs(electrodes)
+  for (const [lower, upper] of beside) {
+    const common = { leftMm: Math.max(lower.leftMm, upper.leftMm), rightMm: Math.min(lower.rightMm, upper.rightMm) }
+    addFace(matrix, { lower, upper, ...common }, { i: rows.get(lower.body)!, j: rows.get(upper.body)!, e }, besideF(lower, upper, fill))
+  }
+  const interleaved = new Set(beside.flat())
   const facing = new Set(faces.flatMap(({ lower, upper }) => (lower.body === CORE_BODY || upper.body === CORE_BODY ? [] : [lower, upper])))
   for (const electrode of electrodes) {
-    if (electrode.kind === 'wire') matrix[e]![e]! += withinLayerF(electrode, fill, !facing.has(electrode))
+    if (electrode.kind === 'wire' && !interleaved.has(electrode)) matrix[e]![e]! += withinLayerF(electrode, fill, !facing.has(electrode))
   }
   return { bodies, matrix }
 }
@@ -42,7 +48,7 @@ export function capacitanceNetwork(input: { electrodes: readonly Electrode[]; fa
 const areaF = (face: Face, fill: number, alignment?: Alignment) =>
   facingFPerM2(face, fill, alignment) * (face.rightMm - face.leftMm) * 1e-3 * facingLengthM(face.lower, face.upper)
 
-function addFace(matrix: number[][], face: Face, { i, j, e }: { i: number; j: number; e: number }, capacitanceF: number): void {
+function addFace(matrix: number[][], face: Pick<Face, 'lower' | 'upper' | 'leftMm' | 'rightMm'>, { i, j, e }: { i: number; j: number; e: number }, capacitanceF: number): void {
   const { lower, upper, leftMm, rightMm } = face
   const left = turnsAt(lower, leftMm) - turnsAt(upper, leftMm)
   const right = turnsAt(lower, rightMm) - turnsAt(upper, rightMm)

@@ -78,11 +78,37 @@ export function faces(electrodes: readonly Electrode[], dielectrics: readonly Di
     const within = ({ leftMm: left, rightMm: right }: { leftMm: number; rightMm: number }) => left <= leftMm + HAIR_MM && right >= rightMm - HAIR_MM
     const stack = order.filter(within)
     const solid = dielectrics.filter(within)
-    for (let level = 1; level < stack.length; level++) {
-      append(found, { lower: stack[level - 1]!, upper: stack[level]!, leftMm, rightMm, ...insulationBetween(stack[level - 1]!, stack[level]!, solid) })
+    const levels = levelsOf(stack)
+    for (let level = 1; level < levels.length; level++) {
+      for (const lower of levels[level - 1]!) for (const upper of levels[level]!) append(found, { lower, upper, leftMm, rightMm, ...insulationBetween(lower, upper, solid) })
     }
   }
   return found
+}
+
+/** What lies at the same height stands beside each other: windings wound together. */
+function levelsOf(stack: readonly Electrode[]): Electrode[][] {
+  const levels: Electrode[][] = []
+  for (const electrode of stack) {
+    const level = levels[levels.length - 1]
+    if (level && isBeside(level[0]!, electrode)) level.push(electrode)
+    else levels.push([electrode])
+  }
+  return levels
+}
+
+const isBeside = (one: Electrode, other: Electrode) =>
+  one.kind === 'wire' && other.kind === 'wire' && Math.min(one.topMm, other.topMm) - Math.max(one.bottomMm, other.bottomMm) > 0.5 * Math.min(one.topMm - one.bottomMm, other.topMm - other.bottomMm)
+
+/** Layers of two windings wound together, turn beside turn. */
+export function besidePairs(electrodes: readonly Electrode[]): [WireElectrode, WireElectrode][] {
+  const wires = electrodes.filter((electrode): electrode is WireElectrode => electrode.kind === 'wire')
+  return wires.flatMap((one, index) =>
+    wires.slice(index + 1).flatMap((other): [WireElectrode, WireElectrode][] => {
+      const commonMm = Math.min(one.rightMm, other.rightMm) - Math.max(one.leftMm, other.leftMm)
+      return isBeside(one, other) && commonMm > 0.5 * Math.min(one.rightMm - one.leftMm, other.rightMm - other.leftMm) ? [[one, other]] : []
+    }),
+  )
 }
 
 function insulationBetween(lower: Electrode, upper: Electrode, solid: readonly Dielectric[]): Pick<Face, 'tapeMm' | 'tapePermittivity' | 'airMm'> {

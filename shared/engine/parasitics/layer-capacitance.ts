@@ -98,6 +98,17 @@ export function withinLayerF(layer: WireElectrode, fill: number, alone: boolean)
   return (layer.turns - 1) * pairFPerM * layer.turnLengthMm * 1e-3
 }
 
+/** Two layers wound together: every turn touches one of the other winding on either side but for the ends, F. */
+export function besideF(one: WireElectrode, other: WireElectrode, fill: number): number {
+  const pairFPerM = turnToTurnFPerM({
+    conductorMm: Math.min(one.conductorMm, other.conductorMm),
+    overallMm: Math.min(one.overallMm, other.overallMm),
+    insulationPermittivity: Math.min(one.permittivity, other.permittivity),
+    fillPermittivity: fill,
+  })
+  return Math.max(1, one.turns + other.turns - 1) * pairFPerM * ((one.turnLengthMm + other.turnLengthMm) / 2) * 1e-3
+}
+
 /** Length of turn along which two electrodes face each other, m. */
 export const facingLengthM = (lower: Electrode, upper: Electrode): number => ((lower.turnLengthMm + upper.turnLengthMm) / 2) * 1e-3 * Math.min(coverOf(lower), coverOf(upper))
 

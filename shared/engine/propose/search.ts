@@ -64,7 +64,8 @@ function candidateCores({ library, preferences, requirement }: SearchInput): { c
   return library.formers
     .flatMap((former) => {
       const core = library.cores.find(({ id }) => id === former.coreId)
-      if (!core || (coreId !== null ? core.id !== coreId : !shapes.includes(core.shape) || isHollow(core))) return []
+      // Windings are planned one over the other, which takes one section.
+      if (!core || former.sections > 1 || (coreId !== null ? core.id !== coreId : !shapes.includes(core.shape) || isHollow(core))) return []
       return height !== null && former.envelopeMm.height + 0.5 > height ? [] : [{ core, former }]
     })
     .sort((a, b) => a.core.effectiveVolumeMm3 - b.core.effectiveVolumeMm3 || shapes.indexOf(a.core.shape) - shapes.indexOf(b.core.shape) || (a.former.id < b.former.id ? -1 : 1))

@@ -12,6 +12,24 @@ const amount = (values: Values, key: string, base: string) => formatEngineering(
 const percent = (values: Values, key: string) => formatQuantity(Number(values[key]), shownUnit('%'), { significant: 3 })
 const millimetres = (values: Values, key: string) => formatQuantity(Number(values[key]), shownUnit('mm'), { significant: 3 })
 
+/** The least change with which a coil fits, as the engine found it by trying. */
+function nearestChange(values: Values): string {
+  const step = named(values, 'changeStep')
+  const [from, to, winding] = [named(values, 'from'), named(values, 'to'), named(values, 'winding')]
+  switch (values.change) {
+    case 'wire':
+      return ` It fits with ${to} for ${winding}.`
+    case 'turns':
+      return ` It fits with ${to} instead of ${from} turns in step ${step}.`
+    case 'tape-layers':
+      return ` It fits with ${to} instead of ${from} layers of tape in step ${step}.`
+    case 'parallel':
+      return ` It fits with ${to} instead of ${from} wires of ${winding} in parallel.`
+    default:
+      return ' No single change of wire, turns or tape makes it fit.'
+  }
+}
+
 /** What the engine found about a document or a proposal. */
 export const FINDING_TEXTS: Readonly<Record<FindingCode, (values: Values) => string>> = {
   'bulk-capacitor-too-small': () => 'The bulk capacitor runs empty between two peaks of the mains; take a larger one or allow for a lower minimum.',
@@ -22,7 +40,7 @@ export const FINDING_TEXTS: Readonly<Record<FindingCode, (values: Values) => str
   'temperature-out-of-range': () => 'The temperature lies outside the range of the data.',
   'thermal-runaway': () => 'More heat feeds itself: no temperature is found at which the part settles.',
   'thermal-model-out-of-range': () => 'The part lies outside the range of the thermal model.',
-  'window-overfilled': () => 'The coil does not fit the window.',
+  'window-overfilled': (v) => `The coil is ${millimetres(v, 'overMm')} higher than the window.${nearestChange(v)}`,
   'wire-not-in-library': (v) => `The wire of ${named(v, 'winding', 'this winding')} is not in the library.`,
   'margin-lower-than-winding': () => 'The margin tape is lower than the winding beside it; the outer wires fall over its edge.',
   'tape-not-in-library': () => 'This tape is not in the library.',
@@ -30,10 +48,12 @@ export const FINDING_TEXTS: Readonly<Record<FindingCode, (values: Values) => str
   'foil-wider-than-former': () => 'The foil is wider than the former.',
   'sequence-names-unknown-winding': () => 'This step names a winding that does not exist.',
   'section-not-on-former': () => 'The former has no such section.',
-  'turn-wider-than-layer': () => 'One turn is wider than the layer.',
-  'layers-too-few': () => 'The turns need more layers than are asked for.',
+  'turn-wider-than-layer': (v) => `One turn of ${named(v, 'winding', 'this winding')} and its return are ${millimetres(v, 'overMm')} wider than the layer. ${Number(v.fittingParallel) >= 1 ? `${named(v, 'fittingParallel')} in parallel would fit.` : `Wire of at most ${millimetres(v, 'fittingOverallMm')} would fit.`}`,
+  'layers-too-few': (v) => `${named(v, 'winding', 'The winding')} needs ${named(v, 'neededLayers', 'more')} layers instead of ${named(v, 'layers', 'those asked for')}. It fits with ${named(v, 'fittingTurns', 'fewer')} turns or with wire of at most ${millimetres(v, 'fittingOverallMm')} over its insulation.`,
   'ring-hole-full': (v) => `The hole of the ring is full: ${named(v, 'overTurns')} of ${named(v, 'turns')} turns do not fit.`,
   'step-not-for-a-ring': () => 'Margins, shields and foil are not laid on a ring core.',
+  'cannot-be-wound-together': (v) => `${named(v, 'winding')} cannot be wound together with ${named(v, 'other')}: both need round wire or litz, the same section and the same turns.`,
+  'lead-crossing-too-high': (v) => `Where the sleeved lead of ${named(v, 'winding')} crosses, the coil is ${millimetres(v, 'overMm')} higher than the window.`,
   'too-many-turns-to-draw': () => 'There are too many turns to draw each of them.',
   'field-not-calculable': () => 'The field of the winding window is not calculated, and no leakage is told: the window is no rectangle between core legs, or the coil overfills it by far.',
   'leakage-wound-together': (v) => `${named(v, 'winding', 'A winding')} and ${named(v, 'shorted', 'another')} are wound together, turn beside turn: their leakage lies outside the model; state a measured value.`,

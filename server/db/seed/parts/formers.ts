@@ -25,8 +25,31 @@ export function shippedFormers(cores: readonly CoreRow[]): FormerRow[] {
   const known = knownFormers()
   return cores.filter((core) => SHAPES.includes(core.shape)).flatMap((core) => {
     const former = formerFor(core, known.get(core.id.replace(/-hole$/, '')) ?? null)
-    return former ? [former] : []
+    if (!former) return []
+    return [former, ...(SECTIONED.has(core.id) ? sectioned(former) : [])]
   })
+}
+
+/** Cores for which formers with a wall in the middle are common, for windings side by side. */
+const SECTIONED = new Set(['e20-10-6', 'e25-13-7', 'e30-15-7', 'e42-21-15', 'etd29-16-10', 'etd34-17-11', 'etd39-20-13'])
+
+/** The same former parted into two sections by a wall as thick as its flanges. */
+function sectioned(former: FormerRow): FormerRow[] {
+  const windingWidthMm = rounded((former.windingWidthMm - former.flangeThicknessMm) / 2)
+  return [
+    {
+      ...former,
+      id: `${former.id}-2s`,
+      name: `${former.name}, 2 sections`,
+      windingWidthMm,
+      sections: 2,
+      confidence: 'generic',
+      source: `Geometry: ${former.name} parted by a wall as thick as its flanges`,
+      edition: 'None',
+      unverified: [...new Set([...former.unverified, 'windingWidthMm', 'windingHeightMm', 'sections'])],
+      note: 'Generic, unverified, replace before release.',
+    },
+  ]
 }
 
 function formerFor(core: CoreRow, recalled: Known | null): FormerRow | null {

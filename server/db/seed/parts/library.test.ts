@@ -101,11 +101,18 @@ describe('formers', () => {
     expect(shapes.size).toBeGreaterThanOrEqual(6)
   })
 
+  it('ships formers of two sections for at least five cores of two shapes', () => {
+    const two = library.formers.filter(({ sections }) => sections === 2)
+    expect(two.length).toBeGreaterThanOrEqual(5)
+    expect(new Set(two.map(({ coreId }) => byId(library.cores, coreId).shape)).size).toBeGreaterThanOrEqual(2)
+  })
+
   it('fits every former into its core', () => {
     const tooBig = library.formers.filter((former) => {
       const { d, e, f } = byId(library.cores, former.coreId).dimensionsMm
       const builtMm = former.windingHeightMm + former.tubeWallMm
-      return former.windingWidthMm + 2 * former.flangeThicknessMm > 2 * d! || builtMm > (e! - f!) / 2
+      const widthMm = former.sections * (former.windingWidthMm + former.flangeThicknessMm) + former.flangeThicknessMm
+      return widthMm > 2 * d! || builtMm > (e! - f!) / 2
     })
     expect(tooBig.map((former) => former.name)).toEqual([])
   })
