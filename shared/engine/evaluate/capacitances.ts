@@ -13,7 +13,7 @@ import type { Context } from './context'
 import type { InductanceBasis } from './inductance'
 import { windingsAt } from './insulation-paths'
 
-export const CAPACITANCE_MODEL = 'energy with even voltage along each winding; rows of coated wires against tape by multipoles, mean of wires in line and staggered; core as a conductor, layer ends and flanks of sections left out'
+export const CAPACITANCE_MODEL = 'energy with even voltage along each winding; rows of coated wires against tape by multipoles, mean of wires in line and staggered; core as a conductor, its backs over the layer ends left out'
 
 export interface CapacitanceResults {
   capacitances: CapacitanceResult[]
@@ -46,8 +46,8 @@ export function capacitanceResults(context: Context, coil: Coil | null, basis: I
 }
 
 function networkOf(context: Context, coil: Coil): JoinedNetwork {
-  const { electrodes, dielectrics } = coilElectrodes(context, coil)
-  const network = capacitanceNetwork({ electrodes, faces: faces(electrodes, dielectrics), fillPermittivity: fillPermittivity(context.specification.impregnation).value })
+  const { electrodes, flanks, dielectrics } = coilElectrodes(context, coil)
+  const network = capacitanceNetwork({ electrodes, faces: faces(electrodes, dielectrics), flanks, fillPermittivity: fillPermittivity(context.specification.impregnation).value })
   return joined(network, ties(context))
 }
 

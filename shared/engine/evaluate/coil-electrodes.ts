@@ -1,7 +1,7 @@
 import type { Coil, LayerPlacement, StepPlacement } from '../build'
 import { tubeClearanceMm } from '../build'
 import { CORE_BODY } from '../parasitics/electrodes'
-import type { Dielectric, Electrode } from '../parasitics/electrodes'
+import type { Dielectric, Electrode, Flank, WireElectrode } from '../parasitics/electrodes'
 import { permittivityOf, wirePermittivity } from '../parasitics/permittivity'
 import type { CoreRow } from '../library'
 import type { LibraryReference } from '../specification'
@@ -11,17 +11,35 @@ import { buildWire } from './lookup'
 /** Everything of one coil that the capacitances are made of. */
 export interface CoilElectrodes {
   electrodes: Electrode[]
+  flanks: Flank[]
   dielectrics: Dielectric[]
 }
 
 /**
  * The laid coil as electrodes and insulation, from the centre leg to the outer legs. The core counts as one conductor
- * (manganese-zinc ferrite conducts well enough at these frequencies); its backs over the ends of the layers and the flanks of
- * sections are left out.
+ * (manganese-zinc ferrite conducts well enough at these frequencies); its backs over the ends of the layers are left out.
  */
 export function coilElectrodes(context: Context, coil: Coil): CoilElectrodes {
-  const electrodes = [...coil.placements.flatMap((placement) => layerElectrodes(context, coil, placement)), ...shieldElectrodes(coil)]
-  return { electrodes: [...electrodes, ...coreElectrodes(context, coil)], dielectrics: dielectricsOf(context, coil) }
+  const sections = coil.placements.map((placement) => ({ section: placement.section, layers: layerElectrodes(context, coil, placement) }))
+  const electrodes = [...sections.flatMap(({ layers }) => layers), ...shieldElectrodes(coil)]
+  return { electrodes: [...electrodes, ...coreElectrodes(context, coil)], flanks: flanksOf(context, coil, sections), dielectrics: dielectricsOf(context, coil) }
+}
+
+/** Ends of layers on both sides of a wall between sections. */
+function flanksOf({ former }: Context, coil: Coil, sections: readonly { section: number; layers: readonly Electrode[] }[]): Flank[] {
+  if (!former || coil.sectionLeftsMm.length < 2) return []
+  const wallPermittivity = permittivityOf(former.material).value
+  const wires = (section: number) => sections.filter((one) => one.section === section).flatMap(({ layers }) => layers.filter((layer): layer is WireElectrode => layer.kind === 'wire'))
+  return coil.sectionLeftsMm.slice(1).flatMap((_, index) =>
+    wires(index + 1).flatMap((left) =>
+      wires(index + 2).flatMap((right): Flank[] => {
+        const commonMm = Math.min(left.topMm, right.topMm) - Math.max(left.bottomMm, right.bottomMm)
+        if (!(commonMm > 1e-6)) return []
+        const airMm = Math.max(0, right.leftMm - left.rightMm - former.flangeThicknessMm)
+        return [{ left, right, commonMm, wallMm: former.flangeThicknessMm, wallPermittivity, airMm }]
+      }),
+    ),
+  )
 }
 
 function layerElectrodes(context: Context, coil: Coil, placement: StepPlacement): Electrode[] {

@@ -58,6 +58,21 @@ describe('windings wound together', () => {
   })
 })
 
+describe('windings in two sections', () => {
+  it('see each other through the wall, less the thicker it is', () => {
+    const layer = (body: string, leftMm: number): WireElectrode => ({
+      kind: 'wire', body, bottomMm: 0, topMm: 0.44, leftMm, rightMm: leftMm + 4, turnsAtLeft: 0, turnsAtRight: 9, turnLengthMm: 50,
+      conductorMm: 0.4, overallMm: 0.44, pitchMm: 0.44, turnPitchMm: 0.44, turns: 9, parallel: 1, permittivity: 3.5,
+    })
+    const electrodes = [layer('a', 0), layer('b', 5)]
+    const through = (wallMm: number) => betweenF(joined(capacitanceNetwork({ electrodes, faces: [], flanks: [{ left: electrodes[0]!, right: electrodes[1]!, commonMm: 0.44, wallMm, wallPermittivity: 5, airMm: 0 }], fillPermittivity: 1 }), []), ['a'], ['b'])!
+    // Half a millimetre of plastic between two ends 0.44 mm high over 50 mm: under two picofarad as plates.
+    expect(through(0.5)).toBeLessThan((EPSILON_0_F_PER_M * 5 * 0.44e-3 * 0.05) / 0.5e-3)
+    expect(through(0.5)).toBeGreaterThan(through(1))
+    expect(through(1)).toBeGreaterThan(0.4 * through(0.5))
+  })
+})
+
 const length = fc.double({ min: 0.02, max: 2, noNaN: true })
 
 describe('wireCellFPerM', () => {

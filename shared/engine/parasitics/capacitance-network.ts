@@ -1,6 +1,6 @@
 import { besidePairs, CORE_BODY } from './electrodes'
-import type { Body, Electrode, Face } from './electrodes'
-import { besideF, facingFPerM2, facingLengthM, withinLayerF } from './layer-capacitance'
+import type { Body, Electrode, Face, Flank } from './electrodes'
+import { besideF, facingFPerM2, facingLengthM, flankF, withinLayerF } from './layer-capacitance'
 import type { Alignment } from './layer-capacitance'
 
 /** That two points of the coil are joined: a body `turns` turns from its start. */
@@ -25,13 +25,17 @@ export interface CapacitanceNetwork {
  *
  * Source: energy method with linear voltage distribution, e.g. J. Biela and J. Kolar, IEEE Trans. Ind. Appl. 44 (2008) 1597.
  */
-export function capacitanceNetwork(input: { electrodes: readonly Electrode[]; faces: readonly Face[]; fillPermittivity: number; alignment?: Alignment }): CapacitanceNetwork {
+export function capacitanceNetwork(input: { electrodes: readonly Electrode[]; faces: readonly Face[]; flanks?: readonly Flank[]; fillPermittivity: number; alignment?: Alignment }): CapacitanceNetwork {
   const { electrodes, faces, fillPermittivity: fill, alignment } = input
   const bodies = [...new Set(electrodes.map(({ body }) => body))]
   const rows = new Map(bodies.map((body, index) => [body, index]))
   const e = bodies.length
   const matrix = Array.from({ length: e + 1 }, () => new Array<number>(e + 1).fill(0))
   for (const face of faces) addFace(matrix, face, { i: rows.get(face.lower.body)!, j: rows.get(face.upper.body)!, e }, areaF(face, fill, alignment))
+  for (const flank of input.flanks ?? []) {
+    const { left, right } = flank
+    couple(matrix, { i: rows.get(left.body)!, j: rows.get(right.body)!, e }, { capacitanceF: flankF(flank, fill), left: left.turnsAtRight - right.turnsAtLeft, right: left.turnsAtRight - right.turnsAtLeft })
+  }
   const beside = besidePairs(electrodes)
   for (const [lower, upper] of beside) {
     const common = { leftMm: Math.max(lower.leftMm, upper.leftMm), rightMm: Math.min(lower.rightMm, upper.rightMm) }
@@ -48,10 +52,20 @@ export function capacitanceNetwork(input: { electrodes: readonly Electrode[]; fa
 const areaF = (face: Face, fill: number, alignment?: Alignment) =>
   facingFPerM2(face, fill, alignment) * (face.rightMm - face.leftMm) * 1e-3 * facingLengthM(face.lower, face.upper)
 
-function addFace(matrix: number[][], face: Pick<Face, 'lower' | 'upper' | 'leftMm' | 'rightMm'>, { i, j, e }: { i: number; j: number; e: number }, capacitanceF: number): void {
+interface Place {
+  /** Rows of the two bodies and of the voltage per turn. */
+  i: number
+  j: number
+  e: number
+}
+
+function addFace(matrix: number[][], face: Pick<Face, 'lower' | 'upper' | 'leftMm' | 'rightMm'>, place: Place, capacitanceF: number): void {
   const { lower, upper, leftMm, rightMm } = face
-  const left = turnsAt(lower, leftMm) - turnsAt(upper, leftMm)
-  const right = turnsAt(lower, rightMm) - turnsAt(upper, rightMm)
+  couple(matrix, place, { capacitanceF, left: turnsAt(lower, leftMm) - turnsAt(upper, leftMm), right: turnsAt(lower, rightMm) - turnsAt(upper, rightMm) })
+}
+
+/** A capacitance spread evenly between two bodies, whose turns differ by `left` at one end and by `right` at the other. */
+function couple(matrix: number[][], { i, j, e }: Place, { capacitanceF, left, right }: { capacitanceF: number; left: number; right: number }): void {
   if (i !== j) {
     matrix[i]![i]! += capacitanceF
     matrix[j]![j]! += capacitanceF

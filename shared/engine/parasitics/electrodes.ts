@@ -65,6 +65,19 @@ export interface Face {
   airMm: number
 }
 
+/** Layers of two neighbouring sections that look at each other through the wall between them. */
+export interface Flank {
+  /** Its right end, and the left end of the other. */
+  left: WireElectrode
+  right: WireElectrode
+  /** Height that both share. */
+  commonMm: number
+  wallMm: number
+  wallPermittivity: number
+  /** From the wires to the wall, both sides together. */
+  airMm: number
+}
+
 const HAIR_MM = 1e-6
 
 /** Which electrodes face each other, strip by strip across the width. */

@@ -1,4 +1,4 @@
-import type { Electrode, Face, PlaneElectrode, WireElectrode } from './electrodes'
+import type { Electrode, Face, Flank, PlaneElectrode, WireElectrode } from './electrodes'
 import { turnToTurnFPerM } from './turn-to-turn'
 import { EPSILON_0_F_PER_M, wireCellFPerM } from './wire-cell'
 import type { CellWall } from './wire-cell'
@@ -96,6 +96,18 @@ export function withinLayerF(layer: WireElectrode, fill: number, alone: boolean)
     halfAngleRad: alone ? Math.PI / 2 : Math.PI / 6,
   })
   return (layer.turns - 1) * pairFPerM * layer.turnLengthMm * 1e-3
+}
+
+/**
+ * The ends of two layers through the wall between sections, in F: the end wires of the stacked layers are a row whose pitch is the
+ * height of a layer.
+ *
+ * Source: `facingFPerM2` turned by a quarter.
+ */
+export function flankF({ left, right, commonMm, wallMm, wallPermittivity, airMm }: Flank, fill: number): number {
+  const upright = (layer: WireElectrode): WireElectrode => ({ ...layer, pitchMm: Math.max(layer.overallMm, layer.topMm - layer.bottomMm) })
+  const gap = { tapeMm: wallMm, tapePermittivity: wallPermittivity, airMm }
+  return facingFPerM2({ lower: upright(left), upper: upright(right), ...gap }, fill, 'in-line') * commonMm * 1e-3 * ((left.turnLengthMm + right.turnLengthMm) / 2) * 1e-3
 }
 
 /** Two layers wound together: every turn touches one of the other winding on either side but for the ends, F. */
