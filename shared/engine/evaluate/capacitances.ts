@@ -94,8 +94,11 @@ function boundaries({ specification }: Context, network: JoinedNetwork): Boundar
 /** The same frequency whichever winding it is seen from, since inductance and capacitance go by the square of the turns. */
 function resonance(basis: InductanceBasis | null, perTurnF: number, { id, turns }: Winding): SelfResonanceResult {
   const model = 'inductance and winding capacitance as one parallel circuit, other windings open'
-  if (!basis || !positive(perTurnF)) return { windingId: id, frequencyHz: null, model }
-  return { windingId: id, frequencyHz: selfResonanceHz({ inductanceH: basis.nominalH * (turns / basis.turns) ** 2, capacitanceF: perTurnF / turns ** 2 }), model }
+  const inductanceH = basis ? basis.nominalH * (turns / basis.turns) ** 2 : null
+  const capacitanceF = perTurnF / turns ** 2
+  // Turns at the edge of what a document may hold run over.
+  const known = positive(inductanceH) && positive(capacitanceF)
+  return { windingId: id, frequencyHz: known ? selfResonanceHz({ inductanceH, capacitanceF }) : null, model }
 }
 
 function explainCapacitances(context: Context, results: CapacitanceResults, { perTurnF, basis }: { perTurnF: number; basis: InductanceBasis | null }): void {

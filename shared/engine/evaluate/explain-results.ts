@@ -1,4 +1,5 @@
-import type { Evaluation, Working } from '../evaluation'
+import type { Evaluation, RingLayout, Working } from '../evaluation'
+import type { CoreRow } from '../library'
 import { explain } from './context'
 import type { Context } from './context'
 import { originOf } from './inductance'
@@ -24,6 +25,7 @@ export function explainResults(context: Context, body: Body): void {
   tell('magnetics', body.magnetics, magnetics(context, body))
   body.windings.forEach((winding, index) => tell(`windings.${index}`, winding, windings(context, body, index)))
   tell('layout', body.layout, layout(context, body))
+  if (body.layout.ring) tell('layout.ring', body.layout.ring, ring(context))
   tell('losses', body.losses, losses(context, body))
   tell('thermal', body.thermal, thermal(context, body))
   tell('mass', body.mass, mass(context))
@@ -64,7 +66,8 @@ function windings(context: Context, { windings: results, corners }: Body, index:
   }
 }
 
-function layout({ former }: Context, { layout: own }: Body): Record<string, Told> {
+function layout({ core, former }: Context, { layout: own }: Body): Record<string, Told> {
+  if (own.ring) return unrolledRing(core, own.ring)
   const height = from('h', former?.windingHeightMm, 'mm', 'former')
   const area = from('A_w', former ? former.windingWidthMm * former.windingHeightMm : null, 'mm²', 'former')
   return {
@@ -74,6 +77,35 @@ function layout({ former }: Context, { layout: own }: Body): Record<string, Told
     buildRatio: { symbol: 'h_b/h', unit: '', formula: 'h_b/h', source: GEOMETRY, inputs: [from('h_b', own.buildMm, 'mm', 'layout.buildMm'), height] },
     copperFill: { symbol: 'k_Cu', unit: '', formula: 'Σ N·n·A/A_w', source: GEOMETRY, inputs: [area] },
     windowFill: { symbol: 'k_w', unit: '', formula: 'Σ N·n·d_o²/A_w', source: GEOMETRY, inputs: [area] },
+  }
+}
+
+/** The hole as a window: its circumference, and from the core to the middle. */
+function unrolledRing(core: CoreRow | null, { holeMm }: RingLayout): Record<string, Told> {
+  const inputs = [from('ID', holeMm, 'mm', 'layout.ring.holeMm')]
+  const told = (symbol: string, unit: string, formula: string): Told => ({ symbol, unit, formula, source: core ? `${core.name}: ${core.source}` : GEOMETRY, inputs })
+  return {
+    windowWidthMm: told('b', 'mm', 'π·ID'),
+    windowHeightMm: told('h', 'mm', 'ID/2'),
+    buildMm: told('h_b', 'mm', 'Σ layers·d_o + Σ tapes, in the hole'),
+    buildRatio: told('h_b/h', '', 'h_b/h'),
+    copperFill: told('k_Cu', '', 'Σ N·n·A/(π·ID²/4)'),
+    windowFill: told('k_w', '', 'Σ N·n·d_o²/(π·ID²/4)'),
+  }
+}
+
+function ring({ core }: Context): Record<string, Told> {
+  const size = core?.coatedMm ? 'over the coating' : 'bare core'
+  const own = (symbol: string): Told => ({ symbol, unit: 'mm', formula: size, source: core ? `${core.name}: ${core.source}` : 'not in the library' })
+  const laid = (symbol: string, formula: string): Told => ({ symbol, unit: 'mm', formula, source: 'layers on the inner circumference, π/arcsin(d/2r) wires a layer: geometry; McLyman, Transformer and Inductor Design Handbook, 3rd ed.' })
+  return {
+    outsideMm: own('OD'),
+    holeMm: own('ID'),
+    heightMm: own('H'),
+    remainingHoleMm: laid('ID_rest', 'ID − 2·Σ(layers·d_o + tapes)'),
+    overallOutsideMm: laid('OD_max', 'OD + 2·Σ(layers outside·d_o + tapes)'),
+    overallHeightMm: laid('H_max', 'H + 2·Σ(layers·d_o + tapes)'),
+    sectorGapMm: laid('s', 'least arc of the hole between two windings'),
   }
 }
 
