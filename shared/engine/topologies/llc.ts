@@ -108,12 +108,14 @@ function halfPeriod(tank: LlcTank, outputV: number, start: LlcPoint, halfS: numb
   let chargeC = 0
   let mode: LlcMode = startMode(tank, outputV, start)
   while (tS < halfS && segments.length < MOST_SEGMENTS) {
-    const durationS = segments.length === MOST_SEGMENTS - 1 ? halfS - tS : endOfMode(tank, outputV, { mode, from }, halfS - tS)
+    const leftS = halfS - tS
+    const durationS = segments.length === MOST_SEGMENTS - 1 ? leftS : endOfMode(tank, outputV, { mode, from }, leftS)
     segments.push({ mode, startS: tS, durationS, from })
     const next = llcAfter(tank, outputV, { mode, from }, durationS)
     if (mode !== 'O') chargeC += (mode === 'P' ? 1 : -1) * (tank.resonantCapacitanceF * (next.capacitorV - from.capacitorV) - ((from.magnetisingA + next.magnetisingA) / 2) * durationS)
     from = next
-    tS += durationS
+    // A mode that lasts to the end is not followed by another one that rounding would make room for.
+    tS = durationS === leftS ? halfS : tS + durationS
     if (tS < halfS) mode = mode === 'O' ? (openV(tank, from) > 0 ? 'P' : 'N') : openMode(tank, outputV, from)
   }
   return { segments, end: from, chargeC }
