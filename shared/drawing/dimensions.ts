@@ -33,7 +33,7 @@ export function horizontalDimension(left: PointMm, right: PointMm, yMm: number, 
     ...(wide
       ? [line([left[0], yMm], [right[0], yMm], 'dimension'), arrowHead([left[0], yMm], -1, 0), arrowHead([right[0], yMm], 1, 0)]
       : [line([left[0] - TAIL_MM, yMm], [right[0] + TAIL_MM, yMm], 'dimension'), arrowHead([left[0], yMm], 1, 0), arrowHead([right[0], yMm], -1, 0)]),
-    label(anchor, text, { align: outside ? 'start' : 'middle' }),
+    ...(outside ? clearedLabel(label(anchor, text)) : [label(anchor, text, { align: 'middle' })]),
   ]
 }
 

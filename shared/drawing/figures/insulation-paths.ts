@@ -3,7 +3,7 @@ import type { Library } from '../../engine/library'
 import type { WindingSpecification } from '../../engine/specification'
 import { clearedLabel } from '../dimensions'
 import type { Layer, Picture, PointMm, Shape } from '../model'
-import { box, circle, label, LETTERING, line, moved, polyline, rectangle } from '../shapes'
+import { circle, label, LETTERING, line, moved, polyline } from '../shapes'
 import { coilSection, type CoilPicture } from './coil-section'
 import { standardScale } from './scales'
 
@@ -102,13 +102,14 @@ export function pathPins(specification: WindingSpecification, paths: readonly Ma
   const place = ([x, y]: PathPoint): PointMm => [x * scale, y * scale]
   const section = ((specification.former.pinSection.value?.sizeMm ?? 0.6) * scale) / 2
   const shapes: Shape[] = [
-    rectangle(box((-size.width * scale) / 2, (-size.height * scale) / 2, size.width * scale, size.height * scale), { layer: 'phantom' }),
     ...among.flatMap(({ points: way, kind, boundaryId }) => [polyline(way.map(place), { layer: LAYERS[kind], tag: `boundary:${boundaryId}` })]),
     ...pins.filter(({ state }) => state !== 'missing').flatMap((pin) => pinMark(place([pin.xMm, pin.yMm]), Math.max(section, 0.4), pin.number, pin.xMm < 0 ? -1 : 1)),
-    ...spreadMarks(among.map(({ mark, points: way, boundaryId }) => ({ mark, at: place(middleOf(way)), tag: `boundary:${boundaryId}` }))),
+    ...spreadMarks(among.map(({ mark, points: way, boundaryId }) => ({ mark, at: place(middleOf(way)), upright: runsUp(way), tag: `boundary:${boundaryId}` }))),
   ]
   return { widthMm, heightMm: size.height * scale + 8, scale, shapes: moved(shapes, widthMm / 2, (size.height * scale) / 2 + 4) }
 }
+
+const runsUp = (points: readonly PathPoint[]) => points.every(([x]) => Math.abs(x - points[0]![0]) < 1e-6)
 
 function pinMark(at: PointMm, radius: number, number: string, hand: 1 | -1): Shape[] {
   return [
@@ -117,10 +118,11 @@ function pinMark(at: PointMm, radius: number, number: string, hand: 1 | -1): Sha
   ]
 }
 
-/** Marks on their lines; one that would lie on another moves up. */
-function spreadMarks(marks: readonly { mark: string; at: PointMm; tag: string }[]): Shape[] {
+/** Marks on their lines, or beside them where they run up; one that would lie on another moves up. */
+function spreadMarks(marks: readonly { mark: string; at: PointMm; upright: boolean; tag: string }[]): Shape[] {
   const taken: PointMm[] = []
-  return marks.flatMap(({ mark, at, tag }) => {
+  return marks.flatMap(({ mark, at: [x, middle], upright, tag }) => {
+    const at: PointMm = [upright ? x + (x < 0 ? 4 : -4) : x, middle]
     let y = at[1]
     while (taken.some(([x, other]) => Math.abs(x - at[0]) < 8 && Math.abs(other - y) < 4.2)) y += 1
     taken.push([at[0], y])

@@ -66,6 +66,38 @@ export function placeFigure(flow: Flow, title: string, alternative: string, pict
   add(flow, { kind: 'figure', title, alternative, box: area, shapes: [...heading, ...moved(picture.shapes, area.leftMm, area.bottomMm)] })
 }
 
+export interface Figure {
+  title: string
+  words: string
+  picture: Picture
+}
+
+const FIGURE_GAP_MM = 6
+
+/** Figures beside each other as long as they have room, in rows below each other. */
+export function addFigures(flow: Flow, figures: readonly Figure[]): void {
+  const rows: Figure[][] = []
+  let left = Infinity
+  for (const figure of figures) {
+    if (left + figure.picture.widthMm > BODY_WIDTH_MM) {
+      rows.push([])
+      left = 0
+    }
+    rows.at(-1)!.push(figure)
+    left += figure.picture.widthMm + FIGURE_GAP_MM
+  }
+  for (const row of rows) addRow(flow, row)
+}
+
+function addRow(flow: Flow, row: readonly Figure[]): void {
+  const top = take(flow, FIGURE_TITLE_MM + Math.max(...row.map(({ picture }) => picture.heightMm)))
+  let left: number = SPACE.leftMm
+  for (const { title, words, picture } of row) {
+    placeFigure(flow, title, words, picture, left, top, picture.widthMm)
+    left += picture.widthMm + FIGURE_GAP_MM
+  }
+}
+
 /** Height of a figure's title, mm. */
 export const FIGURE_TITLE_MM = 6
 
@@ -73,7 +105,7 @@ export const FIGURE_TITLE_MM = 6
 export function addTable(flow: Flow, content: TableContent): void {
   if (content.rows.length === 0) return
   const layout = layoutFor(content, roomMm(flow))
-  if (readsBetterWhole(flow, tableHeightMm(layout))) continuePage(flow)
+  if (readsBetterWhole(flow, layout)) continuePage(flow)
   let row = 0
   while (row < layout.rows.length) row = placePart(flow, layout, row)
 }
@@ -87,10 +119,16 @@ function layoutFor(content: TableContent, heightMm: number): TableLayout {
 }
 
 /** A short table that would be cut near its head goes to the next sheet in one piece. */
-function readsBetterWhole(flow: Flow, heightMm: number): boolean {
+function readsBetterWhole(flow: Flow, layout: TableLayout): boolean {
+  const heightMm = tableHeightMm(layout)
+  if (heightMm <= roomMm(flow)) return false
   const sheetMm = SPACE.topMm - HEADING_MM - BODY_BOTTOM_MM
-  return heightMm > roomMm(flow) && heightMm < sheetMm / 2 && roomMm(flow) < heightMm / 2
+  const firstRowsMm = layout.headMm + layout.rows.slice(0, LEAST_ROWS).reduce((sum, row) => sum + row.heightMm, 0)
+  return firstRowsMm > roomMm(flow) || (heightMm < sheetMm / 2 && roomMm(flow) < heightMm / 2)
 }
+
+/** Fewer rows than these under a header are not begun at the foot of a sheet. */
+const LEAST_ROWS = 3
 
 function placePart(flow: Flow, layout: TableLayout, firstRow: number): number {
   const part = drawTablePart(layout, firstRow, SPACE.leftMm, flow.topMm, BODY_BOTTOM_MM)

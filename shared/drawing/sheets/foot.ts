@@ -1,10 +1,11 @@
 import type { Block } from '../model'
 import { matrixCodeShape } from '../matrix-code'
-import { box, labelLines, LETTERING, linesHeightMm } from '../shapes'
+import { box, label, labelLines, LETTERING, linesHeightMm } from '../shapes'
 import { drawTablePart, layoutTable, tableHeightMm, type TableContent } from '../table'
 import { wrapText } from '../text-metrics'
 import { SPACE } from './frame'
 import type { DrawingInput } from './input'
+import { notStated } from './notices'
 import { revisionTable } from './record-tables'
 import { TITLE_BLOCK } from './title-block'
 import { CONTRACT_WORDS } from './words'
@@ -14,6 +15,7 @@ const CODE_LEFT_MM = TITLE_BLOCK.leftMm - CODE_MM - 1
 const TEXT_WIDTH_MM = CODE_LEFT_MM - SPACE.leftMm - 3
 const BOTTOM_MM = TITLE_BLOCK.bottomMm + 2
 const GAP_MM = 3
+const HEADING_MM = 5
 
 /** What the two-dimensional code of a sheet holds: part, revision and, once released, the hash of the specification. */
 export function codeText({ specification, revision, specificationHash }: Pick<DrawingInput, 'specification' | 'revision' | 'specificationHash'>): string {
@@ -62,6 +64,22 @@ export function revisionFoot(input: DrawingInput): { blocks: Block[]; whole: boo
     if (blocks) return { blocks, whole: first === 0 }
   }
   return { blocks: [], whole: false }
+}
+
+/** What is not stated, beside the title block of the last sheet; null when it finds no room there. */
+export function notStatedFoot(input: DrawingInput): Block[] | null {
+  const groups = notStated(input)
+  if (groups.length === 0) return []
+  const lines = groups.flatMap((text) => wrapText(text, 'sans', LETTERING.small, TEXT_WIDTH_MM))
+  const bottomMm = BOTTOM_MM + linesHeightMm(words(input).length, LETTERING.small) + GAP_MM
+  const height = linesHeightMm(lines.length, LETTERING.small)
+  const top = TITLE_BLOCK.topMm - HEADING_MM
+  if (top - height < bottomMm) return null
+  const title = 'Not stated'
+  return [
+    { kind: 'heading', level: 2, text: title, box: box(SPACE.leftMm, top, TEXT_WIDTH_MM, HEADING_MM), shapes: [label([SPACE.leftMm, top + 1.8], title, { font: 'sans-bold' })] },
+    { kind: 'text', box: box(SPACE.leftMm, top - height, TEXT_WIDTH_MM, height), shapes: labelLines(SPACE.leftMm, top, lines, { heightMm: LETTERING.small }) },
+  ]
 }
 
 function fits(content: TableContent, roomMm: number): Block[] | null {

@@ -3,7 +3,7 @@ import { label } from '../shapes'
 import { connectionSheets } from './connection-sheets'
 import { constructionSheets } from './construction-sheets'
 import { newFlow, type Page } from './flow'
-import { footBlocks, revisionFoot } from './foot'
+import { footBlocks, notStatedFoot, revisionFoot } from './foot'
 import { SHEET, sheetFrame } from './frame'
 import type { DrawingInput } from './input'
 import { dataSheets, insulationSheets } from './insulation-sheets'
@@ -24,11 +24,12 @@ export function drawSheets(input: DrawingInput): Sheet[] {
   constructionSheets(flow, input)
   dataSheets(flow, input)
   const revisions = revisionFoot(input)
-  insulationSheets(flow, input, !revisions.whole)
-  return flow.pages.map((page, index) => finish(input, page, index + 1, flow.pages.length, revisions.blocks))
+  const absent = notStatedFoot(input)
+  insulationSheets(flow, input, { revisions: !revisions.whole, notStated: absent === null })
+  return flow.pages.map((page, index) => finish(input, page, index + 1, flow.pages.length, { first: revisions.blocks, last: absent ?? [] }))
 }
 
-function finish(input: DrawingInput, page: Page, number: number, count: number, revisions: readonly Block[]): Sheet {
+function finish(input: DrawingInput, page: Page, number: number, count: number, foot: { first: readonly Block[]; last: readonly Block[] }): Sheet {
   const block = titleBlock(input, { number, count, content: page.content, scale: page.scale })
   return {
     number,
@@ -41,7 +42,7 @@ function finish(input: DrawingInput, page: Page, number: number, count: number, 
       { kind: 'artifact', shapes: sheetFrame() },
       ...page.blocks,
       ...footBlocks(input),
-      ...(number === 1 ? revisions : []),
+      ...(number === 1 ? foot.first : number === count ? foot.last : []),
       { kind: 'text', box: TITLE_BLOCK, shapes: block },
     ],
   }

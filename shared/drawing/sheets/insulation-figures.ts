@@ -6,12 +6,11 @@ import { formatNumber } from '../../number-format'
 import { LETTERING } from '../shapes'
 import type { TableContent } from '../table'
 import { PREDICTED } from './figures'
-import { addParagraphs, FIGURE_TITLE_MM, type Flow, placeFigure, roomMm, setScale, take } from './flow'
-import { SPACE } from './frame'
+import { addFigures, addParagraphs, BODY_WIDTH_MM, type Flow, setScale } from './flow'
 import type { DrawingInput } from './input'
 
-const GAP_MM = 6
 const HEIGHT_MM = 78
+const PINS_MM = 110
 
 /** Map of the sides with their boundaries, and the weakest ways drawn where they run: in the coil and among the pins. */
 export function insulationFigures(flow: Flow, input: DrawingInput): void {
@@ -19,27 +18,15 @@ export function insulationFigures(flow: Flow, input: DrawingInput): void {
   if (specification.insulation.boundaries.length === 0) return
   const map = insulationMap(specification)
   const paths = evaluation ? markedPaths(specification, evaluation) : []
-  const sectionIn = (maximumWidthMm: number) => (evaluation ? pathSection({ specification, evaluation, library, paths, maximumWidthMm, maximumHeightMm: HEIGHT_MM }) : null)
-  const [narrow, wide] = [sectionIn(SPACE.rightMm - SPACE.leftMm - map.widthMm - GAP_MM), sectionIn(SPACE.rightMm - SPACE.leftMm)]
-  const beside = narrow !== null && wide !== null && narrow.scale === wide.scale
-  const section = beside ? narrow : wide
-  const heightMm = FIGURE_TITLE_MM + Math.max(map.heightMm, beside ? (section?.heightMm ?? 0) : 0)
-  const top = take(flow, Math.min(heightMm, roomMm(flow)))
-  placeFigure(flow, 'Insulation diagram', mapInWords(specification), map, SPACE.leftMm, top, map.widthMm)
-  if (section) {
-    const at = beside ? { left: SPACE.leftMm + map.widthMm + GAP_MM, top } : { left: SPACE.leftMm, top: take(flow, FIGURE_TITLE_MM + section.heightMm) }
-    setScale(flow, `coil ${scaleText(section.scale)}`)
-    placeFigure(flow, `Weakest ways in the coil section, scale ${scaleText(section.scale)}`, pathsInWords(paths), section, at.left, at.top, section.widthMm)
-  }
-  pinFigure(flow, input, paths)
+  const section = evaluation ? pathSection({ specification, evaluation, library, paths, maximumWidthMm: BODY_WIDTH_MM, maximumHeightMm: HEIGHT_MM }) : null
+  const pins = pathPins(specification, paths, PINS_MM, HEIGHT_MM)
+  if (section) setScale(flow, `coil ${scaleText(section.scale)}`)
+  addFigures(flow, [
+    { title: 'Insulation diagram', words: mapInWords(specification), picture: map },
+    ...(section ? [{ title: `Weakest ways in the coil section, scale ${scaleText(section.scale)}`, words: pathsInWords(paths), picture: section }] : []),
+    ...(pins ? [{ title: `Weakest ways among the pins, seen from above, scale ${scaleText(pins.scale)}`, words: pathsInWords(paths), picture: pins }] : []),
+  ])
   addParagraphs(flow, 'Reading the diagrams', [MAP_LEGEND, ...(paths.length > 0 ? [PATHS_LEGEND] : [])], LETTERING.small)
-}
-
-function pinFigure(flow: Flow, { specification }: DrawingInput, paths: readonly MarkedPath[]): void {
-  const pins = pathPins(specification, paths, 130, HEIGHT_MM)
-  if (!pins) return
-  const top = take(flow, FIGURE_TITLE_MM + pins.heightMm)
-  placeFigure(flow, `Weakest ways among the pins, seen from above, scale ${scaleText(pins.scale)}`, pathsInWords(paths), pins, SPACE.leftMm, top, pins.widthMm)
 }
 
 const KIND_WORDS: Record<InsulationPath['kind'], string> = { clearance: 'clearance', creepage: 'creepage distance', 'through-insulation': 'through the insulation' }

@@ -19,7 +19,7 @@ export function dataSheets(flow: Flow, input: DrawingInput): void {
 }
 
 /** Insulation boundaries, tests, cautions, notes, revisions and what is not stated. */
-export function insulationSheets(flow: Flow, input: DrawingInput, withRevisions: boolean): void {
+export function insulationSheets(flow: Flow, input: DrawingInput, also: { revisions: boolean; notStated: boolean }): void {
   const { specification } = input
   newPage(flow, 'Insulation')
   const { boundaries, withstand, sources } = insulationSection(input)
@@ -34,6 +34,6 @@ export function insulationSheets(flow: Flow, input: DrawingInput, withRevisions:
   addTable(flow, testTable(specification))
   addParagraphs(flow, 'CAUTION', cautionLines(input))
   addParagraphs(flow, 'Notes', noteLines(specification))
-  if (withRevisions) addTable(flow, revisionTable(specification))
-  addParagraphs(flow, 'Not stated', notStated(input), LETTERING.small)
+  if (also.revisions) addTable(flow, revisionTable(specification))
+  if (also.notStated) addParagraphs(flow, 'Not stated', notStated(input), LETTERING.small)
 }

@@ -39,8 +39,8 @@ function halfFigure(core: CoreRow, widthMm: number, heightMm: number): CorePictu
   const front: Shape[] = [
     polyline(points, { layer: 'outline', closed: true, tag: 'core' }),
     line([0, -2], [0, top + 2], 'centre'),
-    ...horizontalDimension(at(-f / 2, b), at(f / 2, b), top + 5, reference(f)),
     ...horizontalDimension(at(-e / 2, b), at(e / 2, b), top + 12, reference(e)),
+    ...horizontalDimension(at(-f / 2, b), at(f / 2, b), top + 5, reference(f)),
     ...horizontalDimension(at(-a / 2, 0), at(a / 2, 0), -8, reference(a)),
     ...verticalDimension(at(-a / 2, 0), at(-a / 2, b), left - 8, reference(b), 'beside'),
     ...verticalDimension(at(a / 2, b - d), at(a / 2, b), right + 9, reference(d), 'beside'),

@@ -25,7 +25,7 @@ export interface OutlineInput {
 }
 
 /** Room around a view for its dimensions and its name. */
-const ROOM = { left: 15, right: 22, bottom: 14, top: 14 } as const
+const ROOM = { left: 15, right: 22, bottom: 12.5, top: 10.5 } as const
 const FOOT_MM = 8
 
 type Envelope = { lengthMm: number; widthMm: number; heightMm: number }
