@@ -139,3 +139,26 @@ describe('a specification on a powder core', () => {
     expect(evaluate(ferrite, library).magnetics.biasFieldAPerM).toBeNull()
   })
 })
+
+// Source: reluctances in series at the limits of gap and permeability (McLyman's fringing), as the stage itself is checked.
+describe('the spread of an inductance that the drawing does not limit', () => {
+  const library = shippedLibrary()
+  const open = structuredClone(propose(COUPLED_INDUCTOR, library).document)
+  open.specification.electrical.inductance.value = null
+  Object.assign(open.specification.core.gap, { alH: { ...open.specification.core.gap.alH, value: null }, alTolerance: { ...open.specification.core.gap.alTolerance, value: null } })
+  const spreadWith = (toleranceMm: number | null, lengthMm: number) => {
+    const document = structuredClone(open)
+    document.specification.core.gap.lengthMm.value = lengthMm
+    document.specification.core.gap.lengthToleranceMm.value = toleranceMm
+    const { inductanceH, inductanceMinimumH, inductanceMaximumH } = evaluate(document, library).magnetics
+    return { below: 1 - inductanceMinimumH! / inductanceH!, above: inductanceMaximumH! / inductanceH! - 1 }
+  }
+
+  it('follows the tolerances of gap and permeability, and the more the shorter the gap', () => {
+    const [long, short] = [spreadWith(0.02, 0.4), spreadWith(0.02, 0.15)]
+    expect(short.below).toBeGreaterThan(long.below)
+    expect(short.above).toBeGreaterThan(long.above)
+    expect(long.above).toBeLessThan(0.1)
+  })
+  it('is that of an ungapped core where the gap has no tolerance', () => expect(spreadWith(null, 0.3)).toEqual({ below: expect.closeTo(0.25, 9), above: expect.closeTo(0.25, 9) }))
+})

@@ -1,4 +1,4 @@
-import { gapForInductance, gappedInductanceFactorH } from '../magnetics/gap'
+import { gapForInductance, gappedInductanceFactorH, inductanceSpread } from '../magnetics/gap'
 import type { GappedCore } from '../magnetics/gap'
 import { topologyOf } from '../topologies'
 import { attempt, explain, positive, report } from './context'
@@ -35,11 +35,11 @@ export function inductanceBasis(context: Context): InductanceBasis | null {
     report(context, 'inductance-not-stated', 'warning', 'electrical.inductance')
     return null
   }
-  const spread = specification.core.gap.alTolerance.value ?? UNGAPPED_SPREAD
+  const spread = spreadOf(context, from === 'ungapped' ? 0 : gapMm)
   const basis: InductanceBasis = {
     nominalH,
-    minimumH: nominalH * Math.max(0.01, 1 + (stated?.lowerTolerance ?? -spread)),
-    maximumH: nominalH * (1 + (stated?.upperTolerance ?? spread)),
+    minimumH: nominalH * Math.max(0.01, 1 + (stated?.lowerTolerance ?? -spread.below)),
+    maximumH: nominalH * (1 + (stated?.upperTolerance ?? spread.above)),
     alH: positive(alH) ? alH : nominalH / turns ** 2,
     turns,
     from,
@@ -51,6 +51,28 @@ export function inductanceBasis(context: Context): InductanceBasis | null {
   return basis
 }
 
+interface Spread {
+  below: number
+  above: number
+}
+
+/**
+ * Relative spread of the inductance where the document states none: that of A_L; else what the tolerances of gap length and
+ * permeability leave; else the material's own.
+ */
+function spreadOf(context: Context, gapMm: number | null): Spread {
+  const { gap } = context.specification.core
+  const both = (share: number): Spread => ({ below: share, above: share })
+  if (gap.alTolerance.value !== null) return both(gap.alTolerance.value)
+  const core = gappedCore(context)
+  const permeabilityToleranceFraction = context.material?.permeabilityTolerance ?? UNGAPPED_SPREAD
+  const gapToleranceMm = gap.lengthToleranceMm.value
+  if (!core || !positive(gapMm) || gapToleranceMm === null) return both(positive(gapMm) ? UNGAPPED_SPREAD : permeabilityToleranceFraction)
+  const paths = gapsInPath(context)
+  const limits = attempt(context, 'core.gap.lengthToleranceMm', () => inductanceSpread(core, 1, { gapMm: gapMm * paths, gapToleranceMm: gapToleranceMm * paths, permeabilityToleranceFraction: Math.min(0.95, permeabilityToleranceFraction) }))
+  return limits ? { below: -limits.lowestFraction, above: limits.highestFraction } : both(UNGAPPED_SPREAD)
+}
+
 /** Parts whose flux follows the volt-seconds: a gap only lowers their inductance. */
 const isTransformer = ({ requirement }: Context) => requirement !== null && topologyOf(requirement.duty).core !== 'stores-energy'
 
@@ -60,7 +82,8 @@ export function gappedCore(context: Context): GappedCore | null {
   if (!core || !material) return null
   const leg = core.centreLeg
   const legAreaMm2 = leg ? (leg.shape === 'round' ? (Math.PI / 4) * leg.diameterMm ** 2 : leg.widthMm * leg.depthMm) : core.effectiveAreaMm2
-  const windowMm = core.dimensionsMm.d !== null ? 2 * core.dimensionsMm.d : (former?.windingWidthMm ?? null)
+  // The window of a half with a plate is as long as one half's, that of two halves twice that.
+  const windowMm = core.dimensionsMm.d !== null ? (core.shape === 'EI' ? 1 : 2) * core.dimensionsMm.d : (former?.windingWidthMm ?? null)
   return {
     effectiveAreaMm2: core.effectiveAreaMm2 * sets,
     effectiveLengthMm: core.effectiveLengthMm,
