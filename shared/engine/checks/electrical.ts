@@ -1,7 +1,8 @@
 import { gappedCore, alFromGap } from '../evaluate/inductance'
 import { fullLoadPeakA } from '../evaluate/magnetics'
 import { inductanceSpread } from '../magnetics/gap'
-import type { SaturationLimit } from '../specification'
+import type { ConverterOutput, SaturationLimit } from '../specification'
+import { dutyTraits } from '../topologies'
 import { atLeast, atMost, notCheckable, storesEnergy, yesNo } from './outcome'
 import type { Check, CheckInput, Outcome } from './outcome'
 
@@ -102,28 +103,43 @@ function wholeTurns({ document }: CheckInput): Outcome[] {
   return broken.length > 0 ? broken : [yesNo(true, 'windings')]
 }
 
-function outputsByTurns({ document }: CheckInput): Outcome[] {
-  const duty = document.requirement?.duty
-  if (duty?.topology !== 'flyback') return []
-  const windingOf = (id: string) => document.specification.windings.find(({ outputId }) => outputId === id)
-  const mains = duty.outputs.filter(({ role }) => role === 'main')
-  const regulated = mains[0]
-  const reference = regulated && windingOf(regulated.id)
-  if (!regulated || !reference) return []
-  const perTurnV = (Math.abs(regulated.voltageV) + regulated.rectifierDropV) / reference.turns
-  return mains.slice(1).flatMap((output) => {
+/** How far whole turns may take an output from the voltage that was asked for. Source: common practice. */
+const TURNS_SHARE = 0.01
+
+/** Outputs beside the regulated one: by the turns where they share one reset time, by the solved circuit elsewhere. */
+function outputsByTurns(input: CheckInput): Outcome[] {
+  const { requirement, specification } = input.document
+  if (!requirement) return []
+  const [regulated, ...others] = dutyTraits(requirement.duty).outputs.filter(({ role }) => role === 'main')
+  const solved = input.evaluation.corners.find(({ name }) => name === 'nominal-input')?.outputs ?? []
+  const windingOf = (id: string) => specification.windings.find(({ outputId }) => outputId === id)
+  return others.flatMap((output) => {
     const winding = windingOf(output.id)
-    if (!winding) return []
+    const reference = regulated && windingOf(regulated.id)
+    if (!winding || !reference) return []
     const asked = Math.abs(output.voltageV) + output.rectifierDropV
-    return [atMost({ value: Math.abs(perTurnV * winding.turns - asked) / asked, limit: 0.01, unit: '1', path: `windings.${document.specification.windings.indexOf(winding)}.turns`, values: { winding: winding.name, output: output.name } })]
+    const given = requirement.duty.topology === 'flyback'
+      ? ((Math.abs(regulated!.voltageV) + regulated!.rectifierDropV) / reference.turns) * winding.turns
+      : solvedVoltageV(solved, output)
+    return [atMost({ value: given === null ? null : Math.abs(given - asked) / asked, limit: TURNS_SHARE, unit: '1', path: `windings.${specification.windings.indexOf(winding)}.turns`, values: { winding: winding.name, output: output.name } })]
   })
 }
 
-function switchStress({ document, evaluation }: CheckInput): Outcome[] {
-  const duty = document.requirement?.duty
-  if (duty?.topology !== 'flyback' || duty.switchRatingV === null) return []
+function solvedVoltageV(solved: CheckInput['evaluation']['corners'][number]['outputs'], { id, rectifierDropV }: ConverterOutput): number | null {
+  const output = solved.find(({ outputId }) => outputId === id)
+  return output ? Math.abs(output.voltageV) + rectifierDropV : null
+}
+
+/** Share of its rated voltage that a switch uses; beyond the whole of it no reason helps. Source: common practice. */
+const SWITCH_SHARE = 0.8
+
+function switchStress({ document: { requirement }, evaluation }: CheckInput): Outcome[] {
+  const ratingV = requirement ? dutyTraits(requirement.duty).switchRatingV : null
+  if (ratingV === null) return []
   const peaks = evaluation.corners.flatMap(({ switchPeakV }) => (switchPeakV === null ? [] : [switchPeakV]))
-  return [atMost({ value: peaks.length > 0 ? Math.max(...peaks) : null, limit: 0.8 * duty.switchRatingV, unit: 'V', path: 'requirement.duty.switchRatingV' })]
+  const value = peaks.length > 0 ? Math.max(...peaks) : null
+  const beyond = value !== null && value > ratingV
+  return [atMost({ value, limit: beyond ? ratingV : SWITCH_SHARE * ratingV, unit: 'V', path: 'requirement.duty.switchRatingV', severity: beyond ? 'S' : 'M' })]
 }
 
 /** Pins, leads and copper are chosen by the stated currents: they are there, and the rms is no lower than calculated. */

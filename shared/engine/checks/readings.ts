@@ -1,6 +1,6 @@
 import type { TestRow, WindingSpecification } from '../specification'
 import { dutyTraits } from '../topologies'
-import { atLeast, atMost, notCheckable, yesNo } from './outcome'
+import { atLeast, atMost, notCheckable, storesEnergy, yesNo } from './outcome'
 import type { Check, CheckInput, Outcome } from './outcome'
 
 interface Placed {
@@ -104,7 +104,9 @@ const criticalReadings = ({ document: { specification } }: CheckInput): Outcome[
   })
 
 /** The bias at which the part is tested is that which the converter's limit lets through. */
-function biasMatchesLimit({ document: { specification, requirement }, context }: CheckInput): Outcome[] {
+function biasMatchesLimit(input: CheckInput): Outcome[] {
+  const { document: { specification, requirement }, context } = input
+  if (!storesEnergy(input)) return []
   const limit = requirement && dutyTraits(requirement.duty).currentLimit
   if (!limit) return []
   const own = specification.electrical.saturation.map((row, index) => ({ row, index })).filter(({ row }) => row.windingId === context.primary?.id)

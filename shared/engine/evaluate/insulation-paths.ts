@@ -83,7 +83,8 @@ function onRing(specification: WindingSpecification, ring: RingLayout, { between
   const pairs = one!.flatMap((a) => other!.filter(({ id }) => id !== a.id).map((b) => ({ covered: insulates(a, functional) || insulates(b, functional), path: alongHole(ring, a, b) })))
   const bare = pairs.filter(({ covered }) => !covered)
   if (pairs.length === 0 || bare.some(({ path }) => path === null)) return NOT_KNOWN
-  const nearest = nearestOf(pairs.flatMap(({ path }) => path ?? []))
+  // Where the wire's own covering insulates, it may touch the next winding's; ends and terminals of a ring the document does not place.
+  const nearest = nearestOf(bare.flatMap(({ path }) => path ?? []))
   const how = [bare.length === 0 ? wireText(functional) : null, nearest?.how ?? null].filter((part) => part !== null).join('; ')
   return { ...lengths(nearest, []), byInsulatedWire: bare.length === 0, known: true, how }
 }

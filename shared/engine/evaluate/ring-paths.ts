@@ -17,5 +17,5 @@ export function alongHole({ sectors, holeMm, sectorGapMm }: RingLayout, a: Windi
   const nearest = ways.reduce((least, way) => (way.arc < least.arc ? way : least))
   const radiusMm = holeMm / 2
   const at = (angle: number): PathPoint => [radiusMm * Math.cos(angle), radiusMm * Math.sin(angle)]
-  return { lengthMm: sectorGapMm, layers: 0, thicknessMm: 0, how: 'along the hole of the ring from sector to sector', plane: 'ring', points: [at(nearest.fromRad), at(nearest.fromRad + nearest.arc)], through: [] }
+  return { lengthMm: Math.max(0, sectorGapMm), layers: 0, thicknessMm: 0, how: 'along the hole of the ring from sector to sector', plane: 'ring', points: [at(nearest.fromRad), at(nearest.fromRad + nearest.arc)], through: [] }
 }
