@@ -108,7 +108,7 @@ describe.each(proposals)('the proposal for the $name', ({ proposal, evaluation, 
 /** Dotted paths of all figures that a screen or the drawing shows. */
 function figures(evaluation: Evaluation): string[] {
   const { corners, magnetics, windings, leakages, capacitances, commonModeCapacitances, boundaryCapacitances, selfResonance, layout, losses, thermal, boundaries, mass } = evaluation
-  const hidden = /currentWaveform|layout\.items|layout\.outlines|\.layers$|turnsPerLayer|paths\.\d+\.points/
+  const hidden = /currentWaveform|fluxWaveform|layout\.items|layout\.outlines|\.layers$|turnsPerLayer|paths\.\d+\.points/
   const paths: string[] = []
   const walk = (value: unknown, path: string) => {
     if (hidden.test(path) && !/boundaries.*layers$/.test(path)) return
