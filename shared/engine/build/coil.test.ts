@@ -160,4 +160,32 @@ describe('layOutCoil', () => {
       { numRuns: 60 },
     )
   })
+
+  it('keeps each winding in its section of a former with walls', () => {
+    const placed = fc.record({ turns: fc.integer({ min: 1, max: 40 }), section: fc.integer({ min: 1, max: 3 }), lay })
+    fc.assert(
+      fc.property(fc.array(placed, { minLength: 1, maxLength: 5 }), fc.double({ min: 0.1, max: 0.6, noNaN: true }), (steps, overallMm) => {
+        const windings = steps.map((_, index) => winding(`w${index}`))
+        const coil = layOut(windings, steps.map(({ turns, section, lay: own }, index) => turnsOf(`w${index}`, turns, { section, lay: own })), overallMm, { windingWidthMm: 6, sections: 3 })
+        const strays = coil.layout.items.filter((item) => {
+          if (item.kind !== 'turn') return false
+          const leftMm = (steps[Number(item.windingId.slice(1))]!.section - 1) * 7
+          return item.xMm - overallMm / 2 < leftMm - 1e-9 || item.xMm + overallMm / 2 > leftMm + 6 + 1e-9
+        })
+        expect(coil.layout.windowWidthMm).toBeCloseTo(3 * 6 + 2, 12)
+        expect(strays).toEqual([])
+        expect(coil.layout.items.filter(({ kind }) => kind === 'turn')).toHaveLength(steps.reduce((sum, { turns }) => sum + turns, 0))
+      }),
+      { numRuns: 60 },
+    )
+  })
+
+  it('cuts foil without a width to the layer, less its edges', () => {
+    const coil = layOutCoil({ former: former(), windings: [winding('f')], sequence: [turnsOf('f', 3, { marginLeftMm: 1, marginRightMm: 1, interlayerTape: tapeReference })], wireOf: () => ({ form: 'foil', overallMm: 0.1, conductorMm: 0.1, copperAreaMm2: 1, widthMm: null }), tapeOf: () => tape })
+    const foils = coil.layout.items.filter((item) => item.kind === 'foil')
+    expect(foils).toHaveLength(3)
+    expect(foils[0]!.xMm).toBeCloseTo(1.2, 12)
+    expect(foils[0]!.widthMm).toBeCloseTo(17.6, 12)
+    expect(foils[2]!.yMm).toBeCloseTo(2 * 0.16, 12)
+  })
 })

@@ -90,6 +90,12 @@ describe('layOutRing', () => {
     expect(coil.placements[1]!.bottomMm).toBeCloseTo(0.5 + 0.18, 9)
   })
 
+  it('says what it does not lay as asked', () => {
+    const coil = layOut([winding('a', 5), winding('b', 5)], [turnsOf('a', 5), turnsOf('b', 5, { withPrevious: true })], 0.5)
+    expect(coil.findings).toMatchObject([{ code: 'step-not-for-a-ring', path: 'sequence.1.withPrevious' }])
+    expect(coil.placements[1]!.bottomMm).toBeCloseTo(0.5, 9)
+  })
+
   it('does without a size of the core', () => expect(layOutRing({ core: core({ dimensionsMm: { a: 25, b: null, c: 10, d: null, e: null, f: null } }), windings: [], sequence: [], wireOf: () => null, tapeOf: () => null })).toBeNull())
 
   const lay = fc.constantFrom('close-wound' as const, 'spread' as const, 'centred' as const)

@@ -1,4 +1,5 @@
 import type { Winding, WindingStep } from '../specification'
+import { foilWidthMm } from '../wires/foil'
 import { mostTurnsPerLayer, planLayers } from './layers'
 import type { LayerPlan } from './layers'
 import { finding } from './progress'
@@ -200,7 +201,7 @@ function layFoil(progress: Progress, lay: WindingLay): void {
   const parallel = Math.max(1, Math.floor(winding.wire.parallel))
   const turns = Math.min(Math.ceil(step.turns), 2_000)
   const availableMm = section.widthMm - step.marginLeftMm - step.marginRightMm
-  const widthMm = Math.max(0, Math.min(wire.widthMm ?? availableMm, availableMm))
+  const widthMm = Math.max(0, Math.min(wire.widthMm ?? foilWidthMm({ availableMm: Math.max(0, availableMm) }), availableMm))
   const xMm = step.marginLeftMm + (availableMm - widthMm) / 2
   const heightMm = wire.overallMm * parallel
   const bottomMm = section.yMm

@@ -51,7 +51,7 @@ export const FINDING_TEXTS: Readonly<Record<FindingCode, (values: Values) => str
   'turn-wider-than-layer': (v) => `One turn of ${named(v, 'winding', 'this winding')} and its return are ${millimetres(v, 'overMm')} wider than the layer. ${Number(v.fittingParallel) >= 1 ? `${named(v, 'fittingParallel')} in parallel would fit.` : `Wire of at most ${millimetres(v, 'fittingOverallMm')} would fit.`}`,
   'layers-too-few': (v) => `${named(v, 'winding', 'The winding')} needs ${named(v, 'neededLayers', 'more')} layers instead of ${named(v, 'layers', 'those asked for')}. It fits with ${named(v, 'fittingTurns', 'fewer')} turns or with wire of at most ${millimetres(v, 'fittingOverallMm')} over its insulation.`,
   'ring-hole-full': (v) => `The hole of the ring is full: ${named(v, 'overTurns')} of ${named(v, 'turns')} turns do not fit.`,
-  'step-not-for-a-ring': () => 'Margins, shields and foil are not laid on a ring core.',
+  'step-not-for-a-ring': () => 'Margins, shields and foil are not laid on a ring core, and windings wound together are laid one over the other.',
   'cannot-be-wound-together': (v) => `${named(v, 'winding')} cannot be wound together with ${named(v, 'other')}: both need round wire or litz, the same section and the same turns.`,
   'lead-crossing-too-high': (v) => `Where the sleeved lead of ${named(v, 'winding')} crosses, the coil is ${millimetres(v, 'overMm')} higher than the window.`,
   'too-many-turns-to-draw': () => 'There are too many turns to draw each of them.',
