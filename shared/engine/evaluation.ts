@@ -19,7 +19,10 @@ export interface Evaluation {
   boundaryCapacitances: BoundaryCapacitance[]
   selfResonance: SelfResonanceResult[]
   layout: Layout
+  /** In the full-load corner that heats most. */
   losses: LossResult
+  /** The same at the same temperature in every corner, in the order of `corners`. */
+  lossesByCorner: LossResult[]
   thermal: ThermalResult
   boundaries: BoundaryResult[]
   mass: MassResult
@@ -127,15 +130,25 @@ export interface WindingResult {
   meanTurnLengthMm: number | null
   dcResistance20Ohm: number | null
   dcResistanceHotOhm: number | null
-  /** ac over dc resistance, weighted with the harmonics; the model is named in the working. */
+  /** Loss by the alternating currents of all windings over what its own alternating current loses in the dc resistance; the model is named in the working. */
   acFactor: number | null
+  /** The same in the one-dimensional field, for comparison; null where that is the only one, or does not apply. */
+  acFactorOneDimensional: number | null
   rmsA: number | null
   peakA: number | null
   dcA: number | null
   currentDensityAPerMm2: number | null
   layers: number
   turnsPerLayer: number[]
+  /** Sum of the next three. */
   copperLossW: number | null
+  dcLossW: number | null
+  /** By its own alternating current: in the dc resistance, by skin effect, and by the nearest wires of its layer. */
+  skinLossW: number | null
+  /** By the field of all windings and the gap in its conductors. */
+  proximityLossW: number | null
+  /** What the other windings alone would lose in it. */
+  idleLossW: number | null
   copperMassG: number | null
   skinDepthMm: number | null
 }
@@ -265,6 +278,11 @@ export interface LossResult {
   totalW: number | null
   coreDensityWPerM3: number | null
   model: string
+  /** Copper loss in the one-dimensional field, for comparison; null where that is the only one, or does not apply. */
+  copperOneDimensionalW: number | null
+  /** Harmonics summed in the copper loss, and the share of the ac loss beyond them that is estimated. */
+  harmonics: number | null
+  harmonicTailShare: number | null
 }
 
 export interface ThermalResult {

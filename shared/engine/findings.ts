@@ -1,9 +1,11 @@
 /** Codes are permanent: they are stored with revisions and translated by the client. */
 export type FindingCode =
   | 'bulk-capacitor-too-small'
+  | 'commutation-time-assumed'
   | 'core-loss-flux-out-of-range'
   | 'core-loss-frequency-out-of-range'
   | 'core-loss-temperature-out-of-range'
+  | 'harmonic-sum-capped'
   | 'no-core-loss-data'
   | 'temperature-out-of-range'
   | 'thermal-runaway'

@@ -1,4 +1,4 @@
-import { dowellFactor, heightInSkinDepths, isolatedRoundWireFactor, litzLayers, roundWireLayer } from '#shared/engine/losses/dowell'
+import { dowellFactor, heightInSkinDepths, litzLayers, roundWireLayer } from '#shared/engine/losses/dowell'
 import { skinDepthMm } from '#shared/engine/wires/skin-depth'
 import { describe, expect, it } from 'vitest'
 import { expectWithin } from './relative'
@@ -101,26 +101,5 @@ describe('optimum height of a foil', () => {
     expectWithin(dowellFactor({ heightInSkinDepths: x, layers }), factor, 1e-4)
     expect(perHeight(x)).toBeLessThan(perHeight(x * 1.01))
     expect(perHeight(x)).toBeLessThan(perHeight(x * 0.99))
-  })
-})
-
-// Source: exact solution in Bessel functions, own arbitrary-precision values.
-describe('round wire alone', () => {
-  it.each([[1, 1.0013], [1.5, 1.00656], [2, 1.02049], [3, 1.09733], [4, 1.26464], [6, 1.76813]])('d/δ %d: %d', (ratio, factor) => {
-    expectWithin(isolatedRoundWireFactor(ratio), factor, 2e-5)
-  })
-
-  // McLyman's Table 4-13 takes a ring of one skin depth; the exact figures differ from it by up to 5 %.
-  it.each([
-    { gauge: 20, diameterMm: 0.81182, handbook: 1.303, exact: 1.238 },
-    { gauge: 24, diameterMm: 0.51056, handbook: 1.033, exact: 1.045 },
-    { gauge: 18, diameterMm: 1.02369, handbook: 1.53, exact: 1.472 },
-  ])('AWG $gauge at 100 kHz: handbook $handbook, exact $exact', ({ diameterMm, handbook, exact }) => {
-    // The handbook's skin depth at 20 °C, 6.62 cm/√f.
-    const depthMm = 66.2 / Math.sqrt(100e3)
-    const factor = isolatedRoundWireFactor(diameterMm / depthMm)
-    expectWithin(factor, exact, 5e-3)
-    expectWithin(diameterMm ** 2 / (diameterMm ** 2 - (diameterMm - 2 * depthMm) ** 2), handbook, 5e-3)
-    expectWithin(factor, handbook, 0.055)
   })
 })

@@ -79,7 +79,7 @@ describe.each(proposals)('the coil for the $name', ({ name, sheet, proposal, eva
 
 describe('wire', () => {
   it('is litz only where a round wire loses too much', () => {
-    expect(windingsOf('buoy supply').map(({ name, row, wire }) => `${name} ${wire.parallel} × ${row.form}`)).toEqual(['P 1 × litz', 'S1 3 × litz', 'S2 1 × round', 'S3 1 × round'])
+    expect(windingsOf('buoy supply').map(({ name, row, wire }) => `${name} ${wire.parallel} × ${row.form}`)).toEqual(['P 4 × round', 'S1 3 × litz', 'S2 1 × round', 'S3 1 × round'])
     expect(named('buoy supply', 'S2').row.conductorMm).toBe(0.4)
   })
 
@@ -109,7 +109,7 @@ describe('wire', () => {
   it('that only carries the current is no silent choice', () => {
     const { findings } = byName('200 W from the mains').proposal
     expect(findings.find(({ code }) => code === 'no-suitable-wire')).toMatchObject({ severity: 'warning', path: 'windings.1.wire', values: { winding: 'S1' } })
-    expect(findings.find(({ code }) => code === 'too-few-pins')).toMatchObject({ severity: 'warning', values: { winding: 'S1', limitA: 5 } })
+    expect(findings.find(({ code }) => code === 'too-few-pins')).toMatchObject({ severity: 'warning', values: { winding: 'S1', limitA: 8 } })
   })
 })
 

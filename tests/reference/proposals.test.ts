@@ -23,9 +23,10 @@ const stoppingChecks = ({ checks }: Evaluation) => checks.filter(({ severity, st
 /**
  * Questions that a proposal leaves to people: self-resonance (E23, Q06), the date of the list of substances (D10), keying of the
  * pins (P15); of insulated wire its certificate, system, stripped ends and bath (I11, I12, T13, P10); impulse on the mains (I25);
- * ends on one pin that a former with so few pins asks for (P04, P07); how leakage of low impedance is measured (Q07, Q08).
+ * ends on one pin that a former with so few pins asks for (P04, P07); how leakage of low impedance is measured (Q07, Q08); wire beside
+ * the gap, which loses more than the rules of skin and proximity want (T02, T03); rows whose source is not sure (L02).
  */
-const MUST_BE_ANSWERED = new Set(['D10', 'E23', 'I11', 'I12', 'I25', 'P04', 'P07', 'P10', 'P15', 'Q06', 'Q07', 'Q08', 'T13'])
+const MUST_BE_ANSWERED = new Set(['D10', 'E23', 'I11', 'I12', 'I25', 'L02', 'P04', 'P07', 'P10', 'P15', 'Q06', 'Q07', 'Q08', 'T02', 'T03', 'T13'])
 
 describe.each(proposals)('the proposal for the $name', ({ proposal, evaluation, sheet }) => {
   const { specification } = proposal.document

@@ -90,8 +90,9 @@ describe('what steers a search', () => {
 
   it('prefers a row among equals, and keeps to the store where asked', () => {
     const free = search(HARBOUR_SUPPLY, library)
-    const second = free.candidates[1]!
-    const coreId = second.document.specification.core.core.value!.id
+    const coreOf = ({ document }: SearchOutcome['candidates'][number]) => document.specification.core.core.value!.id
+    const second = free.candidates.find((candidate) => coreOf(candidate) !== coreOf(free.candidates[0]!))!
+    const coreId = coreOf(second)
     const preferred = search(HARBOUR_SUPPLY, library, { preferredRows: [`core/${coreId}`] })
     const place = ({ candidates }: SearchOutcome) => candidates.findIndex(({ id }) => id === second.id)
     expect(place(preferred)).toBeLessThan(place(free))

@@ -27,29 +27,31 @@ function currentDensity(input: CheckInput): Outcome[] {
   return byWinding(input, ({ currentDensityAPerMm2 }) => currentDensityAPerMm2, { steps, unit: 'A/mm²', field: 'wire' })
 }
 
-/** Where the alternating current makes less of the loss than this, skin and proximity decide nothing. */
+/** Where the alternating current makes less of the winding's loss than this, skin and proximity decide nothing. */
 const SMALL_AC_LOSS_SHARE = 0.25
 
-/** Share of a winding's copper loss that its alternating current makes, in the corner of the losses; null where not known. */
-function acLossShare({ evaluation }: CheckInput, index: number): number | null {
-  const result = evaluation.windings[index]
-  const current = evaluation.corners.find(({ name }) => name === evaluation.losses.corner)?.windings.find(({ windingId }) => windingId === result?.windingId)
-  if (!current || result?.acFactor == null) return null
-  const acLoss = result.acFactor * current.acRmsA ** 2
-  return acLoss > 0 ? acLoss / (acLoss + current.dcA ** 2) : 0
-}
+/** Nor where it makes less of the whole part's loss than this: an auxiliary winding beside the gap may lose many times its little own. */
+const SMALL_SHARE_OF_PART = 0.1
 
-const nearlyDirect = (input: CheckInput, index: number) => {
-  const share = acLossShare(input, index)
-  return share !== null && share < SMALL_AC_LOSS_SHARE
+/** Loss by alternating currents in a winding, as a share of its copper loss and of the part's loss; null where not known. */
+function acLossShares({ evaluation }: CheckInput, index: number): { ofWinding: number; ofPart: number } | null {
+  const result = evaluation.windings[index]
+  if (result?.skinLossW == null || result.proximityLossW == null || result.copperLossW === null) return null
+  const acLossW = result.skinLossW + result.proximityLossW
+  const { totalW, copperW } = evaluation.losses
+  const partW = totalW ?? copperW
+  return { ofWinding: acLossW > 0 ? acLossW / result.copperLossW : 0, ofPart: partW !== null && partW > 0 ? acLossW / partW : 1 }
 }
 
 const windingIndex = ({ path }: Outcome) => Number(path.split('.')[1])
 
-/** A winding whose current is nearly direct meets the rules of alternating current. */
+/** A winding that hardly loses by alternating current meets its rules. */
 const unlessDirect = (input: CheckInput) => (outcome: Outcome): Outcome => {
-  if (outcome.state !== 'not-met' || !nearlyDirect(input, windingIndex(outcome))) return outcome
-  return { ...outcome, state: 'met', values: { ...outcome.values, acLossShare: acLossShare(input, windingIndex(outcome))! } }
+  const shares = acLossShares(input, windingIndex(outcome))
+  if (outcome.state !== 'not-met' || !shares) return outcome
+  if (shares.ofWinding < SMALL_AC_LOSS_SHARE) return { ...outcome, state: 'met', values: { ...outcome.values, acLossShare: shares.ofWinding } }
+  if (shares.ofPart < SMALL_SHARE_OF_PART) return { ...outcome, state: 'met', values: { ...outcome.values, partLossShare: shares.ofPart } }
+  return outcome
 }
 
 /** Conductors of one form against a multiple of the skin depth. */
@@ -67,11 +69,32 @@ function againstSkinDepth(input: CheckInput, form: 'round' | 'litz', multiple: n
 const skinDepth = (input: CheckInput) => againstSkinDepth(input, 'round', 2)
 const litzStrand = (input: CheckInput) => againstSkinDepth(input, 'litz', 1 / 3)
 
+/**
+ * The limits are meant for the one-dimensional factor; beside a gap or at the ends of a layer the local field may make many times that,
+ * which is asked about on its own.
+ */
 const resistanceFactor = (input: CheckInput) =>
-  byWinding(input, ({ acFactor }) => acFactor, { steps: [{ above: 4, severity: 'S' }, { above: 2.5, severity: 'M' }, { above: 1.5, severity: 'N' }], unit: '1', field: 'wire' })
+  [
+    ...byWinding(input, ({ acFactor, acFactorOneDimensional }) => acFactorOneDimensional ?? acFactor, { steps: [{ above: 4, severity: 'S' }, { above: 2.5, severity: 'M' }, { above: 1.5, severity: 'N' }], unit: '1', field: 'wire' }),
+    ...localFactor(input),
+  ]
     // A winding without alternating current has no factor, and nothing to check.
     .filter((outcome) => outcome.state !== 'not-checkable' || input.evaluation.windings[windingIndex(outcome)]?.copperLossW !== 0)
     .map(unlessDirect(input))
+    .map(ofRipple(input))
+
+/** A high factor of the small ripple on a direct current is asked about and stops nothing: its heat is in the temperature. */
+const ofRipple = (input: CheckInput) => (outcome: Outcome): Outcome => {
+  const result = input.evaluation.windings[windingIndex(outcome)]
+  if (outcome.state !== 'not-met' || outcome.severity !== 'S' || !result || result.acFactor === null || result.dcLossW === null) return outcome
+  const plainAcW = ((result.skinLossW ?? 0) + (result.proximityLossW ?? 0)) / result.acFactor
+  return plainAcW < SMALL_AC_LOSS_SHARE * (plainAcW + result.dcLossW) ? { ...outcome, severity: 'M', values: { ...outcome.values, ripple: 1 } } : outcome
+}
+
+const localFactor = (input: CheckInput) =>
+  byWinding(input, ({ acFactor, acFactorOneDimensional }) => (acFactorOneDimensional === null ? null : acFactor), { steps: [{ above: 4, severity: 'M' }], unit: '1', field: 'wire' })
+    .filter(({ state }) => state === 'not-met')
+    .map((outcome) => ({ ...outcome, values: { ...outcome.values, field: 'local' } }))
 
 const lossDensity = ({ evaluation }: CheckInput): Outcome[] => [atMost({ value: evaluation.losses.coreDensityWPerM3, limit: 300e3, unit: 'W/m³', path: 'core.material' })]
 
@@ -114,7 +137,7 @@ const ambientStated = ({ document }: CheckInput): Outcome[] => [yesNo(document.r
 export const THERMAL_CHECKS: Readonly<Record<string, Check>> = {
   T01: { severity: 'M', source: 'natural convection: common practice', run: currentDensity },
   T02: { severity: 'M', source: 'diameter up to two skin depths: Snelling', run: skinDepth },
-  T03: { severity: 'M', source: 'P. Dowell, Proc. IEE 113 (1966) 1387', run: resistanceFactor },
+  T03: { severity: 'M', source: 'limits for the factor by P. Dowell, Proc. IEE 113 (1966) 1387', run: resistanceFactor },
   T04: { severity: 'M', source: 'strands up to a third of the skin depth: Sullivan 1999', run: litzStrand },
   T07: { severity: 'M', source: 'K. Venkatachalam et al., IEEE COMPEL 2002; 300 kW/m³ under natural convection: common practice', run: lossDensity },
   T08: { severity: 'S', source: 'heat balance; loss curve of the material, 20 K beyond its least', run: runaway },

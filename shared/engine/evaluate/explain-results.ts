@@ -1,4 +1,4 @@
-import type { Evaluation, RingLayout, Working } from '../evaluation'
+import type { Evaluation, LossResult, RingLayout, Working } from '../evaluation'
 import type { CoreRow } from '../library'
 import { explain } from './context'
 import type { Context } from './context'
@@ -26,7 +26,8 @@ export function explainResults(context: Context, body: Body): void {
   body.windings.forEach((winding, index) => tell(`windings.${index}`, winding, windings(context, body, index)))
   tell('layout', body.layout, layout(context, body))
   if (body.layout.ring) tell('layout.ring', body.layout.ring, ring(context))
-  tell('losses', body.losses, losses(context, body))
+  tell('losses', body.losses, losses(context, body, body.losses))
+  body.lossesByCorner.forEach((loss, index) => tell(`lossesByCorner.${index}`, loss, losses(context, body, loss)))
   tell('thermal', body.thermal, thermal(context, body))
   tell('mass', body.mass, mass(context))
   body.boundaries.forEach(({ provided, required }, index) => {
@@ -109,12 +110,15 @@ function ring({ core }: Context): Record<string, Told> {
   }
 }
 
-function losses(context: Context, { losses: own, thermal: heat }: Body): Record<string, Told> {
+function losses(context: Context, { thermal: heat }: Body, own: LossResult): Record<string, Told> {
   const at = [from('corner', own.corner, '', 'the full-load corner with the greatest loss'), from('T', heat.windingC ?? 100, '°C', 'thermal.windingC')]
   return {
-    copperW: { symbol: 'P_Cu', unit: 'W', formula: 'Σ R_hot·(I_dc² + F_R·I_ac²)', source: LOSS_MODEL, inputs: at },
+    copperW: { symbol: 'P_Cu', unit: 'W', formula: 'Σ_windings P_dc + P_skin + P_prox', source: LOSS_MODEL, inputs: at },
     coreW: { symbol: 'P_Fe', unit: 'W', formula: 'p_v·V_e', source: LOSS_MODEL, inputs: [...at, from('p_v', own.coreDensityWPerM3, 'W/m³', 'losses.coreDensityWPerM3'), from('V_e', context.core ? context.core.effectiveVolumeMm3 * context.sets : null, 'mm³', originOf(context, 'core'))] },
     totalW: { symbol: 'P', unit: 'W', formula: 'P_Cu + P_Fe', source: 'sum', inputs: [from('P_Cu', own.copperW, 'W', 'losses.copperW'), from('P_Fe', own.coreW, 'W', 'losses.coreW')] },
+    copperOneDimensionalW: { symbol: 'P_Cu,1D', unit: 'W', formula: 'as P_Cu, with the field along the layers over the whole window', source: 'P. Dowell, Proc. IEE 113 (1966) 1387; J.-P. Vandelac and P. Ziogas, IEEE Trans. Power Electron. 3 (1988) 334', inputs: at },
+    harmonics: { symbol: 'N', unit: '', formula: 'least N with a rest of at most 1 % of the ac loss, 256 at most', source: 'Parseval; bounds of Fourier coefficients (Zygmund, Trigonometric Series, II.4)' },
+    harmonicTailShare: { symbol: 'r', unit: '', formula: 'estimated ac loss beyond N over ac loss; contained in P_Cu', source: 'as the number of harmonics', inputs: [from('N', own.harmonics, '', 'losses.harmonics')] },
     coreDensityWPerM3: { symbol: 'p_v', unit: 'W/m³', formula: 'k_i·ΔB^(β−α)·(1/T)·Σ|dB/dt|^α·Δt·c(T)', source: 'K. Venkatachalam et al., IEEE COMPEL 2002', inputs: [...at, from('fit', context.material?.lossFits[0]?.source ?? 'none', '', originOf(context, 'material'))] },
   }
 }

@@ -11,13 +11,16 @@ import { capacitanceResults } from './capacitances'
 import { coreHeat, reportCoreLoss } from './core-loss'
 import { createContext, report } from './context'
 import type { Context } from './context'
+import { windingCoppers } from './copper'
+import type { WindingCopper } from './copper'
+import { copperStage } from './copper-loss'
 import type { CornerState } from './corner-result'
 import { cornerAt, cornersOf } from './corners'
 import { reportContradictions } from './document-findings'
 import { explainCorners } from './explain-corners'
 import { explainResults } from './explain-results'
 import { finiteOnly } from './finite'
-import { inductanceBasis } from './inductance'
+import { gapOf, inductanceBasis } from './inductance'
 import type { InductanceBasis } from './inductance'
 import { leakages } from './leakage'
 import { reportLibrary } from './library-findings'
@@ -27,8 +30,7 @@ import { mainsSupply, ratedMainsV } from './mains'
 import { heatBalance } from './thermal'
 import { voltageCorner } from './working-voltage'
 import type { VoltageCorners } from './working-voltage'
-import { windingCoppers, windingResults } from './windings'
-import type { WindingCopper } from './windings'
+import { windingResults } from './windings'
 
 export interface EvaluateOptions {
   /** Collect how each figure came about; costs time. */
@@ -51,18 +53,20 @@ export function evaluate(document: SpecificationDocument, library: Library, opti
   const basis = inductanceBasis(context)
   const corners = dutyCorners(context, basis, coil)
   const coppers = windingCoppers(context, coil)
-  const heat = heatBalance(context, { coppers, corners })
+  const copper = copperStage(context, coil, { coppers, gapMm: gapOf({ ...context, findings: [], working: null }, basis).gapMm })
+  const heat = heatBalance(context, { copper, corners })
   const hotC = heat.temperatureC
   reportCoreLoss(context, heat.hottest ? coreHeat({ ...context, findings: [] }, heat.hottest, hotC ?? 100) : null)
   const body: Omit<Evaluation, 'checks'> = {
     engine: ENGINE_VERSION,
     corners: corners.map(({ result }) => result),
     magnetics: magneticsResult(context, { coil, basis, corners, temperatureC: hotC }),
-    windings: windingResults(context, { coppers, coil, corners, hottest: heat.hottest, hotC }),
+    windings: windingResults(context, { copper, coil, corners, loss: heat.copper, flat: heat.flat, hotC }),
     leakages: leakages(context, coil),
     ...capacitanceResults(context, coil, basis),
     layout: coil?.layout ?? EMPTY_LAYOUT,
     losses: heat.losses,
+    lossesByCorner: heat.lossesByCorner,
     thermal: heat.thermal,
     boundaries: boundaryResults(context, coil, voltageCorners(context, { basis, coil, corners })),
     mass: massOf(context, coppers),

@@ -4,12 +4,14 @@ import type { ThermalClassC } from '../thermal/classes'
 import { settleTemperature } from '../thermal/fixed-point'
 import type { FixedPoint } from '../thermal/fixed-point'
 import { boxSurfaceMm2, temperatureRiseK } from '../thermal/temperature-rise'
+import { sampled } from '../thermal/smooth'
+import { TAIL_SHARE } from '../losses/copper-loss'
+import type { CopperLoss } from '../losses/copper-loss'
 import { coreHeat } from './core-loss'
+import type { CopperStage } from './copper-loss'
 import { attempt, explain, report } from './context'
 import type { Context } from './context'
 import type { CornerState } from './corner-result'
-import { copperLoss } from './windings'
-import type { WindingCopper } from './windings'
 
 /** No hotter than this is searched: beyond it the laws of copper and ferrite loss do not hold. */
 const CEILING_C = 250
@@ -18,12 +20,17 @@ const CEILING_C = 250
 const COMPARISON_C = 100
 
 export const THERMAL_MODEL = 'ΔT = 450·ψ^0.826, mean of the part, natural convection, box without its base (McLyman); ±25 %'
-export const LOSS_MODEL = 'copper: Dowell, one-dimensional, each harmonic; core: improved generalised Steinmetz'
+export const LOSS_MODEL = 'copper: skin and proximity of each layer, each harmonic; core: improved generalised Steinmetz'
 
 export interface Heat {
   /** The full-load corner with the greatest loss. */
   hottest: CornerState | null
+  /** Copper loss there at the settled temperature. */
+  copper: CopperLoss | null
+  /** The same in the one-dimensional field; null where it is the only one. */
+  flat: CopperLoss | null
   losses: LossResult
+  lossesByCorner: LossResult[]
   thermal: ThermalResult
   /** Derivative of the rise by temperature at the settled point; null when it did not settle. */
   loopGain: number | null
@@ -31,56 +38,68 @@ export interface Heat {
 }
 
 interface HeatInput {
-  coppers: readonly WindingCopper[]
+  copper: CopperStage
   corners: readonly CornerState[]
 }
 
 interface Loss {
+  copper: CopperLoss | null
+  flat?: CopperLoss | null
   copperW: number | null
   coreW: number | null
 }
 
-function lossAt(context: Context, coppers: readonly WindingCopper[], corner: CornerState | null, temperatureC: number): Loss {
-  const complete = coppers.length > 0 && coppers.length === context.specification.windings.length
-  const parts = coppers.map((copper) => copperLoss(context, copper, corner, temperatureC))
-  const known = complete && parts.every((part) => part !== null)
-  return { copperW: known ? parts.reduce((sum, part) => sum + part!.lossW, 0) : null, coreW: coreHeat(context, corner, temperatureC)?.lossW ?? null }
+function lossAt(context: Context, stage: CopperStage, corner: CornerState | null, temperatureC: number): Loss {
+  const copper = stage.at(corner, temperatureC)
+  return { copper, copperW: stage.complete && copper ? copper.totalW : null, coreW: coreHeat(context, corner, temperatureC)?.lossW ?? null }
 }
 
-const total = ({ copperW, coreW }: Loss) => (copperW ?? 0) + (coreW ?? 0)
+const total = ({ copperW, coreW }: Pick<Loss, 'copperW' | 'coreW'>) => (copperW ?? 0) + (coreW ?? 0)
 
 /** Losses and temperature in the corner that heats most, iterated to a fixed point. */
-export function heatBalance(context: Context, { coppers, corners }: HeatInput): Heat {
+export function heatBalance(context: Context, { copper, corners }: HeatInput): Heat {
   const fullLoad = corners.filter(({ result }) => ['minimum-input', 'nominal-input', 'maximum-input'].includes(result.name))
   const quiet = { ...context, findings: [] }
   const hottest = fullLoad.reduce<{ corner: CornerState; lossW: number } | null>((worst, corner) => {
-    const lossW = attempt(quiet, 'windings', () => total(lossAt(quiet, coppers, corner, COMPARISON_C))) ?? 0
+    const lossW = attempt(quiet, 'windings', () => total(lossAt(quiet, copper, corner, COMPARISON_C))) ?? 0
     return worst && worst.lossW >= lossW ? worst : { corner, lossW }
   }, null)?.corner ?? null
   const ambientC = context.requirement?.ambientC ?? context.specification.insulation.maximumAmbientC.value
   const surfaceMm2 = surfaceOf(context)
-  const settled = ambientC === null || surfaceMm2 === null ? null : settle(context, { coppers, hottest, ambientC, surfaceMm2 })
+  const settled = ambientC === null || surfaceMm2 === null ? null : settle(context, { copper, hottest, ambientC, surfaceMm2 })
   const temperatureC = settled?.state === 'settled' ? settled.temperatureC : null
-  const loss = attempt(quiet, 'windings', () => lossAt(quiet, coppers, hottest, temperatureC ?? COMPARISON_C)) ?? { copperW: null, coreW: null }
+  const lossIn = (corner: CornerState | null) => attempt(quiet, 'windings', () => lossAt(quiet, copper, corner, temperatureC ?? COMPARISON_C)) ?? { copper: null, copperW: null, coreW: null }
+  const flat = copper.flatAt(hottest, temperatureC ?? COMPARISON_C)
+  const loss = { ...lossIn(hottest), flat }
+  reportRest(context, loss.copper)
   return {
     hottest,
+    copper: loss.copper,
+    flat,
     temperatureC,
     loopGain: settled?.state === 'settled' ? settled.loopGain : null,
     losses: lossResult(context, hottest, loss),
+    lossesByCorner: corners.map((corner) => lossResult(context, corner, corner === hottest ? loss : { ...lossIn(corner), flat: copper.flatAt(corner, temperatureC ?? COMPARISON_C) })),
     thermal: thermalResult(context, { ambientC, surfaceMm2, temperatureC, lossW: total(loss) }),
   }
 }
 
-function settle(context: Context, input: { coppers: readonly WindingCopper[]; hottest: CornerState | null; ambientC: number; surfaceMm2: number }): FixedPoint | null {
+/** Says where so many harmonics count that the sum ends before the rest is small. */
+function reportRest(context: Context, loss: CopperLoss | null): void {
+  if (loss && loss.tailShare > TAIL_SHARE * 1.5) report(context, 'harmonic-sum-capped', 'note', 'windings', { harmonics: loss.orders, tailShare: loss.tailShare })
+}
+
+function settle(context: Context, input: { copper: CopperStage; hottest: CornerState | null; ambientC: number; surfaceMm2: number }): FixedPoint | null {
+  const { copper, hottest, ambientC, surfaceMm2 } = input
   const quiet = { ...context, findings: [] }
-  const probe = lossAt(quiet, input.coppers, input.hottest, Math.min(Math.max(input.ambientC, -60), CEILING_C))
+  const probe = lossAt(quiet, copper, hottest, COMPARISON_C)
   // A rise from copper alone would be half the truth where the core's loss is not known.
-  if (probe.copperW === null || (probe.coreW === null && input.hottest !== null)) return null
+  if (probe.copperW === null || (probe.coreW === null && hottest !== null)) return null
   const point = attempt(context, 'requirement.ambientC', () =>
     settleTemperature({
-      ambientC: input.ambientC,
-      lossW: (temperatureC) => total(lossAt(quiet, input.coppers, input.hottest, temperatureC)),
-      riseK: (lossW) => temperatureRiseK({ kind: 'mclyman-surface', surfaceMm2: input.surfaceMm2 }, lossW),
+      ambientC,
+      lossW: sampled((temperatureC) => total(lossAt(quiet, copper, hottest, temperatureC)), { from: ambientC, to: CEILING_C, count: 6 }),
+      riseK: (lossW) => temperatureRiseK({ kind: 'mclyman-surface', surfaceMm2 }, Math.max(0, lossW)),
       ceilingC: CEILING_C,
     }),
   )
@@ -95,16 +114,19 @@ function surfaceOf(context: Context): number | null {
   return box && attempt(context, 'former.envelope', () => boxSurfaceMm2({ ...box, withoutBase: true }))
 }
 
-function lossResult(context: Context, hottest: CornerState | null, { copperW, coreW }: Loss): LossResult {
+function lossResult(context: Context, corner: CornerState | null, { copper, flat, copperW, coreW }: Loss): LossResult {
   const { core, sets } = context
   const complete = copperW !== null && coreW !== null
   return {
-    corner: hottest?.result.name ?? 'nominal-input',
+    corner: corner?.result.name ?? 'nominal-input',
     copperW,
     coreW,
     totalW: complete ? copperW + coreW : null,
     coreDensityWPerM3: coreW !== null && core ? coreW / (core.effectiveVolumeMm3 * sets * 1e-9) : null,
     model: LOSS_MODEL,
+    copperOneDimensionalW: copperW === null ? null : (flat?.totalW ?? null),
+    harmonics: copper?.orders ?? null,
+    harmonicTailShare: copper?.tailShare ?? null,
   }
 }
 

@@ -70,28 +70,3 @@ export function heightInSkinDepths(layer: EquivalentLayer, skinDepthMm: number):
   requirePositive('skinDepthMm', skinDepthMm)
   return (layer.heightMm * Math.sqrt(layer.porosity)) / skinDepthMm
 }
-
-/**
- * Ratio of ac to dc resistance of a single round wire alone in space, Re{(κ/2)·J0(κ)/J1(κ)} with κ = (1 − j)·r/δ.
- *
- * Source: exact solution in Bessel functions (Kelvin); here by their power series, for d/δ up to 20.
- *
- * @throws RangeError unless d/δ lies between 0 and 20
- */
-export function isolatedRoundWireFactor(diameterInSkinDepths: number): number {
-  requireBetween('diameterInSkinDepths', diameterInSkinDepths, 0, 20)
-  // With z²/4 = −j·q, the ratio (z/2)·J0/J1 is Σ(jq)ⁿ/(n!)² over Σ(jq)ⁿ/(n!(n+1)!).
-  const q = diameterInSkinDepths ** 2 / 8
-  let term = 1
-  const j0 = [0, 0]
-  const j1 = [0, 0]
-  for (let n = 0; n < 400; n++) {
-    const part = n % 2
-    const sign = n % 4 < 2 ? 1 : -1
-    j0[part]! += sign * term
-    j1[part]! += (sign * term) / (n + 1)
-    term *= q / (n + 1) ** 2
-    if (term < 1e-18) break
-  }
-  return (j0[0]! * j1[0]! + j0[1]! * j1[1]!) / (j1[0]! ** 2 + j1[1]! ** 2)
-}

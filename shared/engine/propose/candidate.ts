@@ -56,7 +56,7 @@ export function buildCandidate(input: SearchInput, first: Design): Candidate {
 function build(input: SearchInput, design: Design, tapes: Tapes): Candidate {
   const { document, pins } = compose({ requirement: input.requirement, design, library: input.library, index: input.index, preferences: input.preferences, ...tapes })
   const evaluation = evaluate(document, input.library)
-  const rejection = pins.missing > 0 ? 'pins' : judge(evaluation, input.requirement, input.preferences)
+  const rejection = pins.missing > 0 ? 'pins' : judge(evaluation, input.preferences)
   return { document, evaluation, design, rejection, compromises: compromisesOf(evaluation) + doubtsOf(design) }
 }
 

@@ -1,10 +1,6 @@
 import type { CheckResult, Evaluation } from '../evaluation'
-import type { RequirementSheet } from '../specification'
 import type { ProposalPreferences } from './preferences'
 import type { Rejection } from './reasons'
-
-/** Share of the permitted rise up to which a winding may lose more by proximity than the rule asks: its heat decides nothing. */
-const COOL_SHARE = 0.5
 
 /** Checks that an engineer would rather not have to answer, where a slightly larger core meets them. */
 const AVOIDED = new Set(['T01', 'T02', 'T03', 'T04', 'W04', 'W06', 'W08', 'P03', 'P04', 'E12', 'E15'])
@@ -18,27 +14,16 @@ export const brokenChecks = ({ checks }: Pick<Evaluation, 'checks'>, code: strin
 export const compromisesOf = ({ checks }: Pick<Evaluation, 'checks'>): number => checks.filter((check) => AVOIDED.has(check.code) && broken(check)).length
 
 /** The first reason why a layout is no proposal; null for one that is. */
-export function judge(evaluation: Evaluation, { permittedRiseK }: RequirementSheet, { buildLimit }: ProposalPreferences): Rejection | null {
+export function judge(evaluation: Evaluation, { buildLimit }: ProposalPreferences): Rejection | null {
   const { layout, findings } = evaluation
   const fails = (codes: readonly string[]) => codes.some((code) => brokenChecks(evaluation, code).length > 0)
   if (findings.some(({ code }) => code === 'turn-wider-than-layer')) return 'layer-width'
   if (layout.buildRatio > buildLimit || fails(['W03'])) return 'build'
   if (fails(['W01'])) return 'layer-width'
   if (fails(['E01'])) return 'flux'
-  if (tooResistive(evaluation, permittedRiseK)) return 'resistance'
+  // A high factor that does not stop release is a question: what it loses is in the temperature.
+  if (brokenChecks(evaluation, 'T03').some(({ severity }) => severity === 'S')) return 'resistance'
   if (fails(['T07', 'T08', 'T11'])) return 'temperature'
   if (fails(['I04', 'I05', 'I08', 'I09', 'I10'])) return 'insulation'
   return null
-}
-
-/** Proximity loss beyond the rule is a failure where it stops release, or where the part is warm. */
-function tooResistive(evaluation: Evaluation, permittedRiseK: number | null): boolean {
-  const failing = brokenChecks(evaluation, 'T03')
-  return failing.some(({ severity }) => severity === 'S') || (failing.length > 0 && !isCool(evaluation, permittedRiseK))
-}
-
-function isCool({ thermal: { riseK, limitC, ambientC } }: Evaluation, permittedRiseK: number | null): boolean {
-  const byClassK = limitC !== null && ambientC !== null ? limitC - 5 - ambientC : Infinity
-  const permittedK = Math.min(permittedRiseK ?? Infinity, byClassK)
-  return riseK !== null && Number.isFinite(permittedK) && riseK <= COOL_SHARE * permittedK
 }

@@ -74,7 +74,9 @@ export function tryCore(input: SearchInput, core: CoreRow, former: FormerRow): T
 function betterWishes({ evaluation, design }: Candidate, { litz, temperatureC }: WireWishes): WireWishes | null {
   const windingOf = ({ path }: { path: string }) => design.windings[Number(path.split('.')[1])]!
   const losing = brokenChecks(evaluation, 'T03').map(windingOf).filter(({ id, wire }) => !litz.has(id) && wire.insulation.startsWith('enamel'))
-  if (losing.length > 0) return { litz: new Set([...litz, ...losing.map(({ id }) => id)]), temperatureC }
+  // Windings of one wire and as many turns stay alike, as the two of a 1:1 part must.
+  const alike = design.windings.filter(({ turns, wire }) => losing.some((one) => one.turns === turns && one.wire.wire.id === wire.wire.id))
+  if (losing.length > 0) return { litz: new Set([...litz, ...alike.map(({ id }) => id)]), temperatureC }
   const settledC = evaluation.thermal.windingC
   const thick = brokenChecks(evaluation, 'T02').map(windingOf).some(({ makeshift }) => !makeshift)
   return thick && settledC !== null && settledC < temperatureC - 1 ? { litz, temperatureC: Math.floor(settledC) - 1 } : null

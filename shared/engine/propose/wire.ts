@@ -67,7 +67,7 @@ export function chooseWire(library: Library, need: WireNeed, preferences: Propos
   const depthMm = skinDepthMm(need)
   const litz = need.insulation.startsWith('enamel') ? litzWire(library, need, depthMm) : null
   // A wire thinner than the skin depth gains nothing from strands.
-  const stranded = need.style === 'litz' && need.acShare >= SMALL_AC_SHARE && !(round && round.row.conductorMm <= depthMm)
+  const stranded = need.style === 'litz' && !(round && round.row.conductorMm <= depthMm)
   const good = stranded ? (litz ?? round) : (round ?? litz)
   const wire = good ?? roundWire(rounds, denser(need), { skinDepths: skinDepthsOf(need) }) ?? roundWire(rounds, need, { skinDepths: 4 }) ?? roundWire(rounds, need, { skinDepths: 8, parallel: 12 })
   return wire && { row: wire.row, use: useOf(wire, need), makeshift: wire.row.conductorMm > greatestDiameterMm(need) || wire.parallel > MOST_PARALLEL }

@@ -52,10 +52,10 @@ export function* evaluateFinalists(scope: Scope, { bySize, rejected, screened }:
   return outcome(scope, counted)
 }
 
-/** Layouts tried on one size, and how much less copper the next one has after one that did not fit. */
+/** Layouts tried on one size, and how much less copper the next one has after one that did not fit or whose thick wire lost too much. */
 const MOST_TRIES = 5
 const LESS_COPPER = 0.8
-const NO_ROOM: ReadonlySet<Rejection> = new Set<Rejection>(['window', 'build', 'layer-width'])
+const TOO_MUCH_COPPER: ReadonlySet<Rejection> = new Set<Rejection>(['window', 'build', 'layer-width', 'resistance'])
 
 /** On one size: the variant of least loss that fits, and beside it one of little more loss with a quarter less copper. */
 function onSize(scope: Scope, size: Size, kept: readonly Ranked[]): { made: Made[]; evaluated: number; failure: Tried | null } {
@@ -70,7 +70,7 @@ function onSize(scope: Scope, size: Size, kept: readonly Ranked[]): { made: Made
     const candidate = goodCandidate(tried)
     failure ??= candidate ? null : tried
     if (candidate) made.push({ candidate, size, material: ranked.variant.material, id: ranked.id })
-    else if (!NO_ROOM.has(reasonOf(tried))) break
+    else if (!TOO_MUCH_COPPER.has(reasonOf(tried))) break
     const { copperMm3, lossW } = ranked.estimate
     open = open.filter(({ estimate }) => estimate.copperMm3 <= LESS_COPPER * copperMm3 && (!candidate || estimate.lossW <= 1.3 * lossW))
   }

@@ -1,3 +1,4 @@
+import { requirePositive } from '../require'
 import { meanSquare, peak } from './statistics'
 import { constantWaveform, createWaveform, waveformSegments } from './waveform'
 import type { Waveform, WaveformPoint, WaveformSegment } from './waveform'
@@ -54,6 +55,46 @@ function valueAfter(segments: readonly WaveformSegment[], tS: number): number {
   return segment ? valueWithin(segment, tS) : 0
 }
 
+/**
+ * The waveform with each jump as a ramp that begins where the jump was and takes `edgeS`, but no longer than a quarter of the
+ * period; waveforms that jump against each other, as in a commutation, keep their sum. The same waveform when it has no jump.
+ *
+ * Source: superposition.
+ *
+ * @throws RangeError unless the duration is positive
+ */
+export function withEdges(waveform: Waveform, edgeS: number): Waveform {
+  requirePositive('edgeS', edgeS)
+  const { periodS } = waveform
+  const lengthS = Math.min(edgeS, periodS / 4)
+  const jumps = jumpsOf(waveform)
+  if (jumps.length === 0) return waveform
+  return sumWaveforms([waveform, ...jumps.map(({ atS, by }) => decay(periodS, { atS, by, lengthS }))])
+}
+
+interface Jump {
+  atS: number
+  by: number
+}
+
+/** Steps of more than rounding, the one back to the start of the period at time 0. */
+function jumpsOf({ periodS, points }: Waveform): Jump[] {
+  const least = 1e-9 * Math.max(...points.map(([, value]) => Math.abs(value)))
+  const steps = points.slice(1).map(([atS, value], index): Jump => ({ atS: atS === points[index]![0] && atS < periodS ? atS : -1, by: value - points[index]![1] }))
+  const back: Jump = { atS: 0, by: points[0]![1] - points[points.length - 1]![1] }
+  return [back, ...steps].filter(({ atS, by }) => atS >= 0 && Math.abs(by) > least)
+}
+
+/** What takes a jump back: −by at its time, falling to nothing over the length. */
+function decay(periodS: number, { atS, by, lengthS }: Jump & { lengthS: number }): Waveform {
+  const endS = atS + lengthS
+  const before: WaveformPoint[] = atS > 0 ? [[0, 0], [atS, 0]] : []
+  if (endS <= periodS) return { periodS, points: [...before, [atS, -by], [endS, 0], ...(endS < periodS ? [[periodS, 0] as const] : [])] }
+  // Over the end of the period and on from its start.
+  const left = (-by * (endS - periodS)) / lengthS
+  return { periodS, points: [[0, left], [endS - periodS, 0], [atS, 0], [atS, -by], [periodS, left]] }
+}
+
 /** The first waveform less the second. */
 export const differenceOfWaveforms = (first: Waveform, second: Waveform): Waveform => sumWaveforms([first, scaleWaveform(second, -1)])
 
@@ -69,6 +110,29 @@ export function runningIntegral(waveform: Waveform, initial = 0): Waveform {
     points.push([endS, sum])
   }
   return { periodS: waveform.periodS, points }
+}
+
+/**
+ * Mean over the period of the product of two waveforms, in the product of their units. Exact: ramps from a to b and from c to d
+ * have (2ac + ad + bc + 2bd)/6.
+ *
+ * @throws RangeError when the periods differ
+ */
+export function meanProduct(first: Waveform, second: Waveform): number {
+  if (first.periodS !== second.periodS) throw new RangeError(`waveforms must have one period ${first.periodS}: ${second.periodS}`)
+  const [one, other] = [waveformSegments(first), waveformSegments(second)]
+  let sum = 0
+  let startS = 0
+  for (let i = 0, k = 0; i < one.length && k < other.length; ) {
+    const [a, b] = [one[i]!, other[k]!]
+    const endS = Math.min(a.endS, b.endS)
+    const [a0, a1, b0, b1] = [valueWithin(a, startS), valueWithin(a, endS), valueWithin(b, startS), valueWithin(b, endS)]
+    sum += ((endS - startS) * (2 * a0 * b0 + a0 * b1 + a1 * b0 + 2 * a1 * b1)) / 6
+    startS = endS
+    if (a.endS === endS) i += 1
+    if (b.endS === endS) k += 1
+  }
+  return sum / first.periodS
 }
 
 export interface WorkingVoltage {

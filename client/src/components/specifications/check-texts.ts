@@ -33,9 +33,11 @@ function nearestChange(values: Values): string {
 /** What the engine found about a document or a proposal. */
 export const FINDING_TEXTS: Readonly<Record<FindingCode, (values: Values) => string>> = {
   'bulk-capacitor-too-small': () => 'The bulk capacitor runs empty between two peaks of the mains; take a larger one or allow for a lower minimum.',
+  'commutation-time-assumed': (v) => `The current's edges are ideal; the copper loss takes them to last ${amount(v, 'edgeS', 's')}.`,
   'core-loss-flux-out-of-range': () => 'The flux density lies outside the range of the loss data.',
   'core-loss-frequency-out-of-range': () => 'The frequency lies outside the range of the loss data.',
   'core-loss-temperature-out-of-range': () => 'The temperature lies outside the range of the loss data.',
+  'harmonic-sum-capped': (v) => `The copper loss sums ${named(v, 'harmonics')} harmonics; ${percent(v, 'tailShare')} of the loss by alternating current lies beyond and is estimated.`,
   'no-core-loss-data': (v) => `The library has no loss data for ${named(v, 'material', 'the material')}.`,
   'temperature-out-of-range': () => 'The temperature lies outside the range of the data.',
   'thermal-runaway': () => 'More heat feeds itself: no temperature is found at which the part settles.',
