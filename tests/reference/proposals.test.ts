@@ -5,6 +5,7 @@ import { specificationDocumentSchema } from '#shared/contracts/specification-doc
 import { blankSpecification, evaluate, propose, refresh, reproposeTests } from '#shared/engine/index'
 import type { Evaluation } from '#shared/engine/evaluation'
 import type { FlybackDuty, RequirementSheet, SpecificationDocument, Winding } from '#shared/engine/specification'
+import { shownAt, shownFigures } from './shown-figures'
 
 const library = shippedLibrary()
 const SHEETS = { 'buoy supply': BUOY_SUPPLY, 'harbour supply': HARBOUR_SUPPLY, 'coupled inductor': COUPLED_INDUCTOR }
@@ -93,9 +94,9 @@ describe.each(proposals)('the proposal for the $name', ({ proposal, evaluation, 
   })
 
   it('says of every figure that it shows how it came about', () => {
-    for (const path of figures(evaluation)) {
+    for (const path of shownFigures(evaluation)) {
       expect(evaluation.working[path], path).toBeDefined()
-      expect(evaluation.working[path]!.value, path).toBe(at(evaluation, path))
+      expect(evaluation.working[path]!.value, path).toBe(shownAt(evaluation, path))
       expect(evaluation.working[path]!.source, path).not.toBe('')
     }
   })
@@ -105,25 +106,6 @@ describe.each(proposals)('the proposal for the $name', ({ proposal, evaluation, 
     expect(refresh(proposal.document, library)).toEqual(proposal.document)
   })
 })
-
-/** Dotted paths of all figures that a screen or the drawing shows. */
-function figures(evaluation: Evaluation): string[] {
-  const { corners, magnetics, windings, leakages, capacitances, commonModeCapacitances, boundaryCapacitances, selfResonance, layout, losses, thermal, boundaries, mass } = evaluation
-  const hidden = /currentWaveform|fluxWaveform|layout\.items|layout\.outlines|\.layers$|turnsPerLayer|paths\.\d+\.points/
-  const paths: string[] = []
-  const walk = (value: unknown, path: string) => {
-    if (hidden.test(path) && !/boundaries.*layers$/.test(path)) return
-    if (typeof value === 'number') paths.push(path.replace(/\.value$/, ''))
-    else if (value !== null && typeof value === 'object') for (const [key, entry] of Object.entries(value)) walk(entry, path === '' ? key : `${path}.${key}`)
-  }
-  walk({ corners, magnetics, windings, leakages, capacitances, commonModeCapacitances, boundaryCapacitances, selfResonance, layout, losses, thermal, boundaries, mass }, '')
-  return paths
-}
-
-function at(evaluation: Evaluation, path: string): unknown {
-  const found = path.split('.').reduce<unknown>((value, key) => (value as Record<string, unknown>)[key], evaluation)
-  return found !== null && typeof found === 'object' ? (found as { value: number }).value : found
-}
 
 describe('the three sheets', () => {
   it('gives the buoy supply its outputs within a percent by whole turns', () => {

@@ -2,24 +2,11 @@ import { describe, expect, it } from 'vitest'
 import { shippedLibrary } from '#server/db/seed/parts/library'
 import { requirementSheetSchema, specificationDocumentSchema } from '#shared/contracts/specification-document'
 import { evaluate, propose } from '#shared/engine/index'
-import type { Evaluation } from '#shared/engine/evaluation'
+import { shownAt, shownFigures } from './shown-figures'
 import { TRANSFORMER_SHEETS } from './topology-sheets'
 
 const library = shippedLibrary()
 const FULL_LOAD = ['minimum-input', 'nominal-input', 'maximum-input']
-
-/** Values that a person would see, by the path of their working. */
-function figures(value: unknown, path: string): string[] {
-  if (typeof value === 'number') return [path]
-  if (Array.isArray(value)) return value.flatMap((entry, index) => figures(entry, `${path}.${index}`))
-  return []
-}
-
-const shownCorners = ({ corners }: Evaluation) => corners.flatMap(({ windings: _windings, outputs, rectifiers, figures: _own, name: _name, mode: _mode, ...corner }, index) => [
-  ...Object.entries(corner).flatMap(([key, value]) => figures(value, `corners.${index}.${key}`)),
-  ...outputs.flatMap(({ outputId: _id, mode: _outputMode, ...output }, position) => Object.keys(output).map((key) => `corners.${index}.outputs.${position}.${key}`)),
-  ...rectifiers.map((_, position) => `corners.${index}.rectifiers.${position}.reversePeakV`),
-])
 
 describe.each(TRANSFORMER_SHEETS.map((sheet) => ({ name: `${sheet.duty.topology}${'reset' in sheet.duty ? `, ${sheet.duty.reset}` : ''}${'control' in sheet.duty ? `, ${sheet.duty.control}` : ''}`, sheet })))('a sheet for $name', ({ sheet }) => {
   const { document, findings } = propose(sheet, library)
@@ -55,7 +42,11 @@ describe.each(TRANSFORMER_SHEETS.map((sheet) => ({ name: `${sheet.duty.topology}
     expect(evaluation.thermal.marginK).toBeGreaterThan(0)
   })
 
-  it('says of every figure of its corners how it came about', () => {
-    for (const path of shownCorners(evaluation)) expect(evaluation.working[path], path).toBeDefined()
+  it('says of every figure that it shows how it came about', () => {
+    for (const path of shownFigures(evaluation)) {
+      expect(evaluation.working[path], path).toBeDefined()
+      expect(evaluation.working[path]!.value, path).toBe(shownAt(evaluation, path))
+      expect(evaluation.working[path]!.source, path).not.toBe('')
+    }
   })
 })

@@ -47,11 +47,21 @@ export function magneticsResult(context: Context, { coil, basis, corners, temper
     boundaryInductanceH: boundaryInductance(corners),
     ...swingOf(context, corners),
     ...biasResult(context, basis, corners),
-    fluxTransientT: isBipolar(context) ? (worst?.fluxT ?? null) : null,
+    fluxTransientT: firstPulseFlux(context, worst?.fluxT ?? null),
   }
 }
 
 const isBipolar = ({ requirement }: Context) => requirement !== null && topologyOf(requirement.duty).core === 'bipolar'
+
+/** A core that is driven both ways stands at zero flux before the first pulse, which then takes it twice as far as any later one. */
+function firstPulseFlux(context: Context, fluxT: number | null): number | null {
+  if (!isBipolar(context)) return null
+  explain(context, 'magnetics.fluxTransientT', () => ({
+    symbol: 'B̂_0', value: fluxT, unit: 'T', formula: 'λ_max/(N·A_min), the longest pulse at the greatest input from zero flux', source: 'Faraday’s law',
+    inputs: [{ name: 'Î_max', value: fluxT === null ? 'not known' : 'as for the worst flux', unit: '', origin: 'magnetics.worstCurrentA' }],
+  }))
+  return fluxT
+}
 
 function peakFlux(context: Context, corners: readonly CornerState[]): number | null {
   const { core } = context

@@ -52,6 +52,8 @@ function magnetics({ magnetics: m }: Evaluation): FigureGroup {
       { label: 'Boundary of continuous conduction', text: si(m.boundaryInductanceH, 'H') },
       { label: 'Peak flux density, full load', text: si(m.fluxPeakT, 'T'), why: 'magnetics.fluxPeakT' },
       { label: 'Worst flux density', text: si(m.fluxWorstT, 'T'), note: m.worstCurrentA === null ? undefined : `at ${si(m.worstCurrentA, 'A')}, on the least area`, why: 'magnetics.fluxWorstT' },
+      { label: 'Flux swing, greatest', text: si(m.fluxSwingT, 'T'), note: `${si(m.voltSecondsVs, 'Vs')} at the primary, on the least area`, why: 'magnetics.fluxSwingT' },
+      ...(m.fluxTransientT == null ? [] : [{ label: 'First pulse from zero flux', text: si(m.fluxTransientT, 'T'), note: 'longest pulse at the greatest input', why: 'magnetics.fluxWorstT' }]),
       { label: 'Saturation', text: si(m.saturationT, 'T'), note: m.saturationTemperatureC === null ? undefined : `at ${celsius(m.saturationTemperatureC)}`, why: 'magnetics.saturationT' },
       { label: 'Share of saturation used', text: percent(m.fluxUtilisation), verdict: below(m.fluxUtilisation, 0.8), note: 'limit 80 %' },
     ],
