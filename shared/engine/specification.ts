@@ -9,6 +9,10 @@
 import type { FullBridgeDuty, HalfBridgeDuty, PushPullDuty } from './duties/bridges'
 import type { ForwardDuty } from './duties/forward'
 import type { LlcDuty } from './duties/llc'
+import type { CommonModeChokeDuty } from './duties/common-mode-choke'
+import type { CurrentSenseDuty } from './duties/current-sense'
+import type { GateDriveDuty } from './duties/gate-drive'
+import type { InductorDuty } from './duties/inductor'
 import type { LibraryKind } from './library'
 
 /** Written into every stored document; a change of shape is a new number with a reader for the old one. */
@@ -112,7 +116,18 @@ export interface RequirementSheet {
 
 export type InsulationMethod = 'margin-tape' | 'triple-insulated-wire' | 'functional'
 
-export type Duty = FlybackDuty | CoupledInductorDuty | ForwardDuty | HalfBridgeDuty | FullBridgeDuty | PushPullDuty | LlcDuty
+export type Duty =
+  | FlybackDuty
+  | ForwardDuty
+  | HalfBridgeDuty
+  | FullBridgeDuty
+  | PushPullDuty
+  | LlcDuty
+  | CoupledInductorDuty
+  | InductorDuty
+  | CommonModeChokeDuty
+  | GateDriveDuty
+  | CurrentSenseDuty
 
 /** The duty of one topology. */
 export type DutyOf<T extends Duty['topology']> = Extract<Duty, { topology: T }>
@@ -121,11 +136,24 @@ export type ConductionChoice =
   | { kind: 'discontinuous'; /** Share of the period in which no current flows at full load and minimum input. */ idleShare: number }
   | { kind: 'boundary' }
   | { kind: 'continuous'; /** ΔI peak-to-peak over the mean current during the on time, at minimum input and full load. */ rippleRatio: number }
+  /** The switch closes in a minimum of the ringing: the frequency is found, `switchingFrequencyHz` is that aimed at at minimum input and full load. */
+  | { kind: 'quasi-resonant'; maximumFrequencyHz: number; /** At the switched node, winding and switch together. */ nodeCapacitanceF: number }
+
+/** How the outputs of a flyback share the current while the switch is open. */
+export type FlybackSharing = 'in-proportion-to-load' | 'from-leakages'
+
+export interface FlybackOutputDuty extends ConverterOutput {
+  /**
+   * The output that this one stands on: `winding` joins the windings in series before the rectifiers, so that the lower one
+   * carries both currents; `output` stands on the lower output's voltage behind its rectifier. Null or absent: on its own return.
+   */
+  stackedOn?: { outputId: string; at: 'winding' | 'output' } | null
+}
 
 export interface FlybackDuty {
   topology: 'flyback'
   supply: Supply
-  outputs: ConverterOutput[]
+  outputs: FlybackOutputDuty[]
   switchingFrequencyHz: number
   conduction: ConductionChoice
   /** Output power over input power at full load, 0…1. */
@@ -141,6 +169,8 @@ export interface FlybackDuty {
   clampSpikeV: number | null
   /** Rated drain-source voltage of the switch; null when not known. */
   switchRatingV: number | null
+  /** Absent: in proportion to load. */
+  sharing?: FlybackSharing
 }
 
 /** Two windings on one core, each carrying direct current: SEPIC, Ćuk, Zeta and filter use. */

@@ -1,7 +1,10 @@
+import { flybackState } from '#shared/engine/topologies/flyback'
 import { pulseSenseState } from '#shared/engine/topologies/current-sense'
+import { harmonics } from '#shared/engine/waveforms/fourier'
 import { acRms, maximum, mean, minimum, peakToPeak, rms } from '#shared/engine/waveforms/statistics'
 import type { Waveform } from '#shared/engine/waveforms/waveform'
 import { valueAt } from '#shared/engine/waveforms/waveform'
+import jstat from 'jstat'
 import { describe, expect, it } from 'vitest'
 import circuits from './data/current-sense-circuits.json'
 import { expectWithin } from './relative'
@@ -61,5 +64,47 @@ describe.each(circuits.cases)('simulated circuit: $title', ({ inputs, results })
     const read = 1 - burden(state.burdenVoltageV, onS - READ_S) / burden(state.burdenVoltageV, READ_S)
     near(read, results.droop_fraction)
     expectWithin(state.droop, results.droop_fraction, 0.015)
+  })
+})
+
+// Source: jstat, a general-purpose library, integrates the currents of v = L·di/dt between the switching instants by Simpson's rule.
+describe.each([
+  { name: 'continuous', inputVoltageV: 24, currentA: 4 },
+  { name: 'discontinuous', inputVoltageV: 32, currentA: 0.3 },
+])('a flyback corner against numeric quadrature: $name', ({ name, inputVoltageV, currentA }) => {
+  const inductanceH = 80e-6
+  const frequencyHz = 100e3
+  const [n, secondaryV] = [3, 5.5]
+  const state = flybackState({ inputVoltageV, frequencyHz, primaryTurns: 24, primaryInductanceH: inductanceH, outputs: [{ turns: 8, voltageV: 5, rectifierDropV: 0.5, currentA }], regulatedOutput: 0, losses: { kind: 'ideal' } })
+  // The circuit by itself: instants from volt-second balance, currents from their rates, the level from the load.
+  const periodS = 1 / frequencyHz
+  const riseAPerS = inputVoltageV / inductanceH
+  const fallAPerS = (n * secondaryV) / inductanceH
+  const discontinuous = name === 'discontinuous'
+  const onS = discontinuous ? Math.sqrt((2 * inductanceH * currentA * secondaryV * periodS) / inputVoltageV ** 2) : (periodS * fallAPerS) / (riseAPerS + fallAPerS)
+  const offS = (onS * riseAPerS) / fallAPerS
+  const lowA = discontinuous ? 0 : (currentA * periodS) / (n * offS) - (riseAPerS * onS) / 2
+  const primary = (tS: number) => lowA + riseAPerS * tS
+  const secondary = (tS: number) => n * (lowA + riseAPerS * onS - fallAPerS * (tS - onS))
+  // Over 0 … 1, where the library's steps add up without rounding.
+  const integral = (of: (tS: number) => number, from: number, to: number) => (to - from) * jstat.simpson((u) => of(from + (to - from) * u), 0, 1, 1024)
+  const currents = [
+    { winding: 'primary', waveform: state.primary.currentA, of: primary, from: 0, to: onS },
+    { winding: 'secondary', waveform: state.outputs[0]!.currentA, of: secondary, from: onS, to: onS + offS },
+  ]
+
+  it('is in the mode that its name says', () => expect(state.mode).toBe(name))
+
+  it.each(currents)('$winding: mean and rms', ({ waveform, of, from, to }) => {
+    expectWithin(mean(waveform), integral(of, from, to) / periodS, 1e-9)
+    expectWithin(rms(waveform), Math.sqrt(integral((tS) => of(tS) ** 2, from, to) / periodS), 1e-9)
+  })
+
+  it.each(currents)('$winding: amplitudes of the first five harmonics', ({ waveform, of, from, to }) => {
+    harmonics(waveform, 5).forEach(({ order, cosine, sine }) => {
+      const omega = 2 * Math.PI * frequencyHz * order
+      expect(cosine).toBeCloseTo((2 / periodS) * integral((tS) => of(tS) * Math.cos(omega * tS), from, to), 7)
+      expect(sine).toBeCloseTo((2 / periodS) * integral((tS) => of(tS) * Math.sin(omega * tS), from, to), 7)
+    })
   })
 })

@@ -27,7 +27,10 @@ const mainsOnly = z.strictObject({
   conductionTimeS: notNegative,
 })
 
+const lineOnly = z.strictObject({ kind: z.literal('line'), minimumV: positive, nominalV: positive, maximumV: positive, lineFrequencyHz: positive })
+
 export const dcSupply = dcOnly.refine(inOrder, IN_ORDER)
+export const lineSupply = lineOnly.refine(inOrder, IN_ORDER)
 export const supply = z.discriminatedUnion('kind', [dcOnly, mainsOnly]).refine(inOrder, IN_ORDER)
 
 export const currentLimit = z.strictObject({ nominalA: positive, tolerance: share, delayS: notNegative })

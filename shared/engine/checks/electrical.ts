@@ -176,8 +176,9 @@ function biasCurrent({ evaluation }: CheckInput, { temperatureC, currentA, windi
 function limitAboveLoad({ document, evaluation, context }: CheckInput): Outcome[] {
   const duty = document.requirement?.duty
   const corner = evaluation.corners.find(({ name }) => name === 'minimum-input')
-  if (!duty?.currentLimit || !corner) return []
-  const { nominalA, tolerance } = duty.currentLimit
+  const limit = duty && dutyTraits(duty).currentLimit
+  if (!limit || !corner) return []
+  const { nominalA, tolerance } = limit
   // The switch of a coupled inductor carries both windings' currents, which peak together.
   const carried = duty.topology === 'coupled-inductor' ? corner.windings : corner.windings.filter(({ windingId }) => windingId === context.primary?.id)
   const peakA = carried.reduce((sum, winding) => sum + winding.peakA, 0)

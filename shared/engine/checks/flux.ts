@@ -74,7 +74,9 @@ function voltSeconds(input: CheckInput): Outcome[] {
   const winding = document.specification.windings.find(({ id }) => id === rated?.windingId)
   const atPrimaryVs = evaluation.magnetics.voltSecondsVs
   if (!rated || !winding || atPrimaryVs === null || !context.primary || context.primary.turns <= 0) return [notCheckable(path, { missing: rated ? 'applied volt-seconds' : 'volt-second product' })]
-  const appliedVs = (atPrimaryVs * winding.turns) / context.primary.turns
+  // A gate drive's first pulse comes before its capacitor is charged.
+  const firstVs = evaluation.corners.flatMap(({ figures }) => figures.flatMap(({ code, value }) => (code === 'first-pulse-volt-seconds' && value !== null ? [value] : [])))
+  const appliedVs = (Math.max(atPrimaryVs, ...firstVs) * winding.turns) / context.primary.turns
   return [atLeast({ value: rated.minimumVs, limit: 1.2 * appliedVs, unit: 'Vs', path, values: { winding: winding.name } })]
 }
 

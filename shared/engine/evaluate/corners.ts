@@ -50,8 +50,20 @@ export function cornersOf(context: Context, basis: InductanceBasis, coil: Coil |
   const topology = topologyOf(solved.duty)
   const points = topology.points?.(solved.duty) ?? converterPoints(context, solved.duty)
   const limited = limitPoint(context, solved, points)
-  return [...points, ...(limited ? [limited] : [])].flatMap((point) => cornerOf(context, solved, point) ?? [])
+  const corners = [...points, ...(limited ? [limited] : [])].flatMap((point) => cornerOf(context, solved, point) ?? [])
+  reportModeChanges(context, corners)
+  return corners
 }
+
+/** Light load that changes the way a converter conducts, at each input voltage where it does. */
+function reportModeChanges(context: Context, corners: readonly CornerState[]): void {
+  for (const { result: light } of corners.filter(({ result }) => result.name.startsWith('light-load'))) {
+    const full = corners.find(({ result }) => result.inputV === light.inputV && atFullLoad(result))?.result
+    if (full && full.mode !== light.mode) report(context, 'light-load-changes-mode', 'note', 'requirement.duty', { inputV: light.inputV, full: full.mode, light: light.mode })
+  }
+}
+
+const atFullLoad = ({ name }: { name: string }) => !name.startsWith('light-load') && name !== 'current-limit'
 
 function cornerOf(context: Context, { circuit, primary, areaMm2 }: SolvedCircuit, point: NamedPoint): CornerState | null {
   return reached(context, 'requirement.duty', () => {

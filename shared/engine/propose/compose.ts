@@ -69,6 +69,10 @@ const TITLES: Readonly<Record<Duty['topology'], string>> = {
   'full-bridge': 'Transformer, full-bridge',
   'push-pull': 'Transformer, push-pull',
   'llc': 'Transformer, resonant half-bridge',
+  'inductor': 'Inductor',
+  'common-mode-choke': 'Choke, common-mode',
+  'gate-drive': 'Transformer, gate-drive',
+  'current-sense': 'Transformer, current-sense',
 }
 
 function fillTitle({ title }: WindingSpecification, { duty }: RequirementSheet): void {
@@ -147,13 +151,14 @@ function roundInductance(inductanceH: number): number {
 
 /** Spread of a core's A_L without gap, and what winding and reading add below it. Source: IEC 62358 practice, ±25 %. */
 const UNGAPPED_SPREAD = 0.25
-const UNGAPPED_TOLERANCE = -0.3
+const UNGAPPED_EXTRA = 0.05
 
 /** Without a gap the inductance has a lower limit only, and nothing controls it but core and turns. */
 function fillUngapped({ core, electrical }: WindingSpecification, design: Design, primary: Design['windings'][number]): void {
   const nominalH = roundInductance(design.inductanceH)
-  core.gap = { ...core.gap, control: proposed('none'), alH: proposed(toDigits(nominalH / primary.turns ** 2, 3), 'reference'), alTolerance: proposed(UNGAPPED_SPREAD, 'reference'), position: proposed('none') }
-  electrical.inductance = proposed({ windingId: primary.id, nominalH, lowerTolerance: UNGAPPED_TOLERANCE, upperTolerance: null, frequencyHz: nominalH >= 1e-3 ? 10e3 : 100e3, levelV: 0.25, temperatureC: 25, model: 'series' })
+  const spread = Math.max(UNGAPPED_SPREAD, design.material.permeabilityTolerance)
+  core.gap = { ...core.gap, control: proposed('none'), alH: proposed(toDigits(nominalH / primary.turns ** 2, 3), 'reference'), alTolerance: proposed(spread, 'reference'), position: proposed('none') }
+  electrical.inductance = proposed({ windingId: primary.id, nominalH, lowerTolerance: -clean(spread + UNGAPPED_EXTRA), upperTolerance: null, frequencyHz: nominalH >= 1e-3 ? 10e3 : 100e3, levelV: 0.25, temperatureC: 25, model: 'series' })
 }
 
 /** The inductance to two or three digits; A_L to three, which controls; the gap is for reference. */

@@ -54,7 +54,7 @@ function withoutSolution(requirement: RequirementSheet, work: () => Proposal): P
 function proposed(requirement: RequirementSheet, library: Library, wishes: ProposalPreferences): Proposal {
   const plan = planOf(requirement)
   if (!plan) return unplannedProposal(requirement)
-  const choice = chooseMaterial(library, plan.frequencyHz, wishes.materialId)
+  const choice = chooseMaterial(library, plan.frequencyHz, wishes.materialId, plan.materialUse)
   const findings = [...plan.findings, ...protectionFindings(requirement, plan.onMains), ...choice.findings]
   if (!choice.material || library.tapes.length === 0) return blankProposal(requirement, findings)
 

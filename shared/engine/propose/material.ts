@@ -17,9 +17,10 @@ export interface MaterialChoice {
  * Material for a power part: the preferred one, else the power grade with the least loss at the frequency whose fit holds
  * there and whose saturation is known when hot.
  */
-export function chooseMaterial(library: Library, frequencyHz: number, preferredId: string | null): MaterialChoice {
+export function chooseMaterial(library: Library, frequencyHz: number, preferredId: string | null, use: 'power' | 'common-mode' = 'power'): MaterialChoice {
   const preferred = library.materials.find(({ id }) => id === preferredId)
   if (preferred) return { material: preferred, reasons: [{ code: 'material-preferred', path: 'core.material', values: { material: preferred.name } }], findings: [] }
+  if (use === 'common-mode') return mostPermeable(library, frequencyHz)
   const usable = library.materials.filter(({ use, saturation, lossFits }) => use === 'power' && lossFits.length > 0 && saturation.some(({ temperatureC }) => temperatureC >= 100))
   const within = usable.filter(({ lossFits }) => lossFits.some(({ minimumHz, maximumHz }) => frequencyHz >= minimumHz && frequencyHz <= maximumHz))
   const ranked = (within.length > 0 ? within : usable).map((material) => ({ material, lossWPerM3: lossAt(material, frequencyHz) })).sort((a, b) => a.lossWPerM3 - b.lossWPerM3 || (a.material.id < b.material.id ? -1 : 1))
@@ -30,6 +31,14 @@ export function chooseMaterial(library: Library, frequencyHz: number, preferredI
     reasons: [{ code: 'material-least-loss', path: 'core.material', values: { material: best.material.name, lossWPerM3: best.lossWPerM3, frequencyHz, ...COMPARISON } }],
     findings: within.length > 0 ? [] : [{ code: 'material-fit-out-of-range', severity: 'warning', path: 'core.material', values: { material: best.material.name, frequencyHz } }],
   }
+}
+
+/** Against common-mode noise the permeability counts; the flux is small. */
+function mostPermeable({ materials }: Library, frequencyHz: number): MaterialChoice {
+  const usable = materials.filter(({ use, saturation }) => use === 'common-mode' && saturation.length > 0)
+  const best = [...usable].sort((a, b) => b.initialPermeability - a.initialPermeability || (a.id < b.id ? -1 : 1))[0]
+  if (!best) return { material: null, reasons: [], findings: [{ code: 'material-not-in-library', severity: 'error', path: 'core.material', values: { frequencyHz } }] }
+  return { material: best, reasons: [{ code: 'material-preferred', path: 'core.material', values: { material: best.name } }], findings: [] }
 }
 
 function lossAt({ lossFits }: MaterialRow, frequencyHz: number): number {

@@ -74,7 +74,7 @@ function outputNames({ outputs }: FlybackDuty): string[] {
 function sizingReasons(duty: FlybackDuty, sizing: ReturnType<typeof sizeFlyback>): ProposalReason[] {
   const { ratio, dutyRatio, reflectedV, inductanceH } = sizing
   const values = { ratio, dutyRatio, reflectedV, minimumV: sizing.range.minimumV }
-  const inductance = { discontinuous: 'inductance-for-idle-share', boundary: 'inductance-for-boundary', continuous: 'inductance-from-ripple' } as const
+  const inductance = { discontinuous: 'inductance-for-idle-share', boundary: 'inductance-for-boundary', continuous: 'inductance-from-ripple', 'quasi-resonant': 'inductance-for-boundary' } as const
   return [
     { code: duty.reflectedVoltageV === null ? 'ratio-from-duty' : 'ratio-from-reflected-voltage', path: 'windings', values },
     { code: inductance[duty.conduction.kind], path: 'electrical.inductance', values: { inductanceH, peakA: sizing.peakA, frequencyHz: duty.switchingFrequencyHz } },

@@ -1,8 +1,11 @@
 import type { Duty, DutyOf, RequirementSheet, Side } from '../specification'
+import { planCommonMode } from './plan-common-mode'
 import { planCoupled } from './plan-coupled'
 import { planFlyback } from './plan-flyback'
 import { planForced } from './plan-forced'
 import { planLlc } from './plan-llc'
+import { planGateDrive } from './plan-gate-drive'
+import { planInductor } from './plan-inductor'
 import type { Finding } from '../findings'
 import type { ProposalReason } from './reasons'
 
@@ -26,6 +29,8 @@ export interface WindingNeed {
 export interface Plan {
   frequencyHz: number
   inductanceH: number
+  /** What the material is for; a power material where left out. */
+  materialUse?: 'common-mode'
   powerW: number
   onMains: boolean
   /** Worst current that the flux is checked at, in terms of the primary. */
@@ -46,6 +51,8 @@ export interface TransformerNeed {
   steadySwingT: number
   /** Without a gap the inductance follows from core and turns. */
   gapped: boolean
+  /** The inductance of the plan is the least that turns and permeability must give. */
+  leastInductance?: boolean
   waveform: 'unipolar-pulse' | 'bipolar-pulse' | 'sine'
 }
 
@@ -58,6 +65,9 @@ const PLANS: { readonly [T in Duty['topology']]?: (duty: DutyOf<T>) => Plan } = 
   'full-bridge': planForced,
   'push-pull': planForced,
   'llc': planLlc,
+  'inductor': planInductor,
+  'common-mode-choke': planCommonMode,
+  'gate-drive': planGateDrive,
 }
 
 /** Null where no plan is made for the topology. @throws RangeError when the duty cannot be solved */

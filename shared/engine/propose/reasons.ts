@@ -7,6 +7,8 @@ export type ReasonCode =
   | 'inductance-from-ripple'
   | 'inductance-for-boundary'
   | 'inductance-for-idle-share'
+  | 'inductance-for-magnetising-current'
+  | 'inductance-for-impedance'
   | 'material-least-loss'
   | 'material-preferred'
   | 'smallest-core-that-fits'

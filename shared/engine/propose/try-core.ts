@@ -1,3 +1,4 @@
+import { MU_0_H_PER_M } from '../constants'
 import { overallDiameterMm } from '../evaluate/lookup'
 import type { LibraryIndex } from '../evaluate/lookup'
 import type { CoreRow, FormerRow } from '../library'
@@ -56,8 +57,9 @@ interface WireWishes {
 
 /** The best design on one core: without failure, with the fewest questions. */
 export function tryCore(input: SearchInput, core: CoreRow, former: FormerRow): Tried {
-  const leastTurns = turnsByFlux(input, core)
-  if (leastTurns === null) return hopeless('flux')
+  const byFlux = turnsByFlux(input, core)
+  if (byFlux === null) return hopeless('flux')
+  const leastTurns = Math.max(byFlux, turnsByPermeability(input, core))
   if (!(leastTurns < MOST_TURNS)) return hopeless('window')
   let wishes: WireWishes | null = { litz: new Set(), temperatureC: FIRST_TEMPERATURE_C }
   const rounds: Tried[] = []
@@ -109,13 +111,22 @@ function overTurns(input: SearchInput, { leastTurns, ...on }: CoreInput & { leas
 /** Least primary turns that flux allows on a core; null where the saturation of the material is not known. */
 export function turnsByFlux({ plan, material, requirement, preferences }: SearchInput, core: CoreRow): number | null {
   const saturation = saturationFluxDensityT(material.saturation, FIRST_TEMPERATURE_C)
-  if (saturation.state !== 'known') return null
+  // A choke against common mode is wound for its permeability; the evaluation says where saturation is not known.
+  if (saturation.state !== 'known') return plan.materialUse === 'common-mode' ? 0 : null
   const inductanceH = plan.inductanceH * (1 + preferences.inductanceTolerance)
   // The rounding of the inductance to three digits may raise it by half a percent.
   const fluxDensityT = saturation.value * Math.min(0.8, requirement.fluxUtilisation) * 0.99
   const worst = turnsForFlux({ inductanceH, currentA: plan.worstCurrentA(inductanceH), fluxDensityT, areaMm2: core.minimumAreaMm2 })
   if (!plan.transformer) return worst
   return Math.max(worst, plan.transformer.steadyVs / (plan.transformer.steadySwingT * core.minimumAreaMm2 * 1e-6))
+}
+
+/** Least primary turns that give the inductance without any gap, the permeability at its lowest. */
+export function turnsByPermeability({ plan, material }: Pick<SearchInput, 'plan' | 'material'>, core: CoreRow): number {
+  if (!plan.transformer?.leastInductance) return 0
+  const permeability = material.initialPermeability * (1 - material.permeabilityTolerance)
+  const perTurnH = (MU_0_H_PER_M * permeability * core.effectiveAreaMm2 * 1e-3) / core.effectiveLengthMm
+  return Math.sqrt(plan.inductanceH / perTurnH)
 }
 
 function tryDesign(input: SearchInput, { core, former, needs, wishes }: CoreInput & { needs: WindingNeed[] }): Tried {

@@ -1,9 +1,13 @@
 import type { Duty, DutyOf } from '../specification'
 import { FULL_BRIDGE, HALF_BRIDGE, PUSH_PULL } from './bridge-circuits'
+import { COMMON_MODE_CHOKE } from './common-mode-circuit'
 import { COUPLED_INDUCTOR } from './coupled-circuit'
+import { CURRENT_SENSE } from './current-sense-circuit'
 import { FLYBACK } from './flyback-circuit'
 import { FORWARD } from './forward-circuit'
 import { LLC } from './llc-circuit'
+import { GATE_DRIVE } from './gate-drive-circuit'
+import { INDUCTOR } from './inductor-circuit'
 import type { DutyTraits, Topology } from './topology'
 
 /** Every topology that the engine turns into waveforms: a new one is one file and one line. */
@@ -15,6 +19,10 @@ const TOPOLOGIES: { readonly [T in Duty['topology']]: Topology<DutyOf<T>> } = {
   'full-bridge': FULL_BRIDGE,
   'push-pull': PUSH_PULL,
   'llc': LLC,
+  'inductor': INDUCTOR,
+  'common-mode-choke': COMMON_MODE_CHOKE,
+  'gate-drive': GATE_DRIVE,
+  'current-sense': CURRENT_SENSE,
 }
 
 /** The topology of a duty. The table's key and the duty's own agree, which the type of an index cannot say. */

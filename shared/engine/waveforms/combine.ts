@@ -30,6 +30,10 @@ export function sumWaveforms(waveforms: readonly Waveform[]): Waveform {
   for (const other of waveforms) {
     if (other.periodS !== periodS) throw new RangeError(`waveforms must have one period ${periodS}: ${other.periodS}`)
   }
+  // All windings of one circuit change at the same times.
+  if (waveforms.every(({ points }) => sameTimes(points, first.points))) {
+    return { periodS, points: first.points.map(([tS], index) => [tS, waveforms.reduce((sum, { points }) => sum + points[index]![1], 0)] as const) }
+  }
   const timesS = [...new Set(waveforms.flatMap(({ points }) => points.map(([tS]) => tS)))].sort((a, b) => a - b)
   const parts = waveforms.map(waveformSegments)
   const points = timesS.flatMap((tS): WaveformPoint[] => {
@@ -41,6 +45,8 @@ export function sumWaveforms(waveforms: readonly Waveform[]): Waveform {
   })
   return createWaveform(periodS, points)
 }
+
+const sameTimes = (one: readonly WaveformPoint[], other: readonly WaveformPoint[]) => one === other || (one.length === other.length && one.every(([tS], index) => tS === other[index]![0]))
 
 const valueWithin = ({ startS, durationS, from, to }: WaveformSegment, tS: number) => from + ((to - from) * (tS - startS)) / durationS
 

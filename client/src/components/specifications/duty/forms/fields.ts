@@ -56,8 +56,9 @@ const volts = (of: string): FieldSpec[] => [
 ]
 
 /** The input side, by the kind of supply. */
-export function supplyFields(kind: Supply['kind']): FieldSpec[] {
+export function supplyFields(kind: Supply['kind'] | 'line'): FieldSpec[] {
   if (kind === 'dc') return volts('Input, d.c.')
+  if (kind === 'line') return [...volts('Line, rms'), figure(`${D}.supply.lineFrequencyHz`, 'Line frequency', 'Hz', { min: 16, max: 400 })]
   return [
     ...volts('Mains, rms'),
     figure(`${D}.supply.lineFrequencyHz`, 'Line frequency', 'Hz', { min: 16, max: 400 }),

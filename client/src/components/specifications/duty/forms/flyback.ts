@@ -2,11 +2,18 @@ import type { FlybackDuty } from '#shared/engine/specification'
 import { figure, type FieldSpec } from '../../field-types'
 import { clampSpike, currentLimit, D, dcSupply, efficiency, frequency, newOutput, outputColumns, switchDrop, switchRating, type DutyForm } from './fields'
 
-const MODES = [{ value: 'discontinuous', label: 'discontinuous' }, { value: 'boundary', label: 'boundary' }, { value: 'continuous', label: 'continuous' }]
-const NEW_MODES = { discontinuous: { kind: 'discontinuous', idleShare: 0.2 }, boundary: { kind: 'boundary' }, continuous: { kind: 'continuous', rippleRatio: 0.5 } } as const
+const MODES = [{ value: 'discontinuous', label: 'discontinuous' }, { value: 'boundary', label: 'boundary' }, { value: 'continuous', label: 'continuous' }, { value: 'quasi-resonant', label: 'quasi-resonant' }]
+const SHARING = [{ value: 'in-proportion-to-load', label: 'in proportion to load' }, { value: 'from-leakages', label: 'from the leakages' }]
+const NEW_MODES = { discontinuous: { kind: 'discontinuous', idleShare: 0.2 }, boundary: { kind: 'boundary' }, continuous: { kind: 'continuous', rippleRatio: 0.5 }, 'quasi-resonant': { kind: 'quasi-resonant', maximumFrequencyHz: 150e3, nodeCapacitanceF: 100e-12 } } as const
 
 function conductionFields(kind: FlybackDuty['conduction']['kind']): FieldSpec[] {
   if (kind === 'boundary') return []
+  if (kind === 'quasi-resonant') {
+    return [
+      figure(`${D}.conduction.maximumFrequencyHz`, 'Greatest frequency of the controller', 'kHz'),
+      figure(`${D}.conduction.nodeCapacitanceF`, 'Capacitance at the switched node', 'pF', { help: 'Switch and winding together; it rings with the inductance.' }),
+    ]
+  }
   if (kind === 'discontinuous') return [figure(`${D}.conduction.idleShare`, 'Share of the period without current', '%', { min: 0, max: 0.9 })]
   return [figure(`${D}.conduction.rippleRatio`, 'Ripple over mean on-time current', '%', { min: 0.01, max: 2 })]
 }
@@ -16,8 +23,9 @@ export const FLYBACK_FORM: DutyForm<FlybackDuty> = {
   text: 'The program proposes ratio, inductance, core, turns, wire, sequence and tests.',
   supplies: ['dc', 'mains'],
   outputs: { columns: outputColumns, make: newOutput },
-  kinds: ({ conduction }) => [
+  kinds: ({ conduction, sharing }) => [
     { label: 'Conduction at minimum input, full load', place: `${D}.conduction`, choices: MODES, value: conduction.kind, write: (kind) => ({ [`${D}.conduction`]: NEW_MODES[kind as keyof typeof NEW_MODES] }) },
+    { label: 'Outputs share the current', place: `${D}.sharing`, choices: SHARING, value: sharing ?? 'in-proportion-to-load', write: (kind) => ({ [`${D}.sharing`]: kind }) },
   ],
   fields: ({ conduction }) => [
     frequency,
