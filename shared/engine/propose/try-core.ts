@@ -1,4 +1,3 @@
-import { MU_0_H_PER_M } from '../constants'
 import { overallDiameterMm } from '../evaluate/lookup'
 import type { LibraryIndex } from '../evaluate/lookup'
 import type { CoreRow, FormerRow } from '../library'
@@ -125,7 +124,7 @@ export function turnsByFlux({ plan, material, requirement, preferences }: Search
 export function turnsByPermeability({ plan, material }: Pick<SearchInput, 'plan' | 'material'>, core: CoreRow): number {
   if (!plan.transformer?.leastInductance) return 0
   const permeability = material.initialPermeability * (1 - material.permeabilityTolerance)
-  const perTurnH = (MU_0_H_PER_M * permeability * core.effectiveAreaMm2 * 1e-3) / core.effectiveLengthMm
+  const perTurnH = inductanceFactorOfPathH({ areaMm2: core.effectiveAreaMm2, lengthMm: core.effectiveLengthMm, permeability })
   return Math.sqrt(plan.inductanceH / perTurnH)
 }
 
