@@ -86,7 +86,7 @@ export const FINDING_TEXTS: Readonly<Record<FindingCode, (values: Values) => str
   'coupling-capacitor-small': (v) => `The ripple of the coupling capacitor is ${amount(v, 'rippleV', 'V')}; up to ${amount(v, 'usualV', 'V')} is usual.`,
   'sense-ratio-differs': (v) => `The turns give a ratio of ${formatNumber(Number(v.ratio), { significant: 4 })}, the duty asks for ${formatNumber(Number(v.asked), { significant: 4 })}.`,
   'sense-reset-too-slow': (v) => `The reset takes ${amount(v, 'neededS', 's')}, but between the longest pulses there are ${amount(v, 'availableS', 's')}: the flux walks up.`,
-  'choke-turns-differ': (v) => `${named(v, 'winding')} has ${named(v, 'turns')} turns and ${named(v, 'other')} ${named(v, 'otherTurns')}: the line current magnetises the core.`,
+  'choke-turns-differ': (v) => `The windings have different turns (${named(v, 'winding', 'one')} ${named(v, 'turns', 'n')}, ${named(v, 'other', 'the other')} ${named(v, 'otherTurns', 'n')}): the line current magnetises the core.`,
   'differential-leakage-not-known': () => 'The leakage between the two windings is not known, and with it the flux of the line current.',
   'light-load-changes-mode': (v) => `At ${amount(v, 'inputV', 'V')} light load changes the conduction: ${named(v, 'full')} at full load, ${named(v, 'light')} at light load.`,
   'sharing-not-known': (v) => `The outputs are taken to share the current in proportion to load: ${v.reason === 'clamp' ? 'without the clamp’s voltage' : 'without the leakage between each pair of windings'} their shares by the leakages cannot be told.`,
