@@ -4,7 +4,7 @@ import type { CurrentSenseDuty } from '#shared/engine/duties/current-sense'
 import type { GateDriveDuty } from '#shared/engine/duties/gate-drive'
 import type { InductorDuty } from '#shared/engine/duties/inductor'
 import { evaluate, propose } from '#shared/engine/index'
-import type { Duty, RequirementSheet } from '#shared/engine/specification'
+import type { Duty, FlybackDuty, RequirementSheet } from '#shared/engine/specification'
 import { describe, expect, it } from 'vitest'
 import { expectWithin } from './relative'
 
@@ -25,6 +25,16 @@ const choke: CommonModeChokeDuty = {
 const sense: CurrentSenseDuty = {
   topology: 'current-sense', waveform: 'unipolar-pulse', switchingFrequencyHz: 100e3, nominalCurrentA: 5, maximumCurrentA: 10, dutyRatio: 0.45, ratio: 100, burdenOhm: 10,
   rectifierDropV: 0.6, resetVoltageV: 10, directCurrentA: 0, permittedDroop: 0.02, permittedError: 0.02,
+}
+
+const flyback: FlybackDuty = {
+  topology: 'flyback', supply: { kind: 'dc', minimumV: 18, nominalV: 24, maximumV: 32 },
+  outputs: [
+    { id: 'o1', name: '5 V', role: 'main', voltageV: 5, rectifierDropV: 0.5, fullLoadCurrentA: 3, lightLoadCurrentA: 0.3, side: 'secondary' },
+    { id: 'o2', name: '12 V', role: 'main', voltageV: 12, rectifierDropV: 0.5, fullLoadCurrentA: 0.5, lightLoadCurrentA: 0.05, side: 'secondary' },
+  ],
+  switchingFrequencyHz: 100e3, conduction: { kind: 'continuous', rippleRatio: 0.6 }, efficiency: 0.85, maximumDutyRatio: 0.45, reflectedVoltageV: null, switchDropV: 0.2,
+  currentLimit: { nominalA: 5, tolerance: 0.1, delayS: 100e-9 }, clampSpikeV: 25, switchRatingV: 150,
 }
 
 const figure = (corner: { figures: readonly { code: string; value: number | null }[] } | undefined, code: string) => corner?.figures.find((one) => one.code === code)?.value ?? null
@@ -68,5 +78,15 @@ describe('what is proposed beside transformers of converters', () => {
     expect(findings.map(({ code }) => code)).toEqual(['duty-without-proposal'])
     expect(document.requirement!.duty).toEqual(sense)
     expect(document.specification.electrical.topology.value).toBe('current-sense')
+  })
+
+  it('an output stacked on another’s winding: the turns that are left, and both currents below', () => {
+    const { outputs, ...rest } = flyback
+    const { document } = propose(sheet({ ...rest, outputs: [outputs[0]!, { ...outputs[1]!, stackedOn: { outputId: 'o1', at: 'winding' } }] }), library)
+    const [, lower, upper] = document.specification.windings
+    expectWithin((lower!.turns + upper!.turns) / lower!.turns, 12.5 / 5.5, 0.06)
+    const [corner] = evaluate(document, library).corners
+    expectWithin(corner!.outputs[1]!.voltageV, 12, 0.06)
+    expect(corner!.windings.find(({ windingId }) => windingId === lower!.id)!.dcA).toBeGreaterThanOrEqual(3.5 - 1e-6)
   })
 })

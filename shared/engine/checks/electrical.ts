@@ -118,7 +118,9 @@ function outputsByTurns(input: CheckInput): Outcome[] {
     const reference = regulated && windingOf(regulated.id)
     if (!winding || !reference) return []
     const asked = Math.abs(output.voltageV) + output.rectifierDropV
-    const given = requirement.duty.topology === 'flyback'
+    const { duty } = requirement
+    // What stands on another output has no volts per turn of its own.
+    const given = duty.topology === 'flyback' && !duty.outputs.some(({ stackedOn }) => stackedOn)
       ? ((Math.abs(regulated!.voltageV) + regulated!.rectifierDropV) / reference.turns) * winding.turns
       : solvedVoltageV(solved, output)
     return [atMost({ value: given === null ? null : Math.abs(given - asked) / asked, limit: TURNS_SHARE, unit: '1', path: `windings.${specification.windings.indexOf(winding)}.turns`, values: { winding: winding.name, output: output.name } })]

@@ -1,5 +1,6 @@
 import { outputPowerW } from '../topologies/outputs'
-import type { FlybackDuty } from '../specification'
+import { requirePositive } from '../require'
+import type { FlybackDuty, FlybackOutputDuty } from '../specification'
 import type { Finding } from '../findings'
 import type { Plan, WindingNeed } from './plan'
 import type { ProposalReason } from './reasons'
@@ -18,7 +19,8 @@ function dutyRatioFindings({ reflectedVoltageV }: FlybackDuty, dutyRatio: number
 const WORTH_SAYING = { main: 0.01, auxiliary: 0.08 }
 
 /** A flyback solved for ratio and inductance; turns and currents follow for each core. @throws RangeError when the duty cannot be solved */
-export function planFlyback(duty: FlybackDuty): Plan {
+export function planFlyback(stated: FlybackDuty): Plan {
+  const duty = standingAlone(stated)
   const sizing = sizeFlyback(duty)
   return {
     frequencyHz: duty.switchingFrequencyHz,
@@ -82,7 +84,8 @@ function sizingReasons(duty: FlybackDuty, sizing: ReturnType<typeof sizeFlyback>
 }
 
 /** Outputs whose voltage whole turns miss, once the turns are chosen. */
-export function ratioFindings(duty: FlybackDuty, turnsOf: (outputId: string) => number): Finding[] {
+export function ratioFindings(stated: FlybackDuty, turnsOf: (outputId: string) => number): Finding[] {
+  const duty = standingAlone(stated)
   const main = duty.outputs.find(({ role }) => role === 'main') ?? duty.outputs[0]!
   const perTurnV = (Math.abs(main.voltageV) + main.rectifierDropV) / turnsOf(main.id)
   return duty.outputs.flatMap((output, index): Finding[] => {
@@ -90,4 +93,28 @@ export function ratioFindings(duty: FlybackDuty, turnsOf: (outputId: string) => 
     if (Math.abs(error) <= WORTH_SAYING[output.role]) return []
     return [{ code: 'ratio-compromise', severity: output.role === 'main' ? 'warning' : 'note', path: `requirement.duty.outputs.${index}`, values: { output: output.name, error } }]
   })
+}
+
+/**
+ * The duty with each stacked output as one on its own return that its winding is the same for: the voltage that is left above
+ * the lower output, and on the lower one the current of what stands on it.
+ *
+ * @throws RangeError when an output does not exceed the one it stands on
+ */
+export function standingAlone(duty: FlybackDuty): FlybackDuty {
+  const { outputs } = duty
+  const lower = (output: FlybackOutputDuty) => outputs.find(({ id }) => id !== output.id && id === output.stackedOn?.outputId) ?? null
+  if (!outputs.some(lower)) return duty
+  const carried = (output: FlybackOutputDuty, of: 'fullLoadCurrentA' | 'lightLoadCurrentA', depth = 0): number =>
+    output[of] + (depth > outputs.length ? 0 : outputs.filter((other) => lower(other)?.id === output.id).reduce((sum, other) => sum + carried(other, of, depth + 1), 0))
+  return {
+    ...duty,
+    outputs: outputs.map((output) => {
+      const base = lower(output)
+      const dropsV = base && output.stackedOn!.at === 'winding' ? base.rectifierDropV : 0
+      const ownV = Math.abs(output.voltageV) - (base ? Math.abs(base.voltageV) + dropsV : 0)
+      requirePositive(`voltage of ${output.name} above the output it stands on`, ownV)
+      return { ...output, stackedOn: null, voltageV: Math.sign(output.voltageV) * ownV, fullLoadCurrentA: carried(output, 'fullLoadCurrentA'), lightLoadCurrentA: carried(output, 'lightLoadCurrentA') }
+    }),
+  }
 }
