@@ -63,7 +63,7 @@ export function coilSection(input: CoilSectionInput): CoilPicture {
   const core = findRow(library, 'core', specification.core.core.value)
   const former = findRow(library, 'former', specification.former.former.value)
   const around = surroundings(input.extent === 'whole' ? core : null, former, layout)
-  const extent = extentOf(around, layout, input.overlay?.aboveMm ?? 0)
+  const extent = extentOf(around, layout, { aboveMm: input.overlay?.aboveMm ?? 0, outlines: outlinesIn(input) })
   const frame = { side: input.balloons || input.overlay ? SIDE_MM : 5, foot: input.anyScale ? 1 : FOOT_MM }
   const room = { width: input.maximumWidthMm - 2 * frame.side, height: input.maximumHeightMm - frame.foot - 2 }
   const size = { width: extent.rightMm - extent.leftMm, height: extent.topMm - extent.bottomMm }
@@ -112,15 +112,16 @@ function coreSection(core: CoreRow | null, tubeMm: number): Surroundings['core']
   return legMm < tubeMm ? { legMm, windowMm: e / 2, outerMm: a / 2, halfLengthMm: b, halfWindowMm: d } : null
 }
 
-function extentOf({ core, flangeMm, tubeMm, tubeWallMm }: Surroundings, layout: Layout, aboveMm: number): BoxMm {
+function extentOf({ core, flangeMm, tubeMm, tubeWallMm }: Surroundings, layout: Layout, { aboveMm, outlines }: { aboveMm: number; outlines: readonly LayoutOutline[] }): BoxMm {
   const middle = layout.windowWidthMm / 2
   const halfLength = Math.max(core?.halfLengthMm ?? 0, middle + flangeMm)
   const build = Math.max(layout.windowHeightMm, layout.buildMm)
+  const highest = Math.max(build + aboveMm, ...outlines.map(({ yMm, heightMm }) => yMm + heightMm))
   return {
     leftMm: middle - halfLength,
     rightMm: middle + halfLength,
     bottomMm: core ? 0 : tubeMm - tubeWallMm,
-    topMm: Math.max(core?.outerMm ?? 0, tubeMm + build + aboveMm),
+    topMm: Math.max(core?.outerMm ?? 0, tubeMm + highest),
   }
 }
 

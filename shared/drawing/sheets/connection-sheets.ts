@@ -3,13 +3,15 @@ import { schematic, schematicInWords } from '../figures/schematic'
 import { drawTablePart, layoutTable, tableHeightMm } from '../table'
 import { contradictions } from './contradictions'
 import { electricalTable } from './electrical-table'
-import { add, addParagraphs, addTable, BODY_BOTTOM_MM, FIGURE_TITLE_MM, type Flow, newPage, placeFigure, roomMm, take } from './flow'
+import { add, addParagraphs, addTable, BODY_BOTTOM_MM, continuePage, FIGURE_TITLE_MM, type Flow, newPage, placeFigure, roomMm, take } from './flow'
 import { SPACE } from './frame'
 import type { DrawingInput } from './input'
 import { terminalTable } from './record-tables'
 import { windingTable } from './winding-tables'
 
 const CIRCUIT_MM = 118
+/** The circuit is not squeezed into less than this below a list of contradictions. */
+const LEAST_CIRCUIT_MM = 110
 const PIN_LEFT_MM = SPACE.leftMm + CIRCUIT_MM + 5
 const PIN_WIDTH_MM = 128
 const PIN_VIEW_MM = 62
@@ -21,6 +23,7 @@ export function connectionSheets(flow: Flow, input: DrawingInput): void {
   const { specification, library } = input
   newPage(flow, 'Connections and electrical data')
   addParagraphs(flow, 'Contradictions in this draft', input.release ? [] : contradictions(specification))
+  if (roomMm(flow) < LEAST_CIRCUIT_MM) continuePage(flow)
   const circuit = schematic({ specification, library, widthMm: CIRCUIT_MM, maximumHeightMm: roomMm(flow) - FIGURE_TITLE_MM })
   const terminals = layoutTable(terminalTable(specification), TERMINALS_WIDTH_MM)
   const height = Math.min(Math.max(circuit.heightMm + FIGURE_TITLE_MM, FIGURE_TITLE_MM + PIN_VIEW_MM, tableHeightMm(terminals)), roomMm(flow))

@@ -28,23 +28,21 @@ function doubledPins({ former, tests }: WindingSpecification): string[] {
   ]
 }
 
+/** Who names a terminal that is not there, gathered by terminal. */
 function unknownTerminals({ windings, former, sequence, tests }: WindingSpecification): string[] {
   const state = new Map([...former.pins.map((pin) => [pin.number, pin.state] as const), ...former.flyingLeads.map(({ name }) => [name, 'fitted'] as const)])
-  const judge = (where: string, name: string): string[] => {
-    if (name === '' || name === CORE_TERMINAL) return []
-    if (!state.has(name)) return [`${where}: there is no terminal ${name} among the pins and flying leads.`]
-    if (state.get(name) === 'missing') return [`${where}: pin ${name} is marked as missing among the pins.`]
-    return []
-  }
-  return [
-    ...windings.flatMap((winding) => [
-      ...judge(`Winding ${winding.name}`, winding.startTerminal),
-      ...(winding.role === 'shield' ? [] : judge(`Winding ${winding.name}`, winding.finishTerminal)),
-      ...(winding.role !== 'shield' && winding.startTerminal !== '' && winding.startTerminal === winding.finishTerminal ? [`Winding ${winding.name}: start and finish are both ${winding.startTerminal}.`] : []),
-    ]),
-    ...sequence.flatMap((step, index) => (step.kind === 'shield' ? judge(`Step ${index + 1}`, step.connectedTerminal) : [])),
-    ...tests.flatMap((test) => [...new Set([...test.drivenTerminals, ...test.shortedTerminals.flat(), ...test.openTerminals])].flatMap((name) => judge(`Test ${test.number}`, name))),
+  const named: [where: string, name: string][] = [
+    ...windings.flatMap((winding): [string, string][] => [[`Winding ${winding.name}`, winding.startTerminal], ...(winding.role === 'shield' ? [] : [[`Winding ${winding.name}`, winding.finishTerminal] as [string, string]])]),
+    ...sequence.flatMap((step, index): [string, string][] => (step.kind === 'shield' ? [[`Step ${index + 1}`, step.connectedTerminal]] : [])),
+    ...tests.flatMap((test) => [...new Set([...test.drivenTerminals, ...test.shortedTerminals.flat(), ...test.openTerminals])].map((name): [string, string] => [`Test ${test.number}`, name])),
   ]
+  const wrong = named.filter(([, name]) => name !== '' && name !== CORE_TERMINAL && state.get(name) !== 'fitted' && state.get(name) !== 'no-connection')
+  const absent = [...new Set(wrong.map(([, name]) => name))].map((name) => {
+    const where = [...new Set(wrong.filter((use) => use[1] === name).map(([place]) => place))].join(', ')
+    return state.has(name) ? `${where}: pin ${name} is marked as missing among the pins.` : `${where}: there is no terminal ${name} among the pins and flying leads.`
+  })
+  const closed = windings.filter(({ role, startTerminal, finishTerminal }) => role !== 'shield' && startTerminal !== '' && startTerminal === finishTerminal)
+  return [...absent, ...closed.map(({ name, startTerminal }) => `Winding ${name}: start and finish are both ${startTerminal}.`)]
 }
 
 /** A pin that two sides share joins what the insulation keeps apart. */

@@ -40,7 +40,8 @@ interface SideFigure {
 function sideFigures({ specification, library }: DrawingInput, roomHeightMm: number): SideFigure[] {
   const core = findRow(library, 'core', specification.core.core.value)
   const former = findRow(library, 'former', specification.former.former.value)
-  const share = roomHeightMm / 3 - FIGURE_TITLE_MM - GAP_MM
+  const figures = [core, former, specification.former.pins.length > 0 || null].filter((each) => each !== null).length
+  const share = roomHeightMm / Math.max(figures, 1) - FIGURE_TITLE_MM - GAP_MM
   const half = core ? coreFigure(core, SIDE_MM, share) : null
   const section = former ? formerFigure(former, SIDE_MM, share) : null
   const takenMm = [half, section].reduce((sum, figure) => sum + (figure ? figure.heightMm + FIGURE_TITLE_MM + GAP_MM : 0), 0)

@@ -4,7 +4,8 @@ import type { WindingSpecification } from '../../../engine/specification'
 import { horizontalDimension, verticalDimension } from '../../dimensions'
 import type { BoxMm, Picture, PointMm, Shape } from '../../model'
 import { box, label, labelLines, LETTERING, line, moved, rectangle } from '../../shapes'
-import { millimetres, plain } from '../../sheets/figures'
+import { formatNumber } from '../../../number-format'
+import { millimetres, plain, PREDICTED } from '../../sheets/figures'
 import { wrapText } from '../../text-metrics'
 import { scaleBar, scaleBarWidthMm } from '../scale-bar'
 import { scaleText, standardScale } from '../scales'
@@ -141,9 +142,22 @@ function frontView(pen: Pen, view: ViewName): Shape[] {
     ...(envelope ? verticalDimension([envelope.lengthMm * scale / 2, 0], [envelope.lengthMm * scale / 2, envelope.heightMm * scale], right + 12, `${plain(envelope.heightMm)} max.`) : []),
     ...(pin > 0 && pins.length > 0 ? verticalDimension([reach[0], -pin * scale], [reach[0], 0], left - 6, plain(pin)) : []),
     ...(standoff > 0 && pins.length > 0 ? verticalDimension([reach[1], 0], [reach[1], standoff * scale], right + 5, plain(standoff)) : []),
+    ...ringDimensions(pen, view, size),
     ...viewName('Front view', (left + right) / 2, size.bottomMm * scale),
   ]
 }
+
+/** A wound ring has no stated envelope to lean on: its calculated size stands in parentheses. */
+function ringDimensions({ solids, envelope, scale }: Pen, view: ViewName, size: BoxMm): Shape[] {
+  const ring = solids.find((solid) => solid.shape === 'ring')
+  if (!ring || envelope) return []
+  const half = (ring.outsideMm / 2) * scale
+  const top = size.topMm * scale
+  if (view === 'below') return horizontalDimension([-half, 0], [half, 0], top + 6, `(Ø ${predicted(ring.outsideMm)})`)
+  return verticalDimension([half, ring.low * scale], [half, ring.high * scale], size.rightMm * scale + 12, `(${predicted(ring.high - ring.low)})`)
+}
+
+const predicted = (value: number) => formatNumber(value, PREDICTED)
 
 function sideView(pen: Pen, view: ViewName): Shape[] {
   const { envelope, scale } = pen
@@ -169,6 +183,7 @@ function bottomView(pen: Pen, view: ViewName): Shape[] {
     ...viewShapes(view, pen.solids, scale),
     ...envelopeShapes(pen, view),
     ...(envelope ? pinOneCorner(places, [envelope.lengthMm * scale / 2, envelope.widthMm * scale / 2]) : []),
+    ...ringDimensions(pen, view, size),
     ...pinNumbers(places, half + 0.8),
     ...pinDimensions(places, scale, { leftMm: size.leftMm * scale - 8, lowMm: size.bottomMm * scale - 6, rightMm: size.rightMm * scale + 8 }),
     ...viewName(['Bottom view', pinText(specification, pins.length)].filter((text) => text !== '').join(': '), middle, size.bottomMm * scale - 6),

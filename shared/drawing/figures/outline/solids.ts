@@ -61,7 +61,7 @@ export function partSolids(specification: WindingSpecification, library: Library
   const core = findRow(library, 'core', specification.core.core.value)
   const former = findRow(library, 'former', specification.former.former.value)
   const pins = pinSolids(specification)
-  if (core?.shape === 'toroid') return ring(core, pins)
+  if (core?.shape === 'toroid') return ring(core, pins, layout)
   if (!core || !former) return { solids: pins, notes: [`${core ? 'The coil former' : 'The core'} is not in the library: only the stated envelope and pins are drawn.`] }
   const axis = former.mounting === 'vertical' ? 'z' : 'x'
   const sizes = coilSizes(core, former, layout)
@@ -170,11 +170,11 @@ function railSolids(former: FormerRow, { former: stated }: WindingSpecification,
   })
 }
 
-function ring({ dimensionsMm: { a, b, c } }: CoreRow, pins: PinSolid[]): PartSolids {
+function ring({ dimensionsMm: { a, b, c } }: CoreRow, pins: PinSolid[], layout: Layout | null): PartSolids {
   if (a === null || b === null || c === null) return { solids: pins, notes: ['The library has no dimensions of the ring core.'] }
   const standoff = Math.max(0, ...pins.map(({ high }) => high))
-  return {
-    solids: [...pins, { part: 'core', tag: 'core', shape: 'ring', outsideMm: a, insideMm: b, low: standoff, high: standoff + c }],
-    notes: ['Ring core uncoated, from its library row; the coil adds to its size up to the stated envelope.'],
-  }
+  const wound = layout?.ring
+  if (!wound) return { solids: [...pins, { part: 'core', tag: 'core', shape: 'ring', outsideMm: a, insideMm: b, low: standoff, high: standoff + c }], notes: ['Ring core uncoated, from its library row; the coil adds to its size up to the stated envelope.'] }
+  const coil: RingSolid = { part: 'coil', tag: 'coil', shape: 'ring', outsideMm: wound.overallOutsideMm, insideMm: wound.remainingHoleMm, low: standoff, high: standoff + wound.overallHeightMm }
+  return { solids: [...pins, coil], notes: ['Wound ring as calculated from core and wire; leads are not drawn.'] }
 }
