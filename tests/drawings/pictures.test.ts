@@ -1,8 +1,10 @@
 import { mkdirSync, readFileSync, writeFileSync } from 'node:fs'
 import { createRequire } from 'node:module'
+import jsQR from 'jsqr'
 import type { Browser, Page } from 'playwright-core'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import type { Sheet } from '#shared/drawing/model'
+import { codeText } from '#shared/drawing/sheets/foot'
 import { drawSheets } from '#shared/drawing/sheets/index'
 import { line } from '#shared/drawing/shapes'
 import { sheetToSvg } from '#shared/drawing/to-svg'
@@ -125,6 +127,29 @@ describe.each(Object.entries({ mainsFlyback, buoySupply, coupledInductor, stress
     }
   })
 })
+
+it('shows a code that a reader finds on the printed sheet, at half the resolution of a fax', async () => {
+  const document = mainsFlyback()
+  const input = { specification: document.specification, evaluation: null, library: sampleLibrary, revision: 'B', release: { revision: 'B', issuedOn: '2026-09-02', createdBy: 'A', checkedBy: 'B', approvedBy: 'B' }, specificationHash: 'c0ffee'.padEnd(64, '0'), status: 'released' as const }
+  const [sheet] = drawSheets(input)
+  const pdf = await renderSpecificationPdf({ sheets: [sheet!], info: { title: 'code', subject: '', author: '', language: 'en', date: new Date('2026-09-02T00:00:00Z') }, attachment: { name: 'specification.json', bytes: Buffer.from('{}'), description: '' } })
+  const [printed] = pdfPictures(pdf, 100)
+  const { data, width, height } = await pixelsOf(printed!)
+  expect(jsQR(Uint8ClampedArray.from(data), width, height)?.data).toBe(codeText(input))
+})
+
+/** Colours of the lower middle of a sheet, where the code stands, as the browser decodes the picture. */
+const pixelsOf = (picture: Buffer) =>
+  page.evaluate(async (source) => {
+    const image = new Image()
+    image.src = `data:image/png;base64,${source}`
+    await image.decode()
+    const [x, y, width, height] = [0.44, 0.8, 0.12, 0.2].map((share, index) => Math.round(share * (index % 2 === 0 ? image.width : image.height)))
+    const canvas = Object.assign(document.createElement('canvas'), { width, height })
+    const context = canvas.getContext('2d')!
+    context.drawImage(image, -x!, -y!)
+    return { data: [...context.getImageData(0, 0, width!, height!).data], width: width!, height: height! }
+  }, picture.toString('base64'))
 
 it('tells a shape that lies a millimetre off', async () => {
   const blank: Sheet = { number: 1, count: 1, title: 'Test', widthMm: 420, heightMm: 297, blocks: [] }
