@@ -117,6 +117,7 @@ const RULES: readonly (readonly [beginning: string, decide: Decide])[] = [
   ['impregnation', always('process-material')],
   ['insulation.cautions', always('clarification')],
   ['insulation.polymers', always('process-material')],
+  ['insulation.criticalMaterials', always('process-material')],
   ['insulation', always('insulation-demand')],
   ['marking', always('marking-packing')],
   ['packing', always('marking-packing')],

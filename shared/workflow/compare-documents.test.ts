@@ -23,6 +23,10 @@ describe('compareDocuments', () => {
     expect(changes).toMatchObject([{ kind: 'moved', key: 's.[d]', before: 4, after: 1 }, { kind: 'removed', path: 's.1', key: 's.[b]', after: undefined }])
   })
 
+  it('takes a table that one of both does not have as empty', () => {
+    expect(compareDocuments({}, { t: [row('a', 1)] })).toMatchObject([{ kind: 'added', key: 't.[a]' }])
+  })
+
   it('finds nothing in equal documents, whatever the order of their keys', () => {
     expect(compareDocuments({ a: { x: 1, y: [2] }, b: 3 }, { b: 3, a: { y: [2], x: 1 } })).toEqual([])
   })

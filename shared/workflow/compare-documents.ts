@@ -26,7 +26,9 @@ export const compareDocuments = (before: unknown, after: unknown): DocumentChang
 
 function compareValues(place: Place, before: unknown, after: unknown): DocumentChange[] {
   if (same(before, after)) return []
-  if (Array.isArray(before) && Array.isArray(after) && isTable(before) && isTable(after)) return compareRows(place, before, after)
+  // A table that one of both does not have is empty there.
+  const [older, newer] = [before ?? (Array.isArray(after) ? [] : null), after ?? (Array.isArray(before) ? [] : null)]
+  if (Array.isArray(older) && Array.isArray(newer) && isTable(older) && isTable(newer)) return compareRows(place, older, newer)
   if (isTree(before) && isTree(after) && !isWhole(before) && !isWhole(after)) return compareTrees(place, before, after)
   return sameButOrigin(before, after) ? [] : [{ kind: 'changed', ...place, before, after }]
 }

@@ -82,6 +82,14 @@ describe('mergeDocuments', () => {
     expect(document.sequence.at(-1)).toEqual(step('s4', 'w4'))
   })
 
+  it('does not stumble over a field that only one of both has', () => {
+    const mine = edit((it) => { it.windings[0]!.turns = 11 })
+    const theirs = edit((it) => { Object.assign(it.title, { note: 'theirs' }); Object.assign(it, { extra: [{ id: 'x1' }] }) })
+    const { document, conflicts } = merge(mine, theirs)
+    expect(conflicts).toEqual([])
+    expect(document).toMatchObject({ title: { note: 'theirs' }, extra: [{ id: 'x1' }], windings: [{ turns: 11 }, {}] })
+  })
+
   it('asks for the order when both reordered, and puts new rows behind the row that they followed', () => {
     const mine = edit((it) => { it.sequence = [it.sequence[2]!, it.sequence[0]!, it.sequence[1]!] })
     const theirs = edit((it) => { it.sequence = [it.sequence[1]!, it.sequence[0]!, it.sequence[2]!, step('s9', 'w1')] })

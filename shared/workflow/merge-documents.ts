@@ -51,8 +51,8 @@ const within = ({ key, path }: Place, name: string): Place => ({ key: joinPath(k
 function mergeValue(run: Run, place: Place, base: unknown, mine: unknown, theirs: unknown): unknown {
   if (same(mine, theirs) || same(base, theirs)) return mine
   if (same(base, mine)) return theirs
-  if (areTables(base, mine, theirs)) return mergeRows(run, place, base as unknown[], mine as unknown[], theirs as unknown[])
-  if (haveSameKeys(mine, theirs)) return mergeTree(run, place, isTree(base) ? base : {}, mine as Tree, theirs as Tree)
+  if (areTables(base ?? [], mine, theirs)) return mergeRows(run, place, (base ?? []) as unknown[], mine as unknown[], theirs as unknown[])
+  if (areAlike(mine, theirs)) return mergeTree(run, place, isTree(base) ? base : {}, mine as Tree, theirs as Tree)
   return choose(run, place, 'value', base, mine, theirs)
 }
 
@@ -63,17 +63,19 @@ function choose(run: Run, place: Place, kind: MergeConflict['kind'], base: unkno
 
 /** Where a row's value comes from follows the values in it and is no question of its own. */
 function mergeTree(run: Run, place: Place, base: Tree, mine: Tree, theirs: Tree): Tree {
-  return Object.fromEntries(
-    Object.keys(mine).map((key) => [key, key === 'origin' ? mergeOrigin(base[key], mine[key], theirs[key]) : mergeValue(run, within(place, key), base[key], mine[key], theirs[key])]),
-  )
+  const merged = [...new Set([...Object.keys(mine), ...Object.keys(theirs)])].map((key) => {
+    const of = [base[key], mine[key], theirs[key]] as const
+    return [key, key === 'origin' ? mergeOrigin(...of) : mergeValue(run, within(place, key), ...of)] as const
+  })
+  return Object.fromEntries(merged.filter(([, value]) => value !== undefined))
 }
 
 const mergeOrigin = (base: unknown, mine: unknown, theirs: unknown) => (same(base, mine) ? theirs : mine)
 
-function haveSameKeys(mine: unknown, theirs: unknown): boolean {
+/** Two forms of one thing, such as two kinds of supply, are not mixed field by field. */
+function areAlike(mine: unknown, theirs: unknown): boolean {
   if (!isTree(mine) || !isTree(theirs) || isWhole(mine) || isWhole(theirs)) return false
-  const keys = Object.keys(mine)
-  return keys.length === Object.keys(theirs).length && keys.every((key) => key in theirs) && mine.kind === theirs.kind && mine.topology === theirs.topology
+  return mine.kind === theirs.kind && mine.topology === theirs.topology
 }
 
 const areTables = (...lists: unknown[]) => lists.every((list) => Array.isArray(list) && isTable(list)) && lists.some((list) => (list as unknown[]).length > 0)

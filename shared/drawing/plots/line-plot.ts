@@ -21,7 +21,7 @@ const LEGEND_LINE_MM = 4
 const SAMPLE_MM = 9
 
 /**
- * Lines over one axis, told apart by dash and width and named in a legend above. Points are in SI units.
+ * Lines over one axis, told apart by dash and width and named in a legend above; a single line needs none. Points are in SI units.
  *
  * @throws RangeError when a point is not finite
  */
@@ -29,7 +29,7 @@ export function linePlot({ widthMm, heightMm, x, y, series }: LinePlot): Picture
   const points = series.flatMap((one) => one.points)
   if (points.some((point) => !point.every(Number.isFinite))) throw new RangeError('a plot takes finite points')
   const [xAxis, yAxis] = [axisOver(points.map(([value]) => value), x.unit, { parts: 5 }), axisOver(points.map(([, value]) => value), y.unit, { parts: 4, fromZero: true })]
-  const legend = legendShapes(series.map(({ name }) => name), widthMm)
+  const legend = legendShapes(series.length === 1 ? [] : series.map(({ name }) => name), widthMm)
   const { shapes, at } = plotFrame(widthMm, heightMm, xAxis, yAxis, { x: axisTitle(x.name, xAxis.unit), y: axisTitle(y.name, yAxis.unit) }, legend.heightMm)
   const lines = series.flatMap(({ points: own }, index): Shape[] => (own.length < 2 ? [] : [polyline(own.map(([a, b]) => at(a, b)), { layer: layerOf(index), tag: `series:${index}` })]))
   return { widthMm, heightMm, shapes: [...shapes, ...lines, ...legend.at(heightMm)] }

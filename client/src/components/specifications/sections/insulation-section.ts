@@ -77,6 +77,25 @@ export const insulationSection: SectionSpec = {
     {
       kind: 'rows',
       rows: {
+        path: 'insulation.criticalMaterials',
+        title: 'Critical materials, for the safety laboratory',
+        one: 'critical material',
+        stated: true,
+        rare: true,
+        empty: 'None listed: what the certificate of the part rests on, with maker and certificate.',
+        columns: [
+          { header: 'Part', field: () => text('part', 'Part'), wide: true },
+          { header: 'Maker', field: () => text('maker', 'Maker') },
+          { header: 'Type', field: () => text('type', 'Type') },
+          { header: 'Rating', field: () => text('rating', 'Rating') },
+        ],
+        more: () => [text('standard', 'standard'), text('certificate', 'certificate'), { type: 'date', path: 'expiresOn', label: 'certificate expires on', optional: true, help: 'Empty where it has no end.' }],
+        add: [{ label: 'Add a critical material', row: ({ freeId }) => ({ ...enteredRow(freeId('cm')), part: '', maker: '', type: '', rating: '', standard: '', certificate: '', expiresOn: null }) }],
+      },
+    },
+    {
+      kind: 'rows',
+      rows: {
         path: 'insulation.polymers',
         title: 'Polymers',
         one: 'polymer',

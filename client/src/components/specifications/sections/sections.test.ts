@@ -1,8 +1,9 @@
 import { describe, expect, it } from 'vitest'
 import { windingSpecificationSchema } from '#shared/contracts/specification-document'
 import { blankSpecification } from '#shared/engine/index'
+import { fullSpecification } from '../../../../../tests/support/full-specification'
 import { mainsFlyback, sampleLibrary } from '../../../../../tests/support/sample-specification'
-import { freeId, valueAt } from '../document-paths'
+import { freeId, valueAt, withValue } from '../document-paths'
 import { firstReference } from '../entries/choice-sources'
 import type { FieldSpec, Row, RowsSpec } from '../field-types'
 import { placeWords } from '../place-words'
@@ -30,7 +31,8 @@ function placesIn(tree: Tree, path = ''): { stated: string[]; tables: string[] }
 const parts = SECTIONS.flatMap((section) => section.parts)
 const fields = parts.flatMap((part) => (part.kind === 'stated' ? [...part.fields] : []))
 const tables = parts.flatMap((part) => (part.kind === 'rows' ? [part.rows] : []))
-const document = placesIn(blankSpecification() as unknown as Tree)
+// A document in use has every table, also those that a blank one leaves out.
+const document = { ...placesIn(blankSpecification() as unknown as Tree), tables: placesIn(fullSpecification().specification as unknown as Tree).tables.filter((path) => !path.startsWith('revisions.')) }
 
 describe('the sections of the workbench', () => {
   it('have an entry for every field of the document, and only for those', () => {
@@ -58,7 +60,7 @@ const rowFields = (spec: RowsSpec, row: Row) => [...spec.columns.flatMap(({ fiel
 const specification = mainsFlyback().specification as unknown as Tree
 
 describe('rows', () => {
-  const filled = tables.flatMap((spec) => (valueAt(specification, spec.path) as Row[]).map((row, index) => ({ spec, row, name: `${spec.path} ${index + 1}` })))
+  const filled = tables.flatMap((spec) => ((valueAt(specification, spec.path) ?? []) as Row[]).map((row, index) => ({ spec, row, name: `${spec.path} ${index + 1}` })))
 
   it.each(filled)('$name: every field of the row can be entered', ({ spec, row }) => {
     const known = new Set(rowFields(spec, row))
@@ -69,10 +71,9 @@ describe('rows', () => {
   const adding = tables.flatMap((spec) => spec.add.map((choice) => ({ spec, choice, name: `${spec.path}: ${choice.label}` })))
 
   it.each(adding)('$name adds a row that fits the schema', ({ spec, choice }) => {
-    const rows = valueAt(specification, spec.path) as Row[]
+    const rows = (valueAt(specification, spec.path) ?? []) as Row[]
     const row = choice.row({ rows, freeId: (prefix) => freeId(rows as unknown as { id: string }[], prefix), windingIds: ['w1', 'w2'], boundaryIds: [], first: (kind) => firstReference(sampleLibrary, kind) })
-    const next = structuredClone(specification)
-    ;(valueAt(next, spec.path) as unknown[]).push(row)
+    const next = withValue(structuredClone(specification), spec.path, [...rows, row])
     expect(windingSpecificationSchema.safeParse(next).error?.issues ?? []).toEqual([])
   })
 })
