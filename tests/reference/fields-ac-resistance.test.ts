@@ -1,7 +1,10 @@
 import { copperLoss } from '#shared/engine/losses/copper-loss'
 import type { CopperModel } from '#shared/engine/losses/copper-loss'
 import type { Conductor } from '#shared/engine/losses/conductor'
-import { inFlatField } from '#shared/engine/losses/layers'
+import { turnFields } from '#shared/engine/field/index'
+import type { FieldTurn, FieldWindow, GapMmf } from '#shared/engine/field/index'
+import { rowInverseSquares } from '#shared/engine/losses/conductor'
+import { inConductorFields, inFlatField } from '#shared/engine/losses/layers'
 import type { LaidLayer } from '#shared/engine/losses/layers'
 import { phasorSpectrum } from '#shared/engine/losses/spectrum'
 import { describe, expect, it } from 'vitest'
@@ -104,3 +107,99 @@ describe('two windings in their phases', () => {
   })
 })
 
+
+/** A row of wires or one foil in a window, in mm. */
+interface Row {
+  winding: number
+  conductor: Conductor
+  radialMm: number
+  axialMm: number[]
+}
+
+const evenly = (count: number, pitchMm: number, middleMm: number) => Array.from({ length: count }, (_, n) => middleMm + (n - (count - 1) / 2) * pitchMm)
+
+/** Single wires in the field of the window; one metre of depth unless the turn's length is told. */
+function windowModel({ window, gap, rows, blocks = [] }: { window: FieldWindow; gap: GapMmf; rows: Row[]; blocks?: FieldTurn[] }, lengthOf: (row: Row) => number = () => 1): CopperModel {
+  const windings = Math.max(...rows.map(({ winding }) => winding), ...blocks.map(({ winding }) => winding)) + 1
+  const wires = rows.flatMap(({ winding, conductor, radialMm, axialMm }) => axialMm.map((place): FieldTurn => ({ winding, turn: 1, strand: 1, share: 1, axialMm: place, radialMm, foilBreadthMm: conductor.kind === 'foil' ? conductor.breadthMm : null })))
+  const { hx, hy } = turnFields({ window, gap, windingIds: Array.from({ length: windings }, (_, w) => String(w)), turns: [...wires, ...blocks] })
+  const layers = rows.map((row, index): LaidLayer => ({
+    winding: row.winding, stepId: String(index), layer: 1, section: 1, middleMm: row.radialMm, turns: row.axialMm.length, parallel: 1, turnLengthM: lengthOf(row), conductor: row.conductor, carries: true,
+    inverseSquaresPerMm2: row.conductor.kind === 'foil' ? 0 : rowInverseSquares(row.axialMm),
+  }))
+  const layerOf = Int32Array.from([...rows.flatMap(({ axialMm }, index) => axialMm.map(() => index)), ...blocks.map(() => -1)])
+  const resistance20Ohm = Array.from({ length: windings }, (_, w) => rows.filter(({ winding }) => winding === w).reduce((sum, row) => sum + (row.axialMm.length * lengthOf(row)) / (58 * areaMm2(row.conductor)), 0))
+  return { field: 'local', resistance20Ohm, layers: inConductorFields(layers, windings, { layerOf, stride: windings, along: hx, across: hy }) }
+}
+
+/** A return block of even current as lines, −1 A of its winding in all. */
+function block(winding: number, { fromMm, thicknessMm, breadthMm, middleMm }: { fromMm: number; thicknessMm: number; breadthMm: number; middleMm: number }, amperes: number): FieldTurn[] {
+  const [deep, wide] = [6, 60]
+  return Array.from({ length: deep * wide }, (_, index): FieldTurn => ({
+    winding, turn: 1, strand: 1, share: -amperes / (deep * wide), foilBreadthMm: null,
+    radialMm: fromMm + ((Math.floor(index / wide) + 0.5) * thicknessMm) / deep,
+    axialMm: middleMm + (((index % wide) + 0.5) / wide - 0.5) * breadthMm,
+  }))
+}
+
+const plane = (breadthMm: number, heightMm: number): FieldWindow => ({ breadthMm, heightMm, depth: { kind: 'straight', turnAtLegMm: 1000, growthPerMm: 0 } })
+const centreGap = (breadthMm: number, gapMm: number): GapMmf => ({ kind: 'walls', strips: [{ wall: 'leg', fromMm: (breadthMm - gapMm) / 2, toMm: (breadthMm + gapMm) / 2, share: 1 }] })
+const open = { kind: 'all-round' as const }
+
+// Tolerance 2 % at d/δ = 2.4 and 6 % at 5.3; 10 % were asked up to 2.
+describe('layers with margins', () => {
+  it.each([{ frequencyHz: 100e3, index: 0, tolerance: 0.02 }, { frequencyHz: 500e3, index: 1, tolerance: 0.06 }])('B2w at $frequencyHz Hz', ({ frequencyHz, index, tolerance }) => {
+    const { geometry, results } = caseOf('B2w')
+    const mm = (metres: number) => metres * 1e3
+    const breadthMm = mm(geometry.window_breadth!)
+    const pitchMm = mm(geometry.pitch!)
+    const conductor: Conductor = { kind: 'round', diameterMm: mm(geometry.wire_diameter!) }
+    const first = mm(geometry.first_layer_centre_x!)
+    const rows = [0, 1].map((layer): Row => ({ winding: 0, conductor, radialMm: first + layer * pitchMm, axialMm: evenly(16, pitchMm, breadthMm / 2) }))
+    const back = block(0, { fromMm: first + 1.5 * pitchMm + 0.3, thicknessMm: 1, breadthMm: 10, middleMm: breadthMm / 2 }, 32)
+    const [loss] = lossesW(windowModel({ window: plane(breadthMm, mm(geometry.window_height!)), gap: open, rows, blocks: back }), [[1, 0]], frequencyHz)
+    const dcW = 32 / (2 * 58 * areaMm2(conductor))
+    expect(Math.abs(loss! / dcW / (results.Rac_over_Rdc as number[])[index]! - 1)).toBeLessThan(tolerance)
+  })
+
+  // How current moves along a foil towards its ends no one-dimensional foil shows: 1.08 times the finite elements, where Dowell has
+  // 1.09 by the foil's own breadth and 0.94 by the window's.
+  it('B1e, foils with ends free of the yokes, are met within 10 %', () => {
+    const { geometry, results } = caseOf('B1e')
+    const foil: Conductor = { kind: 'foil', thicknessMm: geometry.foil_thickness! * 1e3, breadthMm: geometry.foil_breadth! * 1e3 }
+    const rows = [0, 1].map((layer): Row => ({ winding: 0, conductor: foil, radialMm: 1 + foil.thicknessMm / 2 + layer * (foil.thicknessMm + 0.1), axialMm: [11.8] }))
+    const back = block(0, { fromMm: 1 + 2 * foil.thicknessMm + 0.1 + 0.3, thicknessMm: 1.5, breadthMm: foil.breadthMm, middleMm: 11.8 }, 2)
+    const [loss] = lossesW(windowModel({ window: plane(23.6, 7.5), gap: open, rows, blocks: back }), [[1, 0]], 100e3)
+    const ratio = loss! / (2 / (2 * 58 * areaMm2(foil))) / (results.Rac_over_Rdc_total as number)
+    expect(Math.abs(ratio - 1)).toBeLessThan(0.1)
+  })
+})
+
+// Tolerance 3 %; 20 % were asked. The one-dimensional field is low by factors of 2 to 6 here.
+describe('flyback windings beside a gap', () => {
+  it('B6, planar, gap of 0.5 mm', () => {
+    const { results } = caseOf('B6_flyback_PS')
+    const rows: Row[] = [
+      { winding: 0, conductor: { kind: 'round', diameterMm: 0.4 }, radialMm: 1.5 + 0.2, axialMm: evenly(44, 0.5, 11.8) },
+      { winding: 1, conductor: { kind: 'round', diameterMm: 0.5 }, radialMm: 2.1 + 0.25, axialMm: evenly(36, 0.6, 11.8) },
+    ]
+    // Go and return: two metres of wire for each turn and metre of depth.
+    const losses = lossesW(windowModel({ window: plane(23.6, 7.5), gap: centreGap(23.6, 0.5), rows }, () => 2), [[1, 0], [0, 0]], 100e3)
+    const published = results.loss_W_per_m_per_winding as { P: number; S: number }
+    expect(Math.abs(losses[0]! / published.P - 1)).toBeLessThan(0.03)
+    expect(Math.abs(losses[1]! / published.S - 1)).toBeLessThan(0.03)
+  })
+
+  it('B6, round leg, gap of 1 mm', () => {
+    const { results } = caseOf('B6_flyback_SP')
+    const rows: Row[] = [
+      { winding: 1, conductor: { kind: 'round', diameterMm: 0.5 }, radialMm: 1.5 + 0.25, axialMm: evenly(36, 0.6, 11.8) },
+      { winding: 0, conductor: { kind: 'round', diameterMm: 0.4 }, radialMm: 2.2 + 0.2, axialMm: evenly(44, 0.5, 11.8) },
+    ]
+    const window: FieldWindow = { breadthMm: 23.6, heightMm: 7.5, depth: { kind: 'round', legRadiusMm: 5.4 } }
+    const losses = lossesW(windowModel({ window, gap: centreGap(23.6, 1), rows }, ({ radialMm }) => 2 * Math.PI * (5.4 + radialMm) * 1e-3), [[1, 0], [0, 0]], 100e3)
+    const published = results.loss_W_per_winding as { P: number; S: number }
+    expect(Math.abs(losses[0]! / published.P - 1)).toBeLessThan(0.03)
+    expect(Math.abs(losses[1]! / published.S - 1)).toBeLessThan(0.03)
+  })
+})
