@@ -8,10 +8,10 @@ import { llcInstants, llcWaveform } from '#shared/engine/topologies/llc-waves'
 import { expectWithin } from './relative'
 
 /** Integrates from 0 to a time with the general-purpose Cash–Karp solver; returns the state there. */
-function integrated(start: readonly number[], derivative: (change: Float64Array | number[], state: ArrayLike<number>, tS: number) => void, endS: number, tolerance = 1e-9): number[] {
-  const solver = integrate([...start], derivative as never, 0, endS / 1000, { tol: tolerance, maxIncreaseFactor: 4 })
+function integrated(start: readonly number[], derivative: (change: number[], state: ArrayLike<number>, tS: number) => void, endS: number, tolerance = 1e-9): number[] {
+  const solver = integrate([...start], derivative, 0, endS / 1000, { tol: tolerance, maxIncreaseFactor: 4 })
   solver.steps(Infinity, endS)
-  return Array.from(solver.y as ArrayLike<number>)
+  return Array.from(solver.y)
 }
 
 // The solver knows nothing of modes: the rectifier is a resistance that limits at the output voltage, so steep that what it leaks does not count.
