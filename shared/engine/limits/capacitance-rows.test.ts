@@ -1,7 +1,11 @@
 import { describe, expect, it } from 'vitest'
 import { blankSpecification } from '../propose'
+import type { Evaluation } from '../evaluation'
 import type { Winding, WindingSpecification } from '../specification'
 import { interwindingRows, resonanceRows } from './capacitance-rows'
+import { SHORTED_TURN_ID } from './faults'
+import { rowValue } from './row-value'
+import type { BuiltPart } from './row-value'
 
 const stated = { status: 'mandatory' as const, origin: { kind: 'entered' as const } }
 
@@ -39,5 +43,31 @@ describe('rows of stated capacitance and resonance', () => {
     const broken = specification()
     broken.electrical.interwindingCapacitance[0]!.windingIds = ['p', 'none']
     expect(interwindingRows(broken)).toEqual([])
+  })
+})
+
+describe('what the rows read', () => {
+  const document = { specification: specification(), requirement: null }
+  const part = (change: Partial<Evaluation> = {}): BuiltPart => ({
+    document,
+    evaluation: {
+      capacitances: [{ windingIds: ['p'], capacitanceF: 5e-12, model: '' }, { windingIds: ['p', 'a'], capacitanceF: 20e-12, model: '' }, { windingIds: ['p', 's'], capacitanceF: 30e-12, model: '' }],
+      selfResonance: [{ windingId: 'p', frequencyHz: 2e6, model: '' }],
+      leakages: [],
+      magnetics: { inductanceH: 1e-3 },
+      ...change,
+    } as unknown as Evaluation,
+  })
+
+  it('is the capacitance between the windings whose pins are shorted', () => {
+    expect(rowValue(part(), document, interwindingRows(document.specification)[0]!)).toEqual({ kind: 'reading', value: 30e-12 })
+  })
+
+  it('is the resonance, which a shorted turn raises by the root of the inductance it takes away', () => {
+    const row = resonanceRows({ ...document.specification, windings: document.specification.windings.map((one) => (one.id === 'p' ? { ...one, role: 'primary' as const } : one)) })[0]!
+    const built = { ...part(), document: { ...document, specification: { ...document.specification, windings: document.specification.windings.map((one) => (one.id === 'p' ? { ...one, role: 'primary' as const } : one)) } } }
+    expect(rowValue(built, document, row)).toEqual({ kind: 'reading', value: 2e6 })
+    const shorted = { ...built, evaluation: { ...built.evaluation, leakages: [{ windingId: 'p', shortedWindingIds: [SHORTED_TURN_ID], inductanceH: 1e-5, oneDimensionalH: null, model: '' }] } }
+    expect((rowValue(shorted, document, row) as { value: number }).value).toBeCloseTo(2e7, 0)
   })
 })

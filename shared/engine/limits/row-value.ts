@@ -92,6 +92,20 @@ function withstands(part: BuiltPart, row: TestRow): RowValue {
   return providedV === null || row.levelV === null ? null : { kind: 'verdict', pass: providedV >= row.levelV }
 }
 
+/** Between two windings, each shorted on itself. */
+function capacitanceF(part: BuiltPart, row: TestRow): number | null {
+  const ids = new Set(row.shortedTerminals.flatMap((terminals) => windingAt(part, terminals)?.id ?? []))
+  return part.evaluation.capacitances.find(({ windingIds }) => windingIds.length === 2 && ids.size === 2 && windingIds.every((id) => ids.has(id)))?.capacitanceF ?? null
+}
+
+/** With the inductance that the part really shows, so that a shorted turn raises it. */
+function resonanceHz(part: BuiltPart, row: TestRow): number | null {
+  const winding = windingAt(part, row.drivenTerminals)
+  const soundHz = part.evaluation.selfResonance.find(({ windingId }) => windingId === winding?.id)?.frequencyHz ?? null
+  const [soundH, shownH] = [referred(part, winding, part.evaluation.magnetics.inductanceH), inductanceH(part, row)]
+  return soundHz !== null && soundH && shownH ? soundHz * Math.sqrt(soundH / shownH) : soundHz
+}
+
 /**
  * What one row of the test table reads on a part, in the row's unit. `nominal` is the drawing that the row belongs to.
  */
@@ -112,7 +126,9 @@ export function rowValue(part: BuiltPart, nominal: SpecificationDocument, row: T
     case 'hipot':
       return withstands(part, row)
     case 'self-resonance':
+      return reading(resonanceHz(part, row))
     case 'interwinding-capacitance':
+      return reading(capacitanceF(part, row))
     case 'insulation-resistance':
     case 'surge':
     case 'impulse':

@@ -56,6 +56,11 @@ export function rowSpread(document: SpecificationDocument, library: Library, row
       return [...wireShare(document, library, row), TURN_LENGTH, instrument(0.005)]
     case 'turns-ratio':
       return [instrument(0.001)]
+    case 'interwinding-capacitance':
+      return [GEOMETRY, instrument(0.01)]
+    case 'self-resonance':
+      // The frequency goes by the root of inductance and capacitance.
+      return [...coreShares(document, library), GEOMETRY].map((share) => ({ ...share, halfWidth: share.halfWidth / 2 })).concat(instrument(0.01))
     default:
       return []
   }

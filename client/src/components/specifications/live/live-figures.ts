@@ -107,7 +107,24 @@ function leakageNote({ leakageH, oneDimensionalH, inductanceH }: { leakageH: num
   return oneDimensionalH ? `${share}; one-dimensional ${si(oneDimensionalH, 'H')}` : share
 }
 
+/** Of and between the windings, and where the first of them resonates. Evaluations made before this was calculated have none. */
+function capacitance({ capacitances, selfResonance }: Partial<Evaluation>, { windings }: WindingSpecification): FigureGroup {
+  const name = (id: string) => windings.find((winding) => winding.id === id)?.name ?? id
+  const resonance = selfResonance?.[0]
+  return {
+    title: 'Capacitance',
+    figures: [
+      ...(capacitances ?? []).map(({ windingIds, capacitanceF }, index) => ({
+        label: windingIds.length === 1 ? `${name(windingIds[0]!)}, across its terminals` : windingIds.map(name).join(' to '),
+        text: si(capacitanceF, 'F'),
+        why: `capacitances.${index}.capacitanceF`,
+      })),
+      ...(resonance ? [{ label: 'Self-resonance, other windings open', text: si(resonance.frequencyHz, 'Hz'), why: 'selfResonance.0.frequencyHz' }] : []),
+    ],
+  }
+}
+
 /** The figures beside the form, in groups; `–` where nothing can be told. */
 export function liveFigures(evaluation: Evaluation, specification: WindingSpecification): FigureGroup[] {
-  return [magnetics(evaluation), heat(evaluation), build(evaluation), leakage(evaluation, specification)].filter(({ figures }) => figures.length > 0)
+  return [magnetics(evaluation), heat(evaluation), build(evaluation), leakage(evaluation, specification), capacitance(evaluation, specification)].filter(({ figures }) => figures.length > 0)
 }
