@@ -13,8 +13,13 @@ function senseErrors(input: CheckInput): Outcome[] {
   if (!isTopology(input, 'current-sense')) return []
   const path = 'electrical.currentSense'
   const sense = input.document.specification.electrical.currentSense.value
-  if (!sense) return [notCheckable(path, { missing: 'burden' })]
+  const predicted = (['magnetising-error', 'droop'] as const).flatMap((code) => {
+    const value = figureOf(input, code)
+    return value === null ? [] : [atMost({ value: Math.abs(value), limit: SENSE_ERROR, unit: '1', path, values: { row: code } })]
+  })
+  if (!sense) return [...predicted, notCheckable(path, { missing: 'burden' })]
   return [
+    ...predicted,
     atMost({ value: Math.abs(sense.ratioError), limit: SENSE_ERROR, unit: '1', path, values: { row: 'ratio error' } }),
     atMost({ value: Math.abs(sense.droop), limit: SENSE_ERROR, unit: '1', path, values: { row: 'droop' } }),
     droopPredicted(input, sense.burdenOhm, sense.droop),
@@ -50,17 +55,24 @@ function senseDirectCurrent(input: CheckInput): Outcome[] {
 /** Share of saturation that the leakage flux of the working current may use. Source: textbook. */
 const LEAKAGE_FLUX_SHARE = 0.7
 
-/** The working current's flux cancels in the ring but for the leakage: L_lk·Î/(N·A). */
+/** Greatest of a figure of the solved corners; null where no corner has it. */
+function figureOf({ evaluation }: CheckInput, code: string): number | null {
+  const values = evaluation.corners.flatMap(({ figures }) => figures.flatMap((figure) => (figure.code === code && figure.value !== null ? [figure.value] : [])))
+  return values.length > 0 ? Math.max(...values) : null
+}
+
+/** The working current's flux cancels in the ring but for the leakage: L_lk·Î/(N·A), as the coil predicts it and as the drawing states the leakage. */
 function leakageFlux(input: CheckInput): Outcome[] {
   if (!isTopology(input, 'common-mode-choke')) return []
   const path = 'electrical.commonMode'
   const choke = input.document.specification.electrical.commonMode.value
-  const { core } = input.context
   const { saturationT } = input.evaluation.magnetics
   const turns = Math.min(...wound(input).map((winding) => winding.turns))
-  if (!choke || choke.differentialLeakageH === null || !core || !Number.isFinite(turns) || turns <= 0) return [notCheckable(path, { missing: 'leakage' })]
-  const fluxT = (choke.differentialLeakageH * choke.ratedCurrentA * Math.SQRT2) / (turns * core.effectiveAreaMm2 * input.context.sets * 1e-6)
-  return [atMost({ value: fluxT, limit: saturationT === null ? null : LEAKAGE_FLUX_SHARE * saturationT, unit: 'T', path, values: { currentA: choke.ratedCurrentA } })]
+  const areaM2 = input.context.core ? input.context.core.effectiveAreaMm2 * input.context.sets * 1e-6 : null
+  const statedVs = choke && choke.differentialLeakageH !== null ? choke.differentialLeakageH * choke.ratedCurrentA * Math.SQRT2 : null
+  const linkages = [figureOf(input, 'differential-flux-linkage'), statedVs].filter((linkage) => linkage !== null)
+  if (linkages.length === 0 || areaM2 === null || !(areaM2 > 0) || !Number.isFinite(turns) || turns <= 0) return [notCheckable(path, { missing: 'leakage' })]
+  return [atMost({ value: Math.max(...linkages) / (turns * areaM2), limit: saturationT === null ? null : LEAKAGE_FLUX_SHARE * saturationT, unit: 'T', path })]
 }
 
 /** Both windings have the same turns, and the inductance of each is tested. */
