@@ -1,4 +1,5 @@
 import type { Actor } from '#server/db/as-actor'
+import { partFlags } from '#server/db/schema/part-flags'
 import { partRows } from '#server/db/schema/parts'
 import { PART_READERS } from '#shared/contracts/parts'
 import { eq, isNull, or, sql, type SQL } from 'drizzle-orm'
@@ -18,6 +19,11 @@ export function canReadPart(actor: Actor, row: PartRow): boolean {
 /** The same rule as a restriction, for lists. */
 export function readableParts(actor: Actor): SQL {
   return mayRead(actor) ? or(isNull(partRows.companyId), eq(partRows.companyId, actor.companyId))! : sql`false`
+}
+
+/** What a company says about rows is its own. */
+export function readablePartFlags(actor: Actor): SQL {
+  return mayRead(actor) ? eq(partFlags.companyId, actor.companyId) : sql`false`
 }
 
 /** A change makes the company's own version, so that no shared row and nobody else's is touched. */

@@ -3,7 +3,9 @@ import { asActor } from '#server/db/as-actor'
 import { AppError } from '#server/errors'
 import { canWriteParts } from '#server/policies/parts'
 import { currentLibrary, libraryFor } from '#server/services/parts/library-for'
+import { importParts, previewPartImport } from '#server/services/parts/import-parts'
 import { listParts } from '#server/services/parts/list-parts'
+import { flaggedRows, setFlags } from '#server/services/parts/part-flags'
 import { readPart } from '#server/services/parts/read-part'
 import { changePart, createPart } from '#server/services/parts/write-part'
 import type { ResponseOf } from '#shared/contracts/endpoint'
@@ -39,6 +41,23 @@ export function partsRoutes(ctx: Context): Router {
   handle(router, contract.changePart, ({ actor, params, body }) => {
     if (!canWriteParts(actor)) throw new AppError('not-allowed', 'Only an engineer changes rows of the library.')
     return asActor(ctx, actor, (tx) => changePart(tx, actor, params, body))
+  })
+
+  handle(router, contract.getPartFlags, ({ actor }) => asActor(ctx, actor, (tx) => flaggedRows(tx, actor)))
+
+  handle(router, contract.setPartFlags, ({ actor, params, body }) => {
+    if (!canWriteParts(actor)) throw new AppError('not-allowed', 'Only an engineer says which rows are preferred or in the store.')
+    return asActor(ctx, actor, (tx) => setFlags(tx, actor, params, body))
+  })
+
+  handle(router, contract.previewPartImport, async ({ actor, body, file }) => {
+    if (!canWriteParts(actor)) throw new AppError('not-allowed', 'Only an engineer takes rows into the library.')
+    return previewPartImport(ctx, actor, body.kind, file!)
+  })
+
+  handle(router, contract.importParts, async ({ actor, body, file }) => {
+    if (!canWriteParts(actor)) throw new AppError('not-allowed', 'Only an engineer takes rows into the library.')
+    return importParts(ctx, actor, body, file!)
   })
 
   return router

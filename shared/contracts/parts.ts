@@ -33,6 +33,15 @@ const partDraftSchema = z
     for (const { path, message } of partProblems(row)) context.addIssue({ code: 'custom', path: path.split('.'), message })
   })
 
+/** What the company says about a row, whatever its version. */
+export const partFlagsSchema = z.object({
+  /** Comes first among equals in a search. */
+  preferred: z.boolean(),
+  /** Lies in the company's store. */
+  stocked: z.boolean(),
+})
+export type PartFlags = z.infer<typeof partFlagsSchema>
+
 export const partSummarySchema = z.object({
   kind: partKindSchema,
   id: z.string(),
@@ -46,6 +55,7 @@ export const partSummarySchema = z.object({
   confidence: confidenceSchema,
   unverified: z.int(),
   origin: partOriginSchema,
+  flags: partFlagsSchema,
 })
 
 export const partVersionSchema = z.object({
@@ -60,7 +70,7 @@ export const partVersionSchema = z.object({
 })
 
 /** A row with all its versions, newest first. */
-export const partSchema = z.object({ versions: z.array(partVersionSchema).min(1) })
+export const partSchema = z.object({ versions: z.array(partVersionSchema).min(1), flags: partFlagsSchema })
 
 export const librarySchema = z.object({
   cores: z.array(coreRowSchema),
@@ -75,6 +85,36 @@ export type PartSummary = z.infer<typeof partSummarySchema>
 export type PartVersion = z.infer<typeof partVersionSchema>
 export type Part = z.infer<typeof partSchema>
 export type PartOrigin = z.infer<typeof partOriginSchema>
+
+/** A table of rows is read whole into memory. */
+const LARGEST_IMPORT_BYTES = 2 * 1024 * 1024
+
+/** One thing that does not fit; `column` is the heading, empty when the whole row or table is meant. */
+const importProblemSchema = z.object({ column: z.string(), message: z.string() })
+
+export const partImportPreviewSchema = z.object({
+  /** What the preview was made of: the file and the library as they were. Handed back to confirm exactly this. */
+  fingerprint: z.string(),
+  /** What is wrong with the table itself; then no row is read. */
+  problems: z.array(importProblemSchema.extend({ line: z.int() })),
+  rows: z.array(
+    z.object({
+      /** Row of the spreadsheet; the headings are row 1. */
+      line: z.int(),
+      id: z.string(),
+      name: z.string(),
+      state: z.enum(['new', 'changed', 'unchanged', 'unfit']),
+      /** The version for new work that this one would follow; null for a new row. */
+      basedOn: z.int().nullable(),
+      /** Headings of the columns that differ from that version. */
+      changes: z.array(z.string()),
+      problems: z.array(importProblemSchema),
+    }),
+  ),
+})
+
+export type PartImportPreview = z.infer<typeof partImportPreviewSchema>
+export type PartImportRow = PartImportPreview['rows'][number]
 
 const partParams = z.strictObject({ kind: partKindSchema, id: partIdSchema })
 const reason = requiredText('The reason', TEXT_LIMITS.note)
@@ -140,4 +180,49 @@ export const changePart = defineEndpoint({
     reason,
   }),
   response: partSchema,
+})
+
+export const getPartFlags = defineEndpoint({
+  method: 'GET',
+  path: '/api/parts/flags',
+  summary: 'The rows that the company prefers and those in its store, as a search takes them: core/etd34-17-11',
+  access: PART_READERS,
+  response: z.object({ preferredRows: z.array(z.string()), stockedRows: z.array(z.string()) }),
+})
+
+export const setPartFlags = defineEndpoint({
+  method: 'PUT',
+  path: '/api/parts/:kind/:id/flags',
+  summary: 'Say whether the company prefers a row and whether it lies in its store; makes no version',
+  access: ['engineer'],
+  params: partParams,
+  body: z.strictObject(partFlagsSchema.shape),
+  response: partFlagsSchema,
+})
+
+const importUpload = { field: 'file', kinds: ['csv', 'txt'], required: true, maxBytes: LARGEST_IMPORT_BYTES } as const
+
+export const previewPartImport = defineEndpoint({
+  method: 'POST',
+  path: '/api/parts/import/preview',
+  summary: 'Read a table of rows of one kind (CSV) and say row by row what would become of it; stores nothing',
+  access: ['engineer'],
+  body: z.strictObject({ kind: partKindSchema }),
+  upload: importUpload,
+  response: partImportPreviewSchema,
+})
+
+export const importParts = defineEndpoint({
+  method: 'POST',
+  path: '/api/parts/import',
+  summary: 'Take in a table of rows as its preview showed it: all of it, or nothing',
+  access: ['engineer'],
+  body: z.strictObject({
+    kind: partKindSchema,
+    /** Of the preview that was confirmed; a library that changed since is a conflict. */
+    fingerprint: z.string().regex(/^[0-9a-f]{64}$/, 'This is not the mark of a preview.'),
+    reason,
+  }),
+  upload: importUpload,
+  response: z.object({ created: z.int(), changed: z.int(), unchanged: z.int() }),
 })

@@ -4,6 +4,7 @@ import type { PartDraft } from '#shared/contracts/part-rows'
 import * as parts from '#shared/contracts/parts'
 import type { Confidence, LibraryKind } from '#shared/engine/library'
 import { call } from '@/api/call'
+import { useUpload } from '@/composables/useUpload'
 
 export interface PartKey {
   kind: LibraryKind
@@ -73,6 +74,23 @@ export function useChangePart(key: PartKey) {
     mutation: (body: BodyOf<typeof parts.changePart>) => call(parts.changePart, { params: { kind: key.kind, id: key.id }, body }),
     onSettled: () => cache.invalidateQueries({ key: PART_KEYS.root }),
   })
+}
+
+/** Reads a table and says what would become of it; nothing is stored. */
+export function usePreviewImport() {
+  const { progress, send, stop } = useUpload(parts.previewPartImport)
+  const sending = useMutation({ mutation: ({ kind, file }: { kind: LibraryKind; file: File }) => send(file, { body: { kind } }) })
+  return { progress, stop, sending }
+}
+
+export function useImportParts() {
+  const cache = useQueryCache()
+  const { progress, send, stop } = useUpload(parts.importParts)
+  const sending = useMutation({
+    mutation: ({ file, ...body }: BodyOf<typeof parts.importParts> & { file: File }) => send(file, { body }),
+    onSettled: () => cache.invalidateQueries({ key: PART_KEYS.root }),
+  })
+  return { progress, stop, sending }
 }
 
 /** A form's entries as the contract takes them; what is missing or wrong the server says, field by field. */

@@ -21,6 +21,13 @@ export const partRoutes: RouteRecordRaw[] = [
     meta: { access: ['engineer'], title: 'Add a row' },
   },
   {
+    path: `/parts/${KIND}/import`,
+    name: 'import-parts',
+    props: true,
+    component: () => import('@/views/parts/ImportPartsView.vue'),
+    meta: { access: ['engineer'], title: 'Import rows' },
+  },
+  {
     path: `/parts/${KIND}/row/:id`,
     name: 'part',
     props: (route) => ({ ...route.params, version: Number(route.query.version) || null }),

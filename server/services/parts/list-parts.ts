@@ -1,9 +1,10 @@
 import type { Actor, Transaction } from '#server/db/as-actor'
 import { partRows } from '#server/db/schema/index'
-import type { listParts as contract, PartSummary } from '#shared/contracts/parts'
+import type { listParts as contract, PartFlags, PartSummary } from '#shared/contracts/parts'
 import type { QueryOf, ResponseOf } from '#shared/contracts/endpoint'
 import type { AnyLibraryRow } from '#shared/engine/library'
 import { eq } from 'drizzle-orm'
+import { flagsOfKind, NO_FLAGS } from './part-flags'
 import { currentVersions, type PartRecord } from './visible-rows'
 
 type Query = QueryOf<typeof contract>
@@ -14,10 +15,11 @@ type Query = QueryOf<typeof contract>
  */
 export async function listParts(tx: Transaction, actor: Actor, query: Query): Promise<ResponseOf<typeof contract>> {
   const all = await currentVersions(tx, actor, eq(partRows.kind, query.kind))
+  const flags = await flagsOfKind(tx, actor, query.kind)
   const found = all.filter((record) => matches(record, query)).sort(bySize)
   return {
     total: found.length,
-    rows: found.slice(query.offset, query.offset + query.limit).map(summaryOf),
+    rows: found.slice(query.offset, query.offset + query.limit).map((record) => summaryOf(record, flags.get(`${record.kind}/${record.partId}`) ?? NO_FLAGS)),
     families: familiesOf(all),
   }
 }
@@ -42,7 +44,7 @@ function familiesOf(records: readonly PartRecord[]): { family: string; count: nu
   return [...counts].map(([family, count]) => ({ family, count })).sort((a, b) => a.family.localeCompare(b.family))
 }
 
-function summaryOf(record: PartRecord): PartSummary {
+function summaryOf(record: PartRecord, flags: PartFlags): PartSummary {
   const { kind, id, version, name, source, confidence, unverified } = record.row
   return {
     kind,
@@ -55,6 +57,7 @@ function summaryOf(record: PartRecord): PartSummary {
     confidence,
     unverified: unverified.length,
     origin: record.companyId === null ? 'shared' : 'company',
+    flags,
   }
 }
 

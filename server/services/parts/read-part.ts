@@ -5,6 +5,7 @@ import type { Part, PartVersion } from '#shared/contracts/parts'
 import { partRowSchema } from '#shared/contracts/part-rows'
 import type { LibraryKind } from '#shared/engine/library'
 import { and, eq, inArray } from 'drizzle-orm'
+import { flagsOf } from './part-flags'
 import { visibleVersions, type PartRecord } from './visible-rows'
 
 export interface PartKey {
@@ -21,7 +22,7 @@ export async function readPart(tx: Transaction, actor: Actor, key: PartKey): Pro
   const records = await findVersions(tx, actor, key)
   if (records.length === 0) throw notFound('row')
   const names = await namesOf(tx, records)
-  return { versions: records.map((record, index) => presentVersion(record, index === 0, names)) }
+  return { versions: records.map((record, index) => presentVersion(record, index === 0, names)), flags: await flagsOf(tx, actor, key) }
 }
 
 function presentVersion(record: PartRecord, current: boolean, names: ReadonlyMap<string, string>): PartVersion {

@@ -13,9 +13,14 @@ import { findVersions, readPart, type PartKey } from './read-part'
 export async function createPart(tx: Transaction, actor: Actor, draft: PartDraft, reason: string): Promise<Part> {
   const existing = await findVersions(tx, actor, draft)
   if (existing.length > 0) throw identifierTaken(draft)
+  await addFirstVersion(tx, actor, draft, reason)
+  return readPart(tx, actor, draft)
+}
+
+/** Writes version 1 with its audit entry; the caller has seen that the identifier is free. */
+export async function addFirstVersion(tx: Transaction, actor: Actor, draft: PartDraft, reason: string): Promise<void> {
   await insertVersion(tx, actor, { ...draft, version: 1 }, reason)
   await recordAudit(tx, actor, { type: 'part-created', kind: draft.kind, partId: draft.id, version: 1 })
-  return readPart(tx, actor, draft)
 }
 
 /** The next version, the company's own: shared rows and earlier versions stay as they are. */
@@ -29,10 +34,15 @@ export async function changePart(tx: Transaction, actor: Actor, key: PartKey, ch
     throw new AppError('invalid-input', 'Nothing was changed; change a field first.', { row: 'The row is as it was.' })
   }
 
-  const version = Math.max(...versions.map((record) => record.version)) + 1
-  await insertVersion(tx, actor, { ...change.row, version }, change.reason)
-  await recordAudit(tx, actor, { type: 'part-changed', kind: key.kind, partId: key.id, version })
+  await addNextVersion(tx, actor, versions, change.row, change.reason)
   return readPart(tx, actor, key)
+}
+
+/** Writes the version behind the greatest of all that the company sees, with its audit entry. */
+export async function addNextVersion(tx: Transaction, actor: Actor, versions: readonly { version: number }[], draft: PartDraft, reason: string): Promise<void> {
+  const version = Math.max(...versions.map((record) => record.version)) + 1
+  await insertVersion(tx, actor, { ...draft, version }, reason)
+  await recordAudit(tx, actor, { type: 'part-changed', kind: draft.kind, partId: draft.id, version })
 }
 
 /** Documents refer to a row by kind and identifier, so that neither can change with a version. */

@@ -20,6 +20,15 @@ async function madeBy({ test }: MatrixWorld, world: World, note?: string): Promi
 const paramsOf = ({ kind, id }: PartDraft) => ({ kind, id })
 const changeOf = (row: PartDraft) => ({ params: paramsOf(row), body: { row: { ...row, name: 'Changed' }, basedOn: 1, reason: 'Measured.' } })
 
+/** A table of one new row. */
+const tableOf = (id: string) => ({ name: 'sleeves.csv', content: `id;name;source;edition;confidence;material;boreMm;wallMm;thermalClassC\n${id};Sleeve;Data sheet;2024;high;PTFE;1,5;0,4;180\n` })
+
+/** The fingerprint of what an engineer of the company was shown. */
+async function previewed({ test, own }: MatrixWorld, file: ReturnType<typeof tableOf>): Promise<string> {
+  const { body } = await request(test.app, contract.previewPartImport, { as: own.engineer.cookie, body: { kind: 'sleeve' }, file }).expect(200)
+  return body.fingerprint as string
+}
+
 export const parts: FeatureExpectations = {
   listParts: {
     own: async (world) => {
@@ -41,5 +50,12 @@ export const parts: FeatureExpectations = {
   changePart: {
     own: async (world) => changeOf(await madeBy(world, world.own)),
     foreign: async (world) => changeOf(await madeBy(world, world.foreign, world.foreignMark)),
+  },
+  previewPartImport: { own: () => ({ body: { kind: 'sleeve' }, file: tableOf(randomUUID()) }) },
+  importParts: {
+    own: async (world) => {
+      const file = tableOf(randomUUID())
+      return { body: { kind: 'sleeve', reason: 'Needed.', fingerprint: await previewed(world, file) }, file }
+    },
   },
 }
