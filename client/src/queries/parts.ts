@@ -23,6 +23,9 @@ const PART_KEYS = {
   root: ['parts'] as const,
   list: ({ kind, search, family, confidence, origin }: PartListFilter) =>
     [...PART_KEYS.root, 'list', kind, search, family ?? '', confidence ?? '', origin ?? ''] as const,
+  lists: () => [...PART_KEYS.root, 'list'] as const,
+  ones: () => [...PART_KEYS.root, 'one'] as const,
+  flags: () => [...PART_KEYS.root, 'flags'] as const,
   one: ({ kind, id }: PartKey) => [...PART_KEYS.root, 'one', kind, id] as const,
   library: (versions: 'current' | 'all') => [...PART_KEYS.root, 'library', versions] as const,
 }
@@ -73,6 +76,18 @@ export function useChangePart(key: PartKey) {
   return useMutation({
     mutation: (body: BodyOf<typeof parts.changePart>) => call(parts.changePart, { params: { kind: key.kind, id: key.id }, body }),
     onSettled: () => cache.invalidateQueries({ key: PART_KEYS.root }),
+  })
+}
+
+/** The rows that steer a search of this company. */
+export const partFlagsQuery = defineQueryOptions({ key: PART_KEYS.flags(), query: () => call(parts.getPartFlags) })
+
+export function useSetPartFlags() {
+  const cache = useQueryCache()
+  return useMutation({
+    mutation: ({ kind, id, ...body }: PartKey & parts.PartFlags) => call(parts.setPartFlags, { params: { kind, id }, body }),
+    // The library itself stays as it is.
+    onSettled: () => Promise.all([PART_KEYS.flags(), PART_KEYS.lists(), PART_KEYS.ones()].map((key) => cache.invalidateQueries({ key }))),
   })
 }
 

@@ -20,6 +20,8 @@ async function madeBy({ test }: MatrixWorld, world: World, note?: string): Promi
 const paramsOf = ({ kind, id }: PartDraft) => ({ kind, id })
 const changeOf = (row: PartDraft) => ({ params: paramsOf(row), body: { row: { ...row, name: 'Changed' }, basedOn: 1, reason: 'Measured.' } })
 
+const FLAGS = { preferred: true, stocked: true }
+
 /** A table of one new row. */
 const tableOf = (id: string) => ({ name: 'sleeves.csv', content: `id;name;source;edition;confidence;material;boreMm;wallMm;thermalClassC\n${id};Sleeve;Data sheet;2024;high;PTFE;1,5;0,4;180\n` })
 
@@ -50,6 +52,17 @@ export const parts: FeatureExpectations = {
   changePart: {
     own: async (world) => changeOf(await madeBy(world, world.own)),
     foreign: async (world) => changeOf(await madeBy(world, world.foreign, world.foreignMark)),
+  },
+  getPartFlags: {
+    own: async (world) => {
+      const row = await madeBy(world, world.foreign, world.foreignMark)
+      await request(world.test.app, contract.setPartFlags, { as: world.foreign.engineer.cookie, params: paramsOf(row), body: FLAGS }).expect(200)
+      return {}
+    },
+  },
+  setPartFlags: {
+    own: async (world) => ({ params: paramsOf(await madeBy(world, world.own)), body: FLAGS }),
+    foreign: async (world) => ({ params: paramsOf(await madeBy(world, world.foreign, world.foreignMark)), body: FLAGS }),
   },
   previewPartImport: { own: () => ({ body: { kind: 'sleeve' }, file: tableOf(randomUUID()) }) },
   importParts: {

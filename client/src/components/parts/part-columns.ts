@@ -65,6 +65,8 @@ export function csvColumns(kind: LibraryKind): SheetColumn<PartSummary>[] {
     { key: 'unverified', header: 'Unverified fields', value: ({ unverified }) => unverified },
     { key: 'origin', header: 'Origin', value: ({ origin }) => origin },
     { key: 'version', header: 'Version', value: ({ version }) => version },
+    { key: 'preferred', header: 'Preferred', value: ({ flags }) => (flags.preferred ? 'yes' : 'no') },
+    { key: 'stocked', header: 'In store', value: ({ flags }) => (flags.stocked ? 'yes' : 'no') },
     { key: 'source', header: 'Source', value: ({ source }) => source },
   ]
 }

@@ -1,5 +1,5 @@
 import type { Confidence, LibraryKind } from '#shared/engine/library'
-import type { PartOrigin } from '#shared/contracts/parts'
+import type { PartFlags, PartOrigin } from '#shared/contracts/parts'
 
 export const KIND_WORDS: Record<LibraryKind, { one: string; many: string }> = {
   core: { one: 'Core', many: 'Cores' },
@@ -36,3 +36,5 @@ const FAMILY_WORDS: Readonly<Record<string, string>> = {
 }
 
 export const familyWord = (family: string) => FAMILY_WORDS[family] ?? family
+
+export const flagWords = ({ preferred, stocked }: PartFlags) => [preferred && 'preferred', stocked && 'in store'].filter(Boolean).join(', ')

@@ -7,14 +7,17 @@ export interface SearchWishes {
   shapes: CoreShape[]
   methods: InsulationMethod[]
   materialIds: string[]
+  /** Only cores and coil formers in the company's store. */
+  onlyStocked: boolean
 }
 
-export const noWishes = (): SearchWishes => ({ shapes: [], methods: [], materialIds: [] })
+export const noWishes = (): SearchWishes => ({ shapes: [], methods: [], materialIds: [], onlyStocked: false })
 
-export const wishedPreferences = ({ shapes, methods, materialIds }: SearchWishes): SearchPreferences => ({
+export const wishedPreferences = ({ shapes, methods, materialIds, onlyStocked }: SearchWishes): SearchPreferences => ({
   ...(shapes.length > 0 ? { shapes } : {}),
   ...(methods.length > 0 ? { insulationMethods: methods } : {}),
   ...(materialIds.length > 0 ? { materialIds } : {}),
+  ...(onlyStocked ? { onlyStocked } : {}),
 })
 
 /** A list with one entry put in or taken out. */
