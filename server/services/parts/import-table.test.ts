@@ -19,8 +19,8 @@ const textOf = (row: AnyLibraryRow, path: string, comma = false) => {
 }
 
 const SLEEVE = ['id', 'name', 'source', 'edition', 'confidence', 'material', 'boreMm', 'wallMm', 'thermalClassC', 'withstandVRms']
-const sleeve = (change: Record<string, string> = {}) => {
-  const cells: Record<string, string> = { id: 's1', name: 'Sleeve 1', source: 'Data sheet', edition: '2024', confidence: 'high', material: 'PTFE', boreMm: '1.5', wallMm: '0.4', thermalClassC: '180', withstandVRms: '', ...change }
+const sleeve = (change: Partial<Record<string, string>> = {}) => {
+  const cells: Partial<Record<string, string>> = { id: 's1', name: 'Sleeve 1', source: 'Data sheet', edition: '2024', confidence: 'high', material: 'PTFE', boreMm: '1.5', wallMm: '0.4', thermalClassC: '180', withstandVRms: '', ...change }
   return SLEEVE.map((path) => cells[path]!)
 }
 const read = (...rows: string[][]) => readPartTable(table(SLEEVE, rows), 'sleeve', known())
