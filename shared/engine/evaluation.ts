@@ -24,6 +24,7 @@ export interface Evaluation {
   /** The same at the same temperature in every corner, in the order of `corners`. */
   lossesByCorner: LossResult[]
   thermal: ThermalResult
+  faults: FaultCase[]
   boundaries: BoundaryResult[]
   mass: MassResult
   findings: Finding[]
@@ -289,10 +290,30 @@ export interface ThermalResult {
   riseK: number | null
   ambientC: number | null
   windingC: number | null
+  /** Allowance for the hottest place over the mean of the winding. */
+  hotSpotC: number | null
+  /** The same loss by the volume law of ferrite cores, for comparison: the models differ by a quarter. */
+  riseByVolumeK: number | null
   /** The limit of the insulation system for the method stated. */
   limitC: number | null
   marginK: number | null
   surfaceMm2: number | null
+  model: string
+}
+
+/** The part under a fault that its supply lets last. */
+export interface FaultCase {
+  /** All outputs loaded to just below the current limit, or one shorted. */
+  kind: 'overload' | 'shorted-output'
+  outputId: string | null
+  output: string | null
+  lossW: number | null
+  windingC: number | null
+  /** It does not settle below the temperature to which the laws of loss hold. */
+  runaway: boolean
+  /** What the thermal class allows under overload, by resistance. */
+  limitC: number | null
+  state: CheckState
   model: string
 }
 

@@ -65,6 +65,14 @@ function reportModeChanges(context: Context, corners: readonly CornerState[]): v
 
 const atFullLoad = ({ name }: { name: string }) => !name.startsWith('light-load') && name !== 'current-limit'
 
+/** The overload of the current limit alone; null where no limit acts or it is not reached. */
+export function limitCorner(context: Context, basis: InductanceBasis, coil: Coil | null): CornerState | null {
+  const solved = circuitOf(context, { inductanceH: basis.nominalH, coil })
+  if (!solved?.circuit.solve) return null
+  const limited = limitPoint(context, solved, topologyOf(solved.duty).points?.(solved.duty) ?? converterPoints(context, solved.duty))
+  return limited && cornerOf(context, solved, limited)
+}
+
 function cornerOf(context: Context, { circuit, primary, areaMm2 }: SolvedCircuit, point: NamedPoint): CornerState | null {
   return reached(context, 'requirement.duty', () => {
     const state = circuit.solve!(point)

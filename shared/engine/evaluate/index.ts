@@ -19,6 +19,7 @@ import { cornerAt, cornersOf } from './corners'
 import { reportContradictions } from './document-findings'
 import { explainCorners } from './explain-corners'
 import { explainResults } from './explain-results'
+import { faultCases } from './fault-cases'
 import { finiteOnly } from './finite'
 import { gapOf, inductanceBasis } from './inductance'
 import type { InductanceBasis } from './inductance'
@@ -68,6 +69,7 @@ export function evaluate(document: SpecificationDocument, library: Library, opti
     losses: heat.losses,
     lossesByCorner: heat.lossesByCorner,
     thermal: heat.thermal,
+    faults: faultCases(context, { basis, coil, corners, settle: heat.settleAt }),
     boundaries: boundaryResults(context, coil, voltageCorners(context, { basis, coil, corners })),
     mass: massOf(context, coppers),
     findings: [],

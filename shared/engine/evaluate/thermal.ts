@@ -3,7 +3,7 @@ import { THERMAL_CLASSES, windingLimitC } from '../thermal/classes'
 import type { ThermalClassC } from '../thermal/classes'
 import { settleTemperature } from '../thermal/fixed-point'
 import type { FixedPoint } from '../thermal/fixed-point'
-import { boxSurfaceMm2, temperatureRiseK } from '../thermal/temperature-rise'
+import { boxSurfaceMm2, HOT_SPOT_ALLOWANCE_K, temperatureRiseK } from '../thermal/temperature-rise'
 import { sampled } from '../thermal/smooth'
 import { TAIL_SHARE } from '../losses/copper-loss'
 import type { CopperLoss } from '../losses/copper-loss'
@@ -12,6 +12,7 @@ import type { CopperStage } from './copper-loss'
 import { attempt, explain, report } from './context'
 import type { Context } from './context'
 import type { CornerState } from './corner-result'
+import { originOf } from './inductance'
 
 /** No hotter than this is searched: beyond it the laws of copper and ferrite loss do not hold. */
 const CEILING_C = 250
@@ -21,6 +22,14 @@ const COMPARISON_C = 100
 
 export const THERMAL_MODEL = 'ΔT = 450·ψ^0.826, mean of the part, natural convection, box without its base (McLyman); ±25 %'
 export const LOSS_MODEL = 'copper: skin and proximity of each layer, each harmonic; core: improved generalised Steinmetz'
+
+/** Temperature at which one working point settles. */
+export interface SettledPoint {
+  temperatureC: number
+  lossW: number
+  /** Hotter than the laws of loss hold. */
+  runaway: boolean
+}
 
 export interface Heat {
   /** The full-load corner with the greatest loss. */
@@ -35,6 +44,8 @@ export interface Heat {
   /** Derivative of the rise by temperature at the settled point; null when it did not settle. */
   loopGain: number | null
   temperatureC: number | null
+  /** Any working point, such as one under fault; null where losses, ambient or surface are not known. */
+  settleAt: (corner: CornerState) => SettledPoint | null
 }
 
 interface HeatInput {
@@ -74,6 +85,7 @@ export function heatBalance(context: Context, { copper, corners }: HeatInput): H
   reportRest(context, loss.copper)
   return {
     hottest,
+    settleAt: (corner) => settledPoint(ambientC === null || surfaceMm2 === null ? null : settle(quiet, { copper, hottest: corner, ambientC, surfaceMm2 })),
     copper: loss.copper,
     flat,
     temperatureC,
@@ -88,6 +100,8 @@ export function heatBalance(context: Context, { copper, corners }: HeatInput): H
 function reportRest(context: Context, loss: CopperLoss | null): void {
   if (loss && loss.tailShare > TAIL_SHARE * 1.5) report(context, 'harmonic-sum-capped', 'note', 'windings', { harmonics: loss.orders, tailShare: loss.tailShare })
 }
+
+const settledPoint = (point: FixedPoint | null): SettledPoint | null => point && { temperatureC: point.temperatureC, lossW: point.lossW, runaway: point.state === 'runaway' }
 
 function settle(context: Context, input: { copper: CopperStage; hottest: CornerState | null; ambientC: number; surfaceMm2: number }): FixedPoint | null {
   const { copper, hottest, ambientC, surfaceMm2 } = input
@@ -153,13 +167,31 @@ function thermalResult(context: Context, input: { ambientC: number | null; surfa
       { name: 'T_amb', value: ambientC ?? 'not known', unit: '°C', origin: context.requirement ? 'requirement.ambientC' : 'insulation.maximumAmbientC' },
     ],
   }))
+  explain(context, 'thermal.hotSpotC', () => ({
+    symbol: 'T_hs', value: temperatureC === null ? null : temperatureC + HOT_SPOT_ALLOWANCE_K, unit: '°C', formula: 'T + 10 K', source: 'practice with IEC 60085 classes (from memory)',
+    inputs: [{ name: 'T', value: temperatureC ?? 'not known', unit: '°C', origin: 'thermal.windingC' }],
+  }))
   return {
     riseK,
     ambientC,
     windingC: temperatureC,
+    hotSpotC: temperatureC === null ? null : temperatureC + HOT_SPOT_ALLOWANCE_K,
+    riseByVolumeK: riseByVolumeK(context, temperatureC === null ? null : input.lossW),
     limitC,
     marginK: limitC !== null && temperatureC !== null ? limitC - temperatureC : null,
     surfaceMm2,
     model: THERMAL_MODEL,
   }
+}
+
+function riseByVolumeK(context: Context, lossW: number | null): number | null {
+  const { core, sets } = context
+  if (!core || lossW === null) return null
+  const effectiveVolumeMm3 = core.effectiveVolumeMm3 * sets
+  const value = attempt(context, 'core.core', () => temperatureRiseK({ kind: 'ferrite-volume', effectiveVolumeMm3 }, lossW))
+  explain(context, 'thermal.riseByVolumeK', () => ({
+    symbol: 'ΔT_V', value, unit: 'K', formula: '53·V_e^−0.54·P, V_e in cm³', source: 'S. Mulder, ferrite handbook (from memory)',
+    inputs: [{ name: 'P', value: lossW, unit: 'W', origin: 'losses.totalW' }, { name: 'V_e', value: effectiveVolumeMm3, unit: 'mm³', origin: originOf(context, 'core') }],
+  }))
+  return value
 }

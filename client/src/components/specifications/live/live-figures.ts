@@ -69,8 +69,24 @@ function heat({ losses, thermal }: Evaluation): FigureGroup {
       { label: 'Total loss', text: si(losses.totalW, 'W') },
       { label: 'Temperature rise', text: kelvin(thermal.riseK), note: thermal.model, why: 'thermal.riseK' },
       { label: 'Winding temperature', text: celsius(thermal.windingC), note: thermal.limitC === null ? undefined : `limit ${celsius(thermal.limitC)}`, verdict: below(thermal.windingC, thermal.limitC) },
+      { label: 'Hot spot', text: celsius(thermal.hotSpotC), why: 'thermal.hotSpotC' },
+      { label: 'Rise by the volume law', text: kelvin(thermal.riseByVolumeK), note: 'for comparison', why: 'thermal.riseByVolumeK' },
       { label: 'Margin', text: kelvin(thermal.marginK) },
     ],
+  }
+}
+
+/** Temperatures under fault; nothing is said of a part without a duty. */
+function faults({ faults: cases }: Evaluation): FigureGroup {
+  return {
+    title: 'Under fault, the current limit holding',
+    figures: cases.map(({ kind, output, windingC, lossW, limitC, runaway, state }, index) => ({
+      label: kind === 'overload' ? 'All outputs overloaded' : `${output ?? 'Output'} shorted`,
+      text: runaway ? 'does not settle' : celsius(windingC),
+      note: lossW === null ? 'no current limit reached' : `${si(lossW, 'W')}${limitC === null ? '' : `, overload limit ${celsius(limitC)}`}`,
+      verdict: state,
+      why: `faults.${index}.windingC`,
+    })),
   }
 }
 
@@ -126,5 +142,9 @@ function capacitance({ capacitances, selfResonance }: Partial<Evaluation>, { win
 
 /** The figures beside the form, in groups; `–` where nothing can be told. */
 export function liveFigures(evaluation: Evaluation, specification: WindingSpecification): FigureGroup[] {
+<<<<<<< HEAD
   return [magnetics(evaluation), heat(evaluation), build(evaluation), leakage(evaluation, specification), capacitance(evaluation, specification)].filter(({ figures }) => figures.length > 0)
+=======
+  return [magnetics(evaluation), heat(evaluation), faults(evaluation), build(evaluation), leakage(evaluation, specification)].filter(({ figures }) => figures.length > 0)
+>>>>>>> 82f694a (Tell the temperatures under overload and short while the current limit holds, the hot spot, and the rise by the volume law)
 }

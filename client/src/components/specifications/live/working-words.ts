@@ -13,7 +13,7 @@ export function withUnit(value: number | string | null, unit: string): string {
 }
 
 const PLACE = /^[a-z]+(?:\.[A-Za-z0-9]+)+/
-const CALCULATED = /^(magnetics|thermal|losses|layout|corners|leakages|boundaries|capacitances)\./
+const CALCULATED = /^(magnetics|thermal|losses|layout|corners|leakages|boundaries|capacitances|faults)\./
 
 /** Where an input came from: the engine's place as the form calls it. */
 export function inWords(origin: string): string {
