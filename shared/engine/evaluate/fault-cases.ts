@@ -68,7 +68,8 @@ function shortedCorner(context: Context, { basis, coil, duty, index }: { basis: 
 
 /** The duty with one output shorted: that one decides the voltages, the others carry nothing. */
 function withShort(duty: Duty, index: number): Duty | null {
-  if (!('outputs' in duty)) return null
+  // A gate drive's outputs have no voltage of their own, and its driver no current limit.
+  if (!('outputs' in duty) || duty.topology === 'gate-drive') return null
   const outputs = duty.outputs.map((output, place) =>
     place === index
       ? { ...output, role: 'main' as const, voltageV: output.voltageV * SHORT_SHARE, lightLoadCurrentA: 0 }

@@ -40,6 +40,7 @@ const MORE: Readonly<Record<string, readonly FieldSpec[]>> = {
     { type: 'terminal', path: 'startTerminal', label: 'start terminal' },
     { type: 'terminal', path: 'finishTerminal', label: 'finish terminal' },
     choice('direction', 'direction, from the pin side', [{ value: 'clockwise', label: 'clockwise' }, { value: 'counter-clockwise', label: 'counter-clockwise' }]),
+    choice('withPrevious', 'wound', [{ value: false, label: 'by itself' }, { value: true, label: 'together with the step before, turn beside turn' }], { optional: true }),
     count('layers', 'layers asked for', { min: 1, max: 200, optional: true }),
     figure('marginLeftMm', 'margin left', 'mm', { min: 0 }),
     figure('marginRightMm', 'margin right', 'mm', { min: 0 }),

@@ -18,7 +18,12 @@ describe.each(DUTY_TOPOLOGIES)('the form of %s', (topology) => {
   it('has a field for every value of the duty, and none for a value that does not exist', () => {
     const fields = [...inputFields(duty), ...form.fields(duty)]
     for (const { path } of fields) expect(valueAt({ requirement }, path), path).not.toBeUndefined()
-    const places = [...fields.map(({ path }) => path), ...form.kinds(duty).map(({ place }) => place), 'requirement.duty.outputs', 'requirement.duty.topology', 'requirement.duty.supply']
+    // A value that means something in one kind only has its field there.
+    const otherwise = form.kinds(duty).flatMap((choice) => choice.choices.flatMap(({ value }) => {
+      const changed = Object.entries(choice.write(String(value))).reduce<{ requirement: typeof requirement }>((tree, [place, entry]) => withValue(tree, place, entry), { requirement }).requirement.duty
+      return formOf(changed).fields(changed)
+    }))
+    const places = [...fields, ...otherwise].map(({ path }) => path).concat(form.kinds(duty).map(({ place }) => place), 'requirement.duty.outputs', 'requirement.duty.topology', 'requirement.duty.supply')
     for (const key of Object.keys(duty)) expect(places.some((place) => place.startsWith(`requirement.duty.${key}`)), key).toBe(true)
   })
 
