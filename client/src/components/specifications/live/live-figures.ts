@@ -142,9 +142,5 @@ function capacitance({ capacitances, selfResonance }: Partial<Evaluation>, { win
 
 /** The figures beside the form, in groups; `–` where nothing can be told. */
 export function liveFigures(evaluation: Evaluation, specification: WindingSpecification): FigureGroup[] {
-<<<<<<< HEAD
-  return [magnetics(evaluation), heat(evaluation), build(evaluation), leakage(evaluation, specification), capacitance(evaluation, specification)].filter(({ figures }) => figures.length > 0)
-=======
-  return [magnetics(evaluation), heat(evaluation), faults(evaluation), build(evaluation), leakage(evaluation, specification)].filter(({ figures }) => figures.length > 0)
->>>>>>> 82f694a (Tell the temperatures under overload and short while the current limit holds, the hot spot, and the rise by the volume law)
+  return [magnetics(evaluation), heat(evaluation), faults(evaluation), build(evaluation), leakage(evaluation, specification), capacitance(evaluation, specification)].filter(({ figures }) => figures.length > 0)
 }
