@@ -22,7 +22,7 @@ describe.each(TRANSFORMER_SHEETS.map((sheet) => ({ name: `${sheet.duty.topology}
   it('reaches every output at full load over the whole input range', () => {
     const loaded = evaluation.corners.filter(({ name }) => FULL_LOAD.includes(name))
     expect(loaded.map(({ name }) => name)).toEqual(FULL_LOAD)
-    if (!('outputs' in sheet.duty)) throw new Error('a sheet without outputs')
+    if (!('outputs' in sheet.duty) || sheet.duty.topology === 'gate-drive') throw new Error('a sheet without outputs of their own voltage')
     for (const corner of loaded) {
       for (const { outputId, voltageV } of corner.outputs) {
         const asked = sheet.duty.outputs.find(({ id }) => id === outputId)!
