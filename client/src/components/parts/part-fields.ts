@@ -41,6 +41,23 @@ const centreLeg: VariantField = {
   formOf: shapeOf,
 }
 
+const coating: VariantField = {
+  type: 'variant',
+  path: 'coatedMm',
+  label: 'Ring core: greatest size over its coating',
+  forms: [
+    { value: 'none', label: 'Not stated', make: () => null, fields: [] },
+    {
+      value: 'given',
+      label: 'Stated',
+      make: () => ({ outside: null, inside: null, height: null }),
+      fields: [figure('outside', 'Outside diameter', 'mm'), figure('inside', 'Inside diameter', 'mm'), figure('height', 'Height', 'mm')],
+    },
+  ],
+  // Rows from before the field have none.
+  formOf: (value) => (value == null ? 'none' : 'given'),
+}
+
 const tube: VariantField = {
   type: 'variant',
   path: 'tube',
@@ -96,6 +113,7 @@ const CORE: readonly PartSection[] = [
       figure('dimensionsMm.e', 'E, window from outer leg to outer leg', 'mm', optional),
       figure('dimensionsMm.f', 'F, centre leg', 'mm', optional),
       centreLeg,
+      coating,
     ],
   },
 ]
