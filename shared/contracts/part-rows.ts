@@ -109,6 +109,10 @@ const lossFit = z.strictObject({
   ct2: figure,
   minimumHz: positive,
   maximumHz: positive,
+  minimumC: celsius.nullable().optional(),
+  maximumC: celsius.nullable().optional(),
+  minimumT: notNegative.nullable().optional(),
+  maximumT: positive.nullable().optional(),
   source: requiredText('The source of the fit', 500),
   confidence: confidenceSchema,
 })

@@ -5,6 +5,7 @@ export type FindingCode =
   | 'core-loss-flux-out-of-range'
   | 'core-loss-frequency-out-of-range'
   | 'core-loss-temperature-out-of-range'
+  | 'core-loss-under-bias'
   | 'harmonic-sum-capped'
   | 'no-core-loss-data'
   | 'temperature-out-of-range'

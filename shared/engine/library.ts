@@ -83,6 +83,11 @@ export interface LossFit {
   ct2: number
   minimumHz: number
   maximumHz: number
+  /** Temperature and peak flux density at which the set was measured; left out where its source does not say. */
+  minimumC?: number | null | undefined
+  maximumC?: number | null | undefined
+  minimumT?: number | null | undefined
+  maximumT?: number | null | undefined
   source: string
   confidence: Confidence
 }

@@ -1,6 +1,7 @@
 import { coreLoss, coreLossTemperatureFactor, igseCoefficient, igseLossWPerM3, steinmetzFromIgse, steinmetzLossWPerM3 } from '#shared/engine/losses/core-loss'
 import type { CoreLossFit } from '#shared/engine/losses/core-loss'
-import { waveformFromRamps } from '#shared/engine/waveforms/waveform'
+import { hysteresisLoops } from '#shared/engine/losses/minor-loops'
+import { createWaveform, waveformFromRamps } from '#shared/engine/waveforms/waveform'
 import { describe, expect, it } from 'vitest'
 import { expectWithin } from './relative'
 
@@ -124,3 +125,37 @@ it('data-book fit: 0.0805 T in 226 mm² × 95.8 mm loses 0.235 W', () => {
 
 // Source: L. Dixon, SLUP127, p. 5-15: 2.6 mW/cm³ in ETD 34.
 it('2.6 mW/cm³ in 7.64 cm³ is 20 mW', () => expectWithin(2.6e3 * 7.64e-6, 0.02, 0.01))
+
+// Source: K. Venkatachalam et al., IEEE COMPEL 2002: each minor loop counts with its own swing.
+describe('hysteresis loops', () => {
+  const wave = (points: readonly (readonly [number, number])[]) => createWaveform(points[points.length - 1]![0], points)
+  const coefficients = { k: 3.2, alpha: 1.46, beta: 2.75 }
+
+  it('are one for a flux that rises and falls once, wherever its period begins', () => {
+    const [from, shifted] = [wave([[0, -0.1], [4e-6, 0.1], [10e-6, -0.1]]), wave([[0, 0], [2e-6, 0.1], [8e-6, -0.1], [10e-6, 0]])]
+    expect(hysteresisLoops(from)).toHaveLength(1)
+    expectWithin(igseLossWPerM3(coefficients, shifted), igseLossWPerM3(coefficients, from), 1e-9)
+  })
+
+  it('split off an excursion on the way up and one on the way down, by their own swings', () => {
+    const loops = hysteresisLoops(wave([[0, 0], [2, 0.1], [3, 0.06], [5, 0.2], [7, 0.08], [8, 0.11], [10, 0]]))
+    expect(loops.map(({ swingT }) => Number(swingT.toFixed(9))).sort()).toEqual([0.03, 0.04, 0.2])
+    const time = loops.flatMap(({ pieces }) => pieces).reduce((sum, { durationS }) => sum + durationS, 0)
+    expectWithin(time, 10, 1e-12)
+  })
+
+  it('make a ripple cost less than its swing counted as the major one’s, and no less than without it', () => {
+    const rippled = wave([[0, 0], [20e-6, 0.2], [21e-6, 0.15], [22e-6, 0.2], [40e-6, 0]])
+    const plain = wave([[0, 0], [20e-6, 0.2], [22e-6, 0.2], [40e-6, 0]])
+    const loss = igseLossWPerM3(coefficients, rippled)
+    const ripple = [...hysteresisLoops(rippled)].find(({ swingT }) => swingT < 0.1)!
+    const alone = ripple.pieces.reduce((sum, { durationS, from, to }) => sum + Math.abs((to - from) / durationS) ** 1.46 * durationS, 0)
+    expectWithin(loss - igseLossWPerM3(coefficients, plain), (igseCoefficient(coefficients) * 0.05 ** (2.75 - 1.46) * alone) / 40e-6, 1e-9)
+  })
+
+  it('say when the flux is biased and when a set is used outside the temperature it was measured at', () => {
+    const fits = [{ ...coefficients, frequencyRangeHz: [20e3, 200e3] as const, temperatureRangeC: [15, 35] as const, source: 'measured at 25 °C' }]
+    const biased = coreLoss({ fits, fluxDensityT: wave([[0, 0.1], [5e-6, 0.2], [10e-6, 0.1]]), temperatureC: 100, path: 'core.material' })
+    expect(biased.state === 'known' && biased.value.findings.map(({ code }) => code)).toEqual(['core-loss-temperature-out-of-range', 'core-loss-under-bias'])
+  })
+})

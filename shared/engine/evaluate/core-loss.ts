@@ -6,14 +6,24 @@ import type { Context } from './context'
 import type { CornerState } from './corner-result'
 
 /** A library row's fit as the loss stage takes it. */
-export const coreLossFit = ({ cm, x, y, ct0, ct1, ct2, minimumHz, maximumHz, source }: LossFit): CoreLossFit => ({
+export const coreLossFit = ({ cm, x, y, ct0, ct1, ct2, minimumHz, maximumHz, minimumC, maximumC, minimumT, maximumT, source }: LossFit): CoreLossFit => ({
   k: cm,
   alpha: x,
   beta: y,
   temperature: { ct0, ct1, ct2 },
   frequencyRangeHz: [minimumHz, maximumHz],
+  ...temperatureRange({ ct1, ct2, minimumC, maximumC }),
+  ...(minimumT != null || maximumT != null ? { fluxRangeT: [minimumT ?? 0, maximumT ?? Infinity] as const } : {}),
   source,
 })
+
+/** A set without terms of temperature holds where it was measured: at room temperature, unless it says otherwise. */
+const ROOM_C = [15, 35] as const
+
+function temperatureRange({ ct1, ct2, minimumC, maximumC }: Pick<LossFit, 'ct1' | 'ct2' | 'minimumC' | 'maximumC'>): Pick<CoreLossFit, 'temperatureRangeC'> {
+  if (minimumC != null || maximumC != null) return { temperatureRangeC: [minimumC ?? -Infinity, maximumC ?? Infinity] }
+  return ct1 === 0 && ct2 === 0 ? { temperatureRangeC: ROOM_C } : {}
+}
 
 export interface CoreHeat extends CoreLoss {
   lossW: number

@@ -36,6 +36,7 @@ export const FINDING_TEXTS: Readonly<Record<FindingCode, (values: Values) => str
   'commutation-time-assumed': (v) => `The current's edges are ideal; the copper loss takes them to last ${amount(v, 'edgeS', 's')}.`,
   'core-loss-flux-out-of-range': () => 'The flux density lies outside the range of the loss data.',
   'core-loss-frequency-out-of-range': () => 'The frequency lies outside the range of the loss data.',
+  'core-loss-under-bias': (v) => `The flux never falls below ${formatEngineering(Number(v.biasT), 'T', { significant: 3 })}; loss data are measured about zero, and the true core loss is higher.`,
   'core-loss-temperature-out-of-range': () => 'The temperature lies outside the range of the loss data.',
   'harmonic-sum-capped': (v) => `The copper loss sums ${named(v, 'harmonics')} harmonics; ${percent(v, 'tailShare')} of the loss by alternating current lies beyond and is estimated.`,
   'no-core-loss-data': (v) => `The library has no loss data for ${named(v, 'material', 'the material')}.`,
