@@ -90,22 +90,6 @@ const frequencyRange: VariantField = {
   formOf: (value) => (value === null ? 'none' : 'given'),
 }
 
-const coating: VariantField = {
-  type: 'variant',
-  path: 'coatedMm',
-  label: 'Ring core: size over the coating',
-  forms: [
-    { value: 'none', label: 'Not stated, or no ring', make: () => null, fields: [] },
-    {
-      value: 'given',
-      label: 'Stated',
-      make: () => ({ outside: null, inside: null, height: null }),
-      fields: [figure('outside', 'Greatest outside diameter', 'mm'), figure('inside', 'Least inside diameter', 'mm'), figure('height', 'Greatest height', 'mm')],
-    },
-  ],
-  formOf: (value) => (value == null ? 'none' : 'given'),
-}
-
 const CORE: readonly PartSection[] = [
   {
     title: 'Effective parameters (IEC 60205), set of two halves',
