@@ -105,7 +105,7 @@ function explainLeakage(context: Context, coil: Coil, { driven, shorted, index }
   const shortedNames = { name: 'shorted', value: shorted.map(({ name }) => name).join(', '), unit: '', origin: 'windings' }
   const nameOf = (id: string) => shorted.find((winding) => winding.id === id)?.name ?? id
   explain(context, `leakages.${index}.inductanceH`, () => ({
-    symbol: 'L_leak', value: result.inductanceH, unit: 'H', formula: 'N²·ΘᵀMΘ, M of the field in the window, Θ shared for least energy', source: 'E. Roth, Rev. Gén. Électr. 23 (1928) 773; round legs: L. Rabins, Trans. AIEE 75 III (1956) 261',
+    symbol: 'L_leak', value: result.inductanceH, unit: 'H', formula: 'N²·Σ Θ_j·M_jk·Θ_k, M of the field in the window, Θ shared for least energy', source: 'E. Roth, Rev. Gén. Électr. 23 (1928) 773; round legs: L. Rabins, Trans. AIEE 75 III (1956) 261',
     inputs: [
       turns, shortedNames,
       { name: 'ΘᵀMΘ', value: group?.perTurnH ?? 'not known', unit: 'H', origin: matrix?.model ?? 'no rectangular winding window' },
