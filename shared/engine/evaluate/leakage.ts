@@ -108,7 +108,7 @@ function explainLeakage(context: Context, coil: Coil, { driven, shorted, index }
     symbol: 'L_leak', value: result.inductanceH, unit: 'H', formula: 'N²·Σ Θ_j·M_jk·Θ_k, M of the field in the window, Θ shared for least energy', source: 'E. Roth, Rev. Gén. Électr. 23 (1928) 773; round legs: L. Rabins, Trans. AIEE 75 III (1956) 261',
     inputs: [
       turns, shortedNames,
-      { name: 'ΘᵀMΘ', value: group?.perTurnH ?? 'not known', unit: 'H', origin: matrix?.model ?? 'no rectangular winding window' },
+      { name: 'Σ Θ_j·M_jk·Θ_k', value: group?.perTurnH ?? 'not known', unit: 'H', origin: matrix?.model ?? 'no rectangular winding window' },
       ...shorted.map(({ id }) => ({ name: `Θ ${nameOf(id)}`, value: group?.ampereTurns.get(id) ?? 'not known', unit: '', origin: 'share of the ampere-turns' })),
       { name: 'one-dimensional', value: result.oneDimensionalH ?? 'not known', unit: 'H', origin: `leakages.${index}.oneDimensionalH` },
     ],
