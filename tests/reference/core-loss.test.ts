@@ -2,6 +2,7 @@ import { coreLoss, coreLossTemperatureFactor, igseCoefficient, igseLossWPerM3, s
 import type { CoreLossFit } from '#shared/engine/losses/core-loss'
 import { hysteresisLoops } from '#shared/engine/losses/minor-loops'
 import { createWaveform, waveformFromRamps } from '#shared/engine/waveforms/waveform'
+import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import { expectWithin } from './relative'
 
@@ -151,6 +152,18 @@ describe('hysteresis loops', () => {
     const ripple = [...hysteresisLoops(rippled)].find(({ swingT }) => swingT < 0.1)!
     const alone = ripple.pieces.reduce((sum, { durationS, from, to }) => sum + Math.abs((to - from) / durationS) ** 1.46 * durationS, 0)
     expectWithin(loss - igseLossWPerM3(coefficients, plain), (igseCoefficient(coefficients) * 0.05 ** (2.75 - 1.46) * alone) / 40e-6, 1e-9)
+  })
+
+  it('end for any flux, and take the whole period', () => {
+    const level = fc.double({ min: -0.4, max: 0.4, noNaN: true })
+    fc.assert(fc.property(fc.array(level, { minLength: 2, maxLength: 40 }), fc.double({ min: -1e-16, max: 1e-16, noNaN: true }), (levels, digit) => {
+      const points = [...levels.map((value, index) => [index, value] as const), [levels.length, levels[0]! + digit] as const]
+      const loops = hysteresisLoops(wave(points))
+      const time = loops.flatMap(({ pieces }) => pieces).reduce((sum, { durationS }) => sum + durationS, 0)
+      expect(time).toBeCloseTo(levels.length, 6)
+      expect(loops[0]!.swingT).toBeCloseTo(Math.max(...levels) - Math.min(...levels), 9)
+      expect(loops.every(({ swingT }) => swingT <= loops[0]!.swingT + 1e-12)).toBe(true)
+    }))
   })
 
   it('say when the flux is biased and when a set is used outside the temperature it was measured at', () => {

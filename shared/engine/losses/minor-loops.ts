@@ -21,9 +21,13 @@ export interface HysteresisLoop {
  * Source: K. Venkatachalam et al., IEEE COMPEL 2002 (splitting of minor loops).
  */
 export function hysteresisLoops(fluxDensityT: Waveform): HysteresisLoop[] {
-  const pieces = fromItsLeast(waveformSegments(fluxDensityT).map(({ durationS, from, to }) => ({ durationS, from, to })))
+  const pieces = fromItsLeast(closed(waveformSegments(fluxDensityT)))
   return pieces.length === 0 ? [] : loopsOf(pieces)
 }
+
+/** Each piece begun where the one before it ended, round the period: a last digit between them would be a loop that never closes. */
+const closed = (segments: readonly LoopPiece[]): LoopPiece[] =>
+  segments.map(({ durationS, to }, index) => ({ durationS, from: segments[(index + segments.length - 1) % segments.length]!.to, to }))
 
 /** The period begun at its least value. */
 function fromItsLeast(pieces: readonly LoopPiece[]): LoopPiece[] {
