@@ -75,12 +75,14 @@ async function skipBrowserTests(): Promise<void> {
 }
 
 async function runAll(): Promise<void> {
+  // Types take longest and one processor only: the first tests run beside them.
+  const types = check('Types', ['node_modules/vue-tsc/bin/vue-tsc.js', '--build'])
   await Promise.all([
-    check('Types', ['node_modules/vue-tsc/bin/vue-tsc.js', '--build']),
     check('Lint', ['node_modules/eslint/bin/eslint.js', '--config', '.config/eslint.config.js', '--max-warnings', '0', '.']),
     check('Client build', ['--import', 'tsx', 'server/build-client.ts']),
   ])
   await runTests(PROJECTS.filter((name) => name !== 'e2e'))
+  await types
   if (process.env.BROWSER === '0') await skipBrowserTests()
   else await runTests(['e2e'])
 }
