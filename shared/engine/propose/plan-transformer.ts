@@ -106,6 +106,11 @@ function currentsOf(duty: TransformerDuty, needs: readonly Need[], { range, indu
     }
   })
   if (states.length === 0) throw new RangeError('no input voltage of the range reaches the outputs')
-  return new Map(needs.map(({ id }) => [id, states.map((state) => state.windings.get(id)!.currentA)]))
+  return new Map(needs.map(({ id, name }) => [id, states.map((state) => {
+    const waves = state.windings.get(id)
+    // Two outputs of one name, say: the circuit knows only one of them.
+    if (!waves) throw new RangeError(`the circuit leaves out the winding ${name}`)
+    return waves.currentA
+  })]))
 }
 

@@ -1,7 +1,6 @@
 import type { Finding } from '../findings'
 import type { Library } from '../library'
 import { planOf } from '../propose/plan'
-import type { Plan } from '../propose/plan'
 import type { RequirementSheet } from '../specification'
 import { evaluateFinalists } from './finalists'
 import type { SearchPreferences } from './preferences'
@@ -22,13 +21,21 @@ export type { SearchOutcome, SearchProgress } from './progress'
  * Deterministic: equal input gives the same candidates in the same order.
  */
 export function* searchSteps(requirement: RequirementSheet, library: Library, wishes: SearchPreferences = {}): Generator<SearchProgress, SearchOutcome, boolean | undefined> {
-  const plan = planned(requirement)
-  if ('findings' in plan && !('windings' in plan)) return { candidates: [], rejected: [], findings: plan.findings, screened: 0, evaluated: 0, stopped: false }
-  const scope = scopeOf(requirement, library, { plan: plan as Plan, wishes })
-  const screening = yield* screenAll(scope)
-  if (screening.stopped) return outcome(scope, { made: [], rejected: screening.rejected, screened: screening.screened, evaluated: 0, stopped: true })
-  return yield* evaluateFinalists(scope, screening)
+  try {
+    const plan = planOf(requirement)
+    if (!plan) return nothing({ code: 'duty-without-proposal', severity: 'warning', path: 'requirement.duty', values: { topology: requirement.duty.topology } })
+    const scope = scopeOf(requirement, library, { plan, wishes })
+    const screening = yield* screenAll(scope)
+    if (screening.stopped) return outcome(scope, { made: [], rejected: screening.rejected, screened: screening.screened, evaluated: 0, stopped: true })
+    return yield* evaluateFinalists(scope, screening)
+  } catch (error) {
+    // A sheet whose figures contradict each other is no misuse: the stage's refusal becomes a finding.
+    if (!(error instanceof RangeError)) throw error
+    return nothing({ code: 'duty-not-solvable', severity: 'error', path: 'requirement.duty', values: { reason: error.message } })
+  }
 }
+
+const nothing = (finding: Finding): SearchOutcome => ({ candidates: [], rejected: [], findings: [finding], screened: 0, evaluated: 0, stopped: false })
 
 /** The whole search at once. `onProgress` answering false stops it with what was found. */
 export function search(requirement: RequirementSheet, library: Library, wishes: SearchPreferences = {}, onProgress: (progress: SearchProgress) => boolean | void = () => undefined): SearchOutcome {
@@ -36,14 +43,4 @@ export function search(requirement: RequirementSheet, library: Library, wishes: 
   let step = steps.next()
   while (!step.done) step = steps.next(onProgress(step.value) === false)
   return step.value
-}
-
-/** The duty solved, or why it cannot be. */
-function planned(requirement: RequirementSheet): Plan | { findings: Finding[] } {
-  try {
-    return planOf(requirement) ?? { findings: [{ code: 'duty-without-proposal', severity: 'warning', path: 'requirement.duty', values: { topology: requirement.duty.topology } }] }
-  } catch (error) {
-    if (!(error instanceof RangeError)) throw error
-    return { findings: [{ code: 'duty-not-solvable', severity: 'error', path: 'requirement.duty', values: { reason: error.message } }] }
-  }
 }
