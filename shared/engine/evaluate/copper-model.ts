@@ -26,7 +26,8 @@ export function copperModels(context: Context, coil: Coil | null, { coppers, gap
   if (!coil || coppers.length === 0) return { local: null, flat: null }
   const windings = context.specification.windings.length
   const resistance20Ohm = Array.from({ length: windings }, (_, index) => coppers.find((copper) => copper.index === index)?.resistance20Ohm ?? 0)
-  const layers = laidLayers(context, coil, coppers)
+  const layers = attempt(context, 'sequence', () => laidLayers(context, coil, coppers))
+  if (!layers) return { local: null, flat: null }
   const local = attempt(context, 'sequence', () => localLayers(context, coil, { layers, gapMm }))
   const flat = attempt(context, 'sequence', () => inFlatField(layers, windings, { breadthMm: windowBreadthMm(context, coil), innerShare: innerShare(context) }))
   return {
