@@ -1,55 +1,76 @@
-import type { Winding } from '../specification'
+import type { Duty, DutyOf, Winding } from '../specification'
+import { inductiveImpedanceOhm } from '../topologies/common-mode-choke'
 import { isTopology } from './flux'
 import { atLeast, atMost, notCheckable, yesNo } from './outcome'
 import type { Check, CheckInput, Outcome } from './outcome'
 
 const wound = ({ document }: CheckInput): Winding[] => document.specification.windings.filter(({ role }) => role !== 'shield')
 
-/** What a current transformer may err by: magnetising current over the measured one, and droop. Source: common practice. */
+/** What a current transformer may err by where its duty does not say: magnetising current over the measured one, and droop. Source: common practice. */
 const SENSE_ERROR = 0.02
 
-/** The burden, the error of the ratio and the droop are stated, and none is larger than usual. */
+const SENSE_PATH = 'electrical.currentSense'
+
+/** The duty of one topology; null where the requirement is for another, or there is none. */
+function dutyOf<T extends Duty['topology']>({ document }: CheckInput, topology: T): DutyOf<T> | null {
+  const duty = document.requirement?.duty
+  return duty?.topology === topology ? (duty as DutyOf<T>) : null
+}
+
+/** The burden, the error of the ratio and the droop are stated; neither they nor what the circuit gives are larger than permitted. */
 function senseErrors(input: CheckInput): Outcome[] {
   if (!isTopology(input, 'current-sense')) return []
-  const path = 'electrical.currentSense'
   const sense = input.document.specification.electrical.currentSense.value
-  const predicted = (['magnetising-error', 'droop'] as const).flatMap((code) => {
-    const value = figureOf(input, code)
-    return value === null ? [] : [atMost({ value: Math.abs(value), limit: SENSE_ERROR, unit: '1', path, values: { row: code } })]
-  })
-  if (!sense) return [...predicted, notCheckable(path, { missing: 'burden' })]
+  const duty = dutyOf(input, 'current-sense')
+  const permitted = { error: duty?.permittedError ?? SENSE_ERROR, droop: duty?.permittedDroop ?? SENSE_ERROR }
+  const droop = figureOf(input, 'droop') ?? (sense ? droopOfPulse(input, sense.burdenOhm) : null)
+  const within = (row: string, value: number | null, limit: number) => atMost({ value, limit, unit: '1', path: SENSE_PATH, values: { row, ...(value === null ? { missing: 'inductance' } : {}) } })
+  const predicted = duty ? [within('magnetising error', figureOf(input, 'magnetising-error'), permitted.error), within('predicted droop', droop, permitted.droop)] : []
+  if (!sense) return [...predicted, notCheckable(SENSE_PATH, { missing: 'burden' })]
   return [
     ...predicted,
-    atMost({ value: Math.abs(sense.ratioError), limit: SENSE_ERROR, unit: '1', path, values: { row: 'ratio error' } }),
-    atMost({ value: Math.abs(sense.droop), limit: SENSE_ERROR, unit: '1', path, values: { row: 'droop' } }),
-    droopPredicted(input, sense.burdenOhm, sense.droop),
+    within('ratio error', Math.abs(sense.ratioError), permitted.error),
+    within('stated droop', Math.abs(sense.droop), permitted.droop),
+    within('predicted against stated droop', droop, sense.droop),
   ]
 }
 
-/** Droop of a pulse of full duty: R·t/L of the winding across the burden. */
-function droopPredicted({ document, evaluation }: CheckInput, burdenOhm: number, droop: number): Outcome {
-  const path = 'electrical.currentSense'
+/** Without a duty, the droop of the longest pulse: R·t/L of the winding across the burden. */
+function droopOfPulse(input: CheckInput, burdenOhm: number): number | null {
+  const { document, evaluation, context } = input
   const { switchingFrequencyHz, dutyRatio, inductance } = document.specification.electrical
   const frequencyHz = switchingFrequencyHz.value?.minimum ?? null
-  const inductanceH = inductance.value ? evaluation.magnetics.inductanceMinimumH : null
-  if (frequencyHz === null || inductanceH === null || inductanceH <= 0) return notCheckable(path, { row: 'droop', missing: 'inductance' })
-  const onS = (dutyRatio.value?.maximum ?? 1) / frequencyHz
-  return atMost({ value: (burdenOhm * onS) / inductanceH, limit: droop, unit: '1', path, values: { row: 'droop' } })
+  const statedH = inductance.value ? evaluation.magnetics.inductanceMinimumH : null
+  const [secondary, stated] = [wound(input).find(({ role }) => role === 'secondary'), context.primary]
+  if (frequencyHz === null || statedH === null || !secondary || !stated || !(stated.turns > 0)) return null
+  const inductanceH = statedH * (secondary.turns / stated.turns) ** 2
+  return inductanceH > 0 ? (burdenOhm * (dutyRatio.value?.maximum ?? 1)) / (frequencyHz * inductanceH) : null
 }
 
-/** Direct current magnetises a current transformer without end: how much there is must be said. */
+/** A current transformer is magnetised without end by direct current, and by pulses that are not reset before the next. */
 function senseDirectCurrent(input: CheckInput): Outcome[] {
   if (!isTopology(input, 'current-sense')) return []
-  const path = 'electrical.currentSense'
-  const sense = input.document.specification.electrical.currentSense.value
-  const { core } = input.context
-  const { saturationT } = input.evaluation.magnetics
-  const primary = wound(input).find(({ role }) => role === 'primary')
-  if (!sense) return [notCheckable(path, { missing: 'direct current' })]
-  const alH = input.evaluation.magnetics.alH
-  if (!core || alH === null || saturationT === null || !primary) return [notCheckable(path, { missing: 'saturation' })]
-  const biasT = (alH * primary.turns * sense.maximumDcA) / (core.minimumAreaMm2 * 1e-6)
-  return [atMost({ value: biasT, limit: 0.5 * saturationT, unit: 'T', path, values: { currentA: sense.maximumDcA } })]
+  const resetS = figureOf(input, 'reset-time')
+  const reset = resetS === null ? [] : [atMost({ value: resetS, limit: figureOf(input, 'reset-time-available'), unit: 's', path: 'requirement.duty.resetVoltageV', values: { row: 'reset' } })]
+  return [directFlux(input), ...reset]
+}
+
+/** Flux of the direct current, as the circuit has it at the secondary or as the drawing states it at the primary, whichever is more. */
+function directFlux(input: CheckInput): Outcome {
+  const { core, sets } = input.context
+  const { saturationT, alH } = input.evaluation.magnetics
+  const [primary, secondary] = (['primary', 'secondary'] as const).map((role) => wound(input).find((winding) => winding.role === role))
+  const atSecondaryA = figureOf(input, 'direct-magnetising-current')
+  const statedA = input.document.specification.electrical.currentSense.value?.maximumDcA
+  // A conductor that passes through the core is no winding of the part, and one turn.
+  const ampereTurns = [
+    ...(atSecondaryA !== null && secondary ? [atSecondaryA * secondary.turns] : []),
+    ...(statedA === undefined ? [] : [statedA * (primary?.turns ?? 1)]),
+  ]
+  if (ampereTurns.length === 0) return notCheckable(SENSE_PATH, { missing: 'direct current' })
+  if (!core || alH === null || saturationT === null) return notCheckable(SENSE_PATH, { missing: 'saturation' })
+  const most = Math.max(...ampereTurns)
+  return atMost({ value: (alH * most) / (core.minimumAreaMm2 * sets * 1e-6), limit: 0.5 * saturationT, unit: 'T', path: SENSE_PATH, values: { ampereTurns: most } })
 }
 
 /** Share of saturation that the leakage flux of the working current may use. Source: textbook. */
@@ -88,16 +109,35 @@ function equalWindings(input: CheckInput): Outcome[] {
   ]
 }
 
+/** Points of impedance that are stated, and whether the least inductance reaches those that duty and drawing ask for. */
 function noiseImpedance(input: CheckInput): Outcome[] {
   if (!isTopology(input, 'common-mode-choke')) return []
-  const points = input.document.specification.electrical.commonMode.value?.impedance ?? []
-  return [atLeast({ value: points.length, limit: 2, unit: '', path: 'electrical.commonMode' })]
+  const path = 'electrical.commonMode'
+  const stated = input.document.specification.electrical.commonMode.value?.impedance ?? []
+  const asked = (dutyOf(input, 'common-mode-choke')?.impedance ?? []).map((point) => ({ ...point, path: 'requirement.duty.impedance' }))
+  return [
+    atLeast({ value: stated.length, limit: 2, unit: '', path }),
+    ...[...asked, ...stated.map((point) => ({ ...point, path }))].map((point) => impedanceReached(input, point)),
+  ]
+}
+
+/** 2π·f·L of the least inductance, raised towards the self-resonance; permeability falls beyond the material's range, and nobody knows how far. */
+function impedanceReached({ evaluation, context }: CheckInput, { frequencyHz, minimumOhm, path }: { frequencyHz: number; minimumOhm: number; path: string }): Outcome {
+  const inductanceH = evaluation.magnetics.inductanceMinimumH
+  const resonanceHz = evaluation.selfResonance.find(({ windingId }) => windingId === context.primary?.id)?.frequencyHz ?? Infinity
+  const values = { row: 'impedance', frequencyHz }
+  if (inductanceH === null || inductanceH <= 0 || !(frequencyHz > 0)) return notCheckable(path, { ...values, missing: 'inductance' })
+  if (frequencyHz >= resonanceHz) return notCheckable(path, { ...values, missing: 'impedance beyond self-resonance' })
+  const value = inductiveImpedanceOhm(inductanceH, frequencyHz) / (1 - (frequencyHz / resonanceHz) ** 2)
+  const outcome: Outcome = { ...atLeast({ value, limit: minimumOhm, unit: 'Ω', path, values }), severity: 'M' }
+  const known = context.material !== null && frequencyHz <= (context.material.frequencyRangeHz?.maximum ?? 0)
+  return outcome.state === 'met' && !known ? { ...outcome, state: 'not-checkable', values: { ...values, missing: 'permeability at this frequency' } } : outcome
 }
 
 export const CHOKE_CHECKS: Readonly<Record<string, Check>> = {
-  E25: { severity: 'M', source: 'droop R·t/L; 2 %: textbook', run: senseErrors },
-  E26: { severity: 'M', source: 'bias of the direct current, half of saturation: common practice', run: senseDirectCurrent },
+  E25: { severity: 'M', source: 'L·di/dt = R·i integrated; 2 % where the duty permits no other: common practice', run: senseErrors },
+  E26: { severity: 'M', source: 'A_L·N·I/A, half of saturation: common practice; reset L·Î/U within the pause', run: senseDirectCurrent },
   E27: { severity: 'S', source: 'leakage flux L·Î/(N·A), 70 % of saturation: textbook', run: leakageFlux },
   E28: { severity: 'M', source: 'IEC 60938; common practice', run: equalWindings },
-  E29: { severity: 'N', source: 'common practice', run: noiseImpedance },
+  E29: { severity: 'N', source: '2π·f·L of the least inductance, parallel resonance; two points: common practice', run: noiseImpedance },
 }
