@@ -1,5 +1,5 @@
 import { requirePositive } from '../require'
-import { solveSquare } from './solve-square'
+import { solveLinear } from '../solve-linear'
 
 /** The tank of a series-resonant half bridge, seen from its middle: the source is a square wave of half the input voltage. */
 export interface LlcTank {
@@ -215,7 +215,7 @@ function newtonStep(tank: LlcTank, shot: Shot, asked: Asked, probe: number): Sho
     const probed = shoot(tank, moved(shot.unknowns, by(places.map((other) => (other === place ? probe : 0))), asked.tied), asked)
     return places.map((row) => (probed.residuals[row] - shot.residuals[row]) / probe)
   })
-  const change = solveSquare(places.map((_, row) => columns.map((column) => column[row]!)), places.map((row) => shot.residuals[row]))
+  const change = solveLinear(places.map((_, row) => columns.map((column) => column[row]!)), places.map((row) => shot.residuals[row]))
   if (!change) return null
   for (const share of [1, 0.5, 0.25, 0.1, 0.03, 0.01]) {
     const trial = moved(shot.unknowns, by(change.map((value) => -share * value)), asked.tied)
