@@ -117,7 +117,7 @@ export interface MagneticsResult {
   inductanceUnderBiasH: number | null
   /** Volt-seconds at the primary that swing the flux from one end to the other, greatest of the corners. */
   voltSecondsVs: number | null
-  /** Greatest swing of the corners at full load, on the least area. */
+  /** Greatest swing of all corners, on the least area. */
   fluxSwingT: number | null
   /** Converters that drive the flux both ways: the peak of the first pulse after start or a step, on the least area. */
   fluxTransientT: number | null

@@ -20,7 +20,8 @@ const hasDistributedGap = ({ material, specification }: Context) => material?.us
 export function biasResult(context: Context, basis: InductanceBasis | null, corners: readonly CornerState[]): BiasResult {
   const { core, material, primary } = context
   if (!basis || !core || !material || !primary || !hasDistributedGap(context)) return NOTHING
-  const currentA = fullLoadPeakA({ corners: corners.map(({ result }) => result) }, primary.id) ?? primary.peakCurrentA
+  const cornerA = fullLoadPeakA({ corners: corners.map(({ result }) => result) }, primary.id)
+  const currentA = cornerA ?? primary.peakCurrentA
   if (!positive(currentA)) return NOTHING
   const field = attempt(context, 'core.core', () => biasFieldAPerM({ turns: primary.turns, currentA, effectiveLengthMm: core.effectiveLengthMm }))
   if (field === null) return NOTHING
@@ -29,7 +30,7 @@ export function biasResult(context: Context, basis: InductanceBasis | null, corn
   const inductanceUnderBiasH = share.state === 'known' ? basis.nominalH * share.value : null
   explain(context, 'magnetics.biasFieldAPerM', () => ({
     symbol: 'H', value: field, unit: 'A/m', formula: 'N·Î/l_e', source: 'Ampère’s law over the effective length, IEC 60205',
-    inputs: [{ name: 'N', value: primary.turns, unit: '', origin: 'windings.turns' }, { name: 'Î', value: currentA, unit: 'A', origin: 'largest peak of the full-load corners' }, { name: 'l_e', value: core.effectiveLengthMm, unit: 'mm', origin: originOf(context, 'core') }],
+    inputs: [{ name: 'N', value: primary.turns, unit: '', origin: 'windings.turns' }, { name: 'Î', value: currentA, unit: 'A', origin: cornerA === null ? 'as stated for the winding' : 'largest peak of the full-load corners' }, { name: 'l_e', value: core.effectiveLengthMm, unit: 'mm', origin: originOf(context, 'core') }],
   }))
   explain(context, 'magnetics.inductanceUnderBiasH', () => ({
     symbol: 'L(Î)', value: inductanceUnderBiasH, unit: 'H', formula: 'L·µ(H)/µ_i', source: originOf(context, 'material'),

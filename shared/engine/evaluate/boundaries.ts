@@ -6,7 +6,7 @@ import { boundaryRequirements } from '../insulation/product-standards'
 import type { BoundaryRequirements } from '../insulation/product-standards'
 import type { Citation } from '../insulation/citation'
 import type { RequiredDistance } from '../insulation/distances'
-import type { BoundaryEnd, InsulationBoundary, Side } from '../specification'
+import type { BoundaryEnd, InsulationBoundary, MaterialGroup, Side } from '../specification'
 import { dutyTraits } from '../topologies'
 import { attempt, report } from './context'
 import type { Context } from './context'
@@ -23,6 +23,12 @@ export interface Stress {
   peakV: number | null
 }
 
+/** Group of insulating material that creepage is asked for, and where it comes from. */
+export interface CreepageGroup {
+  value: MaterialGroup
+  origin: string
+}
+
 /** Every boundary of the document: what stresses it, what the standard asks, what the build gives. */
 export function boundaryResults(context: Context, coil: Coil | null, corners: VoltageCorners): BoundaryResult[] {
   return context.specification.insulation.boundaries.map((boundary, index) => boundaryResult(context, { boundary, index, coil, corners }))
@@ -35,11 +41,12 @@ function boundaryResult(context: Context, input: { boundary: InsulationBoundary;
   // What a person states beyond the calculated stress is the harder requirement.
   const stress: Stress = { rmsV: larger(calculated?.rmsV, boundary.workingVoltageVRms), peakV: larger(calculated?.recurringPeakV, boundary.recurringPeakV) }
   if (stress.rmsV === null || stress.peakV === null) report(context, 'working-voltage-not-known', 'warning', path, { boundary: boundary.name })
-  const needs = requirements(context, boundary, stress, path)
+  const group = creepageGroup(context)
+  const needs = requirements(context, { boundary, stress, group, path })
   const provided = insulationOf({ ...context, coil }, boundary)
   const required = requiredValues(needs, boundary, stress.peakV)
   const testVoltageVRms = boundary.test ? (boundary.test.kind === 'dc' ? boundary.test.voltageV / Math.SQRT2 : boundary.test.voltageV) : null
-  explainBoundary(context, { index, boundary, stress, needs: needs && 'reason' in needs ? null : needs, required, provided, onMains: corners.onMains })
+  explainBoundary(context, { index, boundary, stress, group, needs: needs && 'reason' in needs ? null : needs, required, provided, onMains: corners.onMains })
   return {
     boundaryId: boundary.id,
     name: boundary.name,
@@ -85,7 +92,14 @@ export function boundaryFrequencyHz({ specification, requirement }: Pick<Context
   return Math.max(frequencyHz ?? 0, specification.electrical.switchingFrequencyHz.value?.maximum ?? 0, requirement ? dutyTraits(requirement.duty).frequencyHz.maximum : 0)
 }
 
-function requirements(context: Context, boundary: InsulationBoundary, { rmsV, peakV }: Stress, path: string): BoundaryRequirements | { reason: string } | null {
+/** Group that creepage is asked for: as stated, else that of the coil former, else the poorest of the common ones. */
+function creepageGroup({ specification, former }: Pick<Context, 'specification' | 'former'>): CreepageGroup {
+  const stated = specification.insulation.materialGroup.value
+  if (stated !== null) return { value: stated, origin: 'insulation.materialGroup' }
+  return former?.materialGroup ? { value: former.materialGroup, origin: `${former.name}: ${former.source}` } : { value: 'IIIb', origin: 'not stated: the poorest group' }
+}
+
+function requirements(context: Context, { boundary, stress: { rmsV, peakV }, group, path }: { boundary: InsulationBoundary; stress: Stress; group: CreepageGroup; path: string }): BoundaryRequirements | { reason: string } | null {
   const { insulation } = context.specification
   if (rmsV === null || peakV === null) return null
   const mainsV = ratedMainsV(context)
@@ -102,7 +116,7 @@ function requirements(context: Context, boundary: InsulationBoundary, { rmsV, pe
       frequencyHz: boundaryFrequencyHz(context, boundary),
       ratedImpulseV: impulse?.state === 'known' ? impulse.value : null,
       pollutionDegree: insulation.pollutionDegree.value ?? 2,
-      materialGroup: insulation.materialGroup.value ?? context.former?.materialGroup ?? 'IIIb',
+      materialGroup: group.value,
       altitudeM: insulation.altitudeM.value ?? 2000,
       nominalMainsV: crossing ? mainsV : null,
       ...(boundary.meansOfProtection ? { meansOfProtection: boundary.meansOfProtection } : {}),

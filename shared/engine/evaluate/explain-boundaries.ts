@@ -4,7 +4,7 @@ import type { DistanceRule } from '../insulation/distances'
 import type { BoundaryRequirements } from '../insulation/product-standards'
 import type { TestVoltageRule } from '../insulation/test-voltages'
 import type { InsulationBoundary } from '../specification'
-import type { Stress } from './boundaries'
+import type { CreepageGroup, Stress } from './boundaries'
 import { explain } from './context'
 import type { Context } from './context'
 import type { ProvidedInsulation } from './insulation-paths'
@@ -13,6 +13,7 @@ export interface ExplainedBoundary {
   index: number
   boundary: InsulationBoundary
   stress: Stress
+  group: CreepageGroup
   needs: BoundaryRequirements | null
   required: BoundaryResult['required']
   provided: ProvidedInsulation | null
@@ -60,14 +61,14 @@ const cited = ({ standard, edition, place: where, basis }: Citation) => `${stand
 const looked = (contributions: readonly { rule: DistanceRule | TestVoltageRule; citation: Citation; distanceMm?: number; valueV?: number }[]): Input[] =>
   contributions.map(({ rule, citation, distanceMm, valueV }) => ({ name: RULES[rule], value: distanceMm ?? valueV ?? 'not known', unit: distanceMm === undefined ? 'V' : 'mm', origin: cited(citation) }))
 
-function explainRequired(context: Context, { index, boundary, stress, needs, required }: ExplainedBoundary): void {
+function explainRequired(context: Context, { index, boundary, stress, group, needs, required }: ExplainedBoundary): void {
   const { insulation } = context.specification
   const shared: Input[] = [
     { name: 'U_rms', value: stress.rmsV ?? 'not known', unit: 'V', origin: place(index, 'workingVoltageVRms') },
     { name: 'Û', value: stress.peakV ?? 'not known', unit: 'V', origin: place(index, 'recurringPeakV') },
     { name: 'insulation', value: boundary.insulation, unit: '', origin: `insulation.${place(index, 'insulation')}` },
     { name: 'pollution degree', value: insulation.pollutionDegree.value ?? 2, unit: '', origin: 'insulation.pollutionDegree' },
-    { name: 'material group', value: insulation.materialGroup.value ?? 'IIIb', unit: '', origin: 'insulation.materialGroup' },
+    { name: 'material group', value: group.value, unit: '', origin: group.origin },
     { name: 'altitude', value: insulation.altitudeM.value ?? 2000, unit: 'm', origin: 'insulation.altitudeM' },
   ]
   const rows = [

@@ -16,7 +16,7 @@ export function gapByWindowField(context: Context, coil: Coil | null, basis: Ind
     symbol: 'l_g', value: gapMm, unit: 'mm', formula: '1/A_L = l_e/(µ0·µ_r·A_e) + 1/P(l_g), P the permeance of gap and window', source: `${GAP_FIELD_MODEL}; E. Roth, Rev. Gén. Électr. 23 (1928) 773`,
     inputs: [
       { name: 'A_L', value: basis?.alH ?? 'not known', unit: 'H', origin: 'magnetics.alH' },
-      { name: 'A_e', value: context.core?.effectiveAreaMm2 ?? 'not known', unit: 'mm²', origin: originOf(context, 'core') },
+      { name: 'A_e', value: gappedCore(context)?.effectiveAreaMm2 ?? 'not known', unit: 'mm²', origin: originOf(context, 'core') },
       { name: 'coil', value: context.primary?.name ?? 'none', unit: '', origin: 'coil layout' },
     ],
   }))

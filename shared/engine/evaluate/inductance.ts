@@ -46,10 +46,12 @@ export function inductanceBasis(context: Context): InductanceBasis | null {
   }
   explain(context, 'magnetics.inductanceH', () => ({
     symbol: 'L', value: nominalH, unit: 'H', formula: from === 'stated' ? 'as specified' : from === 'ungapped' ? 'µ0·µ_i·A_e/l_e·N²' : 'A_L·N²', source: 'IEC 62044-2, definition of A_L',
-    inputs: [{ name: 'A_L', value: basis.alH, unit: 'H', origin: 'core.gap.alH' }, { name: 'N', value: turns, unit: '', origin: 'windings.turns' }],
+    inputs: [from === 'stated' ? { name: 'L', value: nominalH, unit: 'H', origin: 'electrical.inductance' } : { name: 'A_L', value: basis.alH, unit: 'H', origin: AL_ORIGINS[from] }, { name: 'N', value: turns, unit: '', origin: 'windings.turns' }],
   }))
   return basis
 }
+
+const AL_ORIGINS = { al: 'core.gap.alH', gap: 'calculated from core.gap.lengthMm', ungapped: 'calculated from the core without gap' } as const
 
 interface Spread {
   below: number

@@ -64,12 +64,12 @@ function firstPulseFlux(context: Context, fluxT: number | null): number | null {
 }
 
 function peakFlux(context: Context, corners: readonly CornerState[]): number | null {
-  const { core } = context
+  const { core, sets, requirement } = context
   const corner = corners.find(({ result }) => result.name === 'minimum-input') ?? corners[0]
   const value = corner?.result.fluxPeakT ?? null
   explain(context, 'magnetics.fluxPeakT', () => ({
-    symbol: 'B̂', value, unit: 'T', formula: 'L·Î/(N·A_e)', source: 'Faraday’s law',
-    inputs: [{ name: 'corner', value: corner?.result.name ?? 'none', unit: '', origin: 'corners' }, { name: 'A_e', value: core?.effectiveAreaMm2 ?? 'not known', unit: 'mm²', origin: originOf(context, 'core') }],
+    symbol: 'B̂', value, unit: 'T', formula: requirement ? topologyOf(requirement.duty).words.flux : 'no corner', source: 'Faraday’s law',
+    inputs: [{ name: 'corner', value: corner?.result.name ?? 'none', unit: '', origin: 'corners' }, { name: 'A_e', value: core ? core.effectiveAreaMm2 * sets : 'not known', unit: 'mm²', origin: originOf(context, 'core') }],
   }))
   return value
 }
