@@ -41,4 +41,10 @@ describe('a working names what its figure was calculated with', () => {
     })
     expect(inputOf(byGap, 'magnetics.inductanceH', 'A_L').origin).toContain('core.gap.lengthMm')
   })
+
+  it('names the stated limit of temperature beside that of the class, by thermocouple 10 K higher', () => {
+    const limited = changed(({ insulation }) => (insulation.maximumWindingC.value = { temperatureC: 95, method: 'thermocouple' }))
+    expect(evaluate(limited, library).thermal.limitC).toBe(105)
+    expect(inputOf(limited, 'thermal.limitC', 'thermocouple')).toMatchObject({ value: 95, origin: 'insulation.maximumWindingC' })
+  })
 })

@@ -124,11 +124,12 @@ function losses(context: Context, { thermal: heat }: Body, own: LossResult): Rec
 }
 
 function thermal({ specification, requirement }: Context, { thermal: own }: Body): Record<string, Told> {
-  const { systemThermalClassC } = specification.insulation
+  const { systemThermalClassC, maximumWindingC } = specification.insulation
+  const stated = maximumWindingC.value
   return {
     ambientC: { symbol: 'T_amb', unit: '°C', formula: 'as stated', source: requirement ? 'requirement sheet' : 'insulation.maximumAmbientC' },
     windingC: { symbol: 'T_w', unit: '°C', formula: 'T_amb + ΔT(P(T_w)), iterated to a fixed point', source: THERMAL_MODEL, inputs: [from('T_amb', own.ambientC, '°C', 'thermal.ambientC'), from('ΔT', own.riseK, 'K', 'thermal.riseK')] },
-    limitC: { symbol: 'T_lim', unit: '°C', formula: 'row of the class', source: 'IEC 62368-1 G.5.3, IEC 60085:2007, resistance method (from memory)', inputs: [from('class', systemThermalClassC.value, '°C', 'insulation.systemThermalClassC')] },
+    limitC: { symbol: 'T_lim', unit: '°C', formula: stated ? 'the lower of the row of the class and the stated limit, by thermocouple 10 K higher' : 'row of the class', source: 'IEC 62368-1 G.5.3, IEC 60085:2007, resistance method (from memory)', inputs: [from('class', systemThermalClassC.value, '°C', 'insulation.systemThermalClassC'), ...(stated ? [from(stated.method, stated.temperatureC, '°C', 'insulation.maximumWindingC')] : [])] },
     marginK: { symbol: 'T_lim − T_w', unit: 'K', formula: 'T_lim − T_w', source: 'definition', inputs: [from('T_lim', own.limitC, '°C', 'thermal.limitC'), from('T_w', own.windingC, '°C', 'thermal.windingC')] },
     surfaceMm2: { symbol: 'A', unit: 'mm²', formula: 'l·w + 2·h·(l + w)', source: 'geometry, five faces', inputs: [from('envelope', specification.former.envelope.value ? 'as specified' : 'coil former', '', 'former.envelope')] },
   }

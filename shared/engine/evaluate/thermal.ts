@@ -1,5 +1,5 @@
 import type { LossResult, ThermalResult } from '../evaluation'
-import { THERMAL_CLASSES, windingLimitC } from '../thermal/classes'
+import { THERMAL_CLASSES, THERMOCOUPLE_DEDUCTION_K, windingLimitC } from '../thermal/classes'
 import type { ThermalClassC } from '../thermal/classes'
 import { settleTemperature } from '../thermal/fixed-point'
 import type { FixedPoint } from '../thermal/fixed-point'
@@ -151,7 +151,7 @@ export function temperatureLimitC(context: Context): number | null {
   const row = THERMAL_CLASSES.find((one) => one.classC === classC)
   const byClass = row ? windingLimitC(row.classC as ThermalClassC) : null
   const stated = insulation.maximumWindingC.value
-  const limits = [byClass?.state === 'known' ? byClass.value : null, stated ? stated.temperatureC + (stated.method === 'thermocouple' ? 10 : 0) : null].filter((limit) => limit !== null)
+  const limits = [byClass?.state === 'known' ? byClass.value : null, stated ? stated.temperatureC + (stated.method === 'thermocouple' ? THERMOCOUPLE_DEDUCTION_K : 0) : null].filter((limit) => limit !== null)
   return limits.length > 0 ? Math.min(...limits) : null
 }
 
