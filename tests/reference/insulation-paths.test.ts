@@ -70,6 +70,22 @@ describe('a shield', () => {
     expect(result.provided.layers).toBe(3)
   })
 
+  it('counts into the mass of copper, with the overlap of its ends', () => {
+    const { windowWidthMm } = evaluate(margin, library).layout
+    const document = shielded(windowWidthMm - 4)
+    const { mass, windings } = evaluate(document, library)
+    const wiresG = windings.reduce((sum, { copperMassG }) => sum + (copperMassG ?? 0), 0)
+    const shieldG = (overlapMm: number) => {
+      const longer = structuredClone(document)
+      for (const step of longer.specification.sequence) if (step.kind === 'shield') step.overlapMm = overlapMm
+      return evaluate(longer, library).mass.copperG! - wiresG
+    }
+    expect(mass.copperG).toBeCloseTo(wiresG + shieldG(4), 9)
+    // 0.05 mm of copper of 8.89 g/cm³ over the width, 10 mm longer.
+    expect(shieldG(14) - shieldG(4)).toBeCloseTo(0.05 * (windowWidthMm - 4) * 10 * 8.89e-3, 6)
+    expect(shieldG(4)).toBeGreaterThan(shieldG(14) - shieldG(4))
+  })
+
   it('on the wire that reaches the flange takes the margin of that wire away', () => {
     const { windowWidthMm } = evaluate(margin, library).layout
     const marginMm = margin.specification.sequence.flatMap((step) => (step.kind === 'margin' ? [step.leftMm] : []))[0]!

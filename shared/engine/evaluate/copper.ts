@@ -2,9 +2,11 @@ import { COPPER_DENSITY_KG_PER_M3 } from '../constants'
 import type { Coil, StepPlacement } from '../build'
 import type { FormerRow, WireRow } from '../library'
 import type { Conductor } from '../losses/conductor'
-import type { Winding } from '../specification'
+import type { Winding, WindingSpecification } from '../specification'
 import { positive } from './context'
 import type { Context } from './context'
+
+const GRAMS_PER_MM3 = COPPER_DENSITY_KG_PER_M3 * 1e-6
 
 /** What a winding is made of, before any current. */
 export interface WindingCopper {
@@ -58,10 +60,20 @@ export function windingCoppers(context: Context, coil: Coil | null): WindingCopp
       meanTurnLengthMm: build.meanTurnLengthMm,
       // The wires in parallel lie side by side in the same layers, so they are of one length.
       resistance20Ohm: (wire.resistance20.nominalOhmPerM * wireLengthM) / parallel,
-      massG: areaMm2 * 1e-6 * parallel * wireLengthM * COPPER_DENSITY_KG_PER_M3 * 1000,
+      massG: areaMm2 * parallel * wireLengthM * 1000 * GRAMS_PER_MM3,
     }
     return [copper]
   })
+}
+
+/** Copper of a foil shield with the overlap of its ends, all sections, g; null where it is not laid or is wound of wire. */
+export function shieldMassG({ sequence }: Pick<WindingSpecification, 'sequence'>, coil: Coil | null, windingId: string): number | null {
+  const own = coil?.shields.filter((shield) => shield.windingId === windingId) ?? []
+  const masses = own.map(({ index, bottomMm, topMm, leftMm, rightMm, turnLengthMm }) => {
+    const step = sequence[index]
+    return step?.kind === 'shield' && step.form === 'foil' ? (topMm - bottomMm) * (rightMm - leftMm) * (turnLengthMm + step.overlapMm) * GRAMS_PER_MM3 : null
+  })
+  return masses.length > 0 && masses.every((massG) => massG !== null) ? masses.reduce((sum, massG) => sum + massG, 0) : null
 }
 
 /** Strands of litz fill their bundle to about this where the library gives no overall diameter. Source: square packing, π/4, and enamel. */

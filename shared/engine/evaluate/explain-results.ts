@@ -136,7 +136,7 @@ function thermal({ specification, requirement }: Context, { thermal: own }: Body
 }
 
 const mass = (context: Context): Record<string, Told> => ({
-  copperG: { symbol: 'm_Cu', unit: 'g', formula: 'Σ windings', source: 'IEC 60028:1925, density of copper' },
+  copperG: { symbol: 'm_Cu', unit: 'g', formula: 'Σ windings and shields', source: 'IEC 60028:1925, density of copper' },
   coreG: { symbol: 'm_Fe', unit: 'g', formula: 'mass of the set', source: originOf(context, 'core') },
   totalG: { symbol: 'm', unit: 'g', formula: 'm_Cu + m_Fe; former and insulation left out', source: 'sum' },
 })

@@ -11,7 +11,7 @@ import { capacitanceResults } from './capacitances'
 import { coreHeat, reportCoreLoss } from './core-loss'
 import { createContext, report } from './context'
 import type { Context } from './context'
-import { windingCoppers } from './copper'
+import { shieldMassG, windingCoppers } from './copper'
 import type { WindingCopper } from './copper'
 import { copperStage } from './copper-loss'
 import type { CornerState } from './corner-result'
@@ -71,7 +71,7 @@ export function evaluate(document: SpecificationDocument, library: Library, opti
     thermal: heat.thermal,
     faults: faultCases(context, { basis, coil, corners, settle: heat.settleAt }),
     boundaries: boundaryResults(context, coil, voltageCorners(context, { basis, coil, corners })),
-    mass: massOf(context, coppers),
+    mass: massOf(context, coil, coppers),
     findings: [],
     working: {},
   }
@@ -129,9 +129,10 @@ function voltageCorners(context: Context, { basis, coil, corners }: { basis: Ind
   return { peak, rms: rated ? [voltageCorner(rated)] : peak, onMains: true }
 }
 
-function massOf({ core, sets, specification }: Context, coppers: readonly WindingCopper[]): MassResult {
-  const complete = coppers.length > 0 && coppers.length === specification.windings.length
-  const copperG = complete ? coppers.reduce((sum, { massG }) => sum + massG, 0) : null
+/** Copper of windings and shields; null while one of them is not laid. */
+function massOf({ core, sets, specification }: Context, coil: Coil | null, coppers: readonly WindingCopper[]): MassResult {
+  const massesG = specification.windings.map(({ id }) => coppers.find(({ winding }) => winding.id === id)?.massG ?? shieldMassG(specification, coil, id))
+  const copperG = massesG.length > 0 && massesG.every((massG) => massG !== null) ? massesG.reduce((sum, massG) => sum + massG, 0) : null
   const coreG = core?.massG != null ? core.massG * sets : null
   return { copperG, coreG, totalG: copperG !== null && coreG !== null ? copperG + coreG : null }
 }
