@@ -1,5 +1,6 @@
 import { shippedLibrary } from '#server/db/seed/parts/library'
 import { BUOY_SUPPLY, COUPLED_INDUCTOR, HARBOUR_SUPPLY } from '#server/db/seed/specifications/requirements'
+import type { CommonModeChokeDuty } from '#shared/engine/duties/common-mode-choke'
 import { evaluate, refresh, search, searchSteps } from '#shared/engine/index'
 import type { SearchCandidate, SearchOutcome } from '#shared/engine/index'
 import { dominates, paretoFront } from '#shared/engine/search/front'
@@ -11,6 +12,9 @@ import { expectWithin } from './relative'
 const library = shippedLibrary()
 const aims = ({ figures: { lossW, volumeMm3, copperG, heightMm, leakageH } }: SearchCandidate) => [lossW, volumeMm3, copperG, heightMm, leakageH]
 const few = { finalists: 8 }
+const sheets = [['harbour supply', HARBOUR_SUPPLY], ['buoy supply', BUOY_SUPPLY], ['coupled inductor', COUPLED_INDUCTOR]] as const
+/** Each whole search once: it is the dear part of these tests. */
+const whole = new Map(sheets.map(([name, sheet]) => [name, search(sheet, library)]))
 
 describe('paretoFront', () => {
   const points = fc.array(fc.array(fc.option(fc.integer({ min: 0, max: 6 })), { minLength: 3, maxLength: 3 }), { minLength: 1, maxLength: 40 })
@@ -27,8 +31,8 @@ describe('paretoFront', () => {
   })
 })
 
-describe.each([['harbour supply', HARBOUR_SUPPLY], ['buoy supply', BUOY_SUPPLY], ['coupled inductor', COUPLED_INDUCTOR]] as const)('the search for the %s', (_, sheet) => {
-  const found: SearchOutcome = search(sheet, library)
+describe.each(sheets)('the search for the %s', (name) => {
+  const found: SearchOutcome = whole.get(name)!
 
   it('offers cores of three families, none of which breaks what stops a proposal', () => {
     expect(new Set(found.candidates.map(({ document }) => library.cores.find(({ id }) => id === document.specification.core.core.value!.id)!.shape)).size).toBeGreaterThanOrEqual(3)
@@ -89,7 +93,7 @@ describe('what steers a search', () => {
   })
 
   it('prefers a row among equals, and keeps to the store where asked', () => {
-    const free = search(HARBOUR_SUPPLY, library)
+    const free = whole.get('harbour supply')!
     const coreOf = ({ document }: SearchOutcome['candidates'][number]) => document.specification.core.core.value!.id
     const second = free.candidates.find((candidate) => coreOf(candidate) !== coreOf(free.candidates[0]!))!
     const coreId = coreOf(second)
@@ -100,6 +104,19 @@ describe('what steers a search', () => {
     const stored = search(HARBOUR_SUPPLY, library, { onlyStocked: true, stockedRows: [`core/${coreId}`, `former/${former.id}`] })
     expect(new Set(stored.candidates.map((one) => one.former))).toEqual(new Set([second.former]))
     expect(stored.candidates.every(({ isStocked }) => isStocked)).toBe(true)
+  })
+
+  it('lays no windings one over the other on a former of several sections', () => {
+    const halves = { ...library, formers: library.formers.map((former) => ({ ...former, sections: 2 })) }
+    expect(search(BUOY_SUPPLY, halves, few)).toMatchObject({ candidates: [], rejected: [], screened: 0 })
+  })
+
+  it('takes for a common-mode choke the grades that the proposal takes', () => {
+    const duty: CommonModeChokeDuty = { topology: 'common-mode-choke', ratedVoltageV: 230, lineCurrentA: 1, linePeakA: 3, lineFrequencyHz: 50, switchingFrequencyHz: 100e3, impedance: [{ frequencyHz: 100e3, minimumOhm: 1000 }] }
+    const { candidates } = search({ ...BUOY_SUPPLY, duty }, library, few)
+    expect(candidates.length).toBeGreaterThan(0)
+    const uses = candidates.map(({ material }) => library.materials.find(({ name }) => name === material)!.use)
+    expect(new Set(uses)).toEqual(new Set(['common-mode']))
   })
 
   it('stops when told, with what it has', () => {

@@ -21,22 +21,30 @@ export function chooseMaterial(library: Library, frequencyHz: number, preferredI
   const preferred = library.materials.find(({ id }) => id === preferredId)
   if (preferred) return { material: preferred, reasons: [{ code: 'material-preferred', path: 'core.material', values: { material: preferred.name } }], findings: [] }
   if (use === 'common-mode') return mostPermeable(library, frequencyHz)
-  const usable = library.materials.filter(({ use, saturation, lossFits }) => use === 'power' && lossFits.length > 0 && saturation.some(({ temperatureC }) => temperatureC >= 100))
-  const within = usable.filter(({ lossFits }) => lossFits.some(({ minimumHz, maximumHz }) => frequencyHz >= minimumHz && frequencyHz <= maximumHz))
-  const ranked = (within.length > 0 ? within : usable).map((material) => ({ material, lossWPerM3: lossAt(material, frequencyHz) })).sort((a, b) => a.lossWPerM3 - b.lossWPerM3 || (a.material.id < b.material.id ? -1 : 1))
+  const { grades, isWithin } = powerGrades(library, frequencyHz)
+  const ranked = grades.map((material) => ({ material, lossWPerM3: lossAt(material, frequencyHz) })).sort((a, b) => a.lossWPerM3 - b.lossWPerM3 || (a.material.id < b.material.id ? -1 : 1))
   const best = ranked[0]
   if (!best) return { material: null, reasons: [], findings: [{ code: 'material-not-in-library', severity: 'error', path: 'core.material', values: { frequencyHz } }] }
   return {
     material: best.material,
     reasons: [{ code: 'material-least-loss', path: 'core.material', values: { material: best.material.name, lossWPerM3: best.lossWPerM3, frequencyHz, ...COMPARISON } }],
-    findings: within.length > 0 ? [] : [{ code: 'material-fit-out-of-range', severity: 'warning', path: 'core.material', values: { material: best.material.name, frequencyHz } }],
+    findings: isWithin ? [] : [{ code: 'material-fit-out-of-range', severity: 'warning', path: 'core.material', values: { material: best.material.name, frequencyHz } }],
   }
 }
 
+/** Power grades whose saturation is known when hot: those whose loss is known at the frequency, for want of any the others. */
+export function powerGrades({ materials }: Library, frequencyHz: number): { grades: MaterialRow[]; isWithin: boolean } {
+  const usable = materials.filter(({ use, saturation, lossFits }) => use === 'power' && lossFits.length > 0 && saturation.some(({ temperatureC }) => temperatureC >= 100))
+  const within = usable.filter(({ lossFits }) => lossFits.some(({ minimumHz, maximumHz }) => frequencyHz >= minimumHz && frequencyHz <= maximumHz))
+  return { grades: within.length > 0 ? within : usable, isWithin: within.length > 0 }
+}
+
+/** Grades against common-mode noise whose saturation is known. */
+export const commonModeGrades = ({ materials }: Library): MaterialRow[] => materials.filter(({ use, saturation }) => use === 'common-mode' && saturation.length > 0)
+
 /** Against common-mode noise the permeability counts; the flux is small. */
-function mostPermeable({ materials }: Library, frequencyHz: number): MaterialChoice {
-  const usable = materials.filter(({ use, saturation }) => use === 'common-mode' && saturation.length > 0)
-  const best = [...usable].sort((a, b) => b.initialPermeability - a.initialPermeability || (a.id < b.id ? -1 : 1))[0]
+function mostPermeable(library: Library, frequencyHz: number): MaterialChoice {
+  const best = commonModeGrades(library).sort((a, b) => b.initialPermeability - a.initialPermeability || (a.id < b.id ? -1 : 1))[0]
   if (!best) return { material: null, reasons: [], findings: [{ code: 'material-not-in-library', severity: 'error', path: 'core.material', values: { frequencyHz } }] }
   return { material: best, reasons: [{ code: 'material-preferred', path: 'core.material', values: { material: best.name } }], findings: [] }
 }

@@ -1,5 +1,7 @@
-import type { CoreRow, FormerRow } from '../library'
+import type { CoreRow, FormerRow, Library } from '../library'
+import type { RequirementSheet } from '../specification'
 import type { Candidate, SearchInput } from './candidate'
+import type { ProposalPreferences } from './preferences'
 import type { Rejection } from './reasons'
 import { goodCandidate, tryCore } from './try-core'
 
@@ -19,7 +21,7 @@ export interface SearchResult {
  * where this leaves fewer questions. Coil formers that somebody sells are tried before those that are only derived from geometry.
  */
 export function searchCore(input: SearchInput): SearchResult {
-  const all = candidateCores(input)
+  const all = sizesOf(input.library, input.preferences).filter((size) => !isTooHigh(size, input.requirement))
   const sold = trySizes(input, all.filter(({ former }) => former.confidence !== 'generic'))
   if (sold.chosen?.rejection === null) return sold
   const derived = trySizes(input, all.filter(({ former }) => former.confidence === 'generic'))
@@ -33,7 +35,7 @@ interface Best {
   rejected: SearchResult['rejected']
 }
 
-function trySizes(input: SearchInput, sizes: ReturnType<typeof candidateCores>): SearchResult {
+function trySizes(input: SearchInput, sizes: readonly Size[]): SearchResult {
   const rejected: SearchResult['rejected'] = []
   let fallback: (() => Candidate) | null = null
   let best: Best | null = null
@@ -55,18 +57,29 @@ function trySizes(input: SearchInput, sizes: ReturnType<typeof candidateCores>):
   return best ? { chosen: best.candidate, rejected: best.rejected } : { chosen: fallback?.() ?? null, rejected }
 }
 
-/** A centre leg with a hole for a tuning screw, which a gapped power part has no use for. */
-export const isHollow = ({ shape, centreLeg, minimumAreaMm2 }: CoreRow) => shape === 'RM' && centreLeg?.shape === 'round' && minimumAreaMm2 < 0.85 * (Math.PI / 4) * centreLeg.diameterMm ** 2
+/** A core with one of its coil formers. */
+export interface Size {
+  core: CoreRow
+  former: FormerRow
+}
 
-function candidateCores({ library, preferences, requirement }: SearchInput): { core: CoreRow; former: FormerRow }[] {
-  const { shapes, coreId } = preferences
-  const height = requirement.maximumHeightMm
-  return library.formers
-    .flatMap((former) => {
-      const core = library.cores.find(({ id }) => id === former.coreId)
+/** A centre leg with a hole for a tuning screw, which a gapped power part has no use for. */
+const isHollow = ({ shape, centreLeg, minimumAreaMm2 }: CoreRow) => shape === 'RM' && centreLeg?.shape === 'round' && minimumAreaMm2 < 0.85 * (Math.PI / 4) * centreLeg.diameterMm ** 2
+
+/** Cores of the wished shapes, or the named one, with each of their formers that the windings can be planned on, the smallest first. */
+export function sizesOf({ cores, formers }: Library, { shapes, coreId }: Pick<ProposalPreferences, 'shapes' | 'coreId'>): Size[] {
+  return formers
+    .flatMap((former): Size[] => {
+      const core = cores.find(({ id }) => id === former.coreId)
       // Windings are planned one over the other, which takes one section.
       if (!core || former.sections > 1 || (coreId !== null ? core.id !== coreId : !shapes.includes(core.shape) || isHollow(core))) return []
-      return height !== null && former.envelopeMm.height + 0.5 > height ? [] : [{ core, former }]
+      return [{ core, former }]
     })
     .sort((a, b) => a.core.effectiveVolumeMm3 - b.core.effectiveVolumeMm3 || shapes.indexOf(a.core.shape) - shapes.indexOf(b.core.shape) || (a.former.id < b.former.id ? -1 : 1))
 }
+
+/** Room over the board that seating and tolerance of the part take. Source: common practice. */
+const SEATING_MM = 0.5
+
+export const isTooHigh = ({ former }: Size, { maximumHeightMm }: Pick<RequirementSheet, 'maximumHeightMm'>): boolean =>
+  maximumHeightMm !== null && former.envelopeMm.height + SEATING_MM > maximumHeightMm

@@ -1,6 +1,7 @@
 import type { MaterialRow } from '../library'
 import type { Candidate } from '../propose/candidate'
 import type { Rejection } from '../propose/reasons'
+import type { Size } from '../propose/search'
 import { goodCandidate, tryCore } from '../propose/try-core'
 import type { Tried } from '../propose/try-core'
 import { rejectingCheck } from './candidates'
@@ -10,7 +11,7 @@ import { DEFAULT_FINALISTS } from './preferences'
 import type { SearchOutcome, SearchProgress } from './progress'
 import { outcome } from './ranking'
 import { rejectedCore } from './scope'
-import type { Scope, Size } from './scope'
+import type { Scope } from './scope'
 import type { Ranked, Screening } from './screening'
 
 /** A design that broke nothing. */

@@ -1,11 +1,12 @@
 import type { Plan, WindingNeed } from '../propose/plan'
 import type { Rejection } from '../propose/reasons'
+import type { Size } from '../propose/search'
 import { tryCore, turnsByFlux } from '../propose/try-core'
 import { rejectingCheck } from './candidates'
 import type { RejectedCore } from './candidates'
 import type { SearchProgress } from './progress'
 import { rejectedCore } from './scope'
-import type { Scope, Size } from './scope'
+import type { Scope } from './scope'
 import { screen } from './screen'
 import type { Estimate, Variant } from './screen'
 
@@ -48,9 +49,16 @@ export function* screenAll(scope: Scope): Generator<SearchProgress, Screening, b
       if (result.screened % STRIDE === 0 && (yield { stage: 'screening', done: result.screened, total, found: result.bySize.length })) return { ...result, stopped: true }
     }
     if (kept.length > 0) result.bySize.push({ size, kept: kept.sort(byLoss) })
-    else result.rejected.push(rejectedCore(size, rejectingCheck(reasons[0] ?? 'flux', null)))
+    else result.rejected.push(rejectedCore(size, rejectingCheck(mostOften(reasons) ?? 'flux', null)))
   }
   return result
+}
+
+/** The reason that most variants fall out by; null without any. */
+function mostOften(reasons: readonly Rejection[]): Rejection | null {
+  const counts = new Map<Rejection, number>()
+  for (const reason of reasons) counts.set(reason, (counts.get(reason) ?? 0) + 1)
+  return [...counts].reduce<[Rejection, number] | null>((most, one) => (most && most[1] >= one[1] ? most : one), null)?.[0] ?? null
 }
 
 function* variantsOf({ materials, methods }: Scope, size: Size): Generator<Variant> {
