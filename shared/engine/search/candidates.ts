@@ -1,6 +1,7 @@
 import type { Evaluation } from '../evaluation'
 import type { CoreRow, FormerRow, MaterialRow } from '../library'
 import type { Candidate } from '../propose/candidate'
+import { judgedBy } from '../propose/judge'
 import type { Rejection } from '../propose/reasons'
 import type { InsulationMethod, SpecificationDocument } from '../specification'
 
@@ -40,7 +41,7 @@ export interface SearchCandidate {
   document: SpecificationDocument
 }
 
-/** A core that fell out, with the release check that its best variant breaks. */
+/** A core that fell out, with the release check that its best design breaks, or that most of its variants break by closed forms. */
 export interface RejectedCore {
   core: string
   former: string
@@ -49,12 +50,12 @@ export interface RejectedCore {
   check: string
 }
 
-/** The check that stands behind a reason of the proposal. */
+/** The check that a reason comes to, where nothing was evaluated or the layout itself says it. */
 const CHECK_OF: Readonly<Record<Rejection, string>> = {
   'window': 'W03',
   'build': 'W03',
   'layer-width': 'W01',
-  'pins': 'P03',
+  'pins': 'P01',
   'flux': 'E01',
   'temperature': 'T11',
   'resistance': 'T03',
@@ -63,12 +64,8 @@ const CHECK_OF: Readonly<Record<Rejection, string>> = {
   'insulation': 'I04',
 }
 
-/** Of a rejection without an evaluation, or of the first check of its kind that an evaluation shows broken. */
-export function rejectingCheck(rejection: Rejection, evaluation: Evaluation | null): string {
-  const letter = CHECK_OF[rejection].charAt(0)
-  const shown = evaluation?.checks.find(({ code, state, severity }) => state === 'not-met' && severity === 'S' && code.startsWith(letter))
-  return shown?.code ?? CHECK_OF[rejection]
-}
+/** The check by which a design was rejected: the one that its evaluation breaks, else that of the reason. */
+export const rejectingCheck = (rejection: Rejection, evaluation: Evaluation | null): string => (evaluation && judgedBy(evaluation, rejection)) ?? CHECK_OF[rejection]
 
 interface Made {
   candidate: Candidate
