@@ -34,6 +34,11 @@ describe.each([...proposals, ['a ring without a coil former', ringPart] as [stri
     expect(unprintable(sheets)).toEqual([])
   })
 
+  it('leave no letter out in the working either, which the calculation record prints', () => {
+    const { working, checks, findings } = evaluate(document, library, { working: true })
+    expect(unprintable({ working, checks, findings })).toEqual([])
+  })
+
   it('come with a DXF', () => {
     expect(outlineDxf({ specification: document.specification, library, layout: evaluation.layout, revision: 'P1', specificationHash: null })).toMatch(/EOF\s*$/)
   })

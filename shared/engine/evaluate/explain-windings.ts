@@ -54,10 +54,10 @@ function explainLosses(context: Context, { index, copper, result, hotC, field }:
     explain(context, path(name), () => ({ symbol, value: result[name] as number | null, unit: name.startsWith('acFactor') ? '' : 'W', formula, source, inputs }))
   tell('dcLossW', 'P_dc', 'R_hot·I_dc²', [resistance, { name: 'I_dc', value: 'of the corner', unit: 'A', origin: 'corners' }], 'Ohm’s and Joule’s laws')
   tell('skinLossW', 'P_skin', 'R_hot·Σ F(n)·I_n²', [resistance, ...at])
-  tell('proximityLossW', 'P_prox', 'Σ_n Σ_layers ℓ·(G_∥·|H_∥|² + G_⊥·|H_⊥|²), H = Σ_windings h_w·I_w(n) as phasors', at)
+  tell('proximityLossW', 'P_prox', 'Σ_n Σ_layers ℓ·(G_x·|H_x|² + G_y·|H_y|²), x along the layer, y across it, H = Σ_windings h_w·I_w(n) as phasors', at)
   tell('idleLossW', 'P_idle', 'P_prox with the winding’s own current left out', at)
   tell('copperLossW', 'P_Cu', 'P_dc + P_skin + P_prox', [input('P_dc', 'dcLossW', 'W'), input('P_skin', 'skinLossW', 'W'), input('P_prox', 'proximityLossW', 'W')], 'J. Ferreira, IEEE Trans. Power Electron. 9 (1994) 127: skin and proximity are orthogonal')
-  tell('acFactorOneDimensional', 'F_R,1D', 'as F_R, with the field along the layers over the whole window and the gap spread along the leg', at, 'P. Dowell, Proc. IEE 113 (1966) 1387; J.-P. Vandelac and P. Ziogas, IEEE Trans. Power Electron. 3 (1988) 334')
+  tell('acFactorOneDimensional', 'F_R,1D', 'as F_R, with the field along the layers over the whole window and the gap spread along the leg', at.slice(1), 'P. Dowell, Proc. IEE 113 (1966) 1387; J.-P. Vandelac and P. Ziogas, IEEE Trans. Power Electron. 3 (1988) 334')
   tell('acFactor', 'F_R', '(P_skin + P_prox)/(R_hot·I_ac²)', [input('P_skin', 'skinLossW', 'W'), input('P_prox', 'proximityLossW', 'W'), resistance], 'definition')
 }
 
