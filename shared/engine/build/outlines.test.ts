@@ -42,6 +42,11 @@ describe('outlines', () => {
     expect(sleeved).toEqual({ kind: 'lead-sleeve', stepId: 's1', xMm: 0, yMm: 0.5, widthMm: 7.25, heightMm: 1.3 })
   })
 
+  it('end a sleeve at the far flange, however far it reaches along the turn', () => {
+    const sleeved = layOut([step({ turns: 19, finishSleeve: sleeve })]).layout.outlines!.find(({ kind }) => kind === 'lead-sleeve')
+    expect(sleeved).toMatchObject({ xMm: 0, widthMm: 10 })
+  })
+
   it('stand walls between the sections of a former', () => {
     expect(layOut([step(), step({ id: 's2', section: 2 })], { sections: 3 }).layout.outlines!.filter(({ kind }) => kind === 'section-wall').map(({ xMm, widthMm, heightMm }) => [xMm, widthMm, heightMm])).toEqual([[10, 1, 3], [21, 1, 3]])
   })

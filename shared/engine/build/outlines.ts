@@ -64,11 +64,12 @@ function crossings({ placements, input, sections }: Progress): Crossing[] {
 
 function crossingOutlines({ sections }: Progress, crossing: Crossing): LayoutOutline[] {
   const { placement, yMm, fromMm, toMm, exit, sleeve, thicknessMm } = crossing
-  const leftMm = sections[placement.section - 1]?.xMm ?? 0
+  const { xMm: leftMm, widthMm } = sections[placement.section - 1] ?? { xMm: 0, widthMm: 0 }
   const shared = { stepId: placement.stepId, yMm, heightMm: thicknessMm }
   const over = isOver(crossing) ? [{ ...shared, kind: 'lead-crossing' as const, xMm: leftMm + Math.min(fromMm, toMm), widthMm: Math.abs(toMm - fromMm) }] : []
   if (!sleeve) return over
-  const reachMm = Math.min(Math.abs(toMm - fromMm) + sleeve.intoWindingMm, Math.max(sleeve.lengthMm, sleeve.intoWindingMm))
+  // Into the winding means along the turn: beyond the other flange it cannot reach.
+  const reachMm = Math.min(Math.abs(toMm - fromMm) + sleeve.intoWindingMm, Math.max(sleeve.lengthMm, sleeve.intoWindingMm), widthMm)
   const sleeved = { ...shared, kind: 'lead-sleeve' as const, xMm: leftMm + (exit === 'left' ? 0 : toMm - reachMm), widthMm: reachMm }
   return [...over, sleeved]
 }
