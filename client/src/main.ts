@@ -1,9 +1,9 @@
+import './without-made-code'
 import { PiniaColada } from '@pinia/colada'
 import { createPinia } from 'pinia'
 import PrimeVue from 'primevue/config'
 import { createApp } from 'vue'
 import { createWebHistory } from 'vue-router'
-import { z } from 'zod'
 import { readSession } from '#shared/contracts/people'
 import { call } from './api/call'
 import { setSessionGate } from './api/session-gate'
@@ -13,9 +13,6 @@ import { createAppRouter } from './router'
 import { useSessionStore } from './stores/session'
 import { preset } from './theme'
 import StartFailure from './layouts/StartFailure.vue'
-
-// The page's security policy forbids making code from text, which zod would otherwise try.
-z.config({ jitless: true })
 
 async function start() {
   const app = createApp(App)

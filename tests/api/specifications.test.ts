@@ -290,7 +290,7 @@ describe('the list', () => {
     const words = changed(draft.document, ({ specification }) => (specification.impregnation.resin = { value: 'Polyurethane resin, solventless', status: 'mandatory', origin: { kind: 'entered' } }))
     await save(draft, words).expect(200)
     const find = async (search: string) => (await request(test.app, contract.listSpecifications, { as: world.engineer.cookie, query: { search } }).expect(200)).body
-    expect(await find('solventl polyur')).toMatchObject({ total: 1, rows: [{ id: draft.specificationId, figures: { windings: 2, core: expect.any(String), inductanceH: expect.any(Number) } }] })
+    expect(await find('solventl polyur')).toMatchObject({ total: 1, rows: [{ id: draft.specificationId, figures: { windings: 2, core: expect.stringMatching(/^[A-Z]/), inductanceH: expect.any(Number) } }] })
     expect((await find('rippleRatio')).total).toBe(0)
     for (const odd of ["'", "a' | 'b", ':*', '&', '\\', '((']) expect((await find(odd)).total).toBeGreaterThanOrEqual(0)
   })

@@ -1,9 +1,9 @@
 import type { Actor, Transaction } from '#server/db/as-actor'
-import { people, specificationReleases, specificationRevisions, specifications } from '#server/db/schema/index'
+import { partRows, people, specificationReleases, specificationRevisions, specifications } from '#server/db/schema/index'
 import { readableRevisions, readableSpecifications } from '#server/policies/specifications'
 import type { QueryOf } from '#shared/contracts/endpoint'
 import type { listSpecifications as endpoint, SpecificationPage } from '#shared/contracts/specifications'
-import { and, asc, desc, eq, ilike, or, sql, type SQL } from 'drizzle-orm'
+import { and, asc, desc, eq, ilike, inArray, or, sql, type SQL } from 'drizzle-orm'
 import { searchWords } from './list-columns'
 import { namesOf, personOf, RELEASE_COLUMNS, releaseSummary } from './read-revision'
 
@@ -86,6 +86,7 @@ export async function listSpecifications(tx: Transaction, actor: Actor, query: L
     .limit(query.limit)
     .offset(query.offset)
   const names = await namesOf(tx, rows.flatMap(({ current: { createdBy, checkedBy } }) => [createdBy, checkedBy]))
+  const cores = await coreNames(tx, rows.flatMap(({ current: { figures } }) => figures.core ?? []))
   return {
     total: rows[0]?.total ?? 0,
     rows: rows.map(({ specification: { id, partNumber, title, ownerId }, ownerName, current: revision, release }) => ({
@@ -93,7 +94,7 @@ export async function listSpecifications(tx: Transaction, actor: Actor, query: L
       partNumber,
       title,
       topology: revision.topology,
-      figures: revision.figures,
+      figures: revision.figures.core ? { ...revision.figures, core: cores.get(revision.figures.core) ?? revision.figures.core } : revision.figures,
       owner: { id: ownerId, name: ownerName ?? '—' },
       updatedAt: revision.updatedAt.toISOString(),
       current: {
@@ -107,4 +108,11 @@ export async function listSpecifications(tx: Transaction, actor: Actor, query: L
       },
     })),
   }
+}
+
+/** What the library calls the cores of a page; a document keeps their identifiers. */
+async function coreNames(tx: Transaction, ids: readonly string[]): Promise<Map<string, string>> {
+  if (ids.length === 0) return new Map()
+  const rows = await tx.select({ id: partRows.partId, name: partRows.name }).from(partRows).where(and(eq(partRows.kind, 'core'), inArray(partRows.partId, [...new Set(ids)]))).orderBy(partRows.version)
+  return new Map(rows.map(({ id, name }) => [id, name]))
 }

@@ -1,7 +1,7 @@
 import { describe, expect, it } from 'vitest'
 import { placeOfCheck } from '#shared/contracts/specifications'
 import type { CheckResult } from '#shared/engine/evaluation'
-import { flagsByPlace, flagsWithin, groupChecks, stoppingChecks, stoppingCodes } from './check-groups'
+import { checkSummary, flagsByPlace, flagsWithin, groupChecks, stoppingChecks, stoppingCodes } from './check-groups'
 
 const check = (code: string, severity: CheckResult['severity'], state: CheckResult['state']): CheckResult => ({ code, severity, state, value: null, limit: null, unit: '', margin: null, source: '', path: 'former.former', values: {} })
 
@@ -30,6 +30,11 @@ describe('stoppingCodes', () => {
     expect(stoppingCodes(elsewhere, at('E01'))).toEqual(['I04', 'E01'])
     expect(stoppingChecks(elsewhere, at('E01', 'I04')).map(({ path }) => path)).toEqual(['core.core'])
   })
+})
+
+it('says in one line how much stops release, also by what nobody could check', () => {
+  expect(checkSummary(checks)).toBe('2 stop release (1 not met, 1 that could not be checked), 1 other could not be checked, 1 wants an answer, 1 met')
+  expect(checkSummary([])).toBe('0 stop release (0 not met, 0 that could not be checked), 0 others could not be checked, 0 want an answer, 0 met')
 })
 
 describe('flags', () => {

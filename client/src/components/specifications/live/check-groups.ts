@@ -29,6 +29,21 @@ export function groupChecks(checks: readonly CheckResult[], overridden: Readonly
 export const stoppingChecks = (checks: readonly CheckResult[], overridden: ReadonlySet<string>): CheckResult[] =>
   checks.filter((check) => check.severity === 'S' && check.state !== 'met' && !overridden.has(placeOfCheck(check)))
 
+/** In one line what the checks say: what stops release, be it broken or not to be told, before what only wants an answer. */
+export function checkSummary(checks: readonly CheckResult[]): string {
+  const count = (belongs: (check: CheckResult) => boolean) => checks.filter(belongs).length
+  const broken = count(({ severity, state }) => severity === 'S' && state === 'not-met')
+  const untold = count(({ severity, state }) => severity === 'S' && state === 'not-checkable')
+  const open = count(({ severity, state }) => severity !== 'S' && state === 'not-checkable')
+  const answers = count(({ severity, state }) => severity === 'M' && state === 'not-met')
+  return [
+    `${broken + untold} stop release (${broken} not met, ${untold} that could not be checked)`,
+    `${open} ${open === 1 ? 'other' : 'others'} could not be checked`,
+    `${answers} ${answers === 1 ? 'wants' : 'want'} an answer`,
+    `${count(({ state }) => state === 'met')} met`,
+  ].join(', ')
+}
+
 /** Codes that stop release as things stand. */
 export function stoppingCodes(checks: readonly CheckResult[], overridden: ReadonlySet<string>): string[] {
   return [...new Set(stoppingChecks(checks, overridden).map(({ code }) => code))]
