@@ -17,6 +17,11 @@ export interface CornerState {
   fluxDensityT: Waveform | null
 }
 
+/** Full load: neither light load nor the overload of the current limit. */
+const FULL_LOAD: readonly PointName[] = ['minimum-input', 'nominal-input', 'maximum-input']
+
+export const atFullLoad = ({ name }: Pick<CornerResult, 'name'>): boolean => FULL_LOAD.includes(name)
+
 export const cornerWinding = (windingId: string, { currentA, voltageV }: WindingWaveforms): CornerWinding => ({
   windingId,
   dcA: Math.abs(mean(currentA)),

@@ -5,7 +5,7 @@ import type { Circuit, CircuitInput, CircuitWinding, NamedPoint, OperatingPoint 
 import { UnreachablePoint } from '../topologies/unreachable'
 import { attempt, positive, report } from './context'
 import type { Context } from './context'
-import { cornerState } from './corner-result'
+import { atFullLoad, cornerState } from './corner-result'
 import type { CornerState } from './corner-result'
 import type { InductanceBasis } from './inductance'
 import { leakageBetweenH } from './leakage'
@@ -62,8 +62,6 @@ function reportModeChanges(context: Context, corners: readonly CornerState[]): v
     if (full && full.mode !== light.mode) report(context, 'light-load-changes-mode', 'note', 'requirement.duty', { inputV: light.inputV, full: full.mode, light: light.mode })
   }
 }
-
-const atFullLoad = ({ name }: { name: string }) => !name.startsWith('light-load') && name !== 'current-limit'
 
 /** The overload of the current limit alone; null where no limit acts or it is not reached. */
 export function limitCorner(context: Context, basis: InductanceBasis, coil: Coil | null): CornerState | null {

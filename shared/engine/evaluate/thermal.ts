@@ -11,6 +11,7 @@ import { coreHeat } from './core-loss'
 import type { CopperStage } from './copper-loss'
 import { attempt, explain, report } from './context'
 import type { Context } from './context'
+import { atFullLoad } from './corner-result'
 import type { CornerState } from './corner-result'
 import { originOf } from './inductance'
 
@@ -69,7 +70,7 @@ const total = ({ copperW, coreW }: Pick<Loss, 'copperW' | 'coreW'>) => (copperW 
 
 /** Losses and temperature in the corner that heats most, iterated to a fixed point. */
 export function heatBalance(context: Context, { copper, corners }: HeatInput): Heat {
-  const fullLoad = corners.filter(({ result }) => ['minimum-input', 'nominal-input', 'maximum-input'].includes(result.name))
+  const fullLoad = corners.filter(({ result }) => atFullLoad(result))
   const quiet = { ...context, findings: [] }
   const hottest = fullLoad.reduce<{ corner: CornerState; lossW: number } | null>((worst, corner) => {
     const lossW = attempt(quiet, 'windings', () => total(lossAt(quiet, copper, corner, COMPARISON_C))) ?? 0

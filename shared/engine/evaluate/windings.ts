@@ -7,6 +7,7 @@ import { skinDepthMm } from '../wires/skin-depth'
 import { attempt, positive } from './context'
 import type { Context } from './context'
 import type { CopperStage } from './copper-loss'
+import { atFullLoad } from './corner-result'
 import type { CornerState } from './corner-result'
 import { explainWinding } from './explain-windings'
 
@@ -59,10 +60,8 @@ function skinDepthOf(context: Context, temperatureC: number): number | null {
   return positive(frequencyHz) ? attempt(context, 'electrical.switchingFrequencyHz', () => skinDepthMm({ frequencyHz, temperatureC })) : null
 }
 
-const FULL_LOAD = new Set(['minimum-input', 'nominal-input', 'maximum-input'])
-
 function largestCurrents(winding: Winding, corners: readonly CornerState[]): Pick<WindingResult, 'rmsA' | 'peakA' | 'dcA'> {
-  const own = corners.filter(({ result }) => FULL_LOAD.has(result.name)).flatMap(({ result }) => result.windings.filter(({ windingId }) => windingId === winding.id))
+  const own = corners.filter(({ result }) => atFullLoad(result)).flatMap(({ result }) => result.windings.filter(({ windingId }) => windingId === winding.id))
   if (own.length === 0) return { rmsA: winding.rmsCurrentA, peakA: winding.peakCurrentA, dcA: winding.dcCurrentA }
   return { rmsA: Math.max(...own.map(({ rmsA }) => rmsA)), peakA: Math.max(...own.map(({ peakA }) => peakA)), dcA: Math.max(...own.map(({ dcA }) => dcA)) }
 }

@@ -5,6 +5,7 @@ import type { CircuitWinding } from '../topologies/topology'
 import { peak } from '../waveforms/statistics'
 import { attempt, explain, positive, report } from './context'
 import type { Context } from './context'
+import { atFullLoad } from './corner-result'
 import type { CornerState } from './corner-result'
 import { cornerAt } from './corners'
 import { originOf } from './inductance'
@@ -46,11 +47,6 @@ export function worstFlux(context: Context, basis: InductanceBasis, corners: rea
   }))
   return { currentA: worst.currentA, fluxT }
 }
-
-/** Corners at full load: neither at light load nor in the overload of the current limit. */
-const FULL_LOAD: readonly string[] = ['minimum-input', 'nominal-input', 'maximum-input']
-
-export const atFullLoad = ({ name }: { name: string }): boolean => FULL_LOAD.includes(name)
 
 /** Greatest peak current of a winding at full load, A; null where its corners are not known. */
 export function fullLoadPeakA({ corners }: Pick<Evaluation, 'corners'>, windingId: string): number | null {

@@ -3,7 +3,7 @@ import type { Evaluation, WindingResult } from '../evaluation'
 import { proposeTests } from '../limits'
 import type { DcResistanceLimit, InsulationBoundary, LeakageLimit, SaturationLimit, SpecificationDocument, TurnsRatio, Winding, WindingSpecification, WithstandTest } from '../specification'
 import { isInsulatedWire, windingsAt } from '../evaluate/insulation-paths'
-import { atFullLoad } from '../evaluate/worst-flux'
+import { atFullLoad } from '../evaluate/corner-result'
 import { topologyOf } from '../topologies'
 import { isProposed, isStatable, PROPOSED, proposed, toStepUp } from './stated'
 
