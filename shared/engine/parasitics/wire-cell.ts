@@ -1,4 +1,5 @@
 import { requireNotNegative, requirePositive } from '../require'
+import { solveLinear } from '../solve-linear'
 
 /** Electric constant, F/m. Source: CODATA 2018. */
 export const EPSILON_0_F_PER_M = 8.8541878128e-12
@@ -46,7 +47,8 @@ const MULTIPOLES = 10
  */
 export function wireCellFPerM(input: WireCellInput): number {
   const cell = dimensionless(input)
-  const multipoles = solve(...system(cell))
+  const multipoles = solveLinear(...system(cell))
+  if (!multipoles) throw new RangeError('the multipoles of the row cannot be told apart')
   return 2 * Math.PI * EPSILON_0_F_PER_M * (input.fillPermittivity ?? 1) / potential(cell, multipoles)
 }
 
@@ -148,28 +150,6 @@ function potential(cell: Cell, regular: readonly number[]): number {
 }
 
 // ---------------------------------------------------------------------------------------------
-
-/** Solution of a small dense linear system by elimination with row exchange. */
-function solve(matrix: readonly (readonly number[])[], right: readonly number[]): number[] {
-  const rows = matrix.map((row, index) => [...row, right[index]!])
-  const size = rows.length
-  for (let column = 0; column < size; column++) {
-    let pivot = column
-    for (let row = column + 1; row < size; row++) if (Math.abs(rows[row]![column]!) > Math.abs(rows[pivot]![column]!)) pivot = row
-    ;[rows[column], rows[pivot]] = [rows[pivot]!, rows[column]!]
-    for (let row = column + 1; row < size; row++) {
-      const factor = rows[row]![column]! / rows[column]![column]!
-      for (let k = column; k <= size; k++) rows[row]![k]! -= factor * rows[column]![k]!
-    }
-  }
-  const answer = new Array<number>(size).fill(0)
-  for (let row = size - 1; row >= 0; row--) {
-    let value = rows[row]![size]!
-    for (let k = row + 1; k < size; k++) value -= rows[row]![k]! * answer[k]!
-    answer[row] = value / rows[row]![row]!
-  }
-  return answer
-}
 
 const FACTORIALS = Array.from({ length: 2 * MULTIPOLES + 1 }).reduce<number[]>((list, _, index) => [...list, index === 0 ? 1 : list[index - 1]! * index], [])
 const factorial = (n: number) => FACTORIALS[n]!
