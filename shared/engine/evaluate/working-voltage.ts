@@ -26,13 +26,6 @@ export const nodesOf = (corner: CornerState): Node[] =>
     { windingId, potentialV: finish, spikeV: finishSpikeV },
   ])
 
-/** Difference of two potentials; point by point where both change at the same times, as all windings of one core do. */
-function difference(one: Waveform, other: Waveform): Waveform {
-  const same = one.points.length === other.points.length && one.points.every(([tS], index) => tS === other.points[index]![0])
-  if (!same) return differenceOfWaveforms(one, other)
-  return { periodS: one.periodS, points: one.points.map(([tS, value], index) => [tS, value - other.points[index]![1]] as const) }
-}
-
 /** A corner with its nodes, made once for all boundaries. */
 export interface VoltageCorner {
   corner: CornerState
@@ -82,7 +75,7 @@ function pairsOf(context: Context, boundary: InsulationBoundary, { corner, nodes
       .filter((b) => b.node.windingId !== a.node.windingId)
       .map((b): Pair => {
         const offsetV = onMains && (a.side === 'primary') !== (b.side === 'primary') ? (a.side === 'primary' ? -1 : 1) * corner.result.inputV : 0
-        return { differenceV: difference(a.node.potentialV, b.node.potentialV), upSpikeV: a.node.spikeV, downSpikeV: b.node.spikeV, offsetV }
+        return { differenceV: differenceOfWaveforms(a.node.potentialV, b.node.potentialV), upSpikeV: a.node.spikeV, downSpikeV: b.node.spikeV, offsetV }
       }),
   )
 }

@@ -1,6 +1,5 @@
 import { requirePositive } from '../require'
-import { meanSquare, peak } from './statistics'
-import { constantWaveform, createWaveform, waveformSegments } from './waveform'
+import { createWaveform, waveformSegments } from './waveform'
 import type { Waveform, WaveformPoint, WaveformSegment } from './waveform'
 
 /** Every value multiplied by a factor. */
@@ -140,31 +139,3 @@ export function meanProduct(first: Waveform, second: Waveform): number {
   }
   return sum / first.periodS
 }
-
-export interface WorkingVoltage {
-  rmsV: number
-  recurringPeakV: number
-}
-
-/**
- * Working voltage between two sides: the greatest rms and the greatest recurring peak of all pairs of node potentials,
- * each potential as a waveform in volt against one common reference.
- *
- * Source: IEC 60664-1:2020, 3.1 (working voltage, recurring peak voltage).
- *
- * @throws RangeError when a side has no node or the periods differ
- */
-export function workingVoltage(sideV: readonly Waveform[], otherSideV: readonly Waveform[]): WorkingVoltage {
-  if (sideV.length === 0 || otherSideV.length === 0) throw new RangeError('both sides must have at least one node')
-  let worst: WorkingVoltage = { rmsV: 0, recurringPeakV: 0 }
-  for (const node of sideV) {
-    for (const other of otherSideV) {
-      const between = differenceOfWaveforms(node, other)
-      worst = { rmsV: Math.max(worst.rmsV, Math.sqrt(meanSquare(between))), recurringPeakV: Math.max(worst.recurringPeakV, peak(between)) }
-    }
-  }
-  return worst
-}
-
-/** A node that holds one potential, for `workingVoltage`. */
-export const steadyNode = (periodS: number, potentialV: number): Waveform => constantWaveform(periodS, potentialV)
