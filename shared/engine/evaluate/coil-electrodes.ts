@@ -3,8 +3,8 @@ import { tubeClearanceMm } from '../build'
 import { CORE_BODY } from '../parasitics/electrodes'
 import type { Dielectric, Electrode, Flank, WireElectrode } from '../parasitics/electrodes'
 import { permittivityOf, wirePermittivity } from '../parasitics/permittivity'
-import type { CoreRow } from '../library'
-import type { LibraryReference } from '../specification'
+import type { CoreRow, WireRow } from '../library'
+import type { LibraryReference, WireInsulation } from '../specification'
 import type { Context } from './context'
 import { buildWire } from './lookup'
 
@@ -49,6 +49,7 @@ function layerElectrodes(context: Context, coil: Coil, placement: StepPlacement)
   if (!winding || !wire || !row) return []
   const parallel = Math.max(1, Math.floor(winding.wire.parallel))
   const sectionMm = coil.sectionLeftsMm[placement.section - 1] ?? 0
+  const conductorMm = wire.overallMm - insulationMm(context, { row, insulation: winding.wire.insulation, overallMm: wire.overallMm })
   return placement.layers.map((layer): Electrode => {
     const shared = {
       body: winding.id,
@@ -66,7 +67,7 @@ function layerElectrodes(context: Context, coil: Coil, placement: StepPlacement)
       ...shared,
       ...turnsAcross(layer),
       kind: 'wire',
-      conductorMm: wire.overallMm - insulationMm(context, winding.id, wire.overallMm),
+      conductorMm,
       overallMm: wire.overallMm,
       pitchMm: wirePitchMm(layer, parallel),
       turns: layer.turns,
@@ -84,12 +85,10 @@ const turnsAcross = ({ turns, turnsBefore, rightward }: LayerPlacement) =>
 const wirePitchMm = ({ turns, leftMm, rightMm }: LayerPlacement, parallel: number) => (rightMm - leftMm) / (turns * parallel)
 
 /** Insulation on both sides of a wire, mm; of litz that of one strand, by the round wire of its diameter. */
-function insulationMm(context: Context, windingId: string, overallMm: number): number {
-  const winding = context.specification.windings.find(({ id }) => id === windingId)!
-  const row = context.index.find('wire', winding.wire.wire)!
+function insulationMm({ index }: Context, { row, insulation, overallMm }: { row: WireRow; insulation: WireInsulation; overallMm: number }): number {
   if (row.form !== 'litz') return Math.min(overallMm * 0.99, overallMm - row.conductorMm)
-  const strand = context.index.library.wires.find(({ form, conductorMm, overallMm: overall }) => form === 'round' && Math.abs(conductorMm - row.conductorMm) < 1e-3 && overall[winding.wire.insulation] !== null)
-  const strandOverallMm = strand?.overallMm[winding.wire.insulation] ?? 1.15 * row.conductorMm
+  const strand = index.library.wires.find(({ form, conductorMm, overallMm: overall }) => form === 'round' && Math.abs(conductorMm - row.conductorMm) < 1e-3 && overall[insulation] !== null)
+  const strandOverallMm = strand?.overallMm[insulation] ?? 1.15 * row.conductorMm
   return Math.min(overallMm * 0.5, strandOverallMm - row.conductorMm)
 }
 
