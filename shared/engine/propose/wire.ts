@@ -2,6 +2,7 @@ import type { Library, WireRow } from '../library'
 import type { WireInsulation, WireUse } from '../specification'
 import { referenceTo } from '../evaluate/lookup'
 import { wireCandidates } from '../wires/choice'
+import { STRAND_SKIN_DEPTHS } from '../wires/litz'
 import { skinDepthMm } from '../wires/skin-depth'
 import type { ProposalPreferences } from './preferences'
 
@@ -126,10 +127,10 @@ const STRANDS_COST = 0.1
 function litzWire(library: Library, need: WireNeed, depthMm: number): Bundle | null {
   const areaMm2 = need.rmsA / (need.currentDensityAPerMm2 * DENSITY_SLACK)
   const fitting = library.wires
-    .filter((row) => row.form === 'litz' && usable(row, need.insulation) && row.conductorMm <= (2 * depthMm) / 3)
+    .filter((row) => row.form === 'litz' && usable(row, need.insulation) && row.conductorMm <= 2 * STRAND_SKIN_DEPTHS * depthMm)
     .map((row) => ({ row, parallel: Math.max(1, Math.ceil(areaMm2 / row.copperAreaMm2 - 1e-9)) }))
     .filter(({ parallel }) => parallel <= MOST_BUNDLES)
-  const fine = fitting.filter(({ row }) => row.conductorMm <= depthMm / 3)
+  const fine = fitting.filter(({ row }) => row.conductorMm <= STRAND_SKIN_DEPTHS * depthMm)
   const strandMm = fine.length > 0 ? Math.max(...fine.map(({ row }) => row.conductorMm)) : Math.min(...fitting.map(({ row }) => row.conductorMm))
   const cost = ({ row, parallel }: Bundle) =>
     (parallel * row.copperAreaMm2) / areaMm2 + BUNDLE_COST * (parallel - 1) + STRANDS_COST * Math.max(0, (parallel * row.strands) / STRANDS_PER_PIN - 1)

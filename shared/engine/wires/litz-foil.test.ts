@@ -1,7 +1,6 @@
 import { describe, expect, it } from 'vitest'
-import { dowellFactor } from '../losses/dowell'
-import { bestFoilMm, foilResistanceOhmPerM, foilWidthMm } from './foil'
-import { layLengthFactor, litzFigures, strandsFor } from './litz'
+import { foilResistanceOhmPerM, foilWidthMm } from './foil'
+import { layLengthFactor, litzFigures } from './litz'
 
 describe('litzFigures', () => {
   const construct = { stages: [12, 5], strandConductorMm: 0.1, strandOverallMm: 0.117, servingMm: 0.035, layLengthMm: null }
@@ -36,22 +35,8 @@ describe('layLengthFactor', () => {
   it('gives the usual two percent at eleven diameters', () => expect(layLengthFactor({ bundleMm: 1, layLengthMm: 11 })).toBeCloseTo(1.02, 3))
 })
 
-describe('strandsFor', () => {
-  it('takes the thickest strand up to a third of the skin depth', () => {
-    expect(strandsFor({ areaMm2: 0.5, skinDepthMm: 0.24, strandsMm: [0.05, 0.071, 0.1] })).toEqual({ strandMm: 0.071, strands: 127, fineEnough: true })
-  })
-  it('says when no strand is fine enough', () => expect(strandsFor({ areaMm2: 0.5, skinDepthMm: 0.1, strandsMm: [0.05, 0.1] })).toMatchObject({ strandMm: 0.05, fineEnough: false }))
-})
-
 describe('foil', () => {
   it('stays off both flanges', () => expect(foilWidthMm({ availableMm: 20 })).toBeCloseTo(19.6, 12))
   it('has nothing left in a narrow window', () => expect(foilWidthMm({ availableMm: 0.3 })).toBe(0))
   it('has the resistance of its section', () => expect(foilResistanceOhmPerM({ thicknessMm: 0.1, widthMm: 20 })).toBeCloseTo(1 / 58 / 2, 12))
-
-  it.each([1, 2, 5, 10, 14])('is thickest where it pays: %d layers', (layers) => {
-    const best = bestFoilMm({ layers, skinDepthMm: 1 })
-    const loss = (ratio: number) => dowellFactor({ heightInSkinDepths: ratio, layers }) / ratio
-    expect(loss(best)).toBeLessThanOrEqual(loss(best * 1.05))
-    expect(loss(best)).toBeLessThanOrEqual(loss(best * 0.95))
-  })
 })

@@ -1,6 +1,6 @@
 import { known } from '../answer'
 import type { Answer } from '../answer'
-import { requireCount, requireNotNegative, requirePositive } from '../require'
+import { requireCount, requirePositive } from '../require'
 import { LITZ_LENGTH_FACTOR, litzDiameterMm, litzResistanceOhmPerM } from './insulated-diameter'
 import { roundAreaMm2 } from './resistance'
 
@@ -74,28 +74,3 @@ export function layLengthFactor({ bundleMm, layLengthMm }: { bundleMm: number; l
 
 /** Strands thinner than this share of the skin depth gain little more. Source: C. Sullivan, IEEE Trans. Power Electron. 14 (1999) 283. */
 export const STRAND_SKIN_DEPTHS = 1 / 3
-
-export interface LitzChoiceInput {
-  areaMm2: number
-  skinDepthMm: number
-  /** Strands that can be had, mm. */
-  strandsMm: readonly number[]
-}
-
-/**
- * Strand and number of strands that carry a copper area: the thickest strand up to a third of the skin depth, or the
- * finest there is.
- *
- * Source: C. Sullivan, IEEE Trans. Power Electron. 14 (1999) 283.
- *
- * @throws RangeError unless area and skin depth are positive and there is a strand
- */
-export function strandsFor({ areaMm2, skinDepthMm, strandsMm }: LitzChoiceInput): { strandMm: number; strands: number; fineEnough: boolean } {
-  requirePositive('areaMm2', areaMm2)
-  requirePositive('skinDepthMm', skinDepthMm)
-  if (strandsMm.length === 0) throw new RangeError('strandsMm must hold at least one')
-  strandsMm.forEach((strandMm, index) => requireNotNegative(`strandsMm.${index}`, strandMm))
-  const fine = strandsMm.filter((strandMm) => strandMm <= skinDepthMm * STRAND_SKIN_DEPTHS)
-  const strandMm = fine.length > 0 ? Math.max(...fine) : Math.min(...strandsMm)
-  return { strandMm, strands: Math.max(3, Math.ceil(areaMm2 / roundAreaMm2(strandMm) - 1e-9)), fineEnough: fine.length > 0 }
-}
