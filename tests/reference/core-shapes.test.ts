@@ -2,7 +2,7 @@ import { shippedLibrary } from '#server/db/seed/parts/library'
 import { COUPLED_INDUCTOR } from '#server/db/seed/specifications/requirements'
 import { evaluate, propose } from '#shared/engine/index'
 import type { CoreShape } from '#shared/engine/library'
-import { biasFieldAPerM, genericPowderBias, permeabilityShare, turnsUnderBias } from '#shared/engine/magnetics/bias'
+import { biasFieldAPerM, genericPowderBias, permeabilityShare } from '#shared/engine/magnetics/bias'
 import { effectiveParametersOfShape } from '#shared/engine/magnetics/core-shapes'
 import type { ShapeDimensions } from '#shared/engine/magnetics/core-shapes'
 import { describe, expect, it } from 'vitest'
@@ -103,15 +103,6 @@ describe('powder cores under bias', () => {
     expect(permeabilityShare(points, half)).toMatchObject({ value: expect.closeTo(0.5, 9) })
     expect(permeabilityShare(points, 3 * half)).toMatchObject({ state: 'not-checkable', reason: 'past-last-row' })
     expect(permeabilityShare([], 1)).toMatchObject({ state: 'not-checkable', reason: 'no-data' })
-  })
-
-  it('needs more turns under bias than without, and owns up where none suffice', () => {
-    const input = { points, inductanceH: 100e-6, inductanceFactorH: 60e-9, effectiveLengthMm: 60, mostTurns: 200 }
-    const idle = turnsUnderBias({ ...input, currentA: 0 })!
-    const loaded = turnsUnderBias({ ...input, currentA: 5 })!
-    expect(idle).toBe(Math.ceil(Math.sqrt(100e-6 / 60e-9)))
-    expect(loaded).toBeGreaterThan(idle)
-    expect(turnsUnderBias({ ...input, currentA: 50 })).toBeNull()
   })
 })
 

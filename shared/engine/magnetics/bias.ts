@@ -56,21 +56,3 @@ export function genericPowderBias({ saturationT, permeability }: { saturationT: 
     permeabilityShare: 1 / (1 + ratio ** 1.7),
   }))
 }
-
-/**
- * Turns that keep an inductance under bias: L_0·N²/N_0² falls with the field, so the least turns are sought that reach it.
- *
- * @returns null when no turns up to `mostTurns` reach it, or the curve ends before
- * @throws RangeError as `biasFieldAPerM`
- */
-export function turnsUnderBias(input: { points: readonly BiasPoint[]; inductanceH: number; inductanceFactorH: number; currentA: number; effectiveLengthMm: number; mostTurns: number }): number | null {
-  const { points, inductanceH, inductanceFactorH, currentA, effectiveLengthMm, mostTurns } = input
-  requirePositive('inductanceH', inductanceH)
-  requirePositive('inductanceFactorH', inductanceFactorH)
-  for (let turns = Math.max(1, Math.ceil(Math.sqrt(inductanceH / inductanceFactorH))); turns <= mostTurns; turns++) {
-    const share = permeabilityShare(points, biasFieldAPerM({ turns, currentA, effectiveLengthMm }))
-    if (share.state !== 'known') return null
-    if (inductanceFactorH * turns ** 2 * share.value >= inductanceH) return turns
-  }
-  return null
-}

@@ -119,33 +119,3 @@ export function temperatureByResistanceC(input: { resistanceRatio: number; coldT
   requirePositive('resistanceRatio', input.resistanceRatio)
   return input.resistanceRatio * (COPPER_ZERO_RESISTANCE_OFFSET_C + input.coldTemperatureC) - COPPER_ZERO_RESISTANCE_OFFSET_C
 }
-
-/**
- * Least, nominal and greatest resistance of a winding at a temperature, from the table of its wire, in ohm. Where the table has
- * only a nominal value the spread is that of a diameter tolerance of ±1 %.
- *
- * Source: IEC 60317-0-1 (limits of the table); ASTM B258 and NEMA MW 1000, tolerance of AWG diameters from memory; IEC 60028:1925.
- *
- * @throws RangeError unless length and resistance are positive, the count is whole, and the temperature within −60…300 °C
- */
-export function windingResistanceSpreadOhm(input: {
-  resistance20: { nominalOhmPerM: number; minimumOhmPerM: number | null; maximumOhmPerM: number | null }
-  lengthM: number
-  parallelCount?: number
-  temperatureC: number
-}): { minimumOhm: number; nominalOhm: number; maximumOhm: number } {
-  const { resistance20, lengthM, parallelCount = 1, temperatureC } = input
-  requirePositive('lengthM', lengthM)
-  requirePositive('resistance20.nominalOhmPerM', resistance20.nominalOhmPerM)
-  requireCount('parallelCount', parallelCount)
-  const scale = (resistanceFactor(temperatureC) * lengthM) / parallelCount
-  const { nominalOhmPerM } = resistance20
-  return {
-    minimumOhm: (resistance20.minimumOhmPerM ?? nominalOhmPerM / (1 + GAUGE_TOLERANCE) ** 2) * scale,
-    nominalOhm: nominalOhmPerM * scale,
-    maximumOhm: (resistance20.maximumOhmPerM ?? nominalOhmPerM / (1 - GAUGE_TOLERANCE) ** 2) * scale,
-  }
-}
-
-/** Of the diameter of a bare wire by gauge, from memory. Source: NEMA MW 1000. */
-const GAUGE_TOLERANCE = 0.01

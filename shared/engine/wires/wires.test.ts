@@ -2,7 +2,7 @@ import { describe, expect, it } from 'vitest'
 import { awgDiameterMm, nearestAwg } from './awg'
 import { wireCandidates } from './choice'
 import { layeredWireDiameterMm, litzDiameterMm, litzResistanceOhmPerM } from './insulated-diameter'
-import { iecWireResistance, resistanceFactor, temperatureByResistanceC, windingLengthM, windingResistanceOhm, windingResistanceSpreadOhm } from './resistance'
+import { iecWireResistance, resistanceFactor, temperatureByResistanceC, windingLengthM, windingResistanceOhm } from './resistance'
 import { skinDepthMm } from './skin-depth'
 
 describe('awg', () => {
@@ -25,22 +25,6 @@ describe('windingResistanceOhm', () => {
   })
 
   it('adds the leads to the length', () => expect(windingLengthM({ turns: 30, meanTurnLengthMm: 61, leadsMm: 80 })).toBeCloseTo(1.91, 12))
-})
-
-describe('windingResistanceSpreadOhm', () => {
-  // IEC 60317-0-1: 0.500 mm has 0.08462, 0.087059 and 0.089593 Ω/m.
-  const table = { minimumOhmPerM: 0.08462, nominalOhmPerM: 0.087059, maximumOhmPerM: 0.089593 }
-  it('scales the limits of the table by length, count and temperature', () => {
-    const hot = windingResistanceSpreadOhm({ resistance20: table, lengthM: 2, parallelCount: 4, temperatureC: 100 })
-    expect(hot.minimumOhm).toBeCloseTo((0.08462 / 2) * (1 + 0.00393 * 80), 9)
-    expect(hot.maximumOhm / hot.nominalOhm).toBeCloseTo(0.089593 / 0.087059, 9)
-  })
-  it('takes one percent of the diameter where the table has no limits', () => {
-    const spread = windingResistanceSpreadOhm({ resistance20: { nominalOhmPerM: 0.1, minimumOhmPerM: null, maximumOhmPerM: null }, lengthM: 1, temperatureC: 20 })
-    expect(spread.minimumOhm).toBeCloseTo(0.1 / 1.01 ** 2, 12)
-    expect(spread.maximumOhm).toBeCloseTo(0.1 / 0.99 ** 2, 12)
-  })
-  it('refuses no length', () => expect(() => windingResistanceSpreadOhm({ resistance20: table, lengthM: 0, temperatureC: 20 })).toThrow(/lengthM/))
 })
 
 describe('iecWireResistance', () => {
