@@ -2,6 +2,7 @@ import type { CheckResult } from '#shared/engine/evaluation'
 import type { Finding, FindingCode } from '#shared/engine/findings'
 import type { ProposalReason, ReasonCode } from '#shared/engine/index'
 import type { Rejection } from '#shared/engine/propose/reasons'
+import { fieldWord } from '@/components/parts/field-words'
 import { formatEngineering, formatNumber, formatQuantity } from '#shared/number-format'
 import { shownUnit } from '#shared/shown-units'
 import { CHECK_TEXTS } from './check-sentences'
@@ -65,7 +66,7 @@ export const FINDING_TEXTS: Readonly<Record<FindingCode, (values: Values) => str
   'material-not-in-library': (v) => `The material ${named(v, 'id')} is not in the library.`,
   'former-belongs-to-another-core': (v) => `The former ${named(v, 'former')} is not made for the core ${named(v, 'core')}.`,
   'wire-overall-diameter-unknown': (v) => `The library does not say the overall diameter of ${named(v, 'wire', 'this wire')} with this insulation.`,
-  'generic-row-used': (v) => `${named(v, 'row', 'A row')} ${v.unverified ? `has figures that nobody has verified: ${named(v, 'unverified')}` : 'is generic and unverified: replace it by the maker’s figures before release'}.`,
+  'generic-row-used': (v) => `${named(v, 'row', 'A row')} ${v.unverified ? `has figures that nobody has verified: ${unverifiedWords(v.unverified)}` : 'is generic and unverified: replace it by the maker’s figures before release'}.`,
   'capacitance-not-calculable': (v) => `The capacitance of the coil is not calculated: ${named(v, 'reason', 'its geometry has no solution')}.`,
   'no-bias-data': (v) => `How ${named(v, 'material', 'the material')} behaves under its direct field is not known: the inductance at full load is not told.`,
   'no-saturation-data': (v) => `The saturation of ${named(v, 'material', 'the material')} is not known at this temperature.`,
@@ -172,8 +173,11 @@ export function checkFigure({ code, unit }: Pick<CheckResult, 'code' | 'unit'>, 
 
 const SUBJECTS = ['winding', 'boundary', 'output', 'row', 'unverified', 'characteristic', 'missing', 'terminal', 'weakest', 'reason'] as const
 
+/** Fields of a row, as a check and a finding list them. */
+const unverifiedWords = (fields: string | number | undefined): string => [...new Set(String(fields ?? '').split(', ').map((path) => fieldWord(path) ?? path))].join(', ')
+
 /** What a result is about: the winding, boundary or row, and the other place of a contradiction. */
 export function checkSubject({ values }: Pick<CheckResult, 'values'>): string {
-  const about = SUBJECTS.map((key) => values[key]).filter((value) => value !== undefined && value !== '')
+  const about = SUBJECTS.map((key) => (key === 'unverified' && values[key] !== undefined ? unverifiedWords(values[key]) : values[key])).filter((value) => value !== undefined && value !== '')
   return [...new Set(about.map((value) => String(value).replaceAll('-', ' ')))].join(', ')
 }
